@@ -1,0 +1,58 @@
+#pragma once
+
+#include <Eigen/Core>
+#include <cstddef>
+#include <string>
+#include <string_view>
+#include <vector>
+
+namespace raiser::mesh {
+
+/// A position in the plate's plane, in mm. The origin is the plate's centre,
+/// x runs along the length and y across it.
+using Point = Eigen::Vector2d;
+
+enum class HoleShape { circle, ellipse, slot, rounded_rectangle };
+
+/// One hole. `length` and `width` are its full sizes along its own first and
+/// second axis in mm: both the diameter for a circle, the two axes of an
+/// ellipse, overall length and width of a slot (round ends of radius width/2
+/// at the ends of the first axis), the sides of a rounded rectangle.
+struct Hole {
+  std::string name;
+  HoleShape shape = HoleShape::circle;
+  double length = 0.0;
+  double width = 0.0;
+  double corner_radius = 0.0;  ///< mm; rounded rectangles only, 0 otherwise
+  Point centre = Point::Zero();
+  double angle = 0.0;  ///< rad, from the plate's x axis to the hole's first axis
+};
+
+/// A rectangular plate of one thickness with holes. Lengths in mm.
+struct Plate {
+  double length = 0.0;  ///< along x
+  double width = 0.0;   ///< along y
+  double thickness = 0.0;
+  std::vector<Hole> holes;
+};
+
+/// The word used for a shape in case files, tables and messages.
+std::string_view word(HoleShape shape);
+
+/// Something that makes a plate illegal. `hole` and `other` are indices into
+/// Plate::holes, or `none`.
+struct PlateFault {
+  static constexpr std::size_t none = static_cast<std::size_t>(-1);
+  std::size_t hole = none;
+  std::size_t other = none;
+  std::string what;  ///< what is wrong, with the figures
+  std::string cure;  ///< what to do about it
+};
+
+/// Every reason why the plate cannot be analysed: sizes that are not positive
+/// or not finite, a hole outside, touching or crossing the outline, holes that
+/// overlap, touch or lie inside one another, ligaments too thin to resolve.
+/// Empty for a legal plate.
+std::vector<PlateFault> faults(const Plate& plate);
+
+}  // namespace raiser::mesh

@@ -1,0 +1,158 @@
+#pragma once
+
+#include <Eigen/Core>
+#include <optional>
+#include <string>
+#include <vector>
+
+#include "mesh/plate/plate.hpp"
+#include "solver/elasticity/hooke_law.hpp"
+#include "solver/elasticity/load.hpp"
+#include "solver/extract/estimate.hpp"
+#include "solver/field/field.hpp"
+
+namespace raiser::solver {
+
+/// What is to be solved: complete, legal and balanced.
+struct Problem {
+  Plate plate;
+  HookeLaw material;
+  std::vector<Load> loads;
+};
+
+/// The quantities that can be asked for at a hole.
+enum class Quantity { largest_edge_stress, smallest_edge_stress, von_mises };
+
+/// One asked number and its tolerance, relative to the largest magnitude of
+/// edge stress on that hole under all loads together.
+struct Ask {
+  Quantity quantity = Quantity::largest_edge_stress;
+  std::size_t hole = 0;
+  double tolerance = 1e-3;
+  std::string name;  ///< the user's, may be empty
+};
+
+/// A stress on a hole's edge and where it is.
+struct EdgeValue {
+  Estimate stress;              ///< MPa
+  Point point = Point::Zero();  ///< mm
+  double angle = 0.0;           ///< rad, of the point seen from the hole's centre, from +x, in (-pi, pi]
+};
+
+/// A straight section through the plate and the holes it cuts.
+struct Section {
+  enum class Direction { across, along };  ///< across: the line x = station; along: y = station
+  Direction direction = Direction::across;
+  double station = 0.0;       ///< mm
+  double gross_area = 0.0;    ///< mm^2
+  double net_area = 0.0;      ///< mm^2
+  double net_centroid = 0.0;  ///< mm, along the section
+  double net_inertia = 0.0;   ///< mm^4, second moment about net_centroid, times thickness
+  double normal_force = 0.0;  ///< N, tension positive
+  double shear_force = 0.0;   ///< N
+  double moment = 0.0;        ///< N mm, about the middle of the gross section
+};
+
+/// Kt with the nominal stress it stands on. `kt` is empty where it is not
+/// defined, and `why` says so. Kt is the largest magnitude of edge stress on
+/// the hole over the magnitude of the nominal stress.
+struct Concentration {
+  std::optional<Estimate> kt;
+  double nominal = 0.0;    ///< MPa
+  std::string definition;  ///< formula of the nominal stress, in words and symbols
+  std::string why;
+};
+
+/// What was found at one hole under one load (or all together).
+struct HoleFindings {
+  std::size_t hole = 0;
+  EdgeValue largest;    ///< algebraically largest edge stress
+  EdgeValue smallest;   ///< algebraically smallest edge stress
+  EdgeValue von_mises;  ///< largest von Mises stress on the edge
+  Section section;      ///< the one that the nominal stresses stand on
+  Concentration gross;
+  Concentration net;
+};
+
+/// One load by itself, or all together.
+struct LoadFindings {
+  std::string name;  ///< the load's name, "all loads" for the combination
+  std::vector<HoleFindings> holes;
+};
+
+/// One step of the sequence that the bounds stand on.
+struct Level {
+  int refinement = 0;
+  int degree = 0;
+  std::size_t triangles = 0;
+  std::size_t unknowns = 0;  ///< before condensation
+  double peak = 0.0;         ///< MPa: the largest magnitude of edge stress over the holes
+  double worst = 0.0;        ///< largest ratio of bound to tolerance among what is asked
+  double seconds = 0.0;
+};
+
+/// Checks on the whole plate.
+struct PlateChecks {
+  double equilibrium_residual = 0.0;  ///< ||K u - f|| / ||f||, largest over the unit loads
+  double reaction = 0.0;              ///< largest force in the rigid-body constraints / applied force
+  double far_station = 0.0;           ///< mm, the section x = const where the nominal stress was recovered
+  double far_applied = 0.0;           ///< MPa, mean sigma_xx there from the loads
+  double far_recovered = 0.0;         ///< MPa, mean sigma_xx there, integrated from the solution
+  double far_scatter = 0.0;    ///< largest departure of sigma_xx from the linear nominal distribution there,
+                               ///< over the largest nominal stress
+  double strain_energy = 0.0;  ///< N mm
+  double external_work = 0.0;  ///< N mm, half the work of the loads
+};
+
+/// The stress along one ligament: from the hole's edge to the next free edge
+/// along the section.
+struct LigamentPoint {
+  Point point = Point::Zero();
+  double distance = 0.0;  ///< mm from the hole's edge
+  Stress stress;          ///< MPa
+  double bound = 0.0;     ///< MPa, on each component
+};
+struct Ligament {
+  std::size_t hole = 0;
+  std::string from;    ///< e.g. "hole bolt, y > centre"
+  std::string to;      ///< e.g. "top edge", "hole b"
+  double width = 0.0;  ///< mm
+  std::vector<LigamentPoint> points;
+};
+
+/// The stress along a hole's edge.
+struct EdgeSample {
+  Point point = Point::Zero();
+  double angle = 0.0;       ///< rad, as in EdgeValue
+  double arc_length = 0.0;  ///< mm, anticlockwise from the first sample
+  double tangential = 0.0;  ///< MPa
+  double von_mises = 0.0;   ///< MPa
+  double bound = 0.0;       ///< MPa, on the tangential stress
+};
+
+/// The answer. `status` is settled when every asked number met its tolerance.
+struct Solution {
+  enum class Status { settled, not_met };
+  Status status = Status::not_met;
+  std::string reason;  ///< why not, empty when settled
+
+  LoadFindings combined;
+  std::vector<LoadFindings> units;  ///< one for each unit load
+  PlateChecks checks;
+  std::vector<Level> levels;
+  int degree = 0;
+  std::size_t unknowns = 0;
+  std::size_t triangles = 0;
+  mesh::Mirrors mirrors_used;
+  double seconds = 0.0;
+
+  std::vector<std::vector<EdgeSample>> edges;  ///< by hole, under all loads
+  std::vector<Ligament> ligaments;             ///< under all loads
+  Field field;                                 ///< under all loads, over the whole plate
+};
+
+/// Solves until every asked number's bound meets its tolerance, or the budget
+/// is spent. Throws std::invalid_argument for a problem that is not legal.
+Solution settle(const Problem& problem, const std::vector<Ask>& asks);
+
+}  // namespace raiser::solver
