@@ -1,0 +1,221 @@
+#include <fmt/format.h>
+
+#include <algorithm>
+#include <array>
+#include <fstream>
+#include <iterator>
+#include <tuple>
+
+#include "io/case/case.hpp"
+#include "io/case/document.hpp"
+#include "io/case/parts.hpp"
+#include "io/case/screen.hpp"
+#include "io/case/table.hpp"
+
+namespace raiser::io {
+
+namespace {
+
+using Kind = Diagnostic::Kind;
+
+/// Everything that the tables say, as far as it could be read.
+struct Parts {
+  std::string title;
+  Table plate_table;
+  PlateSizes plate;
+  Material material;
+  std::vector<HoleReading> holes;
+  std::vector<LoadReading> loads;
+  Question question;
+};
+
+void read_version(const Table& document) {
+  const Entry* entry = require(document, "raiser", fmt::format("{} as the first line", case_format));
+  if (entry == nullptr) return;
+  if (entry->value.kind != Node::Kind::integer) {
+    complain(
+        document, *entry,
+        fmt::format("the version of the format is a whole number and this is {}", word(entry->value.kind)),
+        fmt::format("write raiser = {}", case_format));
+  } else if (entry->value.number != case_format) {
+    complain(document, *entry, fmt::format("this program reads version {} of the format", case_format),
+             fmt::format("write raiser = {} if the case is of that version", case_format));
+  }
+}
+
+/// A fault at the table, under the path of something that is missing in it.
+void complain_of_missing(const Table& document, std::string_view key, std::string what, std::string cure) {
+  complain({document.node, std::string(key), "", document.report}, std::move(what), std::move(cure));
+}
+
+Parts read_parts(const Table& document, const std::string& default_title) {
+  constexpr std::array<std::string_view, 7> keys{"raiser", "title", "plate", "material",
+                                                 "hole",   "load",  "ask"};
+  refuse_unknown(document, keys);
+  read_version(document);
+  const Entry* title = find(document, "title");
+  Parts parts{text(document, title).value_or(default_title), document, {}, {}, {}, {}, {}};
+  const auto need = [&](std::string_view key, std::string_view contents) {
+    const auto table = table_at(*document.node, key, *document.report);
+    if (!table && find(document, key) == nullptr) {
+      complain_of_missing(document, key, "the table is missing",
+                          fmt::format("add [{}] with {}", key, contents));
+    }
+    return table;
+  };
+  if (const auto table = need("plate", "length, width and thickness")) {
+    parts.plate = read_plate(*table);
+    parts.plate_table = *table;
+  }
+  if (const auto table = need("material", "youngs_modulus and poissons_ratio"))
+    parts.material = read_material(*table);
+  parts.holes = read_holes(document);
+  std::vector<std::string_view> names;
+  for (const HoleReading& hole : parts.holes) names.push_back(hole.name);
+  parts.loads = read_loads(document, parts.plate, names);
+  parts.question = read_question(document, names);
+  if (parts.holes.empty() && find(document, "hole") == nullptr) {
+    complain_of_missing(document, "hole", "the plate has no hole", "add [[hole]] with a shape and its sizes");
+  }
+  if (parts.loads.empty() && find(document, "load") == nullptr) {
+    complain_of_missing(document, "load", "nothing loads the plate",
+                        "add [[load]] with a kind and its stress or force");
+  }
+  return parts;
+}
+
+void add_fault(Report& report, Kind kind, const Position& at, std::string key, std::string what,
+               std::string cure) {
+  report.faults.push_back({kind, report.file, at, std::move(key), "", std::move(what), std::move(cure)});
+}
+
+/// The plate with the holes that could be read; `index[i]` is where hole i of
+/// the plate stands among all of them. Empty without the plate's sizes.
+struct PartialPlate {
+  mesh::Plate plate;
+  std::vector<std::size_t> index;
+};
+std::optional<PartialPlate> readable_plate(const Parts& parts) {
+  const PlateSizes& sizes = parts.plate;
+  if (!sizes.length || !sizes.width || !sizes.thickness) return std::nullopt;
+  PartialPlate result{{*sizes.length, *sizes.width, *sizes.thickness, {}}, {}};
+  Names names;
+  for (std::size_t i = 0; i < parts.holes.size(); ++i) {
+    if (!parts.holes[i].hole) continue;
+    mesh::Hole hole = *parts.holes[i].hole;
+    // A name that is taken has its fault already; here it must only be told apart.
+    if (!names.insert(hole.name).second) hole.name = fmt::format("{} (number {})", hole.name, i + 1);
+    names.insert(hole.name);
+    result.plate.holes.push_back(std::move(hole));
+    result.index.push_back(i);
+  }
+  return result;
+}
+
+void check_geometry(const Parts& parts, const PartialPlate& partial, Report& report) {
+  for (const mesh::PlateFault& fault : mesh::faults(partial.plate)) {
+    const bool of_hole = fault.hole != mesh::PlateFault::none;
+    const Position at = of_hole ? parts.holes[partial.index[fault.hole]].at : parts.plate_table.node->at;
+    add_fault(report, Kind::geometry, at, of_hole ? "hole" : "plate", fault.what, fault.cure);
+  }
+}
+
+/// Only when every load could be read: a missing one would unbalance the rest.
+void check_balance(const Parts& parts, const mesh::Plate& plate, Report& report) {
+  std::vector<solver::Load> loads;
+  for (const LoadReading& load : parts.loads) {
+    if (!load.load) return;
+    loads.push_back(*load.load);
+  }
+  const auto fault = solver::imbalance(plate, loads);
+  if (!fault) return;
+  const Position at = fault->loads.empty() ? Position{} : parts.loads[fault->loads.front()].at;
+  add_fault(report, Kind::loads, at, "load", fault->what, fault->cure);
+}
+
+Case assemble(const Parts& parts, mesh::Plate plate, Report& report, const std::string& name) {
+  Case result;
+  result.title = parts.title;
+  result.file = name;
+  result.problem.plate = std::move(plate);
+  result.problem.material = *parts.material.law;
+  for (const LoadReading& load : parts.loads) result.problem.loads.push_back(*load.load);
+  result.asks = parts.question.asks;
+  result.tolerance = parts.question.tolerance;
+  result.yield_strength = parts.material.yield_strength;
+  result.written = std::move(report.written);
+  return result;
+}
+
+CaseReading failure(std::vector<Diagnostic> faults) {
+  std::stable_sort(faults.begin(), faults.end(), [](const Diagnostic& a, const Diagnostic& b) {
+    const Position x = a.position.value_or(Position{0, 0});
+    const Position y = b.position.value_or(Position{0, 0});
+    return std::tie(x.line, x.column) < std::tie(y.line, y.column);
+  });
+  return {std::nullopt, std::move(faults)};
+}
+
+Diagnostic file_fault(const std::string& name, std::string what, std::string cure) {
+  return {Kind::input, name, std::nullopt, "", "", std::move(what), std::move(cure)};
+}
+
+/// Why the file cannot be read as a case at all, or nothing.
+std::optional<Diagnostic> unreadable(const std::filesystem::path& file) {
+  const std::string name = file.string();
+  std::error_code error;
+  const auto status = std::filesystem::status(file, error);
+  if (status.type() == std::filesystem::file_type::not_found) {
+    return file_fault(name, "there is no such file", "check the name and the folder");
+  }
+  if (std::filesystem::is_directory(status)) {
+    return file_fault(name, "this is a folder", "name a case file in it");
+  }
+  if (!std::filesystem::is_regular_file(status)) {
+    return file_fault(name, "this is not a regular file", "name a case file on disk");
+  }
+  const auto bytes = std::filesystem::file_size(file, error);
+  if (!error && bytes > most_bytes) return too_large(bytes, name);
+  return std::nullopt;
+}
+
+}  // namespace
+
+std::string text(const Diagnostic& diagnostic) {
+  std::string result = diagnostic.file;
+  if (diagnostic.position)
+    result += fmt::format(":{}:{}", diagnostic.position->line, diagnostic.position->column);
+  result += ": ";
+  if (!diagnostic.key.empty()) result += diagnostic.key;
+  if (!diagnostic.value.empty()) result += fmt::format(" = {}", diagnostic.value);
+  if (!diagnostic.key.empty()) result += ": ";
+  return result + fmt::format("{}; {}", diagnostic.what, diagnostic.cure);
+}
+
+CaseReading read_case_text(std::string_view content, const std::string& name) {
+  content = without_byte_order_mark(content);
+  if (auto fault = screen(content, name)) return failure({*fault});
+  const auto parsed = parse_document(content, name);
+  if (const auto* fault = std::get_if<Diagnostic>(&parsed)) return failure({*fault});
+  Report report{name, {}, {}};
+  const Table document{&std::get<Node>(parsed), "", "", &report};
+  const Parts parts = read_parts(document, std::filesystem::path(name).stem().string());
+  const auto partial = readable_plate(parts);
+  const bool all_holes = partial && partial->index.size() == parts.holes.size();
+  if (partial) check_geometry(parts, *partial, report);
+  if (all_holes) check_balance(parts, partial->plate, report);
+  if (!report.faults.empty()) return failure(std::move(report.faults));
+  return {assemble(parts, partial->plate, report, name), {}};
+}
+
+CaseReading read_case(const std::filesystem::path& file) {
+  if (auto fault = unreadable(file)) return failure({*fault});
+  std::ifstream stream(file, std::ios::binary);
+  const std::string content{std::istreambuf_iterator<char>(stream), std::istreambuf_iterator<char>()};
+  if (!stream.is_open() || stream.bad()) {
+    return failure({file_fault(file.string(), "the file cannot be read", "check its permissions")});
+  }
+  return read_case_text(content, file.string());
+}
+
+}  // namespace raiser::io

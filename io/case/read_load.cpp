@@ -1,0 +1,240 @@
+#include <fmt/format.h>
+
+#include <array>
+#include <cmath>
+
+#include "io/case/parts.hpp"
+
+namespace raiser::io {
+
+namespace {
+
+using solver::Load;
+using solver::Owner;
+using Keys = std::span<const std::string_view>;
+
+constexpr std::array<std::string_view, 13> load_keys{
+    "name",     "kind", "direction", "stress",       "force", "moment",     "hole",
+    "pressure", "edge", "normal",    "normal_force", "shear", "shear_force"};
+constexpr std::array<std::string_view, 5> tension_keys{"name", "kind", "direction", "stress", "force"};
+constexpr std::array<std::string_view, 4> shear_keys{"name", "kind", "stress", "force"};
+constexpr std::array<std::string_view, 4> bending_keys{"name", "kind", "stress", "moment"};
+constexpr std::array<std::string_view, 4> pressure_keys{"name", "kind", "hole", "pressure"};
+constexpr std::array<std::string_view, 7> edge_keys{"name",         "kind",  "edge",       "normal",
+                                                    "normal_force", "shear", "shear_force"};
+constexpr std::array kinds{Load::Kind::tension, Load::Kind::shear, Load::Kind::bending, Load::Kind::pressure,
+                           Load::Kind::edge};
+constexpr std::array<std::string_view, 4> edge_words{"right", "top", "left", "bottom"};
+constexpr std::array edges{Owner::Kind::right, Owner::Kind::top, Owner::Kind::left, Owner::Kind::bottom};
+
+/// Where and for what the loads are read.
+struct Context {
+  PlateSizes plate;
+  const std::vector<std::string_view>& holes;
+};
+
+/// Area of the section of the given length, mm^2; empty without the sizes.
+std::optional<double> section(const PlateSizes& plate, const std::optional<double>& length) {
+  if (!length || !plate.thickness) return std::nullopt;
+  return *length * *plate.thickness;
+}
+
+std::optional<double> over(const std::optional<double>& force, const std::optional<double>& area) {
+  if (!force || !area) return std::nullopt;
+  return *force / *area;
+}
+
+/// A stress, given as such or as a force or moment on a section of the given
+/// area or modulus.
+std::optional<double> stress_from(const Table& table, Keys keys, Dimension other,
+                                  const std::optional<double>& section, std::string_view sample) {
+  const Entry* entry = require_one(table, keys, sample);
+  if (entry == nullptr) return std::nullopt;
+  if (entry->key == keys.front()) return quantity(table, entry, Dimension::stress, Sign::nonzero);
+  return over(quantity(table, entry, other, Sign::nonzero), section);
+}
+
+constexpr std::array<std::string_view, 2> stress_or_force{"stress", "force"};
+
+std::optional<Load> read_tension(const Table& table, const Context& context) {
+  constexpr std::array<std::string_view, 2> directions{"along", "across"};
+  refuse_unfitting(table, "tension", load_keys, tension_keys);
+  const Entry* entry = find(table, "direction");
+  const auto direction = entry == nullptr ? std::optional<std::size_t>(0) : choice(table, entry, directions);
+  const bool across = direction.value_or(0) == 1;
+  const auto area = section(context.plate, across ? context.plate.length : context.plate.width);
+  const auto stress = stress_from(table, stress_or_force, Dimension::force, area, "\"100 MPa\"");
+  if (!direction || !stress) return std::nullopt;
+  Load load;
+  load.kind = across ? Load::Kind::transverse : Load::Kind::tension;
+  load.stress = *stress;
+  return load;
+}
+
+std::optional<Load> read_shear(const Table& table, const Context& context) {
+  refuse_unfitting(table, "shear", load_keys, shear_keys);
+  const auto area = section(context.plate, context.plate.width);
+  const auto stress = stress_from(table, stress_or_force, Dimension::force, area, "\"50 MPa\"");
+  if (!stress) return std::nullopt;
+  Load load;
+  load.kind = Load::Kind::shear;
+  load.stress = *stress;
+  return load;
+}
+
+std::optional<Load> read_bending(const Table& table, const Context& context) {
+  constexpr std::array<std::string_view, 2> keys{"stress", "moment"};
+  refuse_unfitting(table, "bending", load_keys, bending_keys);
+  auto modulus = section(context.plate, context.plate.width);
+  if (modulus) *modulus *= *context.plate.width / 6.0;
+  const auto stress = stress_from(table, keys, Dimension::moment, modulus, "\"50 MPa\"");
+  if (!stress) return std::nullopt;
+  Load load;
+  load.kind = Load::Kind::bending;
+  load.stress = *stress;
+  return load;
+}
+
+std::optional<Load> read_pressure(const Table& table, const Context& context) {
+  refuse_unfitting(table, "pressure", load_keys, pressure_keys);
+  const auto hole = choice(table, require(table, "hole", "\"hole 1\""), context.holes);
+  const auto pressure =
+      quantity(table, require(table, "pressure", "\"10 MPa\""), Dimension::stress, Sign::nonzero);
+  if (!hole || !pressure) return std::nullopt;
+  Load load;
+  load.kind = Load::Kind::pressure;
+  load.hole = *hole;
+  load.stress = *pressure;
+  return load;
+}
+
+/// One component of an edge load, MPa; 0 when neither key is there.
+std::optional<double> read_component(const Table& table, Keys keys, const std::optional<double>& area) {
+  if (find(table, keys.front()) == nullptr && find(table, keys.back()) == nullptr) return 0.0;
+  return stress_from(table, keys, Dimension::force, area, "\"100 MPa\"");
+}
+
+std::optional<Load> read_edge(const Table& table, const Context& context) {
+  constexpr std::array<std::string_view, 2> normal_keys{"normal", "normal_force"};
+  constexpr std::array<std::string_view, 2> shear_keys_of_edge{"shear", "shear_force"};
+  refuse_unfitting(table, "an edge load", load_keys, edge_keys);
+  const auto edge = choice(table, require(table, "edge", "\"right\""), edge_words);
+  const bool end = edge.value_or(0) % 2 == 0;
+  const auto area = section(context.plate, end ? context.plate.width : context.plate.length);
+  const auto normal = read_component(table, normal_keys, area);
+  const auto along = read_component(table, shear_keys_of_edge, area);
+  if (normal == 0.0 && along == 0.0) {
+    complain(table, "neither a normal nor a shear stress is given",
+             "add normal, normal_force, shear or shear_force, e.g. normal = \"100 MPa\"");
+    return std::nullopt;
+  }
+  if (!edge || !normal || !along) return std::nullopt;
+  Load load;
+  load.kind = Load::Kind::edge;
+  load.edge = edges[*edge];
+  load.stress = *normal;
+  load.along = *along;
+  return load;
+}
+
+std::optional<Load> read_kind(const Table& table, const Context& context, Load::Kind kind) {
+  switch (kind) {
+    case Load::Kind::shear:
+      return read_shear(table, context);
+    case Load::Kind::bending:
+      return read_bending(table, context);
+    case Load::Kind::pressure:
+      return read_pressure(table, context);
+    case Load::Kind::edge:
+      return read_edge(table, context);
+    case Load::Kind::tension:
+    case Load::Kind::transverse:
+      break;
+  }
+  return read_tension(table, context);
+}
+
+/// Reports what is wrong with the values of a load whose kind is not known.
+void check_values(const Table& table) {
+  for (const std::string_view key : {"stress", "pressure", "normal", "shear"}) {
+    quantity(table, find(table, key), Dimension::stress, Sign::nonzero);
+  }
+  for (const std::string_view key : {"force", "normal_force", "shear_force"}) {
+    quantity(table, find(table, key), Dimension::force, Sign::nonzero);
+  }
+  quantity(table, find(table, "moment"), Dimension::moment, Sign::nonzero);
+}
+
+/// What a load without a name of its own is called.
+std::string default_name(const std::optional<Load>& load, const Context& context) {
+  if (!load) return "load";
+  switch (load->kind) {
+    case Load::Kind::tension:
+    case Load::Kind::shear:
+    case Load::Kind::bending:
+      break;
+    case Load::Kind::transverse:
+      return "tension across";
+    case Load::Kind::pressure:
+      return fmt::format("pressure in {}", context.holes[load->hole]);
+    case Load::Kind::edge:
+      for (std::size_t i = 0; i < edges.size(); ++i) {
+        if (edges[i] == load->edge) return fmt::format("{} edge", edge_words[i]);
+      }
+  }
+  return std::string(solver::word(load->kind));
+}
+
+/// The name, or name 2, name 3, ... whichever is first in neither set.
+std::string first_free(const std::string& name, const Names& names, const Names& written) {
+  std::string candidate = name;
+  for (int i = 2; names.contains(candidate) || written.contains(candidate); ++i) {
+    candidate = fmt::format("{} {}", name, i);
+  }
+  return candidate;
+}
+
+Names written_names(const std::vector<Table>& tables) {
+  Names names;
+  for (const Table& table : tables) {
+    const Entry* entry = find(table, "name");
+    if (entry != nullptr && entry->value.kind == Node::Kind::text) names.insert(entry->value.text);
+  }
+  return names;
+}
+
+std::optional<Load> read_load(const Table& table, const Context& context) {
+  std::vector<std::string_view> words;
+  for (const Load::Kind kind : kinds) words.push_back(solver::word(kind));
+  refuse_unknown(table, load_keys);
+  const auto kind = choice(table, require(table, "kind", "\"tension\""), words);
+  if (kind) return read_kind(table, context, kinds[*kind]);
+  check_values(table);
+  return std::nullopt;
+}
+
+}  // namespace
+
+std::vector<LoadReading> read_loads(const Table& document, const PlateSizes& plate,
+                                    const std::vector<std::string_view>& holes) {
+  std::vector<LoadReading> loads;
+  std::vector<Table> tables = tables_at(document, "load");
+  if (tables.size() > most_loads) {
+    complain(tables[most_loads], fmt::format("there are {} loads", tables.size()),
+             fmt::format("a case has at most {}; put loads of one kind together", most_loads));
+    tables.erase(tables.begin() + most_loads, tables.end());
+  }
+  const Context context{plate, holes};
+  const Names written = written_names(tables);
+  Names names{"all loads", "edges"};  // the program's own names for sums of loads
+  for (const Table& table : tables) {
+    auto load = read_load(table, context);
+    const std::string name =
+        unique_name(table, first_free(default_name(load, context), names, written), names);
+    if (load) load->name = name;
+    loads.push_back({std::move(load), table.node->at});
+  }
+  return loads;
+}
+
+}  // namespace raiser::io

@@ -1,0 +1,174 @@
+#include <fmt/format.h>
+
+#include <array>
+
+#include "io/case/parts.hpp"
+
+namespace raiser::io {
+
+namespace {
+
+using Keys = std::span<const std::string_view>;
+
+constexpr std::array<std::string_view, 9> hole_keys{"name",  "shape",         "diameter", "radius", "length",
+                                                    "width", "corner_radius", "at",       "angle"};
+constexpr std::array<std::string_view, 2> circle_sizes{"diameter", "radius"};
+constexpr std::array<std::string_view, 5> circle_keys{"name", "shape", "diameter", "radius", "at"};
+constexpr std::array<std::string_view, 6> long_hole_keys{"name", "shape", "length", "width", "at", "angle"};
+constexpr std::array<std::string_view, 7> rectangle_keys{"name",          "shape", "length", "width",
+                                                         "corner_radius", "at",    "angle"};
+constexpr std::array shapes{mesh::HoleShape::circle, mesh::HoleShape::ellipse, mesh::HoleShape::slot,
+                            mesh::HoleShape::rounded_rectangle};
+
+Keys keys_of(mesh::HoleShape shape) {
+  switch (shape) {
+    case mesh::HoleShape::circle:
+      return circle_keys;
+    case mesh::HoleShape::ellipse:
+      return long_hole_keys;
+    case mesh::HoleShape::slot:
+      return long_hole_keys;
+    case mesh::HoleShape::rounded_rectangle:
+      return rectangle_keys;
+  }
+  return hole_keys;
+}
+
+std::optional<double> size(const Table& table, std::string_view key, std::string_view sample) {
+  return quantity(table, require(table, key, sample), Dimension::length, Sign::positive);
+}
+
+std::optional<mesh::HoleShape> read_shape(const Table& table) {
+  std::vector<std::string_view> words;
+  for (const mesh::HoleShape shape : shapes) words.push_back(mesh::word(shape));
+  const auto index = choice(table, require(table, "shape", "\"circle\""), words);
+  if (!index) return std::nullopt;
+  return shapes[*index];
+}
+
+/// The centre: the plate's own by default.
+std::optional<mesh::Point> read_centre(const Table& table) {
+  const Entry* entry = find(table, "at");
+  if (entry == nullptr) return mesh::Point::Zero();
+  constexpr std::string_view sample = "[\"0 mm\", \"0 mm\"]";
+  const std::vector<Node>* coordinates = items(table, entry, sample);
+  if (coordinates == nullptr) return std::nullopt;
+  if (coordinates->size() != 2) {
+    complain(table, *entry, fmt::format("a place needs two coordinates and this has {}", coordinates->size()),
+             fmt::format("write x and y from the plate's centre, e.g. {}", sample));
+    return std::nullopt;
+  }
+  const auto x = quantity(table, *entry, coordinates->front(), Dimension::length, Sign::any);
+  const auto y = quantity(table, *entry, coordinates->back(), Dimension::length, Sign::any);
+  if (!x || !y) return std::nullopt;
+  return mesh::Point(*x, *y);
+}
+
+/// The angle: 0 by default.
+std::optional<double> read_angle(const Table& table) {
+  const Entry* entry = find(table, "angle");
+  if (entry == nullptr) return 0.0;
+  return quantity(table, entry, Dimension::angle, Sign::any);
+}
+
+struct Sizes {
+  std::optional<double> length;
+  std::optional<double> width;
+  std::optional<double> corner_radius = 0.0;
+};
+
+Sizes read_circle(const Table& table) {
+  const Entry* entry = require_one(table, circle_sizes, "\"18 mm\"");
+  auto diameter = quantity(table, entry, Dimension::length, Sign::positive);
+  if (diameter && entry->key == "radius") *diameter *= 2.0;
+  return {diameter, diameter};
+}
+
+Sizes read_sizes(const Table& table, mesh::HoleShape shape) {
+  if (shape == mesh::HoleShape::circle) return read_circle(table);
+  Sizes sizes{size(table, "length", "\"30 mm\""), size(table, "width", "\"12 mm\"")};
+  if (shape == mesh::HoleShape::rounded_rectangle)
+    sizes.corner_radius = size(table, "corner_radius", "\"4 mm\"");
+  return sizes;
+}
+
+/// Reports what is wrong with the sizes of a hole whose shape is not known.
+void check_sizes(const Table& table) {
+  for (const std::string_view key : {"diameter", "radius", "length", "width", "corner_radius"}) {
+    quantity(table, find(table, key), Dimension::length, Sign::positive);
+  }
+}
+
+std::optional<mesh::Hole> read_hole(const Table& table, const std::string& name) {
+  refuse_unknown(table, hole_keys);
+  const auto shape = read_shape(table);
+  const auto centre = read_centre(table);
+  if (!shape) {
+    check_sizes(table);
+    read_angle(table);
+    return std::nullopt;
+  }
+  const std::string_view article = *shape == mesh::HoleShape::ellipse ? "an" : "a";
+  refuse_unfitting(table, fmt::format("{} {}", article, mesh::word(*shape)), hole_keys, keys_of(*shape));
+  const Sizes sizes = read_sizes(table, *shape);
+  const auto angle = *shape == mesh::HoleShape::circle ? std::optional(0.0) : read_angle(table);
+  if (!sizes.length || !sizes.width || !sizes.corner_radius || !centre || !angle) return std::nullopt;
+  return mesh::Hole{name, *shape, *sizes.length, *sizes.width, *sizes.corner_radius, *centre, *angle};
+}
+
+/// Poisson's ratio of a stable isotropic solid that is not incompressible.
+std::optional<double> read_poissons_ratio(const Table& table) {
+  const Entry* entry = require(table, "poissons_ratio", "0.3");
+  const auto ratio = quantity(table, entry, Dimension::ratio, Sign::any);
+  if (!ratio || (*ratio > -1.0 && *ratio < 0.5)) return ratio;
+  complain(table, *entry, "Poisson's ratio lies between -1 and 0.5, both excluded", "write e.g. 0.3");
+  return std::nullopt;
+}
+
+}  // namespace
+
+PlateSizes read_plate(const Table& table) {
+  constexpr std::array<std::string_view, 3> keys{"length", "width", "thickness"};
+  refuse_unknown(table, keys);
+  return {size(table, "length", "\"240 mm\""), size(table, "width", "\"60 mm\""),
+          size(table, "thickness", "\"6 mm\"")};
+}
+
+Material read_material(const Table& table) {
+  constexpr std::array<std::string_view, 4> keys{"youngs_modulus", "poissons_ratio", "state",
+                                                 "yield_strength"};
+  constexpr std::array<std::string_view, 2> states{"plane stress", "plane strain"};
+  refuse_unknown(table, keys);
+  const auto modulus =
+      quantity(table, require(table, "youngs_modulus", "\"210 GPa\""), Dimension::stress, Sign::positive);
+  const auto ratio = read_poissons_ratio(table);
+  const Entry* state_entry = find(table, "state");
+  const auto state =
+      state_entry == nullptr ? std::optional<std::size_t>(0) : choice(table, state_entry, states);
+  Material material;
+  material.yield_strength = quantity(table, find(table, "yield_strength"), Dimension::stress, Sign::positive);
+  if (modulus && ratio && state) {
+    material.law = solver::HookeLaw{*modulus, *ratio,
+                                    *state == 0 ? solver::PlaneState::stress : solver::PlaneState::strain};
+  }
+  return material;
+}
+
+std::vector<HoleReading> read_holes(const Table& document) {
+  std::vector<HoleReading> holes;
+  std::vector<Table> tables = tables_at(document, "hole");
+  if (tables.size() > most_holes) {
+    complain(tables[most_holes], fmt::format("there are {} holes", tables.size()),
+             fmt::format("a case has at most {}; leave the others out", most_holes));
+    tables.erase(tables.begin() + most_holes, tables.end());
+  }
+  Names names;
+  for (const Table& table : tables) {
+    std::string name = unique_name(table, fmt::format("hole {}", holes.size() + 1), names);
+    auto hole = read_hole(table, name);
+    holes.push_back({std::move(name), std::move(hole), table.node->at});
+  }
+  return holes;
+}
+
+}  // namespace raiser::io
