@@ -1,0 +1,73 @@
+#pragma once
+
+#include <functional>
+#include <utility>
+
+#include "solver/elasticity/hooke_law.hpp"
+#include "solver/elasticity/load.hpp"
+
+namespace raiser::validation {
+
+using mesh::Point;
+using solver::Stress;
+
+/// The uniform stress state far away from the hole, MPa.
+struct RemoteStress {
+  double xx = 0.0;
+  double yy = 0.0;
+  double xy = 0.0;
+};
+
+/// Semi-axes of an ellipse along x and along y, mm, both positive.
+struct Ellipse {
+  double along_x = 0.0;
+  double along_y = 0.0;
+};
+
+/// A stress field in the plane of the plate; sigma_zz is left 0.
+using StressField = std::function<Stress(const Point&)>;
+
+/// Stress round a traction-free circular hole of the given radius at the
+/// origin of an infinite plate, at a point outside the hole.
+/// E. G. Kirsch, Zeitschrift des VDI 42 (1898) 797-807.
+Stress kirsch(const RemoteStress& remote, double radius, const Point& x);
+
+/// Tangential stress on the edge of that hole at the angle theta from +x, MPa.
+double kirsch_edge(const RemoteStress& remote, double theta);
+
+/// Stress round a circular hole under the pressure p in an infinite plate that
+/// is otherwise free: radial -p (r/R)^2, tangential +p (r/R)^2.
+/// G. Lame, Lecons sur la theorie mathematique de l'elasticite (1852).
+Stress lame(double pressure, double radius, const Point& x);
+
+/// Stress round a traction-free elliptical hole, axes along x and y, centre at
+/// the origin of an infinite plate, at a point outside the hole or on its edge.
+/// C. E. Inglis, Trans. Inst. Naval Architects 55 (1913) 219-241, by the complex
+/// potentials of N. I. Muskhelishvili, Some Basic Problems of the Mathematical
+/// Theory of Elasticity (1953), section 82a; derived afresh for any remote state.
+Stress inglis(const RemoteStress& remote, const Ellipse& ellipse, const Point& x);
+
+/// Tangential stress on the edge of that hole at (along_x cos eta, along_y sin eta).
+double inglis_edge(const RemoteStress& remote, const Ellipse& ellipse, double eta);
+
+/// Smallest and largest tangential stress on the edge of that hole, MPa: the
+/// exact extremes over eta.
+std::pair<double, double> inglis_extremes(const RemoteStress& remote, const Ellipse& ellipse);
+
+/// The same hole under the pressure p, nothing else loaded: the field of an
+/// equal biaxial remote tension p less that tension itself.
+Stress inglis_pressure(double pressure, const Ellipse& ellipse, const Point& x);
+
+/// The stress components in axes turned anticlockwise by `angle` (rad), e.g.
+/// the remote stress in the axes of a hole at that angle.
+RemoteStress turned(const RemoteStress& stress, double angle);
+
+/// The field of a hole centred at `centre` and turned by `angle`, from a field
+/// given in the hole's own axes.
+StressField placed(StressField own, const Point& centre, double angle);
+
+/// The traction that the field exerts on every boundary, MPa: applied to the
+/// outline of a finite plate it makes the infinite plate's solution exact.
+solver::Traction traction_of(StressField field);
+
+}  // namespace raiser::validation
