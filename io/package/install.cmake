@@ -18,6 +18,11 @@ foreach(layer mesh solver validation io)
     PATTERN "*.hpp")
 endforeach()
 
+# The program; it finds shared libraries of ours beside itself.
+file(RELATIVE_PATH to_libraries ${CMAKE_INSTALL_FULL_BINDIR} ${CMAKE_INSTALL_FULL_LIBDIR})
+set_target_properties(raiser PROPERTIES INSTALL_RPATH $ORIGIN/${to_libraries})
+install(TARGETS raiser)
+
 install(
   EXPORT raiser-targets
   NAMESPACE raiser::
