@@ -1,0 +1,101 @@
+#include "io/write/file.hpp"
+
+#include <fcntl.h>
+#include <fmt/format.h>
+#include <stdlib.h>
+#include <unistd.h>
+
+#include <cerrno>
+#include <system_error>
+#include <utility>
+
+namespace raiser::io {
+namespace {
+
+std::string cure(int error) {
+  switch (error) {
+    case ENOSPC:
+    case EDQUOT:
+    case EFBIG:
+      return "make room there, or choose another folder with --out";
+    case EACCES:
+    case EPERM:
+    case EROFS:
+      return "choose a folder that may be written to with --out";
+    case ENOTDIR:
+    case ENOENT:
+    case EISDIR:
+      return "check the path";
+    default:
+      return "check the path, or choose another folder with --out";
+  }
+}
+
+std::string reason(int error) {
+  return fmt::format("{}; {}", std::generic_category().message(error), cure(error));
+}
+
+// Writes all bytes; returns 0 or the error number.
+int write_all(int descriptor, std::string_view bytes) {
+  while (!bytes.empty()) {
+    const ssize_t written = ::write(descriptor, bytes.data(), bytes.size());
+    if (written < 0 && errno != EINTR) return errno;
+    if (written > 0) bytes.remove_prefix(static_cast<std::size_t>(written));
+  }
+  return 0;
+}
+
+}  // namespace
+
+WriteError::WriteError(const std::filesystem::path& file, const std::string& why)
+    : std::runtime_error(fmt::format("cannot write {}: {}", file.string(), why)) {}
+
+void write_file(const std::filesystem::path& file, std::string_view bytes) {
+  std::filesystem::path temporary = file;
+  temporary.replace_filename(fmt::format(".{}.{}.part", file.filename().string(), ::getpid()));
+  const int descriptor = ::open(temporary.c_str(), O_WRONLY | O_CREAT | O_TRUNC | O_CLOEXEC, 0666);
+  if (descriptor < 0) throw WriteError(file, reason(errno));
+  int error = write_all(descriptor, bytes);
+  if (::close(descriptor) != 0 && error == 0) error = errno;
+  if (error == 0 && ::rename(temporary.c_str(), file.c_str()) != 0) error = errno;
+  if (error == 0) return;
+  ::unlink(temporary.c_str());
+  throw WriteError(file, reason(error));
+}
+
+Staging::Staging(std::filesystem::path folder) : folder_(std::move(folder)) {
+  if (folder_.empty()) folder_ = ".";
+  std::error_code error;
+  std::filesystem::create_directories(folder_, error);
+  if (error) throw WriteError(folder_, reason(error.value()));
+  std::string pattern = (folder_ / ".raiser-XXXXXX").string();
+  if (::mkdtemp(pattern.data()) == nullptr) throw WriteError(folder_, reason(errno));
+  hidden_ = pattern;
+}
+
+Staging::~Staging() {
+  std::error_code ignored;
+  std::filesystem::remove_all(hidden_, ignored);
+}
+
+std::filesystem::path Staging::path(const std::string& name) {
+  names_.push_back(name);
+  return hidden_ / name;
+}
+
+std::vector<std::filesystem::path> Staging::publish() {
+  // A folder in the way of any file must stop all of them, not the later ones.
+  for (const std::string& name : names_) {
+    if (std::filesystem::is_directory(folder_ / name)) throw WriteError(folder_ / name, reason(EISDIR));
+  }
+  std::vector<std::filesystem::path> published;
+  for (const std::string& name : names_) {
+    const std::filesystem::path target = folder_ / name;
+    if (::rename((hidden_ / name).c_str(), target.c_str()) != 0) throw WriteError(target, reason(errno));
+    published.push_back(folder_ == "." ? std::filesystem::path(name) : target);
+  }
+  names_.clear();
+  return published;
+}
+
+}  // namespace raiser::io

@@ -1,0 +1,62 @@
+#pragma once
+
+#include <optional>
+#include <string>
+#include <string_view>
+#include <vector>
+
+#include "io/case/case.hpp"
+#include "io/write/provenance.hpp"
+#include "solver/solution.hpp"
+#include "validation/compare.hpp"
+
+namespace raiser::io {
+
+/// A solved case with everything that its files and tables say.
+struct Result {
+  Case input;
+  solver::Solution solution;
+  std::vector<validation::Comparison> published;
+  Provenance provenance;
+};
+
+/// What one ask came to.
+struct Answer {
+  solver::Ask ask;
+  solver::EdgeValue value;
+  double allowed = 0.0;  ///< MPa: the largest bound that meets the ask's tolerance
+  bool met = false;
+};
+
+/// The answers in the order of the asks.
+std::vector<Answer> answers(const Case& input, const solver::Solution& solution);
+
+/// The words for a quantity, e.g. "largest edge stress".
+std::string_view words(solver::Quantity quantity);
+
+/// The words for a status: "settled", "not met".
+std::string_view words(solver::Solution::Status status);
+
+/// Positions of the holes in solution.combined.holes, the largest magnitude
+/// of edge stress first.
+std::vector<std::size_t> worst_first(const solver::LoadFindings& findings);
+
+/// The largest magnitude of edge stress at a hole, MPa.
+double peak(const solver::HoleFindings& findings);
+
+/// The part of the plate that was solved: "whole plate", "half of the plate"…
+std::string_view solved_part(const mesh::Mirrors& mirrors);
+
+/// How one of several cases ended: what a summary keeps of it.
+struct Outcome {
+  std::string case_file;
+  std::string title;
+  int exit_code = 0;
+  std::string status;   ///< "settled", "not met", "not read", …
+  std::string message;  ///< the first fault or the reason; empty when settled
+  double seconds = 0.0;
+  std::vector<std::string> hole_names;      ///< of `holes`, in the same order
+  std::vector<solver::HoleFindings> holes;  ///< under all loads; empty when not solved
+};
+
+}  // namespace raiser::io
