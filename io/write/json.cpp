@@ -1,0 +1,279 @@
+#include "io/write/json.hpp"
+
+#include <cmath>
+#include <nlohmann/json.hpp>
+#include <numbers>
+
+namespace raiser::io {
+namespace {
+
+using Json = nlohmann::ordered_json;
+
+constexpr double degrees_per_radian = 180.0 / std::numbers::pi;
+
+// A number without a bound.
+Json quantity(double value, std::string_view unit) {
+  Json object{{"value", nullptr}, {"unit", unit}};
+  if (std::isfinite(value)) {
+    object["value"] = value == 0.0 ? 0.0 : value;  // no negative zero
+  } else {
+    object["why"] = "not a finite number";
+  }
+  return object;
+}
+
+Json quantity(const solver::Estimate& estimate, std::string_view unit) {
+  Json object{{"value", nullptr}, {"bound", nullptr}, {"unit", unit}};
+  const bool bounded = std::isfinite(estimate.bound);
+  if (std::isfinite(estimate.value)) object["value"] = estimate.value == 0.0 ? 0.0 : estimate.value;
+  if (bounded) object["bound"] = estimate.bound;
+  if (!std::isfinite(estimate.value)) {
+    object["why"] = "not a finite number";
+  } else if (!bounded) {
+    object["why"] = "no bound can be given";
+  }
+  return object;
+}
+
+Json position(const mesh::Point& point) {
+  return {{"x", quantity(point.x(), "mm")}, {"y", quantity(point.y(), "mm")}};
+}
+
+Json edge_value(const solver::EdgeValue& value) {
+  Json object = quantity(value.stress, "MPa");
+  object["at"] = position(value.point);
+  object["edge_angle"] = quantity(value.angle * degrees_per_radian, "deg");
+  return object;
+}
+
+Json section(const solver::Section& s) {
+  const bool across = s.direction == solver::Section::Direction::across;
+  return {{"direction", across ? "across" : "along"},
+          {"line", across ? "x = station" : "y = station"},
+          {"station", quantity(s.station, "mm")},
+          {"gross_area", quantity(s.gross_area, "mm^2")},
+          {"net_area", quantity(s.net_area, "mm^2")},
+          {"net_centroid", quantity(s.net_centroid, "mm")},
+          {"net_second_moment_of_area", quantity(s.net_inertia, "mm^4")},
+          {"normal_force", quantity(s.normal_force, "N")},
+          {"shear_force", quantity(s.shear_force, "N")},
+          {"moment", quantity(s.moment, "N mm")}};
+}
+
+Json concentration(const solver::Concentration& kt) {
+  Json object{{"value", nullptr}, {"bound", nullptr}, {"unit", "1"}};
+  if (kt.kt) {
+    object = quantity(*kt.kt, "1");
+  } else {
+    object["why"] = kt.why.empty() ? "not defined" : kt.why;
+  }
+  object["nominal_stress"] = quantity(kt.nominal, "MPa");
+  object["definition"] = kt.definition;
+  return object;
+}
+
+Json findings(const solver::LoadFindings& load, const mesh::Plate& plate) {
+  Json holes = Json::array();
+  for (const solver::HoleFindings& found : load.holes) {
+    holes.push_back({{"hole", plate.holes.at(found.hole).name},
+                     {"largest_edge_stress", edge_value(found.largest)},
+                     {"smallest_edge_stress", edge_value(found.smallest)},
+                     {"largest_von_mises_stress", edge_value(found.von_mises)},
+                     {"kt_gross", concentration(found.gross)},
+                     {"kt_net", concentration(found.net)},
+                     {"section", section(found.section)}});
+  }
+  return {{"load", load.name}, {"holes", holes}};
+}
+
+Json hole(const mesh::Hole& h) {
+  return {{"name", h.name},
+          {"shape", mesh::word(h.shape)},
+          {"length", quantity(h.length, "mm")},
+          {"width", quantity(h.width, "mm")},
+          {"corner_radius", quantity(h.corner_radius, "mm")},
+          {"centre", position(h.centre)},
+          {"angle", quantity(h.angle * degrees_per_radian, "deg")}};
+}
+
+std::string_view edge_word(mesh::Owner::Kind edge) {
+  switch (edge) {
+    case mesh::Owner::Kind::top:
+      return "top";
+    case mesh::Owner::Kind::left:
+      return "left";
+    case mesh::Owner::Kind::bottom:
+      return "bottom";
+    default:
+      return "right";
+  }
+}
+
+Json load(const solver::Load& l, const mesh::Plate& plate) {
+  Json object{{"name", l.name}, {"kind", solver::word(l.kind)}, {"stress", quantity(l.stress, "MPa")}};
+  if (l.kind == solver::Load::Kind::pressure) object["hole"] = plate.holes.at(l.hole).name;
+  if (l.kind == solver::Load::Kind::edge) {
+    object["edge"] = edge_word(l.edge);
+    object["along"] = quantity(l.along, "MPa");
+  }
+  const solver::Resultant sum = solver::resultant(plate, l);
+  object["resultant"] = {{"force_x", quantity(sum.force.x(), "N")},
+                         {"force_y", quantity(sum.force.y(), "N")},
+                         {"moment", quantity(sum.moment, "N mm")}};
+  return object;
+}
+
+Json input(const Case& c) {
+  const mesh::Plate& plate = c.problem.plate;
+  const solver::HookeLaw& law = c.problem.material;
+  Json holes = Json::array(), loads = Json::array();
+  for (const mesh::Hole& h : plate.holes) holes.push_back(hole(h));
+  for (const solver::Load& l : c.problem.loads) loads.push_back(load(l, plate));
+  Json material{{"youngs_modulus", quantity(law.youngs_modulus, "MPa")},
+                {"poissons_ratio", quantity(law.poissons_ratio, "1")},
+                {"state", law.state == solver::PlaneState::stress ? "plane stress" : "plane strain"},
+                {"yield_strength", c.yield_strength ? quantity(*c.yield_strength, "MPa") : Json(nullptr)}};
+  return {{"plate",
+           {{"length", quantity(plate.length, "mm")},
+            {"width", quantity(plate.width, "mm")},
+            {"thickness", quantity(plate.thickness, "mm")}}},
+          {"material", material},
+          {"holes", holes},
+          {"loads", loads},
+          {"written", c.written}};
+}
+
+Json asked(const Result& result) {
+  Json list = Json::array();
+  for (const Answer& answer : answers(result.input, result.solution)) {
+    const std::string& name = answer.ask.name;
+    list.push_back({{"name", name.empty() ? Json(nullptr) : Json(name)},
+                    {"quantity", words(answer.ask.quantity)},
+                    {"hole", result.input.problem.plate.holes.at(answer.ask.hole).name},
+                    {"result", edge_value(answer.value)},
+                    {"tolerance", quantity(answer.ask.tolerance, "1")},
+                    {"largest_bound_allowed", quantity(answer.allowed, "MPa")},
+                    {"met", answer.met}});
+  }
+  return list;
+}
+
+Json published(const Result& result) {
+  const mesh::Plate& plate = result.input.problem.plate;
+  Json list = Json::array();
+  for (const validation::Comparison& line : result.published) {
+    const std::string_view unit = line.quantity.find("MPa") == std::string::npos ? "1" : "MPa";
+    const bool at_hole = line.hole < plate.holes.size();
+    list.push_back({{"hole", at_hole ? Json(plate.holes[line.hole].name) : Json(nullptr)},
+                    {"load", line.load},
+                    {"quantity", line.quantity},
+                    {"published", quantity(line.published, unit)},
+                    {"here", quantity(solver::Estimate{line.ours, line.bound}, unit)},
+                    {"relative_difference", quantity(line.difference, "1")},
+                    {"solution", line.solution},
+                    {"source", line.source},
+                    {"definition", line.definition},
+                    {"accuracy", line.accuracy},
+                    {"from_memory", line.from_memory},
+                    {"in_range", line.in_range},
+                    {"range_note", line.range_note}});
+  }
+  return list;
+}
+
+Json checks(const solver::PlateChecks& c) {
+  return {{"equilibrium_residual", quantity(c.equilibrium_residual, "1")},
+          {"reaction", quantity(c.reaction, "1")},
+          {"far_section",
+           {{"station", quantity(c.far_station, "mm")},
+            {"applied_mean_stress", quantity(c.far_applied, "MPa")},
+            {"recovered_mean_stress", quantity(c.far_recovered, "MPa")},
+            {"scatter", quantity(c.far_scatter, "1")}}},
+          {"strain_energy", quantity(c.strain_energy, "N mm")},
+          {"external_work", quantity(c.external_work, "N mm")}};
+}
+
+Json levels(const std::vector<solver::Level>& all) {
+  Json list = Json::array();
+  for (const solver::Level& level : all) {
+    list.push_back({{"refinement", level.refinement},
+                    {"degree", level.degree},
+                    {"triangles", level.triangles},
+                    {"unknowns", level.unknowns},
+                    {"peak", quantity(level.peak, "MPa")},
+                    {"bound_over_tolerance", quantity(level.worst, "1")},
+                    {"time", quantity(level.seconds, "s")}});
+  }
+  return list;
+}
+
+Json document(const Result& result) {
+  const solver::Solution& solution = result.solution;
+  const Provenance& from = result.provenance;
+  const bool settled = solution.status == solver::Solution::Status::settled;
+  Json loads = Json::array();
+  loads.push_back(findings(solution.combined, result.input.problem.plate));
+  for (const solver::LoadFindings& unit : solution.units) {
+    loads.push_back(findings(unit, result.input.problem.plate));
+  }
+  return {{"format", "raiser result"},
+          {"format_version", json_format},
+          {"provenance",
+           {{"program", "raiser"},
+            {"version", from.version},
+            {"compiler", from.compiler},
+            {"case_file", from.case_file},
+            {"case_sha256", from.case_sha256.empty() ? Json(nullptr) : Json(from.case_sha256)}}},
+          {"title", result.input.title},
+          {"status", words(solution.status)},
+          {"reason", settled ? Json(nullptr) : Json(solution.reason)},
+          {"asked", asked(result)},
+          {"results", loads},
+          {"published", published(result)},
+          {"checks", checks(solution.checks)},
+          {"discretisation",
+           {{"degree", solution.degree},
+            {"unknowns", solution.unknowns},
+            {"triangles", solution.triangles},
+            {"mirror_x", solution.mirrors_used.x},
+            {"mirror_y", solution.mirrors_used.y},
+            {"time", quantity(solution.seconds, "s")}}},
+          {"levels", levels(solution.levels)},
+          {"input", input(result.input)}};
+}
+
+// Bytes that are no UTF-8 (a file name may hold any) become U+FFFD.
+std::string text(const Json& object) { return object.dump(1, ' ', false, Json::error_handler_t::replace); }
+
+}  // namespace
+
+std::string json(const Result& result) { return text(document(result)) + "\n"; }
+
+std::string json_entry(const Outcome& outcome, const std::vector<std::string>& faults,
+                       std::string_view result) {
+  const Json head{{"case_file", outcome.case_file},
+                  {"exit_code", outcome.exit_code},
+                  {"status", outcome.status},
+                  {"faults", faults}};
+  std::string entry = text(head);
+  entry.erase(entry.rfind('}'));
+  while (entry.back() == '\n') entry.pop_back();
+  while (!result.empty() && result.back() == '\n') result.remove_suffix(1);
+  entry += ",\n \"result\": ";
+  entry += result.empty() ? std::string_view("null") : result;
+  return entry + "\n}";
+}
+
+std::string json_begin() {
+  std::string head =
+      text({{"format", "raiser results"}, {"format_version", json_format}, {"version", version()}});
+  head.erase(head.rfind('}'));
+  while (head.back() == '\n') head.pop_back();
+  return head + ",\n \"cases\": [\n";
+}
+
+std::string_view json_between() { return ",\n"; }
+
+std::string_view json_end() { return "\n]}\n"; }
+
+}  // namespace raiser::io

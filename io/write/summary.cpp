@@ -1,0 +1,76 @@
+#include "io/write/summary.hpp"
+
+#include <fmt/format.h>
+
+#include <algorithm>
+#include <cmath>
+#include <map>
+
+#include "io/write/layout.hpp"
+
+namespace raiser::io {
+namespace {
+
+constexpr std::size_t case_width = 22;
+constexpr std::size_t status_width = 12;
+
+// The end of a path tells cases apart better than its beginning.
+std::string path_text(const std::string& path, std::size_t width) {
+  const std::string text = plain(path);
+  if (columns(text) <= width) return text;
+  std::size_t drop = columns(text) - width + 1, at = 0;
+  while (at < text.size() && (drop > 0 || (static_cast<unsigned char>(text[at]) & 0xC0U) == 0x80U)) {
+    ++at;
+    if (at < text.size() && (static_cast<unsigned char>(text[at]) & 0xC0U) != 0x80U) --drop;
+  }
+  return "…" + text.substr(at);
+}
+
+const solver::HoleFindings& worst(const Outcome& outcome) {
+  return *std::max_element(outcome.holes.begin(), outcome.holes.end(),
+                           [](const auto& a, const auto& b) { return peak(a) < peak(b); });
+}
+
+std::string kt_text(const solver::Concentration& kt) { return kt.kt ? solver::digits(*kt.kt) : "-"; }
+
+std::string line(const Outcome& outcome) {
+  const std::string head =
+      left(path_text(outcome.case_file, case_width - 1), case_width) + left(outcome.status, status_width);
+  if (outcome.holes.empty()) {
+    return head + shortened(plain(outcome.message), page_width - case_width - status_width) + "\n";
+  }
+  const solver::HoleFindings& found = worst(outcome);
+  const std::size_t index = static_cast<std::size_t>(&found - outcome.holes.data());
+  const bool upper = std::abs(found.largest.stress.value) >= std::abs(found.smallest.stress.value);
+  return fmt::format("{}{}{}{}{}\n", head, left(shortened(plain(outcome.hole_names[index]), 11), 12),
+                     right(fitted(upper ? found.largest.stress : found.smallest.stress, 17), 17),
+                     right(kt_text(found.gross), 9), right(kt_text(found.net), 8));
+}
+
+}  // namespace
+
+std::string tally(const std::vector<Outcome>& outcomes) {
+  std::map<int, std::pair<std::string, std::size_t>> counted;  // by exit code
+  for (const Outcome& outcome : outcomes) {
+    auto& [status, number] = counted[outcome.exit_code];
+    status = outcome.status;
+    ++number;
+  }
+  std::string text = fmt::format("{} case{}", count(outcomes.size()), outcomes.size() == 1 ? "" : "s");
+  const char* separator = ": ";
+  for (const auto& [code, entry] : counted) {
+    text += fmt::format("{}{} {}", separator, count(entry.second), entry.first);
+    separator = ", ";
+  }
+  return text;
+}
+
+std::string summary_table(const std::vector<Outcome>& outcomes) {
+  std::string text =
+      fmt::format("{}{}{}{}{}{}\n", left("case", case_width), left("status", status_width),
+                  left("worst hole", 12), right("peak, MPa", 17), right("Kt gross", 9), right("net", 8));
+  for (const Outcome& outcome : outcomes) text += line(outcome);
+  return text + "\n" + wrapped(tally(outcomes));
+}
+
+}  // namespace raiser::io

@@ -1,0 +1,116 @@
+#include "io/write/table.hpp"
+
+#include <fmt/format.h>
+
+#include <algorithm>
+#include <cmath>
+
+#include "io/write/layout.hpp"
+#include "io/write/table_parts.hpp"
+
+namespace raiser::io {
+namespace {
+
+std::string coloured(std::string_view text, std::string_view code, bool colour) {
+  return colour ? fmt::format("\x1b[{}m{}\x1b[0m", code, text) : std::string(text);
+}
+
+std::string load_text(const solver::Load& load) {
+  std::string text = fmt::format("{} {} MPa", solver::word(load.kind), brief(load.stress));
+  if (load.kind == solver::Load::Kind::edge && load.along != 0.0) {
+    text += fmt::format(" and {} MPa along", brief(load.along));
+  }
+  const std::string name = plain(load.name);
+  return name.empty() || name == solver::word(load.kind) ? text : fmt::format("{} ({})", name, text);
+}
+
+std::string heading(const Case& input) {
+  constexpr std::size_t shown = 6;
+  const mesh::Plate& plate = input.problem.plate;
+  const solver::HookeLaw& material = input.problem.material;
+  const auto& loads = input.problem.loads;
+  std::string text = input.title.empty() ? "" : wrapped(plain(input.title));
+  text += wrapped(fmt::format("Plate {} x {} x {} mm, plane {}, E = {} MPa, nu = {}; {} hole{}",
+                              brief(plate.length), brief(plate.width), brief(plate.thickness),
+                              material.state == solver::PlaneState::stress ? "stress" : "strain",
+                              brief(material.youngs_modulus), brief(material.poissons_ratio),
+                              plate.holes.size(), plate.holes.size() == 1 ? "" : "s"));
+  std::string list;
+  for (std::size_t i = 0; i < std::min(loads.size(), shown); ++i) {
+    list += (i == 0 ? "" : ", ") + load_text(loads[i]);
+  }
+  if (loads.size() > shown) list += fmt::format(" and {} more", loads.size() - shown);
+  return text + wrapped(list, loads.size() == 1 ? "Load: " : "Loads: ", 7);
+}
+
+std::string status_lines(const Result& result, bool colour) {
+  const bool settled = result.solution.status == solver::Solution::Status::settled;
+  std::string text = settled ? wrapped("every asked number is within its tolerance.", "SETTLED: ", 9)
+                             : wrapped(plain(result.solution.reason), "NOT MET: ", 9);
+  const std::size_t word = 7;  // both words are as long
+  return coloured(text.substr(0, word), settled ? "1;32" : "1;31", colour) + text.substr(word);
+}
+
+std::string asked_lines(const Result& result) {
+  constexpr std::size_t shown = 12;
+  std::string text;
+  std::size_t left_out = 0, lines = 0;
+  for (const Answer& answer : answers(result.input, result.solution)) {
+    if (answer.ask.name.empty() && answer.met) continue;
+    if (++lines > shown && ++left_out > 0) continue;
+    const std::string& hole = result.input.problem.plate.holes.at(answer.ask.hole).name;
+    const std::string name = answer.ask.name.empty() ? "" : plain(answer.ask.name) + ": ";
+    text += wrapped(fmt::format("{}{} at {} {} MPa, tolerance {} {}", name, words(answer.ask.quantity),
+                                plain(hole), with_bound(answer.value.stress), percent(answer.ask.tolerance),
+                                answer.met ? "met" : "NOT MET"),
+                    "  ", 4);
+  }
+  if (left_out > 0) text += fmt::format("  and {} more\n", left_out);
+  return text.empty() ? text : "\nAsked\n" + text;
+}
+
+}  // namespace
+
+std::string yield_remark(const Case& input, const solver::LoadFindings& findings) {
+  if (!input.yield_strength || findings.holes.empty()) return "";
+  const auto worst = std::max_element(
+      findings.holes.begin(), findings.holes.end(),
+      [](const auto& a, const auto& b) { return a.von_mises.stress.value < b.von_mises.stress.value; });
+  const solver::Estimate& largest = worst->von_mises.stress;
+  const std::string hole = plain(input.problem.plate.holes.at(worst->hole).name);
+  if (largest.value + largest.bound < *input.yield_strength) {
+    return fmt::format("the largest von Mises stress is {} of the yield strength ({} MPa), at hole {}.",
+                       percent(largest.value / *input.yield_strength), brief(*input.yield_strength), hole);
+  }
+  return fmt::format(
+      "elastic peak above yield is fictitious: the largest von Mises stress, {} MPa at hole {}, {} the yield "
+      "strength of {} MPa. The material yields there and sheds load; take the peak as a measure for fatigue "
+      "or for "
+      "an estimate of local plasticity, not as a stress that occurs.",
+      solver::digits(largest), hole,
+      largest.value - largest.bound > *input.yield_strength ? "exceeds" : "may exceed",
+      brief(*input.yield_strength));
+}
+
+std::string_view cautions() {
+  return "linear elastic, two-dimensional, nominal geometry, no residual stress. Not a substitute for the "
+         "codes that "
+         "apply where the part is used, nor for the judgement of a licensed engineer.";
+}
+
+std::string table(const Result& result, const TableStyle& style) {
+  const std::string yield = yield_remark(result.input, result.solution.combined);
+  std::string text = heading(result.input);
+  text += fmt::format("\n{}", status_lines(result, style.colour));
+  text += asked_lines(result);
+  text += holes_part(result, style.rest);
+  text += loads_part(result);
+  text += published_part(result, style.rest);
+  text += checks_part(result.solution);
+  text += "\n";
+  if (!yield.empty()) text += wrapped(yield, "Yield: ", 7);
+  text += wrapped(cautions(), "Caution: ", 9);
+  return text;
+}
+
+}  // namespace raiser::io

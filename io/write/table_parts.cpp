@@ -1,0 +1,188 @@
+#include "io/write/table_parts.hpp"
+
+#include <fmt/format.h>
+
+#include <algorithm>
+#include <cmath>
+#include <numbers>
+
+#include "io/write/layout.hpp"
+#include "io/write/table.hpp"
+
+namespace raiser::io {
+namespace {
+
+constexpr std::size_t holes_in_full = 3;
+
+// A coordinate to a thousandth of the hole's size, never "-0".
+std::string place_text(double value, double size) {
+  const int decimals = std::clamp(static_cast<int>(std::ceil(3.0 - std::log10(size))), 0, 9);
+  const double rounded = std::round(value * std::pow(10.0, decimals)) / std::pow(10.0, decimals);
+  return fmt::format("{:.{}f}", rounded == 0.0 ? 0.0 : rounded, decimals);
+}
+
+std::string degrees_text(double angle) {
+  const double rounded = std::round(angle * 1800.0 / std::numbers::pi) / 10.0;
+  return fmt::format("{:.1f}", rounded == 0.0 ? 0.0 : rounded);
+}
+
+std::string shape_text(const mesh::Hole& hole) {
+  std::string text = std::string(mesh::word(hole.shape));
+  if (hole.shape == mesh::HoleShape::circle) {
+    text += fmt::format(", diameter {} mm", brief(hole.length));
+  } else {
+    text += fmt::format(", {} x {} mm", brief(hole.length), brief(hole.width));
+    if (hole.corner_radius > 0) text += fmt::format(", corner radius {} mm", brief(hole.corner_radius));
+    text += fmt::format(", at {} deg", brief(hole.angle * 180.0 / std::numbers::pi, 4));
+  }
+  return text + fmt::format(", centre ({}, {}) mm", brief(hole.centre.x()), brief(hole.centre.y()));
+}
+
+std::string edge_line(std::string_view name, const solver::EdgeValue& value, double size) {
+  return fmt::format("  {}{}{}{}{}{}\n", left(name, 22), right(value_text(value.stress), 12),
+                     right(bound_text(value.stress), 9), right(place_text(value.point.x(), size), 11),
+                     right(place_text(value.point.y(), size), 11), right(degrees_text(value.angle), 11));
+}
+
+std::string concentration_line(std::string_view name, const solver::Concentration& kt) {
+  if (!kt.kt) return wrapped(plain(kt.why), fmt::format("  {} undefined: ", name), 13);
+  return wrapped(fmt::format("on {} MPa = {}", brief(kt.nominal), plain(kt.definition)),
+                 fmt::format("  {} {}  ", name, with_bound(*kt.kt)), 13);
+}
+
+std::string section_line(const solver::Section& section) {
+  const bool across = section.direction == solver::Section::Direction::across;
+  return wrapped(
+      fmt::format("gross {} mm2, net {} mm2; normal force {} N, shear force {} N, moment {} N mm",
+                  brief(section.gross_area), brief(section.net_area), brief(section.normal_force, 5),
+                  brief(section.shear_force, 5), brief(section.moment, 5)),
+      fmt::format("  section {} = {} mm: ", across ? "x" : "y", brief(section.station)), 13);
+}
+
+std::string hole_in_full(const mesh::Hole& hole, const solver::HoleFindings& found) {
+  const double size = std::min(hole.length, hole.width);
+  std::string text(1, '\n');
+  text += wrapped(shape_text(hole), fmt::format("Hole {}: ", plain(hole.name)), 2);
+  text += fmt::format("  {}{}{}{}{}{}\n", left("", 22), right("MPa", 12), right("± MPa", 9),
+                      right("x, mm", 11), right("y, mm", 11), right("angle, deg", 11));
+  text += edge_line("largest edge stress", found.largest, size);
+  text += edge_line("smallest edge stress", found.smallest, size);
+  text += edge_line("largest von Mises", found.von_mises, size);
+  text += concentration_line("Kt gross", found.gross);
+  text += concentration_line("Kt net  ", found.net);
+  return text + section_line(found.section);
+}
+
+std::string kt_text(const solver::Concentration& kt) { return kt.kt ? value_text(*kt.kt) : "-"; }
+
+std::string hole_line(const mesh::Hole& hole, const solver::HoleFindings& found) {
+  return fmt::format("  {}{}{}{}{}{}\n", left(shortened(plain(hole.name), 12), 12),
+                     right(fitted(found.largest.stress, 17), 17),
+                     right(fitted(found.smallest.stress, 17), 17),
+                     right(fitted(found.von_mises.stress, 16), 16), right(kt_text(found.gross), 8),
+                     right(kt_text(found.net), 8));
+}
+
+std::string hole_lines_head(std::string_view title) {
+  return fmt::format("\n{}\n  {}{}{}{}{}{}\n", title, left("", 12), right("largest edge", 17),
+                     right("smallest edge", 17), right("von Mises", 16), right("Kt", 8), right("Kt", 8)) +
+         fmt::format("  {}{}{}{}{}{}\n", left("", 12), right("MPa", 17), right("MPa", 17), right("MPa", 16),
+                     right("gross", 8), right("net", 8));
+}
+
+std::string comparison_lines(const validation::Comparison& line, const mesh::Plate& plate, bool name_load) {
+  const std::string where = line.hole < plate.holes.size() ? plain(plate.holes[line.hole].name) : "plate";
+  std::string figures = fmt::format("published {}, here {}, {} {}", brief(line.published, 5),
+                                    with_bound({line.ours, line.bound}), percent(std::abs(line.difference)),
+                                    line.difference < 0 ? "lower" : "higher");
+  if (name_load) figures += fmt::format(", under {}", plain(line.load));
+  std::string source = line.source;
+  if (!line.accuracy.empty()) source += "; accuracy: " + line.accuracy;
+  if (line.from_memory) source += "; figures from memory";
+  std::string text = wrapped(figures, fmt::format("  {} at {}: ", line.quantity, where), 4);
+  if (!line.in_range) text += wrapped("outside its range: " + line.range_note, "    ", 4);
+  if (line.in_range && !line.range_note.empty()) text += wrapped(line.range_note, "    ", 4);
+  return text + wrapped(source, "    ", 4);
+}
+
+}  // namespace
+
+std::string holes_part(const Result& result, const std::string& rest) {
+  const auto& holes = result.solution.combined.holes;
+  const mesh::Plate& plate = result.input.problem.plate;
+  const std::vector<std::size_t> order = worst_first(result.solution.combined);
+  const std::size_t full = holes.size() <= holes_in_full ? holes.size() : 1;
+  std::string text;
+  for (std::size_t i = 0; i < full; ++i)
+    text += hole_in_full(plate.holes.at(holes[order[i]].hole), holes[order[i]]);
+  if (full == holes.size()) return text;
+  const std::size_t shown = std::min(holes.size(), table_holes);
+  text += hole_lines_head("The other holes, worst first");
+  for (std::size_t i = full; i < shown; ++i)
+    text += hole_line(plate.holes.at(holes[order[i]].hole), holes[order[i]]);
+  if (shown < holes.size()) {
+    const std::string where = rest.empty() ? "" : ": see " + rest;
+    text += wrapped(
+        fmt::format("and {} more holes, none of them worse{}", count(holes.size() - shown), where), "  ", 2);
+  }
+  return text;
+}
+
+std::string loads_part(const Result& result) {
+  const auto& units = result.solution.units;
+  const auto& combined = result.solution.combined;
+  if (units.size() < 2 || combined.holes.empty()) return "";
+  constexpr std::size_t most = 12;
+  const std::size_t worst = combined.holes[worst_first(combined).front()].hole;
+  std::string text;
+  for (std::size_t i = 0; i < std::min(units.size(), most); ++i) {
+    const auto& holes = units[i].holes;
+    const auto at =
+        std::find_if(holes.begin(), holes.end(), [&](const auto& found) { return found.hole == worst; });
+    if (at == holes.end()) continue;
+    mesh::Hole named;
+    named.name = units[i].name;
+    text += hole_line(named, *at);
+  }
+  if (units.size() > most) text += fmt::format("  and {} more loads\n", count(units.size() - most));
+  const std::string hole = plain(result.input.problem.plate.holes.at(worst).name);
+  return hole_lines_head(fmt::format("Each load by itself, at hole {}", hole)) + text;
+}
+
+std::string published_part(const Result& result, const std::string& rest) {
+  constexpr std::size_t most = 6;
+  if (result.published.empty()) return "";
+  std::string text = "\nPublished values beside these\n";
+  const std::size_t shown = std::min(result.published.size(), most);
+  for (std::size_t i = 0; i < shown; ++i) {
+    text +=
+        comparison_lines(result.published[i], result.input.problem.plate, result.solution.units.size() > 1);
+  }
+  if (shown == result.published.size()) return text;
+  const std::string where = rest.empty() ? "" : ": see " + rest;
+  return text + wrapped(fmt::format("and {} more{}", count(result.published.size() - shown), where), "  ", 2);
+}
+
+std::string checks_part(const solver::Solution& solution) {
+  const solver::PlateChecks& checks = solution.checks;
+  std::string text = "\nChecks\n";
+  text += wrapped(
+      fmt::format("mean stress at x = {} mm: {} MPa from the loads, {} MPa recovered; departure from the "
+                  "nominal distribution {}",
+                  brief(checks.far_station, 4), brief(checks.far_applied), brief(checks.far_recovered),
+                  percent(checks.far_scatter)),
+      "  ", 4);
+  text += wrapped(fmt::format("equilibrium residual {}, reactions {} of the applied force",
+                              brief(checks.equilibrium_residual, 2), brief(checks.reaction, 2)),
+                  "  ", 4);
+  text += wrapped(fmt::format("strain energy {} N mm, work of the loads {} N mm",
+                              brief(checks.strain_energy, 8), brief(checks.external_work, 8)),
+                  "  ", 4);
+  text += wrapped(fmt::format("degree {}, {} triangles over {}, {} unknowns, {} levels, {} s",
+                              solution.degree, count(solution.triangles), solved_part(solution.mirrors_used),
+                              count(solution.unknowns), solution.levels.size(), brief(solution.seconds, 2)),
+                  "  ", 4);
+  return text;
+}
+
+}  // namespace raiser::io

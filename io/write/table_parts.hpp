@@ -1,0 +1,24 @@
+#pragma once
+
+#include <string>
+
+#include "io/write/result.hpp"
+
+namespace raiser::io {
+
+// The parts of table(), each a block of lines that begins with an empty one,
+// or nothing when there is nothing to say.
+
+/// The holes, worst first: in full where there is room, else a line for each.
+std::string holes_part(const Result& result, const std::string& rest);
+
+/// What each of several loads does by itself at the worst hole.
+std::string loads_part(const Result& result);
+
+/// Published values beside the answers.
+std::string published_part(const Result& result, const std::string& rest);
+
+/// Checks on the whole plate and how it was computed.
+std::string checks_part(const solver::Solution& solution);
+
+}  // namespace raiser::io
