@@ -1,0 +1,71 @@
+#include "io/command/files.hpp"
+
+#include <fmt/format.h>
+
+#include <map>
+#include <set>
+
+#include "io/write/csv.hpp"
+#include "io/write/file.hpp"
+#include "io/write/vtu.hpp"
+
+namespace raiser::io {
+namespace {
+
+// One name for one place, whatever way it is written.
+std::string place(const std::filesystem::path& path) {
+  std::error_code error;
+  const std::filesystem::path found =
+      std::filesystem::weakly_canonical(std::filesystem::absolute(path), error);
+  return error ? path.lexically_normal().string() : found.string();
+}
+
+}  // namespace
+
+Target target_of(const std::filesystem::path& case_file, const std::filesystem::path& folder) {
+  return {folder.empty() ? case_file.parent_path() : folder, case_file.stem().string()};
+}
+
+const std::vector<std::string>& result_suffixes() {
+  static const std::vector<std::string> suffixes{".vtu", ".json",     ".png",
+                                                 ".svg", "-edge.csv", "-ligament.csv"};
+  return suffixes;
+}
+
+std::vector<std::string> clashes(const std::vector<std::filesystem::path>& cases,
+                                 const std::filesystem::path& folder) {
+  std::vector<std::string> found;
+  std::map<std::string, std::filesystem::path> owners;
+  std::set<std::string> inputs;
+  for (const auto& file : cases) inputs.insert(place(file));
+  for (const auto& file : cases) {
+    const Target target = target_of(file, folder);
+    const std::string base = place(target.folder / target.stem);
+    const auto [owner, is_new] = owners.emplace(base, file);
+    if (!is_new) {
+      found.push_back(
+          fmt::format("{} and {} would both write {}.json and the like; rename one, or solve them apart "
+                      "with a different --out",
+                      owner->second.string(), file.string(), (target.folder / target.stem).string()));
+    }
+    for (const std::string& suffix : result_suffixes()) {
+      if (inputs.count(base + suffix) == 0) continue;
+      found.push_back(fmt::format("{} would overwrite the case file {}; rename that case to end in .toml",
+                                  file.string(), (target.folder / (target.stem + suffix)).string()));
+    }
+  }
+  return found;
+}
+
+std::vector<std::filesystem::path> write_results(const Result& result, const std::string& json_text,
+                                                 const Target& target) {
+  Staging staging(target.folder);
+  const auto path = [&](const char* suffix) { return staging.path(target.stem + suffix); };
+  write_file(path(".vtu"), vtu(cells_of(result.solution.field), result.provenance));
+  write_file(path(".json"), json_text);
+  write_file(path("-edge.csv"), edge_csv(result.input, result.solution));
+  write_file(path("-ligament.csv"), ligament_csv(result.input, result.solution));
+  return staging.publish();
+}
+
+}  // namespace raiser::io

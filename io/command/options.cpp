@@ -1,0 +1,133 @@
+#include "io/command/options.hpp"
+
+#include <CLI/CLI.hpp>
+#include <algorithm>
+
+#include "io/write/provenance.hpp"
+
+namespace raiser::io {
+namespace {
+
+constexpr const char* general_help = R"(raiser: how far holes raise the stress in a plate
+
+usage: raiser solve CASE... [--out DIR] [--json] [--quiet] [--no-files]
+       raiser check CASE... [--quiet]
+       raiser --help | --version
+
+  solve   solve case files; print peak stresses and Kt, each with an error
+          bound, and write result files
+  check   read and validate case files; print them as understood, with every
+          default and unit
+
+`raiser solve --help` and `raiser check --help` say more.
+
+examples:
+  raiser check hanger.toml
+  raiser solve hanger.toml
+  raiser solve plates/*.toml --out results
+  raiser solve hanger.toml --json | jq '.cases[0].result.results[0]'
+)";
+
+constexpr const char* exit_codes = R"(
+exit codes:
+    0  settled: every asked number is within its tolerance
+    2  the command line is wrong
+    3  a case file cannot be read or breaks the format
+    4  a plate or its loads are not legal
+    5  a tolerance was not met; the reason is given
+    6  an asked number does not exist (reserved)
+    7  of several cases, some did not end with 0
+    8  a result could not be written
+  130  interrupted
+)";
+
+constexpr const char* solve_help = R"(usage: raiser solve CASE... [--out DIR] [--json] [--quiet] [--no-files]
+
+Solves each case file. One case prints its table; several print one line each
+and end in one summary. A faulty case stops no other.
+
+  CASE         case files (TOML)
+  --out DIR    write results into DIR instead of beside each case; DIR is made
+               where it is missing
+  --json       print one JSON document instead of the table
+  --quiet      print no table and no remarks, only faults
+  --no-files   write no result files
+
+Results of STEM.toml: STEM.vtu (field), STEM.json (every number), STEM.png and
+STEM.svg (picture), STEM-edge.csv (stress along the holes), STEM-ligament.csv
+(stress along the ligaments). Several cases also give summary.csv, in DIR or
+beside the first case. Older results of the same names are replaced.
+
+Data goes to standard output, all else to standard error. NO_COLOR is honoured.
+Ctrl-C drops the case being solved and keeps those that are done.
+
+examples:
+  raiser solve hanger.toml
+  raiser solve plates/*.toml --out results
+  raiser solve hanger.toml --json --no-files > hanger.json
+)";
+
+constexpr const char* check_help = R"(usage: raiser check CASE... [--quiet]
+
+Reads and validates each case file, and prints the case as understood: every
+value with its unit, every default marked as one. Nothing is solved or written.
+
+  CASE      case files (TOML)
+  --quiet   print only faults
+
+example:
+  raiser check hanger.toml
+)";
+
+void add_cases(CLI::App& command, std::vector<std::string>& cases) {
+  command.set_help_flag("-h,--help");
+  command.add_option("CASE", cases)->required();
+}
+
+Reply usage_fault(std::string what, const CLI::App& solve, const CLI::App& check) {
+  const char* command = solve.parsed() ? "raiser solve" : check.parsed() ? "raiser check" : "raiser";
+  what.erase(std::find(what.begin(), what.end(), '\n'), what.end());
+  if (what == "CASE is required") what = "no case file is named";
+  return {std::string(command) + ": " + what + "; see " + command + " --help\n", Exit::usage};
+}
+
+}  // namespace
+
+std::variant<Options, Reply> parse(const std::vector<std::string>& arguments) {
+  Options options;
+  std::vector<std::string> cases;
+  std::string folder;
+  CLI::App app("raiser", "raiser");
+  app.set_help_flag("-h,--help");
+  app.set_version_flag("--version", "raiser " + version());
+  app.require_subcommand(1);
+  CLI::App& solve = *app.add_subcommand("solve");
+  CLI::App& check = *app.add_subcommand("check");
+  add_cases(solve, cases);
+  add_cases(check, cases);
+  CLI::Option* out = solve.add_option("-o,--out", folder);
+  bool no_files = false;
+  solve.add_flag("--json", options.json);
+  solve.add_flag("--no-files", no_files);
+  for (CLI::App* command : {&solve, &check}) command->add_flag("-q,--quiet", options.quiet);
+  if (arguments.empty()) return Reply{general_help, Exit::usage};
+  try {
+    app.parse(std::vector<std::string>(arguments.rbegin(), arguments.rend()));
+  } catch (const CLI::CallForHelp&) {
+    if (solve.parsed()) return Reply{std::string(solve_help) + exit_codes, Exit::settled};
+    if (check.parsed()) return Reply{std::string(check_help) + exit_codes, Exit::settled};
+    return Reply{std::string(general_help) + exit_codes, Exit::settled};
+  } catch (const CLI::CallForVersion&) {
+    return Reply{"raiser " + version() + "\n", Exit::settled};
+  } catch (const CLI::ParseError& error) {
+    return usage_fault(error.what(), solve, check);
+  }
+  if (out->count() > 0 && folder.empty()) return usage_fault("--out names no folder", solve, check);
+  options.command = check.parsed() ? Options::Command::check : Options::Command::solve;
+  options.cases.assign(cases.begin(), cases.end());
+  options.files = !no_files;
+  if (out->count() > 0) options.folder = folder;
+  return options;
+}
+
+}  // namespace raiser::io
