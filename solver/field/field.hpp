@@ -1,16 +1,15 @@
 #pragma once
 
+#include <Eigen/Core>
 #include <optional>
 #include <span>
 #include <vector>
 
 #include "mesh/mesh.hpp"
-#include "mesh/region/region.hpp"
 #include "solver/elasticity/hooke_law.hpp"
+#include "solver/fe/model.hpp"
 
 namespace raiser::solver {
-
-using mesh::Point;
 
 /// Displacement and stress at one point.
 struct FieldValue {
@@ -19,20 +18,43 @@ struct FieldValue {
   Stress stress;                       ///< MPa, straight from the displacement, not smoothed
 };
 
-/// The solved field of one load combination over the whole plate, mirror
-/// images included. A cell is one curved triangle; its reference coordinates
-/// (r, s) lie in r, s >= 0, r + s <= 1, corners (0,0), (1,0), (0,1) in
-/// anticlockwise order. Immutable; safe to read from several threads.
+/// The solved field of all loads together over the whole plate, mirror images
+/// included. A cell is one curved triangle; its reference coordinates (r, s)
+/// lie in r, s >= 0, r + s <= 1, corners (0,0), (1,0), (0,1) anticlockwise.
+/// Immutable; safe to read from several threads.
 class Field {
  public:
-  std::size_t cells() const;
-  int degree() const;
+  Field(const Model& model, const Displacements& displacements);
 
-  /// Values at the same reference points of cell `cell`, in order.
+  std::size_t cells() const { return images_.size() * mesh_.triangles().size(); }
+  int degree() const { return degree_; }
+
+  /// Values at reference points of cell `cell`, in order.
   std::vector<FieldValue> sample(std::size_t cell, std::span<const Point> reference) const;
 
-  /// Value at a point of the plate; nothing outside the material.
+  /// Value at a point of the plate; nothing outside the material. A point on
+  /// a side that two cells share takes either's.
   std::optional<FieldValue> at(const Point& x) const;
+
+ private:
+  struct Place {
+    int triangle;
+    Point reference;
+  };
+  void build_grid();
+  std::size_t grid_cell(const Point& x) const;
+  std::optional<Place> locate(const Point& x) const;
+  std::vector<FieldValue> evaluate(std::size_t image, int triangle, std::span<const Point> reference) const;
+
+  mesh::Mesh mesh_;
+  HookeLaw material_;
+  int degree_;
+  std::vector<Image> images_;
+  std::vector<Eigen::MatrixX2d> coefficients_;  ///< by image: one row a function
+  Point origin_ = Point::Zero();
+  double grid_size_ = 1.0;
+  std::size_t columns_ = 1;
+  std::vector<std::vector<int>> grid_;  ///< triangles whose box meets a grid cell
 };
 
 }  // namespace raiser::solver

@@ -1,0 +1,185 @@
+#include <algorithm>
+#include <cmath>
+
+#include "mesh/triangulate/size_rule.hpp"
+
+namespace raiser::mesh {
+namespace {
+
+/// One piece of boundary with its chord.
+struct Piece {
+  Curve curve;
+  Point from, to;
+  Point inward;  ///< unit normal of the chord, into the material
+  double length;
+  std::size_t loop;
+
+  Piece(const Curve& c, std::size_t l) : curve(c), from(c.at(c.begin)), to(c.at(c.end)), loop(l) {
+    const Point chord = to - from;
+    length = chord.norm();
+    inward = Point(-chord.y(), chord.x()) / length;
+  }
+  bool on_mirror() const {
+    return curve.owner.kind == Owner::Kind::mirror_x || curve.owner.kind == Owner::Kind::mirror_y;
+  }
+};
+
+std::pair<Curve, Curve> split_at(const Curve& curve, double fraction) {
+  Curve first = curve;
+  Curve second = curve;
+  first.end = second.begin = curve.begin + fraction * (curve.end - curve.begin);
+  return {first, second};
+}
+
+double turning(const Curve& curve) {
+  const Point a = curve.derivative(curve.begin);
+  const Point b = curve.derivative(curve.end);
+  return std::abs(std::atan2(a.x() * b.y() - a.y() * b.x(), a.dot(b)));
+}
+
+void divide_by_turn(const Curve& curve, double limit, std::size_t loop, std::vector<Piece>& out) {
+  const bool is_long =
+      curve.kind == Curve::Kind::arc && (turning(curve) > limit || std::abs(curve.end - curve.begin) > 3.0);
+  if (!is_long) {
+    out.emplace_back(curve, loop);
+    return;
+  }
+  const auto [first, second] = split_at(curve, 0.5);
+  divide_by_turn(first, limit, loop, out);
+  divide_by_turn(second, limit, loop, out);
+}
+
+/// Shortest way between two chords: its length and unit direction from a to b.
+struct Way {
+  double length;
+  Point direction;
+};
+Point nearest_on(const Piece& piece, const Point& x) {
+  const Point chord = piece.to - piece.from;
+  const double t = std::clamp((x - piece.from).dot(chord) / chord.squaredNorm(), 0.0, 1.0);
+  return piece.from + t * chord;
+}
+Way way(const Piece& a, const Piece& b) {
+  Point best = b.from - nearest_on(a, b.from);
+  for (const Point& d : {Point(b.to - nearest_on(a, b.to)), Point(nearest_on(b, a.from) - a.from),
+                         Point(nearest_on(b, a.to) - a.to)})
+    if (d.squaredNorm() < best.squaredNorm()) best = d;
+  const double length = best.norm();
+  return {length, length > 0 ? Point(best / length) : Point::Zero()};
+}
+
+/// Whether `piece` is too long beside `other`. Pieces of boundary limit each
+/// other across the material between them. A mirror line lies inside the
+/// material: it limits as half a ligament and is graded like the triangles.
+bool is_too_long(const Piece& piece, const Piece& other, const SizeRule& rule) {
+  const Way between = way(piece, other);
+  if (between.length == 0.0) return piece.length > (piece.on_mirror() ? 2.0 : rule.neighbour) * other.length;
+  if (piece.on_mirror() && piece.length > 2.0 * other.length + rule.growth * between.length) return true;
+  constexpr double facing = 0.1;
+  if (between.direction.dot(piece.inward) < facing || -between.direction.dot(other.inward) < facing)
+    return false;
+  if (piece.on_mirror() && other.on_mirror()) return false;
+  const double gap = (piece.on_mirror() || other.on_mirror() ? 2.0 : 1.0) * between.length;
+  return piece.length > rule.ligament * gap;
+}
+
+/// Splits in halves every piece that is too long, once. Returns whether any was.
+bool split_pass(std::vector<Piece>& pieces, const SizeRule& rule) {
+  std::vector<std::size_t> order(pieces.size());
+  std::vector<double> low(pieces.size());
+  double longest = 0.0;
+  for (std::size_t i = 0; i < pieces.size(); ++i) {
+    order[i] = i;
+    low[i] = std::min(pieces[i].from.x(), pieces[i].to.x());
+    longest = std::max(longest, std::abs(pieces[i].from.x() - pieces[i].to.x()));
+  }
+  std::sort(order.begin(), order.end(), [&](std::size_t a, std::size_t b) { return low[a] < low[b]; });
+  const double reach_factor = std::max(1.0 / rule.ligament, 1.0 / rule.growth) * 1.01;
+  std::vector<bool> split(pieces.size(), false);
+  for (std::size_t i = 0; i < pieces.size(); ++i) {
+    const double reach = reach_factor * pieces[i].length;
+    const double high = std::max(pieces[i].from.x(), pieces[i].to.x()) + reach;
+    const double y_low = std::min(pieces[i].from.y(), pieces[i].to.y()) - reach;
+    const double y_high = std::max(pieces[i].from.y(), pieces[i].to.y()) + reach;
+    auto at = std::lower_bound(order.begin(), order.end(), low[i] - reach - longest,
+                               [&](std::size_t k, double x) { return low[k] < x; });
+    for (; at != order.end() && low[*at] <= high && !split[i]; ++at) {
+      const Piece& other = pieces[*at];
+      if (*at == i || std::max(other.from.y(), other.to.y()) < y_low ||
+          std::min(other.from.y(), other.to.y()) > y_high)
+        continue;
+      split[i] = is_too_long(pieces[i], other, rule);
+    }
+  }
+  std::vector<Piece> result;
+  result.reserve(pieces.size());
+  for (std::size_t i = 0; i < pieces.size(); ++i) {
+    if (!split[i]) {
+      result.push_back(pieces[i]);
+      continue;
+    }
+    const auto [first, second] = split_at(pieces[i].curve, 0.5);
+    result.emplace_back(first, pieces[i].loop);
+    result.emplace_back(second, pieces[i].loop);
+  }
+  const bool any = result.size() != pieces.size();
+  pieces = std::move(result);
+  return any;
+}
+
+/// The smaller radius of curvature where two curves meet, if it jumps there.
+double radius_at_jump(const Curve& a, const Curve& b) {
+  const double ra = a.radius_of_curvature(a.end);
+  const double rb = b.radius_of_curvature(b.begin);
+  const double smaller = std::min(ra, rb);
+  return std::isfinite(smaller) && smaller < 0.99 * std::max(ra, rb) ? smaller : 0.0;
+}
+
+/// Pieces of `piece` that shrink geometrically towards a jump of curvature at
+/// its begin (`before` > 0) and its end (`after` > 0).
+void grade(const Piece& piece, double before, double after, const SizeRule& rule, DividedLoop& out) {
+  const double size = rule.joint * rule.factor(piece.curve.owner);
+  const double enough = std::sqrt(rule.joint_growth);
+  if (before > 0 && after > 0 && piece.length > size * std::min(before, after) * enough) {
+    const auto [first, second] = split_at(piece.curve, 0.5);
+    grade(Piece(first, piece.loop), before, 0, rule, out);
+    grade(Piece(second, piece.loop), 0, after, rule, out);
+    return;
+  }
+  const double near = std::max(before, after);
+  if (near == 0.0 || piece.length <= size * near * enough) {
+    out.push_back(piece.curve);
+    return;
+  }
+  const double fraction = 1.0 / rule.joint_growth;
+  const auto [first, second] = split_at(piece.curve, before > 0 ? fraction : 1 - fraction);
+  grade(Piece(first, piece.loop), before, 0, rule, out);
+  grade(Piece(second, piece.loop), 0, after, rule, out);
+}
+
+DividedLoop grade_joints(const std::vector<Piece>& loop, const SizeRule& rule) {
+  DividedLoop result;
+  const std::size_t n = loop.size();
+  for (std::size_t i = 0; i < n; ++i)
+    grade(loop[i], radius_at_jump(loop[(i + n - 1) % n].curve, loop[i].curve),
+          radius_at_jump(loop[i].curve, loop[(i + 1) % n].curve), rule, result);
+  return result;
+}
+
+}  // namespace
+
+std::vector<DividedLoop> divide(const Region& region, const SizeRule& rule) {
+  std::vector<Piece> pieces;
+  for (std::size_t l = 0; l < region.loops.size(); ++l)
+    for (const Curve& curve : region.loops[l])
+      divide_by_turn(curve, rule.turn * rule.factor(curve.owner), l, pieces);
+  while (split_pass(pieces, rule)) {
+  }
+  std::vector<std::vector<Piece>> loops(region.loops.size());
+  for (const Piece& piece : pieces) loops[piece.loop].push_back(piece);
+  std::vector<DividedLoop> divided;
+  for (const auto& loop : loops) divided.push_back(grade_joints(loop, rule));
+  return divided;
+}
+
+}  // namespace raiser::mesh

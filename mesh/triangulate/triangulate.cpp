@@ -1,0 +1,177 @@
+#include "mesh/triangulate/triangulate.hpp"
+
+#include <gmsh.h>
+
+#include <algorithm>
+#include <map>
+#include <stdexcept>
+#include <string>
+
+#include "mesh/triangulate/size_field.hpp"
+
+namespace raiser::mesh {
+namespace {
+
+/// Starts Gmsh once in the process, without user configuration, and silent.
+void start_gmsh() {
+  static const bool started = [] {
+    gmsh::initialize(0, nullptr, false);
+    gmsh::option::setNumber("General.Terminal", 0);
+    gmsh::option::setNumber("General.Verbosity", 0);
+    gmsh::option::setNumber("General.NumThreads", 1);
+    gmsh::option::setNumber("Mesh.MeshSizeExtendFromBoundary", 0);
+    gmsh::option::setNumber("Mesh.MeshSizeFromPoints", 0);
+    gmsh::option::setNumber("Mesh.Algorithm", 6);
+    gmsh::option::setNumber("Mesh.LcIntegrationPrecision", 1e-4);
+    return true;
+  }();
+  static_cast<void>(started);
+}
+
+/// The polygon through the divided boundary as a Gmsh model, one line a piece.
+/// Returns the points; point i has the tag i + 1.
+std::vector<Point> build_model(const std::vector<DividedLoop>& loops) {
+  gmsh::model::add("plate");
+  std::vector<Point> points;
+  std::vector<int> loop_tags;
+  for (const DividedLoop& loop : loops) {
+    const int first = static_cast<int>(points.size()) + 1;
+    const int count = static_cast<int>(loop.size());
+    std::vector<int> lines;
+    for (const Curve& piece : loop) {
+      points.push_back(piece.at(piece.begin));
+      gmsh::model::geo::addPoint(points.back().x(), points.back().y(), 0.0, 0.0,
+                                 static_cast<int>(points.size()));
+    }
+    for (int k = 0; k < count; ++k) {
+      lines.push_back(gmsh::model::geo::addLine(first + k, first + (k + 1) % count, first + k));
+      gmsh::model::geo::mesh::setTransfiniteCurve(lines.back(), 2);
+    }
+    loop_tags.push_back(gmsh::model::geo::addCurveLoop(lines));
+  }
+  gmsh::model::geo::addPlaneSurface(loop_tags, 1);
+  gmsh::model::geo::synchronize();
+  return points;
+}
+
+struct Triangles {
+  std::vector<Point> points;
+  std::vector<Mesh::Triangle> triangles;
+};
+
+/// Reads the triangulation back; the first points are those of `boundary`.
+Triangles read_triangles(const std::vector<Point>& boundary) {
+  std::vector<std::size_t> tags;
+  std::vector<double> xyz, parameters;
+  gmsh::model::mesh::getNodes(tags, xyz, parameters);
+  std::vector<int> index(*std::max_element(tags.begin(), tags.end()) + 1, -1);
+  Triangles result{boundary, {}};
+  for (std::size_t i = 0; i < boundary.size(); ++i) {
+    std::vector<std::size_t> node;
+    std::vector<double> at, none;
+    gmsh::model::mesh::getNodes(node, at, none, 0, static_cast<int>(i) + 1);
+    if (node.size() != 1) throw std::runtime_error("triangulate: a boundary point has no node");
+    index[node[0]] = static_cast<int>(i);
+  }
+  for (std::size_t k = 0; k < tags.size(); ++k) {
+    if (index[tags[k]] >= 0) continue;
+    index[tags[k]] = static_cast<int>(result.points.size());
+    result.points.emplace_back(xyz[3 * k], xyz[3 * k + 1]);
+  }
+  std::vector<std::size_t> elements, nodes;
+  gmsh::model::mesh::getElementsByType(2, elements, nodes, 1);
+  for (std::size_t k = 0; k + 2 < nodes.size(); k += 3) {
+    Mesh::Triangle t{index[nodes[k]], index[nodes[k + 1]], index[nodes[k + 2]]};
+    const Point a = result.points[t[1]] - result.points[t[0]];
+    const Point b = result.points[t[2]] - result.points[t[0]];
+    if (a.x() * b.y() - a.y() * b.x() < 0) std::swap(t[1], t[2]);
+    result.triangles.push_back(t);
+  }
+  return result;
+}
+
+Triangles run_gmsh(const std::vector<DividedLoop>& loops, double growth) {
+  start_gmsh();
+  SizeField sizes(loops, growth);
+  try {
+    const std::vector<Point> boundary = build_model(loops);
+    gmsh::model::mesh::setSizeCallback(
+        [&sizes](int, int, double x, double y, double) { return sizes.at(Point(x, y)); });
+    gmsh::model::mesh::generate(2);
+    gmsh::model::mesh::removeSizeCallback();
+    Triangles result = read_triangles(boundary);
+    gmsh::clear();
+    return result;
+  } catch (const std::string& message) {
+    gmsh::clear();
+    throw std::runtime_error("triangulate: Gmsh failed: " + message);
+  }
+}
+
+/// Finds each boundary piece's triangle side.
+std::vector<BoundarySide> attach(const std::vector<DividedLoop>& loops,
+                                 const std::vector<Mesh::Triangle>& triangles) {
+  std::map<std::pair<int, int>, const Curve*> pieces;
+  int first = 0;
+  for (const DividedLoop& loop : loops) {
+    const int count = static_cast<int>(loop.size());
+    for (int k = 0; k < count; ++k) pieces[{first + k, first + (k + 1) % count}] = &loop[k];
+    first += count;
+  }
+  std::vector<BoundarySide> sides;
+  for (int t = 0; t < static_cast<int>(triangles.size()); ++t)
+    for (int k = 0; k < 3; ++k)
+      if (const auto found = pieces.find({triangles[t][k], triangles[t][(k + 1) % 3]}); found != pieces.end())
+        sides.push_back({t, k, *found->second});
+  if (sides.size() != pieces.size())
+    throw std::runtime_error("triangulate: Gmsh lost a piece of the boundary");
+  return sides;
+}
+
+/// Splits in halves the pieces of boundary of the given triangles.
+std::vector<DividedLoop> split_sides(const std::vector<DividedLoop>& loops, const Mesh& mesh,
+                                     const std::vector<int>& triangles) {
+  // Neighbours of a bad triangle give it room, too.
+  std::vector<bool> near(mesh.points().size(), false);
+  for (const int t : triangles)
+    for (const int v : mesh.triangles()[t]) near[v] = true;
+  std::vector<DividedLoop> result;
+  int vertex = 0;
+  for (const DividedLoop& loop : loops) {
+    DividedLoop refined;
+    const int first = vertex;
+    const int count = static_cast<int>(loop.size());
+    for (int k = 0; k < count; ++k, ++vertex) {
+      const bool split = near[vertex] && near[first + (vertex - first + 1) % count];
+      if (!split) {
+        refined.push_back(loop[k]);
+        continue;
+      }
+      Curve half = loop[k];
+      half.end = (loop[k].begin + loop[k].end) / 2;
+      refined.push_back(half);
+      half.begin = half.end;
+      half.end = loop[k].end;
+      refined.push_back(half);
+    }
+    result.push_back(std::move(refined));
+  }
+  return result;
+}
+
+}  // namespace
+
+Mesh triangulate(const Region& region, const SizeRule& rule) {
+  std::vector<DividedLoop> loops = divide(region, rule);
+  for (int attempt = 0;; ++attempt) {
+    Triangles raw = run_gmsh(loops, rule.growth);
+    std::vector<BoundarySide> boundary = attach(loops, raw.triangles);
+    Mesh mesh(std::move(raw.points), std::move(raw.triangles), std::move(boundary));
+    const std::vector<int> bad = inverted_triangles(mesh);
+    if (bad.empty()) return mesh;
+    if (attempt == 6) throw std::runtime_error("triangulate: some curved triangles stay inverted");
+    loops = split_sides(loops, mesh, bad);
+  }
+}
+
+}  // namespace raiser::mesh

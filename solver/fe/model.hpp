@@ -1,0 +1,86 @@
+#pragma once
+
+#include <Eigen/Core>
+#include <array>
+#include <vector>
+
+#include "mesh/mesh.hpp"
+#include "solver/elasticity/hooke_law.hpp"
+#include "solver/elasticity/load.hpp"
+#include "solver/fe/discretisation.hpp"
+#include "solver/linear/elimination.hpp"
+
+namespace raiser::solver {
+
+/// One mirror image of the meshed part of the plate: x and y are multiplied
+/// by the signs.
+struct Image {
+  std::array<double, 2> sign{1.0, 1.0};
+  bool flips() const { return sign[0] * sign[1] < 0; }
+  Point apply(const Point& p) const { return {sign[0] * p.x(), sign[1] * p.y()}; }
+  mesh::Mirrors mirror() const { return {sign[0] < 0, sign[1] < 0}; }
+};
+
+/// Displacements of all unit loads in the space of one degree: one column a
+/// load, rows as Discretisation numbers the unknowns; mm.
+struct Displacements {
+  int degree = 0;
+  Eigen::MatrixXd values;
+};
+
+/// How well displacements solve the discrete equations, over the meshed part.
+struct Balance {
+  double residual = 0.0;       ///< ||K u - f|| / ||f|| on the free unknowns, largest over the loads
+  double reaction = 0.0;       ///< largest force at the points held against rigid motion / ||f||
+  double strain_energy = 0.0;  ///< N mm, all loads together, whole plate
+  double external_work = 0.0;  ///< N mm, half the work of all loads together, whole plate
+};
+
+/// A meshed plate (or its half or quarter between mirror lines) with its
+/// material and self-balanced unit loads: everything but the degree.
+///
+/// With mirror lines, each load must be even or odd under each of them.
+/// Throws std::invalid_argument otherwise.
+class Model {
+ public:
+  Model(mesh::Mesh mesh, mesh::Mirrors mirrors, const HookeLaw& material, double thickness,
+        std::vector<UnitLoad> loads);
+
+  const mesh::Mesh& mesh() const { return mesh_; }
+  const HookeLaw& material() const { return material_; }
+  const std::vector<UnitLoad>& loads() const { return loads_; }
+  const std::vector<Image>& images() const { return images_; }
+  mesh::Mirrors mirrors() const { return mirrors_; }
+
+  /// +1 or -1: the factor of a load's mirrored solution in an image.
+  double parity(std::size_t load, const Image& image) const;
+
+  /// Solves for all loads. Throws std::runtime_error when the factorisation fails.
+  Displacements solve(int degree) const;
+
+  Balance balance(const Displacements& displacements) const;
+
+ private:
+  /// Loads that share held unknowns, hence a factorisation.
+  struct Class {
+    std::vector<std::size_t> loads;
+    bool odd_x = false;
+    bool odd_y = false;
+  };
+  std::vector<bool> held_on_mirrors(const Discretisation& space, const Class& cls) const;
+  /// Unknowns to hold in addition, so that no rigid motion is left.
+  std::vector<int> pins(const std::vector<bool>& held) const;
+  Eigen::MatrixXd load_vectors(const Discretisation& space) const;
+  Factorisation::ElementMatrix element_matrices(const Discretisation& space) const;
+
+  mesh::Mesh mesh_;
+  mesh::Mirrors mirrors_;
+  HookeLaw material_;
+  double thickness_;
+  std::vector<UnitLoad> loads_;
+  std::vector<Image> images_;
+  std::vector<Class> classes_;
+  EliminationTree tree_;
+};
+
+}  // namespace raiser::solver

@@ -1,0 +1,40 @@
+#pragma once
+
+#include <Eigen/Core>
+#include <vector>
+
+#include "mesh/mesh.hpp"
+#include "solver/fe/shape.hpp"
+
+namespace raiser::solver {
+
+/// Element stiffness matrices of one degree and one material, unit thickness.
+///
+/// A matrix is 2 n x 2 n for n = shape_count(degree); row 2 a + c belongs to
+/// component c of shape function a in ShapeTable's order, signs not applied.
+/// Straight triangles combine three matrices of the reference triangle
+/// exactly; curved ones are integrated with (degree + 3)^2 points.
+class Stiffness {
+ public:
+  /// `law` maps (eps_xx, eps_yy, gamma_xy) to stress, MPa.
+  Stiffness(int degree, const Eigen::Matrix3d& law);
+
+  /// Computes triangle `t` of `mesh` into `out`. Scratch space is the object's:
+  /// one object a thread.
+  void element(const mesh::Mesh& mesh, int t, Eigen::MatrixXd& out);
+
+ private:
+  void straight(const mesh::Mesh& mesh, int t);
+  void curved(const mesh::Mesh& mesh, int t);
+
+  Eigen::Matrix3d law_;
+  TriangleRule rule_;
+  mesh::MapTable maps_;
+  ShapeTable shapes_;
+  Eigen::MatrixXd rr_, rs_, ss_;  ///< reference integrals of products of derivatives
+  Eigen::MatrixXd xx_, xy_, yy_;  ///< the same in the plate's axes, this element
+  Eigen::MatrixXd gx_, gy_;
+  std::vector<mesh::MapPoint> points_;
+};
+
+}  // namespace raiser::solver

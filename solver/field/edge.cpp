@@ -1,0 +1,86 @@
+#include "solver/field/edge.hpp"
+
+#include <Eigen/LU>
+
+namespace raiser::solver {
+namespace {
+
+/// Turns a stress or strain (with engineering shear when `is_strain`) given in
+/// the plate's axes into edge axes (t, n).
+Eigen::Matrix3d to_edge_axes(const Point& t, bool is_strain) {
+  const double c = t.x();
+  const double s = t.y();
+  const double half = is_strain ? 0.5 : 1.0;
+  Eigen::Matrix3d m;
+  m << c * c, s * s, 2 * half * c * s,  //
+      s * s, c * c, -2 * half * c * s,  //
+      -c * s / half, c * s / half, c * c - s * s;
+  return m;
+}
+
+}  // namespace
+
+EdgeProbe::EdgeProbe(const Model& model, int degree, std::span<const double> s)
+    : model_(&model), space_(model.mesh(), degree), s_(s.begin(), s.end()) {
+  for (int side = 0; side < 3; ++side) {
+    std::vector<Point> reference;
+    for (const double position : s_) reference.push_back(on_side(side, position));
+    shapes_[side] = tabulate(degree, reference);
+    maps_.emplace_back(reference);
+  }
+}
+
+SideStress EdgeProbe::at(const mesh::BoundarySide& side, const Displacements& displacements) const {
+  const auto points = static_cast<Eigen::Index>(s_.size());
+  const Eigen::Index loads = displacements.values.cols();
+  const ShapeTable& shapes = shapes_[side.side];
+  Discretisation::Local local;
+  space_.local(side.triangle, local);
+  Eigen::MatrixXd own(static_cast<Eigen::Index>(local.function.size()), 2 * loads);
+  for (Eigen::Index i = 0; i < own.rows(); ++i)
+    for (int c = 0; c < 2; ++c)
+      own.row(i).segment(c * loads, loads) =
+          local.sign[i] * displacements.values.row(2 * local.function[i] + c);
+  const Eigen::MatrixXd dr = shapes.dr.transpose() * own;
+  const Eigen::MatrixXd ds = shapes.ds.transpose() * own;
+  std::vector<mesh::MapPoint> maps(s_.size());
+  maps_[side.side].evaluate(model_->mesh(), side.triangle, maps);
+
+  const Eigen::Matrix3d stiffness = model_->material().stiffness();
+  const Eigen::Matrix3d compliance = model_->material().compliance();
+  SideStress result;
+  for (auto* field :
+       {&result.tangential, &result.normal, &result.shear, &result.raw_normal, &result.raw_shear})
+    field->resize(points, loads);
+  for (Eigen::Index q = 0; q < points; ++q) {
+    const double parameter = side.parameter(s_[q]);
+    const Point tangent =
+        (side.curve.derivative(parameter) * (side.curve.end > side.curve.begin ? 1.0 : -1.0)).normalized();
+    const Point outward(tangent.y(), -tangent.x());
+    const Eigen::Matrix3d strain_turn = to_edge_axes(tangent, true);
+    const Eigen::Matrix3d stress_turn = to_edge_axes(tangent, false);
+    const Eigen::Matrix3d edge_compliance = strain_turn * compliance * stress_turn.inverse();
+    const Eigen::Matrix2d inverse = maps[q].jacobian.inverse();
+    const Point x = side.curve.at(parameter);
+    for (Eigen::Index l = 0; l < loads; ++l) {
+      Eigen::Matrix2d by_reference;
+      by_reference << dr(q, l), ds(q, l), dr(q, loads + l), ds(q, loads + l);
+      const Eigen::Matrix2d gradient = by_reference * inverse;
+      const Eigen::Vector3d strain(gradient(0, 0), gradient(1, 1), gradient(0, 1) + gradient(1, 0));
+      const Point traction = model_->loads()[l].traction(side.curve.owner, x, outward);
+      const double normal = traction.dot(outward);
+      const double shear = -traction.dot(tangent);  // (t, n) with n inward: sigma_tn = -t . traction
+      const double along = (strain_turn * strain)[0];
+      const Eigen::Vector3d raw = stress_turn * (stiffness * strain);
+      result.tangential(q, l) =
+          (along - edge_compliance(0, 1) * normal - edge_compliance(0, 2) * shear) / edge_compliance(0, 0);
+      result.normal(q, l) = normal;
+      result.shear(q, l) = shear;
+      result.raw_normal(q, l) = raw[1];
+      result.raw_shear(q, l) = raw[2];
+    }
+  }
+  return result;
+}
+
+}  // namespace raiser::solver

@@ -1,0 +1,175 @@
+#include "solver/linear/elimination.hpp"
+
+#include <cblas.h>
+
+#include <algorithm>
+#include <stdexcept>
+
+extern "C" void dpotrf_(const char* uplo, const int* n, double* a, const int* lda, int* info);
+
+namespace raiser::solver {
+namespace {
+
+/// A dense column-major front in two parts: the eliminated columns, kept in
+/// the factors, and the square that is handed to the parent. Only the lower
+/// triangle is used.
+struct Dense {
+  double* columns;  ///< rows x eliminated
+  double* border;   ///< (rows - eliminated) squared
+  int rows;
+  int eliminated;
+
+  /// Start of column c, such that row r of the front is at [r].
+  double* column(int c) const {
+    if (c < eliminated) return columns + static_cast<std::size_t>(c) * rows;
+    const int width = rows - eliminated;
+    return border + static_cast<std::size_t>(c - eliminated) * width - eliminated;
+  }
+};
+
+/// Adds the lower triangle of a child's square where `place` says.
+void add_child(const Dense& front, const double* square, const std::vector<int>& place) {
+  const int n = static_cast<int>(place.size());
+  for (int c = 0; c < n; ++c) {
+    double* to = front.column(place[c]);
+    const double* from = square + static_cast<std::size_t>(c) * n;
+    for (int r = c; r < n; ++r) to[place[r]] += from[r];
+  }
+}
+
+void eliminate(const Dense& front) {
+  if (front.eliminated == 0) return;
+  const int border = front.rows - front.eliminated;
+  int info = 0;
+  dpotrf_("L", &front.eliminated, front.columns, &front.rows, &info);
+  if (info != 0)
+    throw std::runtime_error(
+        "Factorisation: a pivot is not positive; the plate can move or a triangle is degenerate");
+  if (border == 0) return;
+  double* below = front.columns + front.eliminated;
+  cblas_dtrsm(CblasColMajor, CblasRight, CblasLower, CblasTrans, CblasNonUnit, border, front.eliminated, 1.0,
+              front.columns, front.rows, below, front.rows);
+  cblas_dsyrk(CblasColMajor, CblasLower, CblasNoTrans, border, front.eliminated, -1.0, below, front.rows, 1.0,
+              front.border, border);
+}
+
+}  // namespace
+
+void Factorisation::number(const EliminationTree& tree, const Discretisation& space,
+                           const std::vector<bool>& held) {
+  position_.assign(space.unknowns(), -1);
+  entity_first_.assign(space.entities(), 0);
+  entity_count_.assign(space.entities(), 0);
+  for (const int entity : tree.order()) {
+    entity_first_[entity] = free_;
+    for (int u = 2 * space.first_function(entity); u < 2 * space.first_function(entity + 1); ++u)
+      if (!held[u]) position_[u] = free_++;
+    entity_count_[entity] = free_ - entity_first_[entity];
+  }
+}
+
+void Factorisation::lay_out(const EliminationTree& tree) {
+  std::size_t size = 0;
+  int first = 0;
+  fronts_.reserve(tree.groups().size());
+  for (const EliminationTree::Group& group : tree.groups()) {
+    Front front;
+    front.first = first;
+    for (int k = 0; k < group.eliminated; ++k) front.eliminated += entity_count_[group.entities[k]];
+    for (std::size_t k = group.eliminated; k < group.entities.size(); ++k)
+      for (int i = 0; i < entity_count_[group.entities[k]]; ++i)
+        front.border.push_back(entity_first_[group.entities[k]] + i);
+    first += front.eliminated;
+    front.offset = size;
+    size += static_cast<std::size_t>(front.eliminated) * (front.eliminated + front.border.size());
+    fronts_.push_back(std::move(front));
+  }
+  factors_.assign(size, 0.0);
+}
+
+Factorisation::Factorisation(const EliminationTree& tree, const Discretisation& space,
+                             const std::vector<bool>& held, const ElementMatrix& element) {
+  number(tree, space, held);
+  lay_out(tree);
+  std::vector<int> row_of(free_, 0);  // by place in elimination order: row in the current front
+  std::vector<std::vector<double>> squares(fronts_.size());
+  std::vector<int> place;
+  Discretisation::Local local;
+  Eigen::MatrixXd matrix;
+  for (std::size_t g = 0; g < fronts_.size(); ++g) {
+    const Front& front = fronts_[g];
+    const EliminationTree::Group& group = tree.groups()[g];
+    const int border = static_cast<int>(front.border.size());
+    squares[g].assign(static_cast<std::size_t>(border) * border, 0.0);
+    const Dense dense{factors_.data() + front.offset, squares[g].data(), front.eliminated + border,
+                      front.eliminated};
+    for (int k = 0; k < front.eliminated; ++k) row_of[front.first + k] = k;
+    for (int k = 0; k < border; ++k) row_of[front.border[k]] = front.eliminated + k;
+    if (group.triangle >= 0) {
+      space.local(group.triangle, local);
+      element(group.triangle, matrix);
+      place.clear();
+      for (const int f : local.function)
+        for (int c = 0; c < 2; ++c)
+          place.push_back(position_[2 * f + c] < 0 ? -1 : row_of[position_[2 * f + c]]);
+      const int n = static_cast<int>(place.size());
+      for (int c = 0; c < n; ++c) {
+        if (place[c] < 0) continue;
+        double* to = dense.column(place[c]);
+        for (int r = 0; r < n; ++r)
+          if (place[r] >= place[c]) to[place[r]] += matrix(r, c);
+      }
+    } else {
+      for (const int child : group.children) {
+        place.clear();
+        for (const int u : fronts_[child].border) place.push_back(row_of[u]);
+        add_child(dense, squares[child].data(), place);
+        std::vector<double>().swap(squares[child]);
+      }
+    }
+    eliminate(dense);
+  }
+}
+
+Eigen::MatrixXd Factorisation::solve(const Eigen::MatrixXd& loads) const {
+  const int columns = static_cast<int>(loads.cols());
+  Eigen::MatrixXd x(free_, columns);
+  for (Eigen::Index u = 0; u < loads.rows(); ++u)
+    if (position_[u] >= 0) x.row(position_[u]) = loads.row(u);
+  Eigen::MatrixXd border;
+  const auto panel = [&](const Front& front) { return factors_.data() + front.offset; };
+  const auto triangular = [&](const Front& front, CBLAS_TRANSPOSE transpose) {
+    const int rows = front.eliminated + static_cast<int>(front.border.size());
+    cblas_dtrsm(CblasColMajor, CblasLeft, CblasLower, transpose, CblasNonUnit, front.eliminated, columns, 1.0,
+                panel(front), rows, x.data() + front.first, free_);
+  };
+  for (const Front& front : fronts_) {
+    if (front.eliminated == 0) continue;
+    triangular(front, CblasNoTrans);
+    const int n = static_cast<int>(front.border.size());
+    if (n == 0) continue;
+    border.resize(n, columns);
+    cblas_dgemm(CblasColMajor, CblasNoTrans, CblasNoTrans, n, columns, front.eliminated, 1.0,
+                panel(front) + front.eliminated, front.eliminated + n, x.data() + front.first, free_, 0.0,
+                border.data(), n);
+    for (int k = 0; k < n; ++k) x.row(front.border[k]) -= border.row(k);
+  }
+  for (auto front = fronts_.rbegin(); front != fronts_.rend(); ++front) {
+    if (front->eliminated == 0) continue;
+    const int n = static_cast<int>(front->border.size());
+    if (n > 0) {
+      border.resize(n, columns);
+      for (int k = 0; k < n; ++k) border.row(k) = x.row(front->border[k]);
+      cblas_dgemm(CblasColMajor, CblasTrans, CblasNoTrans, front->eliminated, columns, n, -1.0,
+                  panel(*front) + front->eliminated, front->eliminated + n, border.data(), n, 1.0,
+                  x.data() + front->first, free_);
+    }
+    triangular(*front, CblasTrans);
+  }
+  Eigen::MatrixXd result = Eigen::MatrixXd::Zero(loads.rows(), columns);
+  for (Eigen::Index u = 0; u < loads.rows(); ++u)
+    if (position_[u] >= 0) result.row(u) = x.row(position_[u]);
+  return result;
+}
+
+}  // namespace raiser::solver
