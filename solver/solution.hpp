@@ -6,6 +6,7 @@
 #include <vector>
 
 #include "mesh/plate/plate.hpp"
+#include "mesh/plate/section.hpp"
 #include "solver/elasticity/hooke_law.hpp"
 #include "solver/elasticity/load.hpp"
 #include "solver/extract/estimate.hpp"
@@ -41,7 +42,7 @@ struct EdgeValue {
 
 /// A straight section through the plate and the holes it cuts.
 struct Section {
-  enum class Direction { across, along };  ///< across: the line x = station; along: y = station
+  using Direction = mesh::Direction;  ///< across: the line x = station; along: y = station
   Direction direction = Direction::across;
   double station = 0.0;       ///< mm
   double gross_area = 0.0;    ///< mm^2

@@ -7,6 +7,7 @@
 #include <string_view>
 #include <vector>
 
+#include "mesh/plate/section.hpp"
 #include "mesh/region/region.hpp"
 
 namespace raiser::solver {
@@ -61,6 +62,12 @@ struct UnitLoad {
   Parity under_y = Parity::neither;  ///< under (x, y) -> (x, -y)
 };
 
+/// Edge loads that take up a resultant about the plate's centre: together with
+/// whatever left it over they balance. A normal stress on the left and bottom
+/// edge for the force, a stress along the right and left edge for the moment;
+/// components that are exactly zero get none.
+std::vector<Load> balancing(const Plate& plate, const Resultant& left_over);
+
 /// Why a set of loads cannot be solved: it does not balance. `by` is the
 /// resultant left over.
 struct LoadFault {
@@ -69,10 +76,15 @@ struct LoadFault {
   std::string what;
   std::string cure;
 };
+/// Nothing when the loads balance within 1e-9 of their own size. Stresses that
+/// are not finite are a fault as well.
 std::optional<LoadFault> imbalance(const Plate& plate, const std::vector<Load>& loads);
 
 /// One unit load for each load that balances by itself, in order, and one
-/// named "edges" for all edge loads together where they balance only jointly.
+/// named "edges" for all edge loads together, which balance only jointly. Each
+/// has its load's own size, so that their sum is the whole set of loads.
+/// Throws std::invalid_argument when the loads do not balance, a pressure names
+/// no hole of the plate or an edge load no outer edge.
 std::vector<UnitLoad> unit_loads(const Plate& plate, const std::vector<Load>& loads);
 
 /// The stress state that the loads would produce in the plate without holes,
@@ -84,5 +96,22 @@ struct NominalState {
   double xy = 0.0;        ///< mean sigma_xy
   double pressure = 0.0;  ///< pressure on the hole in question
 };
+
+/// What a section of the plate without holes carries under balanced loads. N and
+/// N mm. `normal` is tension positive, `shear` has the sign of sigma_xy, and
+/// `moment`, about the middle of the section, is positive when it stretches the
+/// side of positive y (across) or positive x (along).
+struct SectionForces {
+  double normal = 0.0;
+  double shear = 0.0;
+  double moment = 0.0;
+};
+SectionForces section_forces(const Plate& plate, const std::vector<Load>& loads, mesh::Direction direction,
+                             double station);
+
+/// The undisturbed state at hole `hole`: of the sections x and y = its centre.
+/// Edge loads count through what those sections carry. Throws
+/// std::out_of_range when there is no such hole.
+NominalState nominal_state(const Plate& plate, const std::vector<Load>& loads, std::size_t hole);
 
 }  // namespace raiser::solver
