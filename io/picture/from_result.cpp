@@ -1,0 +1,266 @@
+#include "io/picture/from_result.hpp"
+
+#include <fmt/format.h>
+
+#include <algorithm>
+#include <cmath>
+#include <numbers>
+
+#include "io/picture/sampling.hpp"
+#include "io/write/layout.hpp"
+
+namespace raiser::io {
+namespace {
+
+using mesh::Owner;
+using solver::EdgeValue;
+using solver::HoleFindings;
+
+constexpr double degree = std::numbers::pi / 180.0;
+
+// Blanks that a line does not break at.
+std::string together(const std::string& text) {
+  std::string result;
+  for (const char c : text) result += c == ' ' ? "\u00A0" : std::string(1, c);
+  return result;
+}
+
+std::string amount(const solver::Estimate& estimate, const std::string& unit) {
+  return together(with_bound(estimate) + (unit.empty() ? "" : " " + unit));
+}
+
+std::string amount(double value, const std::string& unit) { return together(brief(value) + " " + unit); }
+
+const EdgeValue& peak_place(const HoleFindings& found) {
+  return std::abs(found.largest.stress.value) >= std::abs(found.smallest.stress.value) ? found.largest
+                                                                                       : found.smallest;
+}
+
+std::string title_of(const Result& result) {
+  const std::string title = plain(result.input.title);
+  return title.empty() ? result.input.file.stem().string() : title;
+}
+
+std::string name_of(const Result& result, std::size_t hole) {
+  return plain(result.input.problem.plate.holes.at(hole).name);
+}
+
+// The sample on the hole's edge that lies nearest to a point.
+double von_mises_near(const Result& result, std::size_t hole, const Point& point) {
+  const auto& edge = result.solution.edges.at(hole);
+  const auto nearest = std::min_element(edge.begin(), edge.end(), [&](const auto& a, const auto& b) {
+    return (a.point - point).squaredNorm() < (b.point - point).squaredNorm();
+  });
+  return nearest == edge.end() ? 0.0 : nearest->von_mises;
+}
+
+std::string load_words(const Result& result, const solver::Load& load) {
+  const std::string kind(solver::word(load.kind));
+  std::string words = kind;
+  if (!load.name.empty() && load.name != kind) words = plain(load.name) + " (" + kind + ")";
+  words += " " + amount(load.stress, "MPa");
+  if (load.kind == solver::Load::Kind::edge && load.along != 0.0)
+    words += together(" and ") + amount(load.along, "MPa") + " along it";
+  if (load.kind == solver::Load::Kind::pressure) words += " in hole " + name_of(result, load.hole);
+  return words;
+}
+
+std::string loads_line(const Result& result) {
+  constexpr std::size_t most = 4;
+  const auto& loads = result.input.problem.loads;
+  std::string line;
+  for (std::size_t i = 0; i < std::min(most, loads.size()); ++i)
+    line += (i == 0 ? "" : ", ") + load_words(result, loads[i]);
+  if (loads.size() > most) line += fmt::format(" and {} more", loads.size() - most);
+  return "Loads: " + line;
+}
+
+void add_concentration(std::vector<std::string>& lines, const char* name,
+                       const solver::Concentration& found) {
+  if (found.kt)
+    lines.push_back(fmt::format("{} {} on {}", name, amount(*found.kt, ""), amount(found.nominal, "MPa")));
+}
+
+std::vector<std::string> caption(const Result& result, const HoleFindings& found) {
+  const auto& problem = result.input.problem;
+  const auto& plate = problem.plate;
+  const auto& solution = result.solution;
+  std::vector<std::string> lines{fmt::format("Peak edge stress {} at hole {}",
+                                             amount(peak_place(found).stress, "MPa"),
+                                             name_of(result, found.hole))};
+  add_concentration(lines, "Kt gross", found.gross);
+  add_concentration(lines, "Kt net", found.net);
+  lines.push_back(fmt::format("Plate {} × {} × {}", brief(plate.length), brief(plate.width),
+                              amount(plate.thickness, "mm")));
+  lines.push_back(
+      fmt::format("E {}, ν {}, {}", amount(problem.material.youngs_modulus, "MPa"),
+                  brief(problem.material.poissons_ratio),
+                  problem.material.state == solver::PlaneState::stress ? "plane stress" : "plane strain"));
+  lines.push_back(loads_line(result));
+  lines.push_back(fmt::format("Displacement degree {} on {} triangles, {} unknowns", solution.degree,
+                              together(count(solution.triangles)), together(count(solution.unknowns))));
+  if (solution.status != solver::Solution::Status::settled)
+    lines.push_back("Tolerance not met: " + plain(solution.reason));
+  return lines;
+}
+
+Point total_traction(const std::vector<solver::UnitLoad>& loads, const Owner& owner, const Point& x,
+                     const Point& n) {
+  Point sum = Point::Zero();
+  for (const solver::UnitLoad& load : loads) sum += load.traction(owner, x, n);
+  return sum;
+}
+
+// Places at equal distances along a loop: the curve they lie on and its parameter.
+struct Place {
+  const mesh::Curve* curve;
+  double t;
+};
+std::vector<Place> places(const mesh::Loop& loop, int wanted) {
+  constexpr int pieces = 64;
+  std::vector<Place> fine;
+  std::vector<double> reached;
+  double length = 0.0;
+  for (const mesh::Curve& curve : loop)
+    for (int i = 0; i < pieces; ++i) {
+      const double step = (curve.end - curve.begin) / pieces;
+      const double t = curve.begin + (i + 0.5) * step;
+      fine.push_back({&curve, t});
+      length += curve.derivative(t).norm() * std::abs(step);
+      reached.push_back(length);
+    }
+  std::vector<Place> result;
+  for (int i = 0; i < wanted; ++i) {
+    const auto at = std::lower_bound(reached.begin(), reached.end(), (i + 0.5) / wanted * length);
+    result.push_back(fine[static_cast<std::size_t>(std::min(at, reached.end() - 1) - reached.begin())]);
+  }
+  return result;
+}
+
+void add_arrows(std::vector<LoadArrow>& arrows, const mesh::Loop& loop, int wanted,
+                std::optional<double> room, const std::vector<solver::UnitLoad>& loads) {
+  for (const Place& place : places(loop, wanted)) {
+    const Point along =
+        place.curve->derivative(place.t) * (place.curve->end > place.curve->begin ? 1.0 : -1.0);
+    const Point outward = Point(along.y(), -along.x()).normalized();
+    const Point at = place.curve->at(place.t);
+    const Point traction = total_traction(loads, place.curve->owner, at, outward);
+    if (traction.norm() > 0.0) arrows.push_back({at, outward, traction, room});
+  }
+}
+
+std::vector<LoadArrow> arrows(const solver::Problem& problem) {
+  const auto& plate = problem.plate;
+  const mesh::Region region = mesh::trace(plate);
+  const std::vector<solver::UnitLoad> loads = solver::unit_loads(plate, problem.loads);
+  std::vector<LoadArrow> result;
+  const double longer = std::max(plate.length, plate.width);
+  for (const mesh::Curve& side : region.loops.front()) {
+    const double length = (side.at(side.end) - side.at(side.begin)).norm();
+    add_arrows(result, {side}, std::clamp(static_cast<int>(std::ceil(15 * length / longer)), 3, 9),
+               std::nullopt, loads);
+  }
+  for (std::size_t hole = 0; hole < plate.holes.size(); ++hole)
+    add_arrows(result, region.loops[1 + hole], 12,
+               std::min(plate.holes[hole].length, plate.holes[hole].width) / 2, loads);
+  return result;
+}
+
+std::vector<ChartLevel> nominal_levels(const HoleFindings& found) {
+  std::vector<ChartLevel> levels;
+  if (found.gross.nominal != 0.0)
+    levels.push_back(
+        {fmt::format("nominal, gross section: {}", amount(found.gross.nominal, "MPa")), found.gross.nominal});
+  if (found.net.nominal != 0.0)
+    levels.push_back(
+        {fmt::format("nominal, net section: {}", amount(found.net.nominal, "MPa")), found.net.nominal});
+  return levels;
+}
+
+const HoleFindings& findings(const Result& result, std::size_t hole) {
+  return result.solution.combined.holes.at(hole);
+}
+
+CellSource source_of(const solver::Field& field) {
+  return {field.cells(), [&field](std::size_t cell, std::span<const Point> reference, PictureCell& out) {
+            for (const solver::FieldValue& value : field.sample(cell, reference)) {
+              out.points.push_back(value.point);
+              out.values.push_back(solver::von_mises(value.stress));
+            }
+          }};
+}
+
+}  // namespace
+
+Picture picture_of(const Result& result) {
+  const auto& solution = result.solution;
+  const HoleFindings& worst = findings(result, worst_first(solution.combined).front());
+  const EdgeValue& peak = peak_place(worst);
+  Picture picture;
+  picture.title = title_of(result);
+  picture.plate = result.input.problem.plate;
+  for (mesh::Hole& hole : picture.plate.holes) hole.name = plain(hole.name);
+  picture.quantity = "von Mises stress";
+  picture.unit = "MPa";
+  picture.focus = worst.hole;
+  std::string label = "peak edge stress " + amount(peak.stress, "MPa");
+  if (worst.gross.kt) label += ", " + together("Kt gross ") + amount(*worst.gross.kt, "");
+  picture.peaks.push_back({peak.point, von_mises_near(result, worst.hole, peak.point), label});
+  picture.arrows = arrows(result.input.problem);
+  picture.caption = caption(result, worst);
+  picture.caution = "Linear elastic, 2D, nominal geometry; not a substitute for an independent check.";
+  picture.cells = sampled(source_of(solution.field), picture);
+  return picture;
+}
+
+Chart edge_chart(const Result& result, std::size_t hole) {
+  const HoleFindings& found = findings(result, hole);
+  Chart chart;
+  chart.title = fmt::format("{}: edge of hole {}", title_of(result), name_of(result, hole));
+  chart.x_name = "edge angle from +x, degrees";
+  chart.y_name = "stress, MPa";
+  chart.x_step = 45.0;
+  ChartCurve tangential{"edge stress (tangential)", {}};
+  for (const solver::EdgeSample& sample : result.solution.edges.at(hole))
+    tangential.points.emplace_back(sample.angle / degree, sample.tangential);
+  std::sort(tangential.points.begin(), tangential.points.end(),
+            [](const Point& a, const Point& b) { return a.x() < b.x(); });
+  if (!tangential.points.empty()) {  // the curve closes: both ends are one point of the hole
+    const Point first = tangential.points.front(), last = tangential.points.back();
+    const double share = (180.0 - last.x()) / std::max(first.x() + 360.0 - last.x(), 1e-300);
+    const double closing = last.y() + share * (first.y() - last.y());
+    if (first.x() > -180.0) tangential.points.emplace(tangential.points.begin(), -180.0, closing);
+    if (last.x() < 180.0) tangential.points.emplace_back(180.0, closing);
+  }
+  chart.curves.push_back(std::move(tangential));
+  chart.levels = nominal_levels(found);
+  for (const EdgeValue* value : {&found.largest, &found.smallest})
+    chart.marks.push_back(
+        {{value->angle / degree, value->stress.value},
+         value->stress.value,
+         amount(value->stress, "MPa") + " at " + together(fmt::format("{:.1f}°", value->angle / degree))});
+  chart.note = loads_line(result);
+  return chart;
+}
+
+Chart ligament_chart(const Result& result, std::size_t index) {
+  const solver::Ligament& ligament = result.solution.ligaments.at(index);
+  Chart chart;
+  chart.title = fmt::format("{}: from {} to {}", title_of(result), plain(ligament.from), plain(ligament.to));
+  chart.x_name = "distance from the hole's edge, mm";
+  chart.y_name = "stress, MPa";
+  const Point run = ligament.points.back().point - ligament.points.front().point;
+  const bool across = std::abs(run.y()) >= std::abs(run.x());
+  ChartCurve normal{across ? "along x, normal to the section" : "along y, normal to the section", {}};
+  ChartCurve equivalent{"von Mises", {}};
+  for (const solver::LigamentPoint& point : ligament.points) {
+    normal.points.emplace_back(point.distance, across ? point.stress.xx : point.stress.yy);
+    equivalent.points.emplace_back(point.distance, solver::von_mises(point.stress));
+  }
+  chart.curves = {std::move(normal), std::move(equivalent)};
+  chart.levels = nominal_levels(findings(result, ligament.hole));
+  chart.note = loads_line(result);
+  return chart;
+}
+
+}  // namespace raiser::io
