@@ -1,4 +1,8 @@
+#include <algorithm>
 #include <cmath>
+#include <map>
+#include <optional>
+#include <utility>
 
 #include "validation/compare/families.hpp"
 
@@ -26,13 +30,34 @@ void add(Situation& s, const Load& load) {
       if (load.hole == s.hole) s.pressure += load.stress;
       break;
     case Load::Kind::edge:
-      break;
+      break;  // in of_edges()
   }
 }
 
-/// Nothing published covers single edge tractions or pressure in another hole.
+/// The uniform remote stress that all edge loads make together, if they do.
+std::optional<RemoteStress> of_edges(const std::vector<Load>& loads) {
+  using Edge = mesh::Owner::Kind;
+  std::map<Edge, std::pair<double, double>> sum;
+  for (const Edge edge : {Edge::right, Edge::top, Edge::left, Edge::bottom}) sum[edge];
+  double size = 0.0;
+  for (const Load& load : loads) {
+    if (load.kind != Load::Kind::edge) continue;
+    sum[load.edge].first += load.stress;
+    sum[load.edge].second += load.along;
+    size = std::max({size, std::abs(load.stress), std::abs(load.along)});
+  }
+  const auto same = [size](double a, double b) { return std::abs(a - b) <= 1e-9 * size; };
+  const auto& [xx, xy] = sum[Edge::right];
+  const auto& [yy, yx] = sum[Edge::top];
+  const bool normal = same(xx, sum[Edge::left].first) && same(yy, sum[Edge::bottom].first);
+  const bool shear = same(xy, sum[Edge::left].second) && same(xy, -yx) && same(xy, -sum[Edge::bottom].second);
+  if (!normal || !shear) return std::nullopt;
+  return RemoteStress{xx, yy, xy};
+}
+
+/// Nothing published covers pressure in another hole.
 bool covered(const Load& load, std::size_t hole) {
-  return load.kind != Load::Kind::edge && (load.kind != Load::Kind::pressure || load.hole == hole);
+  return load.kind != Load::Kind::pressure || load.hole == hole;
 }
 
 std::vector<Comparison> solutions(const Situation& s) {
@@ -53,8 +78,10 @@ std::vector<Comparison> solutions(const Situation& s) {
 
 void append(std::vector<Comparison>& all, const mesh::Plate& plate, const solver::LoadFindings& findings,
             const std::vector<Load>& loads) {
+  const auto from_edges = of_edges(loads);
+  if (!from_edges) return;
   for (const auto& found : findings.holes) {
-    Situation s{plate, found.hole, found, findings.name, {}, 0.0, 0.0};
+    Situation s{plate, found.hole, found, findings.name, *from_edges, 0.0, 0.0};
     bool known = true;
     for (const Load& load : loads) {
       known = known && covered(load, found.hole);
@@ -73,12 +100,18 @@ void append(std::vector<Comparison>& all, const mesh::Plate& plate, const solver
 std::vector<Comparison> compare(const solver::Problem& problem, const solver::LoadFindings& combined,
                                 const std::vector<solver::LoadFindings>& units) {
   std::vector<Comparison> all;
-  std::size_t unit = 0;  // edge loads come last, together
+  std::vector<std::vector<Load>> groups;  // one for each unit; edge loads come last, together
+  std::vector<Load> at_edges;
   for (const Load& load : problem.loads) {
-    if (load.kind == Load::Kind::edge || unit >= units.size()) continue;
-    append(all, problem.plate, units[unit++], {load});
+    if (load.kind == Load::Kind::edge)
+      at_edges.push_back(load);
+    else
+      groups.push_back({load});
   }
-  if (problem.loads.size() > 1) append(all, problem.plate, combined, problem.loads);
+  if (!at_edges.empty()) groups.push_back(at_edges);
+  for (std::size_t i = 0; i < std::min(groups.size(), units.size()); ++i)
+    append(all, problem.plate, units[i], groups[i]);
+  if (groups.size() > 1) append(all, problem.plate, combined, problem.loads);
   return all;
 }
 

@@ -31,7 +31,9 @@ Strip strip_of(const Situation& s, bool along_x, double stress) {
           length / 2 - station - along};
 }
 
-std::string percent(double ratio) { return fmt::format("{:.2g} %", 100 * ratio); }
+std::string percent(double ratio) {
+  return ratio < 0.1 ? fmt::format("{:.2g} %", 100 * ratio) : fmt::format("{:.0f} %", 100 * ratio);
+}
 
 }  // namespace
 
