@@ -180,7 +180,7 @@ Exit write_summary(const Session& session, const std::vector<Outcome>& outcomes)
       session.options.folder.value_or(session.options.cases.front().parent_path());
   try {
     Staging staging(folder);
-    write_file(staging.path("summary.csv"), summary_csv(outcomes));
+    staging.add("summary.csv", summary_csv(outcomes));
     const auto files = staging.publish();
     if (!session.options.quiet) session.err << "Wrote " << plain(files.front().string()) << "\n";
   } catch (const WriteError& error) {

@@ -48,7 +48,7 @@ int write_all(int descriptor, std::string_view bytes) {
 }  // namespace
 
 WriteError::WriteError(const std::filesystem::path& file, const std::string& why)
-    : std::runtime_error(fmt::format("cannot write {}: {}", file.string(), why)) {}
+    : std::runtime_error(fmt::format("cannot write {}: {}", file.string(), why)), reason_(why) {}
 
 void write_file(const std::filesystem::path& file, std::string_view bytes) {
   std::filesystem::path temporary = file;
@@ -78,9 +78,17 @@ Staging::~Staging() {
   std::filesystem::remove_all(hidden_, ignored);
 }
 
-std::filesystem::path Staging::path(const std::string& name) {
+void Staging::add(const std::string& name, const std::function<void(const std::filesystem::path&)>& write) {
+  try {
+    write(hidden_ / name);
+  } catch (const WriteError& error) {
+    throw WriteError(folder_ / name, error.reason());
+  }
   names_.push_back(name);
-  return hidden_ / name;
+}
+
+void Staging::add(const std::string& name, std::string_view bytes) {
+  add(name, [&](const std::filesystem::path& file) { write_file(file, bytes); });
 }
 
 std::vector<std::filesystem::path> Staging::publish() {

@@ -1,6 +1,7 @@
 #pragma once
 
 #include <filesystem>
+#include <functional>
 #include <stdexcept>
 #include <string>
 #include <string_view>
@@ -12,7 +13,12 @@ namespace raiser::io {
 /// to do about it.
 class WriteError : public std::runtime_error {
  public:
+  /// `reason` says what is wrong and what to do.
   WriteError(const std::filesystem::path& file, const std::string& reason);
+  const std::string& reason() const { return reason_; }
+
+ private:
+  std::string reason_;
 };
 
 /// Writes a whole file under a temporary name beside it and renames it, so
@@ -20,7 +26,7 @@ class WriteError : public std::runtime_error {
 void write_file(const std::filesystem::path& file, std::string_view bytes);
 
 /// A set of files that appear in a folder together or not at all: each is
-/// written inside a hidden folder of its own and moved into place by publish().
+/// written inside a hidden folder and moved into place by publish().
 /// Whatever has not been published is removed with the object.
 class Staging {
  public:
@@ -30,8 +36,10 @@ class Staging {
   Staging& operator=(const Staging&) = delete;
   ~Staging();
 
-  /// Where to write the file that publish() will call `name`.
-  std::filesystem::path path(const std::string& name);
+  /// Lets `write` write the file that publish() will call `name`. A WriteError
+  /// of it is passed on under that name.
+  void add(const std::string& name, const std::function<void(const std::filesystem::path&)>& write);
+  void add(const std::string& name, std::string_view bytes);
 
   /// Moves every file into place; returns their final paths in the order in
   /// which they were named. Throws WriteError.
