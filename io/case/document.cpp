@@ -86,6 +86,12 @@ bool is_bare_quantity(std::string_view line) {
   return unit != std::string_view::npos && unit > value && line[unit] != '"' && line[unit] != '\'';
 }
 
+/// The parser's description without the words that every one starts with.
+std::string_view reason(std::string_view description) {
+  constexpr std::string_view opening = "Error while parsing ";
+  return description.starts_with(opening) ? description.substr(opening.size()) : description;
+}
+
 std::string cure_for(std::string_view description, std::string_view line) {
   constexpr std::string_view stops =
       " (reading stops at a breach of TOML's grammar; there may be more faults)";
@@ -95,6 +101,9 @@ std::string cure_for(std::string_view description, std::string_view line) {
   }
   if (is_bare_quantity(line)) {
     return fmt::format("put quantities with a unit in double quotes, e.g. \"60 mm\"{}", stops);
+  }
+  if (reason(description).starts_with("string")) {
+    return fmt::format("close each text's quotes on the line that opens them{}", stops);
   }
   return fmt::format("write key = \"text\", key = number, [table] or [[table]]{}", stops);
 }
@@ -114,7 +123,7 @@ std::variant<Node, Diagnostic> parse_document(std::string_view content, const st
     Diagnostic fault;
     fault.file = name;
     fault.position = begin(error.source());
-    fault.what = fmt::format("this is not TOML: {}", shown(error.description()));
+    fault.what = fmt::format("this is not TOML: {}", shown(reason(error.description()), 200));
     fault.cure = cure_for(error.description(), line_of(content, fault.position->line));
     return fault;
   }

@@ -51,6 +51,9 @@ struct Question {
 };
 Question read_question(const Table& document, const std::vector<std::string_view>& holes);
 
+/// How to write the name of a hole, for messages: the first one's, if any.
+std::string sample_of(const std::vector<std::string_view>& holes);
+
 /// The word for a quantity in case files: "largest edge stress", ...
 std::string_view word(solver::Quantity quantity);
 

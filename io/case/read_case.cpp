@@ -26,6 +26,7 @@ struct Parts {
   Material material;
   std::vector<HoleReading> holes;
   std::vector<LoadReading> loads;
+  bool loads_are_sound = false;  ///< no fault was found in any
   Question question;
 };
 
@@ -54,7 +55,7 @@ Parts read_parts(const Table& document, const std::string& default_title) {
   refuse_unknown(document, keys);
   read_version(document);
   const Entry* title = find(document, "title");
-  Parts parts{text(document, title).value_or(default_title), document, {}, {}, {}, {}, {}};
+  Parts parts{text(document, title).value_or(default_title), document, {}, {}, {}, {}, false, {}};
   const auto need = [&](std::string_view key, std::string_view contents) {
     const auto table = table_at(*document.node, key, *document.report);
     if (!table && find(document, key) == nullptr) {
@@ -72,7 +73,9 @@ Parts read_parts(const Table& document, const std::string& default_title) {
   parts.holes = read_holes(document);
   std::vector<std::string_view> names;
   for (const HoleReading& hole : parts.holes) names.push_back(hole.name);
+  const std::size_t faults_before = document.report->faults.size();
   parts.loads = read_loads(document, parts.plate, names);
+  parts.loads_are_sound = document.report->faults.size() == faults_before;
   parts.question = read_question(document, names);
   if (parts.holes.empty() && find(document, "hole") == nullptr) {
     complain_of_missing(document, "hole", "the plate has no hole", "add [[hole]] with a shape and its sizes");
@@ -120,11 +123,11 @@ void check_geometry(const Parts& parts, const PartialPlate& partial, Report& rep
   }
 }
 
-/// Only when every load could be read: a missing one would unbalance the rest.
+/// Only when every load could be read: a faulty one would unbalance the rest.
 void check_balance(const Parts& parts, const mesh::Plate& plate, Report& report) {
   std::vector<solver::Load> loads;
   for (const LoadReading& load : parts.loads) {
-    if (!load.load) return;
+    if (!load.load || !parts.loads_are_sound) return;
     loads.push_back(*load.load);
   }
   const auto fault = solver::imbalance(plate, loads);

@@ -97,7 +97,7 @@ std::optional<Load> read_bending(const Table& table, const Context& context) {
 
 std::optional<Load> read_pressure(const Table& table, const Context& context) {
   refuse_unfitting(table, "pressure", load_keys, pressure_keys);
-  const auto hole = choice(table, require(table, "hole", "\"hole 1\""), context.holes);
+  const auto hole = choice(table, require(table, "hole", sample_of(context.holes)), context.holes);
   const auto pressure =
       quantity(table, require(table, "pressure", "\"10 MPa\""), Dimension::stress, Sign::nonzero);
   if (!hole || !pressure) return std::nullopt;

@@ -127,6 +127,10 @@ std::optional<double> read_poissons_ratio(const Table& table) {
 
 }  // namespace
 
+std::string sample_of(const std::vector<std::string_view>& holes) {
+  return fmt::format("\"{}\"", holes.empty() ? "hole 1" : holes.front());
+}
+
 PlateSizes read_plate(const Table& table) {
   constexpr std::array<std::string_view, 3> keys{"length", "width", "thickness"};
   refuse_unknown(table, keys);

@@ -65,7 +65,7 @@ std::optional<Ask> read_result(const Table& table, const Words& holes, double to
   constexpr std::array<std::string_view, 4> keys{"name", "of", "hole", "tolerance"};
   refuse_unknown(table, keys);
   const auto of = choice(table, require(table, "of", "\"largest edge stress\""), quantity_words());
-  const auto hole = choice(table, require(table, "hole", "\"hole 1\""), holes);
+  const auto hole = choice(table, require(table, "hole", sample_of(holes)), holes);
   const auto own_tolerance = read_tolerance(table, tolerance);
   require(table, "name", "\"peak at the bolt\"");
   const std::string name = unique_name(table, fmt::format("result {}", names.size() + 1), names);

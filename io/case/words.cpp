@@ -44,8 +44,9 @@ std::string_view nearest(std::string_view word, std::span<const std::string_view
   auto best_distance = std::numeric_limits<double>::infinity();
   if (word.size() > longest_word) return best;
   for (const std::string_view candidate : candidates) {
-    const auto [shorter, longer] = std::minmax(word.size(), candidate.size());
-    if (candidate.size() > longest_word || static_cast<double>(longer - shorter) >= best_distance) continue;
+    const auto difference = static_cast<double>(std::max(word.size(), candidate.size()) -
+                                                std::min(word.size(), candidate.size()));
+    if (candidate.size() > longest_word || difference >= best_distance) continue;
     const double distance = edit_distance(word, candidate);
     if (distance < best_distance) {
       best = candidate;
@@ -61,8 +62,7 @@ bool is_near(std::string_view word, std::string_view candidate) {
   return edit_distance(word, candidate) <= std::max(1.0, length / 3.0);
 }
 
-std::string shown(std::string_view content) {
-  constexpr std::size_t longest = 60;
+std::string shown(std::string_view content, std::size_t longest) {
   std::string result;
   for (const char c : content) {
     const auto byte = static_cast<unsigned char>(c);

@@ -21,8 +21,8 @@ std::string_view nearest(std::string_view word, std::span<const std::string_view
 bool is_near(std::string_view word, std::string_view candidate);
 
 /// The text fit to stand in a one-line message: control characters and invalid
-/// bytes escaped, shortened to about 60 characters.
-std::string shown(std::string_view content);
+/// bytes escaped, shortened to about `longest` bytes.
+std::string shown(std::string_view content, std::size_t longest = 60);
 
 /// The words as a list: a, b, c.
 std::string list(std::span<const std::string_view> words);

@@ -1,0 +1,252 @@
+#include "io/case/describe.hpp"
+
+#include <fmt/format.h>
+
+#include <algorithm>
+#include <map>
+#include <numbers>
+
+#include "io/case/layout.hpp"
+#include "io/case/parts.hpp"
+#include "io/case/words.hpp"
+#include "mesh/plate/section.hpp"
+
+namespace raiser::io {
+
+namespace {
+
+using mesh::Hole;
+using mesh::HoleShape;
+using mesh::Plate;
+using solver::Load;
+using Phrases = std::vector<std::string>;
+
+constexpr std::size_t most_listed = 12;  // holes or loads that are described one by one
+constexpr std::string_view default_mark = " (default)";
+
+/// A remark on where a value comes from: nothing when it reads as the author
+/// wrote it, what they wrote when it reads otherwise, or that it is a default.
+std::string origin(const Case& input, const std::string& key, const std::string& reading) {
+  const auto written = input.written.find(key);
+  if (written == input.written.end()) return std::string(default_mark);
+  return written->second == reading ? "" : fmt::format(" (written {})", shown(written->second));
+}
+
+std::string amount(double value, std::string_view unit) {
+  return fmt::format("{:.10g}{}{}", value, unit.empty() ? "" : " ", unit);
+}
+
+/// A figure that follows from others, to six digits.
+std::string derived(double value, std::string_view unit) { return fmt::format("{:.6g} {}", value, unit); }
+
+/// "width 60 mm", with its origin.
+std::string item(const Case& input, std::string_view word, const std::string& key, double value,
+                 std::string_view unit) {
+  const std::string reading = amount(value, unit);
+  return fmt::format("{} {}{}", word, reading, origin(input, key, reading));
+}
+
+std::string percent(double ratio) { return fmt::format("{:.10g} %", ratio * 100.0); }
+
+std::string describe_plate(const Case& input) {
+  const Plate& plate = input.problem.plate;
+  return row("Plate", {item(input, "length", "plate.length", plate.length, "mm"),
+                       item(input, "width", "plate.width", plate.width, "mm"),
+                       item(input, "thickness", "plate.thickness", plate.thickness, "mm")}) +
+         row("", {fmt::format("gross section {} across", derived(plate.width * plate.thickness, "mm^2")),
+                  fmt::format("{} along", derived(plate.length * plate.thickness, "mm^2"))});
+}
+
+std::string describe_material(const Case& input) {
+  const solver::HookeLaw& law = input.problem.material;
+  const std::string state = law.state == solver::PlaneState::stress ? "plane stress" : "plane strain";
+  Phrases phrases{item(input, "Young's modulus", "material.youngs_modulus", law.youngs_modulus, "MPa"),
+                  item(input, "Poisson's ratio", "material.poissons_ratio", law.poissons_ratio, ""),
+                  state + origin(input, "material.state", state)};
+  if (input.yield_strength) {
+    phrases.push_back(item(input, "yield strength", "material.yield_strength", *input.yield_strength, "MPa"));
+  } else {
+    phrases.push_back("no yield strength given");
+  }
+  return row("Material", phrases);
+}
+
+std::string article_free_word(const Hole& hole) { return std::string(mesh::word(hole.shape)); }
+
+Phrases sizes(const Case& input, const Hole& hole, const std::string& path) {
+  if (hole.shape == HoleShape::circle) {
+    const bool by_radius = input.written.contains(path + "radius");
+    const double half = hole.length / 2.0;
+    return {by_radius ? item(input, "radius", path + "radius", half, "mm")
+                      : item(input, "diameter", path + "diameter", hole.length, "mm")};
+  }
+  Phrases phrases{item(input, "length", path + "length", hole.length, "mm"),
+                  item(input, "width", path + "width", hole.width, "mm")};
+  if (hole.shape == HoleShape::rounded_rectangle) {
+    phrases.push_back(item(input, "corner radius", path + "corner_radius", hole.corner_radius, "mm"));
+  }
+  phrases.push_back(item(input, "angle", path + "angle", hole.angle * 180.0 / std::numbers::pi, "deg"));
+  return phrases;
+}
+
+/// The net section through the hole's centre, every hole in its way left out.
+std::string net_section(const Plate& plate, const Hole& hole) {
+  double net = 0.0;
+  for (const mesh::Interval& piece : mesh::material_along(plate, mesh::Direction::across, hole.centre.x())) {
+    net += (piece.end - piece.begin) * plate.thickness;
+  }
+  return fmt::format("net section at x = {}: {}, {:.1f} % of gross", amount(hole.centre.x(), "mm"),
+                     derived(net, "mm^2"), 100.0 * net / (plate.width * plate.thickness));
+}
+
+std::string describe_hole(const Case& input, std::size_t index) {
+  const Hole& hole = input.problem.plate.holes[index];
+  const std::string path = fmt::format("hole.{}.", index + 1);
+  Phrases phrases{article_free_word(hole)};
+  for (std::string& phrase : sizes(input, hole, path)) phrases.push_back(std::move(phrase));
+  const std::string x = amount(hole.centre.x(), "mm");
+  const std::string y = amount(hole.centre.y(), "mm");
+  const std::string place = fmt::format("at x = {}, y = {}", x, y);
+  phrases.push_back(place + origin(input, path + "at", fmt::format("{}, {}", x, y)));
+  std::string label = "  " + hole.name;
+  if (!input.written.contains(path + "name")) label += std::string(default_mark);
+  return row(label, phrases) + row("", {net_section(input.problem.plate, hole)});
+}
+
+/// "985 circle, 5 slot": how many of each shape from hole `first` on.
+std::string count_of_shapes(const Plate& plate, std::size_t first) {
+  std::map<std::string_view, std::size_t> counts;
+  for (std::size_t i = first; i < plate.holes.size(); ++i) ++counts[mesh::word(plate.holes[i].shape)];
+  Phrases phrases;
+  for (const auto& [shape, count] : counts) phrases.push_back(fmt::format("{} {}", count, shape));
+  return fmt::format("{}", fmt::join(phrases, ", "));
+}
+
+std::string describe_holes(const Case& input) {
+  const Plate& plate = input.problem.plate;
+  const std::size_t listed = plate.holes.size() > most_listed ? most_listed / 2 : plate.holes.size();
+  std::string result = row("Holes", {fmt::format("{}", plate.holes.size())});
+  for (std::size_t i = 0; i < listed; ++i) result += describe_hole(input, i);
+  if (listed < plate.holes.size()) {
+    result += row("  and more", {fmt::format("{} not listed here", plate.holes.size() - listed),
+                                 count_of_shapes(plate, listed)});
+  }
+  return result;
+}
+
+std::string kilonewtons(double newtons) { return derived(newtons / 1e3, "kN"); }
+
+/// What a load is and the force or moment that it stands for.
+Phrases meaning(const Plate& plate, const Load& load) {
+  const double across = plate.width * plate.thickness;
+  const double along = plate.length * plate.thickness;
+  const std::string stress = derived(load.stress, "MPa");
+  switch (load.kind) {
+    case Load::Kind::tension:
+      return {fmt::format("tension along x: {} on the ends", stress), kilonewtons(load.stress * across)};
+    case Load::Kind::transverse:
+      return {fmt::format("tension across, along y: {} on the sides", stress),
+              kilonewtons(load.stress * along)};
+    case Load::Kind::shear:
+      return {fmt::format("shear: {} on all four edges", stress),
+              fmt::format("{} on each end", kilonewtons(load.stress * across))};
+    case Load::Kind::bending:
+      return {fmt::format("bending: {} at y = {}", stress, amount(plate.width / 2.0, "mm")),
+              fmt::format("moment {}", derived(load.stress * across * plate.width / 6e3, "N m"))};
+    case Load::Kind::pressure:
+      return {fmt::format("pressure: {} in {}", stress, plate.holes[load.hole].name)};
+    case Load::Kind::edge:
+      break;
+  }
+  const bool end = load.edge == mesh::Owner::Kind::right || load.edge == mesh::Owner::Kind::left;
+  const double area = end ? across : along;
+  return {fmt::format("normal {} = {}", stress, kilonewtons(load.stress * area)),
+          fmt::format("shear {} = {} (positive anticlockwise)", derived(load.along, "MPa"),
+                      kilonewtons(load.along * area))};
+}
+
+std::string edge_of(const Load& load) {
+  switch (load.edge) {
+    case mesh::Owner::Kind::right:
+      return "right edge";
+    case mesh::Owner::Kind::top:
+      return "top edge";
+    case mesh::Owner::Kind::left:
+      return "left edge";
+    default:
+      return "bottom edge";
+  }
+}
+
+/// What the author wrote for the load's size where the reading does not say it
+/// in the same words: "written 450 lbf in".
+std::string written_amounts(const Case& input, const std::string& path, std::string_view reading) {
+  Phrases amounts;
+  for (const auto* key :
+       {"stress", "force", "moment", "pressure", "normal", "normal_force", "shear", "shear_force"}) {
+    const auto written = input.written.find(path + key);
+    if (written == input.written.end() || reading.find(written->second) != std::string_view::npos) continue;
+    amounts.push_back(shown(written->second));
+  }
+  return amounts.empty() ? "" : fmt::format("written {}", fmt::join(amounts, " and "));
+}
+
+std::string describe_load(const Case& input, std::size_t index) {
+  const Load& load = input.problem.loads[index];
+  const std::string path = fmt::format("load.{}.", index + 1);
+  Phrases phrases = meaning(input.problem.plate, load);
+  if (load.kind == Load::Kind::edge) phrases.insert(phrases.begin(), edge_of(load));
+  if (load.kind == Load::Kind::tension && !input.written.contains(path + "direction")) {
+    phrases.push_back("direction along" + std::string(default_mark));
+  }
+  const std::string written = written_amounts(input, path, fmt::format("{}", fmt::join(phrases, ", ")));
+  if (!written.empty()) phrases.push_back(written);
+  std::string label = "  " + load.name;
+  if (!input.written.contains(path + "name")) label += std::string(default_mark);
+  return row(label, phrases);
+}
+
+std::string describe_loads(const Case& input) {
+  const std::size_t count = input.problem.loads.size();
+  const std::size_t listed = count > most_listed ? most_listed / 2 : count;
+  std::string result = row("Loads", {fmt::format("{}", count)});
+  for (std::size_t i = 0; i < listed; ++i) result += describe_load(input, i);
+  if (listed < count) result += row("  and more", {fmt::format("{} not listed here", count - listed)});
+  return result;
+}
+
+std::string describe_question(const Case& input) {
+  std::string result =
+      row("Asked", {fmt::format("{} results", input.asks.size()),
+                    fmt::format("tolerance {} of the largest stress at the hole{}", percent(input.tolerance),
+                                input.written.contains("ask.tolerance") ? "" : default_mark)});
+  const auto chosen = [&](const std::string& key, const std::string& otherwise) {
+    const auto written = input.written.find(key);
+    if (written == input.written.end()) return otherwise + std::string(default_mark);
+    return written->second.empty() ? "none" : shown(written->second);
+  };
+  const bool all =
+      std::any_of(input.asks.begin(), input.asks.end(), [](const auto& ask) { return ask.name.empty(); });
+  if (all) {
+    result += row("  results", {chosen("ask.results", "largest and smallest edge stress, von Mises")});
+    result += row("  at", {chosen("ask.holes", "every hole")});
+  }
+  for (const solver::Ask& ask : input.asks) {
+    if (ask.name.empty()) continue;
+    result += row("  " + ask.name,
+                  {fmt::format("{} at {}", word(ask.quantity), input.problem.plate.holes[ask.hole].name),
+                   fmt::format("tolerance {}", percent(ask.tolerance))});
+  }
+  return result;
+}
+
+}  // namespace
+
+std::string describe(const Case& input) {
+  const std::string title = input.title + (input.written.contains("title") ? "" : std::string(default_mark));
+  return title + '\n' + row("File", {input.file.string(), fmt::format("format {}", case_format)}) + '\n' +
+         describe_plate(input) + describe_material(input) + '\n' + describe_holes(input) + '\n' +
+         describe_loads(input) + '\n' + describe_question(input);
+}
+
+}  // namespace raiser::io
