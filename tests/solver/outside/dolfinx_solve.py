@@ -1,9 +1,9 @@
 """Plane elasticity on a given mesh, solved by DOLFINx: the outside check of raiser's finite elements.
 
-Usage: dolfinx_solve.py MESH.json ANSWER.json CACHE_DIR     solve one exported mesh
-       dolfinx_solve.py --self-test CACHE_DIR               check this program on closed forms
+Usage: dolfinx_solve.py MESHES.json ANSWERS.json CACHE_DIR   solve exported meshes
+       dolfinx_solve.py --self-test CACHE_DIR                check this program on closed forms
 
-MESH.json (lengths mm, stresses MPa):
+MESHES.json is a list of meshes, each (lengths mm, stresses MPa):
   reference     reference coordinates (r, s), r, s >= 0 and r + s <= 1, of the geometry nodes of one
                 triangle, corners first as (0,0), (1,0), (0,1); as many as a polynomial of degree g has
   vertices      for each triangle its three global vertex numbers, anticlockwise
@@ -17,7 +17,7 @@ MESH.json (lengths mm, stresses MPa):
   pins          list of {"vertex": number, "component": 0 or 1}: displacement 0
   samples       reference points (r, s) at which every triangle's displacement is wanted
 
-ANSWER.json: positions and displacements [triangle][sample] -> (x, y), mm; strain_energy and external_work, N mm.
+ANSWERS.json, a list in the same order: positions and displacements [triangle][sample] -> (x, y), mm; strain_energy and external_work, N mm.
 """
 
 import json
@@ -253,9 +253,9 @@ def main(arguments):
         self_test()
         return
     with open(arguments[0], encoding="utf-8") as file:
-        answer = solve(json.load(file))
+        answers = [solve(given) for given in json.load(file)]
     with open(arguments[1], "w", encoding="utf-8") as file:
-        json.dump(answer, file)
+        json.dump(answers, file)
 
 
 if __name__ == "__main__":
