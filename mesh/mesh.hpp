@@ -41,6 +41,9 @@ class Mesh {
   using Triangle = std::array<int, 3>;
   static constexpr int exact = 0;
 
+  /// A mesh without triangles.
+  Mesh() = default;
+
   /// `geometry_degree` is the polynomial degree of the curved sides (at least
   /// 1, straight), or `exact`. Throws std::invalid_argument when the
   /// triangles are not a conforming mesh bounded by the given sides.

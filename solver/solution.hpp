@@ -10,6 +10,7 @@
 #include "solver/elasticity/hooke_law.hpp"
 #include "solver/elasticity/load.hpp"
 #include "solver/extract/estimate.hpp"
+#include "solver/extract/quantity.hpp"
 #include "solver/field/field.hpp"
 
 namespace raiser::solver {
@@ -20,9 +21,6 @@ struct Problem {
   HookeLaw material;
   std::vector<Load> loads;
 };
-
-/// The quantities that can be asked for at a hole.
-enum class Quantity { largest_edge_stress, smallest_edge_stress, von_mises };
 
 /// One asked number and its tolerance, relative to the largest magnitude of
 /// edge stress on that hole under all loads together.
@@ -38,6 +36,7 @@ struct EdgeValue {
   Estimate stress;              ///< MPa
   Point point = Point::Zero();  ///< mm
   double angle = 0.0;           ///< rad, of the point seen from the hole's centre, from +x, in (-pi, pi]
+  double traction_miss = 0.0;   ///< MPa: how far the raw stress misses the known traction there
 };
 
 /// A straight section through the plate and the holes it cuts.

@@ -24,6 +24,8 @@ struct FieldValue {
 /// Immutable; safe to read from several threads.
 class Field {
  public:
+  /// A field without cells.
+  Field() = default;
   Field(const Model& model, const Displacements& displacements);
 
   std::size_t cells() const { return images_.size() * mesh_.triangles().size(); }
@@ -48,7 +50,7 @@ class Field {
 
   mesh::Mesh mesh_;
   HookeLaw material_;
-  int degree_;
+  int degree_ = 0;
   std::vector<Image> images_;
   std::vector<Eigen::MatrixX2d> coefficients_;  ///< by image: one row a function
   Point origin_ = Point::Zero();

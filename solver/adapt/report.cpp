@@ -1,0 +1,132 @@
+#include "solver/adapt/report.hpp"
+
+#include <algorithm>
+#include <cmath>
+
+#include "mesh/plate/distance.hpp"
+#include "solver/extract/paths.hpp"
+#include "solver/extract/section.hpp"
+
+namespace raiser::solver {
+namespace {
+
+/// Values from the last few degrees serve the bounds along paths.
+constexpr std::size_t path_degrees = 4;
+
+template <class T>
+std::vector<T> last_of(const std::vector<T>& all) {
+  return {all.end() - static_cast<std::ptrdiff_t>(std::min(path_degrees, all.size())), all.end()};
+}
+
+/// The loads behind each unit load: one each, or all edge loads together.
+std::vector<std::vector<Load>> loads_of_units(const std::vector<Load>& loads,
+                                              const std::vector<UnitLoad>& units) {
+  std::vector<Load> edges;
+  std::vector<std::vector<Load>> single;
+  for (const Load& load : loads)
+    if (load.kind == Load::Kind::edge)
+      edges.push_back(load);
+    else
+      single.push_back({load});
+  std::vector<std::vector<Load>> result;
+  std::size_t next = 0;
+  for (const UnitLoad& unit : units)
+    result.push_back(!edges.empty() && unit.name == "edges" ? edges : single[next++]);
+  return result;
+}
+
+LoadFindings findings(const Problem& problem, const DegreeSequence& sequence, std::size_t load_case,
+                      const std::string& name, const std::vector<Load>& loads) {
+  LoadFindings result{name, {}};
+  for (std::size_t h = 0; h < problem.plate.holes.size(); ++h) {
+    HoleFindings hole;
+    hole.hole = h;
+    hole.largest = sequence.value(load_case, h, Quantity::largest_edge_stress);
+    hole.smallest = sequence.value(load_case, h, Quantity::smallest_edge_stress);
+    hole.von_mises = sequence.value(load_case, h, Quantity::von_mises);
+    const bool is_tensile = std::abs(hole.largest.stress.value) >= std::abs(hole.smallest.stress.value);
+    const Estimate& peak = is_tensile ? hole.largest.stress : hole.smallest.stress;
+    const Nominal basis = nominal(problem.plate, loads, h);
+    hole.section = basis.section;
+    hole.gross = concentration(peak, basis.gross);
+    hole.net = concentration(peak, basis.net);
+    result.holes.push_back(std::move(hole));
+  }
+  return result;
+}
+
+/// The section farthest from every hole and both ends.
+double far_station(const Plate& plate) {
+  std::vector<std::pair<double, double>> holes;
+  for (const mesh::Hole& hole : plate.holes) {
+    const double half = mesh::half_extent(hole, {1.0, 0.0});
+    holes.emplace_back(hole.centre.x() - half, hole.centre.x() + half);
+  }
+  std::sort(holes.begin(), holes.end());
+  double best = 0.0;
+  double room = -1.0;
+  double from = -plate.length / 2;
+  holes.emplace_back(plate.length / 2, plate.length / 2);
+  for (const auto& [begin, end] : holes) {
+    // The ends are loaded as the far field is: stay near them rather than near a hole.
+    const bool at_start = from == -plate.length / 2;
+    const bool at_end = begin == plate.length / 2;
+    const double share = at_start == at_end ? 0.5 : (at_start ? 0.25 : 0.75);
+    if (begin - from > room) {
+      room = begin - from;
+      best = from + share * room;
+    }
+    from = std::max(from, end);
+  }
+  return best;
+}
+
+void check_far_field(const Problem& problem, Solution& solution) {
+  PlateChecks& checks = solution.checks;
+  checks.far_station = far_station(problem.plate);
+  const SectionForces forces =
+      section_forces(problem.plate, problem.loads, mesh::Direction::across, checks.far_station);
+  const double area = problem.plate.width * problem.plate.thickness;
+  checks.far_applied = forces.normal / area;
+  const double bending = 6 * forces.moment / (area * problem.plate.width);
+  const FarStress far =
+      far_stress(problem.plate, solution.field, checks.far_station, checks.far_applied, bending);
+  checks.far_recovered = far.mean;
+  double largest = std::max({std::abs(checks.far_applied), std::abs(bending)});
+  for (const HoleFindings& hole : solution.combined.holes) largest = std::max(largest, hole.gross.nominal);
+  checks.far_scatter = largest > 0 ? far.scatter / largest : 0.0;
+}
+
+}  // namespace
+
+Solution report(const Problem& problem, const DegreeSequence& sequence) {
+  const Model& model = sequence.model();
+  const Displacements& last = sequence.displacements().back();
+  Solution solution;
+  solution.combined = findings(problem, sequence, 0, "all loads", problem.loads);
+  const auto groups = loads_of_units(problem.loads, model.loads());
+  for (std::size_t l = 0; l < model.loads().size(); ++l)
+    solution.units.push_back(findings(problem, sequence, l + 1, model.loads()[l].name, groups[l]));
+  solution.degree = last.degree;
+  solution.unknowns = static_cast<std::size_t>(Discretisation(model.mesh(), last.degree).unknowns());
+  solution.triangles = model.mesh().triangles().size();
+  solution.mirrors_used = model.mirrors();
+  solution.edges = edge_samples(model, problem.plate, sequence.scanner(), last_of(sequence.scans()));
+
+  std::vector<Field> fields;
+  for (const Displacements& level : last_of(sequence.displacements())) fields.emplace_back(model, level);
+  std::vector<Section> sections;
+  for (const HoleFindings& hole : solution.combined.holes) sections.push_back(hole.section);
+  solution.ligaments = ligaments(problem.plate, sections, fields);
+  solution.field = std::move(fields.back());
+
+  const Balance balance = model.balance(last);
+  solution.checks.equilibrium_residual = balance.residual;
+  solution.checks.reaction = balance.reaction;
+  solution.checks.strain_energy = balance.strain_energy;
+  solution.checks.external_work = balance.external_work;
+  check_far_field(problem, solution);
+  return solution;
+}
+
+}  // namespace raiser::solver

@@ -1,0 +1,12 @@
+#pragma once
+
+#include "solver/adapt/sequence.hpp"
+#include "solver/solution.hpp"
+
+namespace raiser::solver {
+
+/// Everything a solution says, from a sequence of at least one degree. Status,
+/// reason, levels and seconds are left to the caller.
+Solution report(const Problem& problem, const DegreeSequence& sequence);
+
+}  // namespace raiser::solver

@@ -1,0 +1,132 @@
+#include <fmt/format.h>
+
+#include <algorithm>
+#include <chrono>
+#include <cmath>
+#include <optional>
+#include <stdexcept>
+
+#include "mesh/triangulate/triangulate.hpp"
+#include "solver/adapt/report.hpp"
+#include "solver/adapt/sequence.hpp"
+#include "solver/solution.hpp"
+
+namespace raiser::solver {
+namespace {
+
+using Clock = std::chrono::steady_clock;
+
+constexpr int first_degree = 3;
+constexpr int most_refinements = 5;
+constexpr std::size_t most_unknowns = 3'000'000;
+
+double seconds_since(Clock::time_point start) {
+  return std::chrono::duration<double>(Clock::now() - start).count();
+}
+
+void require_legal(const Problem& problem, const std::vector<Ask>& asks) {
+  if (const auto found = mesh::faults(problem.plate); !found.empty())
+    throw std::invalid_argument("settle: the plate is not legal: " + found.front().what);
+  if (problem.loads.empty()) throw std::invalid_argument("settle: there is no load");
+  if (const auto fault = imbalance(problem.plate, problem.loads))
+    throw std::invalid_argument("settle: " + fault->what);
+  for (const Ask& ask : asks)
+    if (ask.hole >= problem.plate.holes.size() || !(ask.tolerance > 0))
+      throw std::invalid_argument("settle: an asked number names no hole or has no tolerance");
+}
+
+/// The mirror lines that the plate and all loads share.
+mesh::Mirrors usable_mirrors(const Plate& plate, const std::vector<UnitLoad>& loads) {
+  mesh::Mirrors shared = mesh::mirrors(plate);
+  for (const UnitLoad& load : loads) {
+    shared.x = shared.x && load.under_x != UnitLoad::Parity::neither;
+    shared.y = shared.y && load.under_y != UnitLoad::Parity::neither;
+  }
+  return shared;
+}
+
+double least_tolerance(const std::vector<Ask>& asks) {
+  double least = 1e-3;
+  for (const Ask& ask : asks) least = std::min(least, ask.tolerance);
+  return least;
+}
+
+/// The first mesh for a tolerance, before anything is solved.
+mesh::SizeRule first_rule(const Plate& plate, double tolerance) {
+  mesh::SizeRule rule;
+  if (tolerance < 1e-5) rule.joint = tolerance < 1e-7 ? 0.002 : 0.01;
+  rule.refine.assign(plate.holes.size(), 1.0);
+  return rule;
+}
+
+/// Degrees beyond 8 pay only where many digits are asked for.
+int last_degree(double tolerance) { return tolerance < 1e-5 ? max_degree : 8; }
+
+/// Raises the degree until every asked number is met, refinement pays more, or
+/// the budget is spent. Returns the largest excess.
+double raise_degree(DegreeSequence& sequence, const std::vector<Ask>& asks, int last, int refinement,
+                    Clock::time_point start, std::vector<Level>& levels) {
+  double worst = std::numeric_limits<double>::infinity();
+  for (int degree = first_degree; degree <= last && worst > 1.0; ++degree) {
+    const std::size_t unknowns = Discretisation(sequence.model().mesh(), degree).unknowns();
+    if (unknowns > most_unknowns && degree > first_degree + 2) break;
+    sequence.solve(degree);
+    worst = 0.0;
+    for (const Ask& ask : asks) worst = std::max(worst, sequence.excess(ask));
+    Level level{refinement,          degree, sequence.model().mesh().triangles().size(), unknowns, 0.0, worst,
+                seconds_since(start)};
+    for (std::size_t h = 0; h < sequence.scans().back().extremes[0].size(); ++h)
+      level.peak = std::max(level.peak, sequence.peak(h));
+    levels.push_back(level);
+  }
+  return worst;
+}
+
+std::string reason_for(const DegreeSequence& sequence, const Plate& plate, const std::vector<Ask>& asks) {
+  std::size_t missed = 0;
+  const Ask* worst = nullptr;
+  for (const Ask& ask : asks) {
+    const double excess = sequence.excess(ask);
+    if (excess <= 1.0) continue;
+    ++missed;
+    if (!worst || excess > sequence.excess(*worst)) worst = &ask;
+  }
+  return fmt::format(
+      "{} of {} asked numbers miss their tolerance after {} refinements and degree {}; the worst, at hole "
+      "{}, "
+      "has a bound {:.2g} times the tolerance",
+      missed, asks.size(), most_refinements, sequence.displacements().back().degree,
+      plate.holes[worst->hole].name, sequence.excess(*worst));
+}
+
+}  // namespace
+
+Solution settle(const Problem& problem, const std::vector<Ask>& asks) {
+  const auto start = Clock::now();
+  require_legal(problem, asks);
+  const std::vector<UnitLoad> loads = unit_loads(problem.plate, problem.loads);
+  const mesh::Mirrors mirrors = usable_mirrors(problem.plate, loads);
+  const mesh::Region region = mesh::cut(mesh::trace(problem.plate), mirrors);
+  const double tolerance = least_tolerance(asks);
+  mesh::SizeRule rule = first_rule(problem.plate, tolerance);
+  std::vector<Level> levels;
+  for (int refinement = 0;; ++refinement) {
+    const Model model(mesh::triangulate(region, rule), mirrors, problem.material, problem.plate.thickness,
+                      loads);
+    DegreeSequence sequence(model, problem.plate);
+    const double worst = raise_degree(sequence, asks, last_degree(tolerance), refinement, start, levels);
+    const bool is_settled = worst <= 1.0;
+    if (is_settled || refinement == most_refinements) {
+      Solution solution = report(problem, sequence);
+      solution.status = is_settled ? Solution::Status::settled : Solution::Status::not_met;
+      if (!is_settled) solution.reason = reason_for(sequence, problem.plate, asks);
+      solution.levels = std::move(levels);
+      solution.seconds = seconds_since(start);
+      return solution;
+    }
+    for (const Ask& ask : asks)
+      if (sequence.excess(ask) > 1.0) rule.refine[ask.hole] = std::pow(0.6, refinement + 1);
+  }
+}
+
+}  // namespace raiser::solver

@@ -1,0 +1,189 @@
+#include "solver/extract/edge_scan.hpp"
+
+#include <algorithm>
+#include <cmath>
+#include <limits>
+#include <numbers>
+
+namespace raiser::solver {
+namespace {
+
+constexpr int samples = 21;
+
+/// Value at s of the polynomial through `values` at EdgeScanner::positions().
+/// Source: barycentric formula, J.-P. Berrut and L. N. Trefethen, SIAM Review
+/// 46 (2004) 501-517.
+double interpolate(const Eigen::VectorXd& values, double s) {
+  double above = 0.0;
+  double below = 0.0;
+  for (int j = 0; j < samples; ++j) {
+    const double distance = s - EdgeScanner::positions()[j];
+    if (distance == 0.0) return values[j];
+    const double weight = (j % 2 == 0 ? 1.0 : -1.0) * (j == 0 || j == samples - 1 ? 0.5 : 1.0) / distance;
+    above += weight * values[j];
+    below += weight;
+  }
+  return above / below;
+}
+
+/// Position of the largest value of the interpolant near its largest sample.
+double maximise(const Eigen::VectorXd& values) {
+  Eigen::Index best = 0;
+  values.maxCoeff(&best);
+  const auto& s = EdgeScanner::positions();
+  double low = s[std::max<Eigen::Index>(best - 1, 0)];
+  double high = s[std::min<Eigen::Index>(best + 1, samples - 1)];
+  const double golden = (std::sqrt(5.0) - 1) / 2;
+  double a = high - golden * (high - low);
+  double b = low + golden * (high - low);
+  double fa = interpolate(values, a);
+  double fb = interpolate(values, b);
+  while (high - low > 1e-7) {
+    if (fa > fb) {
+      high = b;
+      b = a;
+      fb = fa;
+      a = high - golden * (high - low);
+      fa = interpolate(values, a);
+    } else {
+      low = a;
+      a = b;
+      fa = fb;
+      b = low + golden * (high - low);
+      fb = interpolate(values, b);
+    }
+  }
+  const double middle = (low + high) / 2;
+  return interpolate(values, middle) > values[best] ? middle : s[best];
+}
+
+/// The quantity under weighted loads at every point of a side, such that the
+/// wanted extreme is the largest.
+Eigen::VectorXd wanted(const SideStress& stress, const Eigen::VectorXd& weight, Quantity quantity,
+                       const HookeLaw& material) {
+  Eigen::VectorXd tangential = stress.tangential * weight;
+  if (quantity == Quantity::largest_edge_stress) return tangential;
+  if (quantity == Quantity::smallest_edge_stress) return -tangential;
+  const Eigen::VectorXd normal = stress.normal * weight;
+  const Eigen::VectorXd shear = stress.shear * weight;
+  for (Eigen::Index i = 0; i < tangential.size(); ++i)
+    tangential[i] =
+        von_mises({tangential[i], normal[i], shear[i], material.through_thickness(tangential[i], normal[i])});
+  return tangential;
+}
+
+}  // namespace
+
+const std::vector<double>& EdgeScanner::positions() {
+  static const std::vector<double> result = [] {
+    std::vector<double> s;
+    for (int j = 0; j < samples; ++j) s.push_back(-std::cos(std::numbers::pi * j / (samples - 1)));
+    s[samples / 2] = 0.0;
+    return s;
+  }();
+  return result;
+}
+
+EdgeScanner::EdgeScanner(const Model& model, const Plate& plate)
+    : model_(&model), holes_(plate.holes.size()) {
+  for (const mesh::BoundarySide& side : model.mesh().boundary())
+    if (side.curve.owner.kind == Owner::Kind::hole) sides_.push_back(side);
+  std::vector<bool> meshed(holes_, false);
+  for (const mesh::BoundarySide& side : sides_) meshed[side.curve.owner.hole] = true;
+  for (const Image& image : model.images()) {
+    std::vector<std::size_t> map(holes_, 0);
+    for (std::size_t h = 0; h < holes_; ++h)
+      if (meshed[h])
+        map[h] = image.mirror() == mesh::Mirrors{} ? h : mesh::mirror_image(plate, h, image.mirror());
+    hole_of_.push_back(std::move(map));
+  }
+}
+
+std::size_t EdgeScanner::hole_in(std::size_t side, std::size_t image) const {
+  return hole_of_[image][sides_[side].curve.owner.hole];
+}
+
+Eigen::VectorXd EdgeScanner::weights(std::size_t load_case, std::size_t image) const {
+  Eigen::VectorXd weight = Eigen::VectorXd::Zero(static_cast<Eigen::Index>(model_->loads().size()));
+  for (std::size_t l = 0; l < model_->loads().size(); ++l)
+    if (load_case == 0 || load_case == l + 1) weight[l] = model_->parity(l, model_->images()[image]);
+  return weight;
+}
+
+/// The search for one quantity in one case over all holes.
+struct EdgeScanner::Search {
+  const EdgeScanner& scanner;
+  const Displacements& displacements;
+  const EdgeScan& scan;
+  std::size_t load_case;
+  Quantity quantity;
+
+  struct Best {
+    double value = -std::numeric_limits<double>::infinity();
+    double least = std::numeric_limits<double>::infinity();
+    double s = 0.0;
+    std::size_t side = 0;
+    std::size_t image = 0;
+  };
+
+  template <class Visit>
+  void each(Visit visit) const {
+    for (std::size_t image = 0; image < scanner.model_->images().size(); ++image) {
+      const Eigen::VectorXd weight = scanner.weights(load_case, image);
+      for (std::size_t side = 0; side < scanner.sides_.size(); ++side)
+        visit(side, image, wanted(scan.sides[side], weight, quantity, scanner.model_->material()));
+    }
+  }
+
+  std::vector<Best> between_nodes() const {
+    std::vector<Best> sampled(scanner.holes_);
+    each([&](std::size_t side, std::size_t image, const Eigen::VectorXd& values) {
+      Best& best = sampled[scanner.hole_in(side, image)];
+      best.value = std::max(best.value, values.maxCoeff());
+      best.least = std::min(best.least, values.minCoeff());
+    });
+    std::vector<Best> result(scanner.holes_);
+    each([&](std::size_t side, std::size_t image, const Eigen::VectorXd& values) {
+      const std::size_t hole = scanner.hole_in(side, image);
+      const double margin = 0.05 * (sampled[hole].value - sampled[hole].least);
+      if (values.maxCoeff() < sampled[hole].value - margin) return;
+      const double s = maximise(values);
+      const double value = interpolate(values, s);
+      if (value > result[hole].value) result[hole] = {value, 0.0, s, side, image};
+    });
+    return result;
+  }
+
+  Extreme from_solution(const Best& best) const {
+    const EdgeProbe probe(*scanner.model_, displacements.degree, {&best.s, 1});
+    const mesh::BoundarySide& side = scanner.sides_[best.side];
+    const SideStress stress = probe.at(side, displacements);
+    const Eigen::VectorXd weight = scanner.weights(load_case, best.image);
+    Extreme result;
+    result.value = wanted(stress, weight, quantity, scanner.model_->material())[0];
+    if (quantity == Quantity::smallest_edge_stress) result.value = -result.value;
+    result.point = scanner.model_->images()[best.image].apply(side.curve.at(side.parameter(best.s)));
+    result.traction_miss = std::hypot(((stress.raw_normal - stress.normal) * weight)[0],
+                                      ((stress.raw_shear - stress.shear) * weight)[0]);
+    return result;
+  }
+};
+
+EdgeScan EdgeScanner::scan(const Displacements& displacements) const {
+  EdgeScan result;
+  const EdgeProbe probe(*model_, displacements.degree, positions());
+  for (const mesh::BoundarySide& side : sides_) result.sides.push_back(probe.at(side, displacements));
+  // With one load, the load alone is all loads together.
+  const std::size_t cases = model_->loads().size() == 1 ? 1 : model_->loads().size() + 1;
+  result.extremes.assign(cases, std::vector<HoleExtremes>(holes_));
+  for (std::size_t c = 0; c < cases; ++c)
+    for (std::size_t k = 0; k < quantity_count; ++k) {
+      const Search search{*this, displacements, result, c, static_cast<Quantity>(k)};
+      const auto best = search.between_nodes();
+      for (std::size_t h = 0; h < holes_; ++h) result.extremes[c][h][k] = search.from_solution(best[h]);
+    }
+  if (cases == 1) result.extremes.push_back(result.extremes.front());
+  return result;
+}
+
+}  // namespace raiser::solver

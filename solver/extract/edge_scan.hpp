@@ -1,0 +1,53 @@
+#pragma once
+
+#include <array>
+#include <vector>
+
+#include "solver/extract/quantity.hpp"
+#include "solver/field/edge.hpp"
+
+namespace raiser::solver {
+
+/// An extreme value on a hole's edge in one solution.
+struct Extreme {
+  double value = 0.0;           ///< MPa
+  Point point = Point::Zero();  ///< mm
+  double traction_miss = 0.0;   ///< MPa: how far the raw stress misses the known traction there
+};
+using HoleExtremes = std::array<Extreme, quantity_count>;
+
+/// The edges of all holes in one solution: extremes for each case (0: all
+/// loads together, 1 + l: load l alone) and hole, and the stress at fixed
+/// positions on the sides under all loads.
+struct EdgeScan {
+  std::vector<std::vector<HoleExtremes>> extremes;  ///< [case][hole]
+  std::vector<SideStress> sides;                    ///< by EdgeScanner::sides(), per load
+};
+
+/// Searches the edges of all holes between the nodes: every side is sampled at
+/// Chebyshev points, the interpolant through them maximised, and the value at
+/// its maximum taken from the solution itself. Holds a reference to the model.
+class EdgeScanner {
+ public:
+  EdgeScanner(const Model& model, const Plate& plate);
+
+  EdgeScan scan(const Displacements& displacements) const;
+
+  /// The boundary sides that lie on holes.
+  const std::vector<mesh::BoundarySide>& sides() const { return sides_; }
+  /// Chebyshev-Lobatto positions in [-1, 1] where the sides are sampled.
+  static const std::vector<double>& positions();
+  /// The hole of the whole plate that side `side` lies on in an image.
+  std::size_t hole_in(std::size_t side, std::size_t image) const;
+  /// Factor of each load's stress in an image for a case.
+  Eigen::VectorXd weights(std::size_t load_case, std::size_t image) const;
+
+ private:
+  struct Search;
+  const Model* model_;
+  std::size_t holes_;
+  std::vector<mesh::BoundarySide> sides_;
+  std::vector<std::vector<std::size_t>> hole_of_;  ///< [image][hole in the mesh]
+};
+
+}  // namespace raiser::solver

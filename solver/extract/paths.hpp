@@ -1,0 +1,32 @@
+#pragma once
+
+#include <vector>
+
+#include "solver/extract/edge_scan.hpp"
+#include "solver/solution.hpp"
+
+namespace raiser::solver {
+
+/// The stress along every hole's edge under all loads, by hole, anticlockwise
+/// from the point of smallest angle. `scans` are those of successive degrees on
+/// the model's mesh; the last gives the values, all together the bounds.
+std::vector<std::vector<EdgeSample>> edge_samples(const Model& model, const Plate& plate,
+                                                  const EdgeScanner& scanner,
+                                                  const std::vector<EdgeScan>& scans);
+
+/// The ligaments on both sides of every hole along the section that its
+/// nominal stresses stand on, under all loads. `fields` are those of
+/// successive degrees; the last gives the values.
+std::vector<Ligament> ligaments(const Plate& plate, const std::vector<Section>& sections,
+                                const std::vector<Field>& fields);
+
+/// The mean of sigma_xx over the section x = station of the plate, and its
+/// largest departure from the straight line of the nominal distribution.
+struct FarStress {
+  double mean = 0.0;
+  double scatter = 0.0;
+};
+FarStress far_stress(const Plate& plate, const Field& field, double station, double nominal_mean,
+                     double nominal_bending);
+
+}  // namespace raiser::solver
