@@ -45,6 +45,30 @@ void set_ink(cairo_t* pen, const Ink& ink) {
   cairo_set_source_rgba(pen, ink.red, ink.green, ink.blue, ink.opacity);
 }
 
+// The paths of an SVG with two decimals: a hundredth of a unit is below what
+// any eye or printer resolves, and the file is a third smaller.
+std::string with_short_paths(const std::string& svg) {
+  std::string result;
+  result.reserve(svg.size());
+  bool in_path = false;
+  bool in_fraction = false;
+  int decimals = 0;
+  for (const char c : svg) {
+    if (c == '"') in_path = !in_path && result.ends_with(" d=");
+    const bool digit = c >= '0' && c <= '9';
+    if (c == '.' && in_path) {
+      in_fraction = true;
+      decimals = 0;
+    } else if (!digit) {
+      in_fraction = false;
+    } else if (in_fraction && ++decimals > 2) {
+      continue;
+    }
+    result += c;
+  }
+  return result;
+}
+
 struct DestroySurface {
   void operator()(cairo_surface_t* surface) const { cairo_surface_destroy(surface); }
 };
@@ -104,20 +128,6 @@ void Canvas::fill(const Ink& ink) {
   cairo_fill(sheet_->pen.get());
 }
 
-void Canvas::fill_and_stroke(const Ink& ink, double width) {
-  set_ink(sheet_->pen.get(), ink);
-  cairo_set_line_width(sheet_->pen.get(), width);
-  cairo_set_dash(sheet_->pen.get(), nullptr, 0, 0.0);
-  cairo_fill_preserve(sheet_->pen.get());
-  cairo_stroke(sheet_->pen.get());
-}
-
-void Canvas::fill_even_odd(const Ink& ink) {
-  cairo_set_fill_rule(sheet_->pen.get(), CAIRO_FILL_RULE_EVEN_ODD);
-  fill(ink);
-  cairo_set_fill_rule(sheet_->pen.get(), CAIRO_FILL_RULE_WINDING);
-}
-
 void Canvas::stroke(const Ink& ink, double width, std::span<const double> dashes) {
   set_ink(sheet_->pen.get(), ink);
   cairo_set_line_width(sheet_->pen.get(), width);
@@ -127,11 +137,7 @@ void Canvas::stroke(const Ink& ink, double width, std::span<const double> dashes
 
 void Canvas::save() { cairo_save(sheet_->pen.get()); }
 void Canvas::restore() { cairo_restore(sheet_->pen.get()); }
-void Canvas::clip_even_odd() {
-  cairo_set_fill_rule(sheet_->pen.get(), CAIRO_FILL_RULE_EVEN_ODD);
-  cairo_clip(sheet_->pen.get());
-  cairo_set_fill_rule(sheet_->pen.get(), CAIRO_FILL_RULE_WINDING);
-}
+void Canvas::clip() { cairo_clip(sheet_->pen.get()); }
 
 void Canvas::text(const std::string& text, const Spot& at, Font font, const Ink& ink, Align align,
                   double angle) {
@@ -155,7 +161,7 @@ std::string Canvas::finish() {
   if (s.kind == PaperKind::png) check(cairo_surface_write_to_png_stream(s.surface.get(), append, &s.bytes));
   cairo_surface_finish(s.surface.get());
   check(cairo_surface_status(s.surface.get()));
-  return std::move(s.bytes);
+  return s.kind == PaperKind::svg ? with_short_paths(s.bytes) : std::move(s.bytes);
 }
 
 double text_width(const std::string& text, Font font) {

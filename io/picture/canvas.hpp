@@ -66,14 +66,12 @@ class Canvas {
   void rectangle(const Box& box);
   void circle(const Spot& centre, double radius);
 
-  void fill(const Ink& ink);                           ///< non-zero winding
-  void fill_and_stroke(const Ink& ink, double width);  ///< one colour for both
-  void fill_even_odd(const Ink& ink);                  ///< keeps nothing of the path
+  void fill(const Ink& ink);  ///< non-zero winding
   void stroke(const Ink& ink, double width, std::span<const double> dashes = {});
 
-  void save();           ///< remembers the clip
-  void restore();        ///< back to the clip of the matching save()
-  void clip_even_odd();  ///< from now on only inside the path
+  void save();     ///< remembers the clip
+  void restore();  ///< back to the clip of the matching save()
+  void clip();     ///< from now on only inside the path
 
   /// One line of text with its baseline at `at`; `angle` in rad, clockwise.
   void text(const std::string& text, const Spot& at, Font font, const Ink& ink, Align align = Align::left,

@@ -56,23 +56,24 @@ double von_mises_near(const Result& result, std::size_t hole, const Point& point
 
 std::string load_words(const Result& result, const solver::Load& load) {
   const std::string kind(solver::word(load.kind));
-  std::string words = kind;
-  if (!load.name.empty() && load.name != kind) words = plain(load.name) + " (" + kind + ")";
-  words += " " + amount(load.stress, "MPa");
+  std::string words =
+      load.name.empty() || load.name == kind ? kind : fmt::format("{} ({})", plain(load.name), kind);
+  words += fmt::format(" {}", amount(load.stress, "MPa"));
   if (load.kind == solver::Load::Kind::edge && load.along != 0.0)
-    words += together(" and ") + amount(load.along, "MPa") + " along it";
-  if (load.kind == solver::Load::Kind::pressure) words += " in hole " + name_of(result, load.hole);
+    words += fmt::format(" and {} along it", amount(load.along, "MPa"));
+  if (load.kind == solver::Load::Kind::pressure)
+    words += fmt::format(" in hole {}", name_of(result, load.hole));
   return words;
 }
 
 std::string loads_line(const Result& result) {
   constexpr std::size_t most = 4;
   const auto& loads = result.input.problem.loads;
-  std::string line;
+  std::string line = "Loads: ";
   for (std::size_t i = 0; i < std::min(most, loads.size()); ++i)
-    line += (i == 0 ? "" : ", ") + load_words(result, loads[i]);
+    line += fmt::format("{}{}", i == 0 ? "" : ", ", load_words(result, loads[i]));
   if (loads.size() > most) line += fmt::format(" and {} more", loads.size() - most);
-  return "Loads: " + line;
+  return line;
 }
 
 void add_concentration(std::vector<std::string>& lines, const char* name,

@@ -95,7 +95,7 @@ Window neighbourhood(const mesh::Plate& plate, std::size_t index) {
   return {hole.centre, wanted};
 }
 
-std::vector<std::string> wrapped(const std::string& text, Font font, double width) {
+std::vector<std::string> wrapped(const std::string& text, Font font, double width, Breaking breaking) {
   std::vector<std::string> lines;
   std::string line;
   const auto flush = [&] {
@@ -107,7 +107,7 @@ std::vector<std::string> wrapped(const std::string& text, Font font, double widt
     i = end + 1;
     if (!line.empty() && text_width(line + ' ' + word, font) > width) flush();
     line += (line.empty() ? "" : " ") + word;
-    while (text_width(line, font) > width && line.size() > 1) {
+    while (breaking == Breaking::anywhere && line.size() > 1 && text_width(line, font) > width) {
       std::size_t fits = line.size() - 1;
       while (fits > 1 && ((line[fits] & 0xC0) == 0x80 || text_width(line.substr(0, fits), font) > width))
         --fits;

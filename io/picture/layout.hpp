@@ -51,9 +51,11 @@ inline constexpr double axis_left = 50.0;    ///< room for the numbers of the y 
 inline constexpr double axis_bottom = 34.0;  ///< room for those of the x axis and its name
 }  // namespace page
 
-/// Breaks a text at blanks into lines not wider than `width` (a word longer
-/// than a line is cut).
-std::vector<std::string> wrapped(const std::string& text, Font font, double width);
+/// Breaks a text at blanks into lines not wider than `width`. A word longer
+/// than a line is cut, or left too long.
+enum class Breaking { anywhere, between_words };
+std::vector<std::string> wrapped(const std::string& text, Font font, double width,
+                                 Breaking breaking = Breaking::anywhere);
 
 Layout lay_out(const Picture& picture);
 

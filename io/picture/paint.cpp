@@ -168,7 +168,7 @@ std::optional<Box> Labels::place(const Spot& target, const std::vector<Spot>& si
         const Box box{anchor.x() - size.x() * (1 - to.x()) / 2, anchor.y() - size.y() * (1 - to.y()) / 2,
                       size.x(), size.y()};
         if (!bounds.holds(box) || !free(box)) continue;
-        const double cost = away + 4.0 * covered(box.grown(3)) + (outside(box) ? 0.0 : 40.0);
+        const double cost = away + 4.0 * covered(box.grown(3)) + (outside(box) ? 0.0 : 70.0);
         if (cost < least) least = cost, best = box;
       }
   if (best) take(*best);
@@ -197,8 +197,11 @@ void draw_call_out(Canvas& canvas, Labels& labels, const Spot& target, double ra
   constexpr double step = font.size + 3;
   std::vector<Spot> sizes;
   std::vector<std::vector<std::string>> settings;
+  double longest_word = 0.0;
+  for (const std::string& word : wrapped(text, font, 0.0, Breaking::between_words))
+    longest_word = std::max(longest_word, text_width(word, font));
   for (const double widest : {190.0, 150.0, 110.0}) {
-    settings.push_back(wrapped(text, font, std::min(widest, 0.8 * bounds.width)));
+    settings.push_back(wrapped(text, font, std::max(longest_word, std::min(widest, 0.8 * bounds.width))));
     double width = 0.0;
     for (const std::string& line : settings.back()) width = std::max(width, text_width(line, font));
     sizes.emplace_back(width + 10, step * static_cast<double>(settings.back().size()) + 6);
