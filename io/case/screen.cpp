@@ -82,8 +82,9 @@ class Scanner {
     if (text_[0] != quote_) return length;
     if (multiline_ && !tripled()) return length;
     // Up to two quotes before the closing three belong to the text.
-    const std::size_t run = std::min(text_.find_first_not_of(quote_), text_.size());
-    const std::size_t closing = multiline_ ? std::min<std::size_t>(run, 5) : 1;
+    const std::string_view ahead = text_.substr(0, 5);
+    const std::size_t run = std::min(ahead.find_first_not_of(quote_), ahead.size());
+    const std::size_t closing = multiline_ ? run : 1;
     quote_ = '\0';
     multiline_ = false;
     return closing;
