@@ -56,8 +56,8 @@ double von_mises_near(const Result& result, std::size_t hole, const Point& point
 
 std::string load_words(const Result& result, const solver::Load& load) {
   const std::string kind(solver::word(load.kind));
-  std::string words =
-      load.name.empty() || load.name == kind ? kind : fmt::format("{} ({})", plain(load.name), kind);
+  std::string words = load.name.empty() ? kind : plain(load.name);
+  if (words.find(kind) == std::string::npos) words += fmt::format(" ({})", kind);
   words += fmt::format(" {}", amount(load.stress, "MPa"));
   if (load.kind == solver::Load::Kind::edge && load.along != 0.0)
     words += fmt::format(" and {} along it", amount(load.along, "MPa"));
@@ -79,7 +79,8 @@ std::string loads_line(const Result& result) {
 void add_concentration(std::vector<std::string>& lines, const char* name,
                        const solver::Concentration& found) {
   if (found.kt)
-    lines.push_back(fmt::format("{} {} on {}", name, amount(*found.kt, ""), amount(found.nominal, "MPa")));
+    lines.push_back(
+        fmt::format("{} {} on {}", name, amount(*found.kt, ""), together(brief(found.nominal, 5) + " MPa")));
 }
 
 std::vector<std::string> caption(const Result& result, const HoleFindings& found) {
@@ -119,21 +120,22 @@ struct Place {
 };
 std::vector<Place> places(const mesh::Loop& loop, int wanted) {
   constexpr int pieces = 64;
-  std::vector<Place> fine;
-  std::vector<double> reached;
-  double length = 0.0;
+  std::vector<double> reached{0.0};  // arc length at the end of each piece
   for (const mesh::Curve& curve : loop)
     for (int i = 0; i < pieces; ++i) {
       const double step = (curve.end - curve.begin) / pieces;
-      const double t = curve.begin + (i + 0.5) * step;
-      fine.push_back({&curve, t});
-      length += curve.derivative(t).norm() * std::abs(step);
-      reached.push_back(length);
+      reached.push_back(reached.back() +
+                        curve.derivative(curve.begin + (i + 0.5) * step).norm() * std::abs(step));
     }
   std::vector<Place> result;
   for (int i = 0; i < wanted; ++i) {
-    const auto at = std::lower_bound(reached.begin(), reached.end(), (i + 0.5) / wanted * length);
-    result.push_back(fine[static_cast<std::size_t>(std::min(at, reached.end() - 1) - reached.begin())]);
+    const double length = (i + 0.5) / wanted * reached.back();
+    const auto end = std::upper_bound(reached.begin() + 1, reached.end() - 1, length);
+    const auto piece = static_cast<std::size_t>(end - reached.begin() - 1);
+    const mesh::Curve& curve = loop[piece / pieces];
+    const double part = (length - reached[piece]) / (reached[piece + 1] - reached[piece]);
+    const double share = (static_cast<double>(piece % pieces) + part) / pieces;
+    result.push_back({&curve, curve.begin + share * (curve.end - curve.begin)});
   }
   return result;
 }

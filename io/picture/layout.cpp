@@ -25,14 +25,19 @@ double fit(const mesh::Plate& plate, Room room) {
 }
 
 // Adds an enlargement `side` wide with its upper left corner (axis included)
-// at (x, y), if it enlarges.
+// at (x, y): the hole's neighbourhood, or that of the peak where the hole is
+// too large for the page to show it much larger.
 bool place_detail(Layout& page, const Picture& picture, double x, double y, double side) {
   if (!picture.focus) return false;
   const Window window = neighbourhood(picture.plate, *picture.focus);
   const double scale = side / (2 * window.half);
-  if (scale < 1.3 * page.whole.scale) return false;
-  page.detail = View{{x + page::axis_left, y, side, side}, window.centre, scale};
-  return true;
+  const Box box{x + page::axis_left, y, side, side};
+  page.at_peak = scale < 1.8 * page.whole.scale && !picture.peaks.empty();
+  if (page.at_peak)
+    page.detail = View{box, picture.peaks.front().point, 3 * page.whole.scale};
+  else if (scale > 1.3 * page.whole.scale)
+    page.detail = View{box, window.centre, scale};
+  return page.detail.has_value();
 }
 
 void place_caption(Layout& page, const Picture& picture, double x, double y) {

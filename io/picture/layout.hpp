@@ -30,7 +30,8 @@ struct Layout {
   View whole;                      ///< exactly the plate's rectangle
   double rim_x = 0.0;              ///< room for load arrows at the ends
   double rim_y = 0.0;              ///< the same at the sides
-  std::optional<View> detail;      ///< left out where it would hardly enlarge
+  std::optional<View> detail;      ///< the hole in focus; a part of it where that would hardly enlarge
+  bool at_peak = false;            ///< the enlargement shows the surroundings of the peak only
   Box bar;                         ///< the colours of the bar alone
   Box text;                        ///< the caption
   std::vector<std::string> caption;

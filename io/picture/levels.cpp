@@ -6,6 +6,7 @@
 #include <array>
 #include <cmath>
 #include <limits>
+#include <utility>
 
 namespace raiser::io {
 namespace {
@@ -29,6 +30,26 @@ double round_step(double smallest, double largest, int wanted) {
       best = step * power;
     }
   return best;
+}
+
+std::vector<double> multiples(double step, double smallest, double largest) {
+  const auto first = std::llround(std::floor(smallest / step + slack));
+  const auto last = std::llround(std::ceil(largest / step - slack));
+  std::vector<double> levels;
+  for (auto i = first; i <= last; ++i) levels.push_back(static_cast<double>(i) * step);
+  return levels;
+}
+
+// The largest area whose values lie within a twelfth of a step of one inner limit.
+double plateau(const std::vector<Spread>& values, const std::vector<double>& limits) {
+  const double near = (limits[1] - limits[0]) / 12;
+  std::vector<double> areas(limits.size(), 0.0);
+  for (const Spread& part : values) {
+    const double at = (part.value - limits.front()) / (limits[1] - limits[0]);
+    const auto i = static_cast<std::size_t>(std::max(0.0, std::round(at)));
+    if (i > 0 && i + 1 < limits.size() && std::abs(part.value - limits[i]) < near) areas[i] += part.area;
+  }
+  return *std::max_element(areas.begin(), areas.end());
 }
 
 std::vector<double> geometric_limits(double typical, double largest) {
@@ -58,16 +79,30 @@ std::vector<double> round_levels(double smallest, double largest, int wanted) {
     return round_levels(smallest - half, largest + half, 2);
   }
   const double step = round_step(smallest, largest, wanted);
-  const auto first = std::llround(std::floor(smallest / step + slack));
-  const auto last = std::llround(std::ceil(largest / step - slack));
-  std::vector<double> levels;
-  for (auto i = first; i <= last; ++i) levels.push_back(static_cast<double>(i) * step);
-  return levels;
+  return multiples(step, smallest, largest);
 }
 
-std::vector<double> band_limits(double smallest, double typical, double largest) {
-  if (smallest >= 0.0 && typical > 0.0 && largest > 8.0 * typical) return geometric_limits(typical, largest);
-  return round_levels(smallest, largest, 11);
+std::vector<double> band_limits(const std::vector<Spread>& values, double largest) {
+  double smallest = values.front().value, area = 0.0, sum = 0.0;
+  for (const Spread& part : values) {
+    smallest = std::min(smallest, part.value);
+    largest = std::max(largest, part.value);
+    area += part.area;
+    sum += part.area * part.value;
+  }
+  const double mean = area > 0.0 ? sum / area : 0.0;
+  if (smallest >= 0.0 && mean > 0.0 && largest > 8.0 * mean) return geometric_limits(mean, largest);
+  const std::vector<double> usual = round_levels(smallest, largest, 11);
+  const double enough = 0.1 * area;
+  if (plateau(values, usual) <= enough) return usual;
+  std::vector<double> best = usual;
+  const double decade = std::pow(10.0, std::floor(std::log10(largest - smallest)) - 1);
+  for (const double part : {0.8, 1.0, 1.2, 1.5, 2.0, 2.5, 3.0, 4.0, 5.0, 6.0, 8.0, 10.0}) {
+    std::vector<double> limits = multiples(part * decade, smallest, largest);
+    if (limits.size() < 9 || limits.size() > 16 || plateau(values, limits) >= plateau(values, best)) continue;
+    best = std::move(limits);
+  }
+  return best;
 }
 
 double position_on_bar(const std::vector<double>& limits, double value) {

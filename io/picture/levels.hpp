@@ -10,12 +10,20 @@ namespace raiser::io {
 /// `wanted` intervals. At least one interval, also when both are equal.
 std::vector<double> round_levels(double smallest, double largest, int wanted);
 
-/// Limits of the stress bands for values from `smallest` to `largest`, most of
-/// which lie near `typical`. Equal steps as a rule; where the largest is more
-/// than eight times the typical value and nothing is negative, preferred
-/// numbers in a geometric row (ISO 3, R5 or R10), since equal steps would put
-/// nearly the whole plate into one band. The first limit is then 0.
-std::vector<double> band_limits(double smallest, double typical, double largest);
+/// A value and the area that has it.
+struct Spread {
+  double value = 0.0;
+  double area = 0.0;
+};
+
+/// Limits of the stress bands for a field with these values, from at or below
+/// the smallest to at or above `largest`. Equal round steps as a rule, chosen
+/// so that no limit runs through a wide plateau, where rounding alone would
+/// decide the colour. Where the largest is more than eight times the mean and
+/// nothing is negative, preferred numbers in a geometric row (ISO 3, R5 or R10)
+/// after a first limit 0, since equal steps would put nearly the whole plate
+/// into one band. `values` must not be empty.
+std::vector<double> band_limits(const std::vector<Spread>& values, double largest);
 
 /// Where `value` lies among the limits: 0 at the first, 1 at the last,
 /// every band the same share, linear inside a band; clamped.

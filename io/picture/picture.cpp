@@ -238,8 +238,9 @@ void draw_detail(Canvas& canvas, const Picture& picture, const mesh::Region& reg
   const Box tag{view.box.x, view.box.y - 18, tag_size, tag_size};
   draw_tag(canvas, tag);
   const std::string& name = picture.plate.holes[*picture.focus].name;
-  const std::string heading = fmt::format(
-      "{}enlarged {:.2g} times", name.empty() ? "" : "hole " + name + ", ", view.scale / page.whole.scale);
+  const std::string heading =
+      fmt::format("{}{}enlarged {:.2g} times", name.empty() ? "" : "hole " + name + ", ",
+                  page.at_peak ? "at the peak, " : "", view.scale / page.whole.scale);
   canvas.text(wrapped(heading, page::small, view.box.width - 18).front(), {tag.right() + 5, tag.y + 9.5},
               page::small, ink::text);
   draw_axes(canvas, view, {4.0, 4.0});
@@ -293,23 +294,17 @@ std::string drawn(const Picture& picture, PaperKind kind) {
 }  // namespace
 
 std::vector<double> limits_of(const Picture& picture) {
-  double smallest = picture.cells.front().values.front(), largest = smallest;
-  double weight = 0.0, sum = 0.0;
+  std::vector<Spread> values;
   for (const PictureCell& cell : picture.cells) {
     const auto n = static_cast<std::size_t>(cell.subdivisions);
     const Point a = cell.points[n] - cell.points[0], b = cell.points.back() - cell.points[0];
     const double area = std::abs(a.x() * b.y() - a.y() * b.x()) / 2;
-    double mean = 0.0;
-    for (const double value : cell.values) {
-      smallest = std::min(smallest, value);
-      largest = std::max(largest, value);
-      mean += value / static_cast<double>(cell.values.size());
-    }
-    weight += area;
-    sum += area * mean;
+    for (const double value : cell.values)
+      values.push_back({value, area / static_cast<double>(cell.values.size())});
   }
+  double largest = values.front().value;
   for (const PeakMark& peak : picture.peaks) largest = std::max(largest, peak.value);
-  return band_limits(smallest, weight > 0 ? sum / weight : 0.0, largest);
+  return band_limits(values, largest);
 }
 
 void draw_png(const Picture& picture, const std::filesystem::path& file) {

@@ -124,15 +124,25 @@ TEST(Levels, AreRoundEqualAndReachOverTheRange) {
 }
 
 TEST(Levels, OfSteepFieldsArePreferredNumbers) {
-  const std::vector<double> limits = band_limits(0.0, 100.0, 3900.0);
+  const std::vector<double> limits = band_limits({{0, 1}, {100, 10}}, 3900.0);
   EXPECT_EQ(limits.front(), 0.0);
   EXPECT_GE(limits.back(), 3900.0);
   EXPECT_LE(limits.back(), 4000.0 * (1 + 1e-12));
   for (std::size_t i = 2; i < limits.size(); ++i)
     EXPECT_NEAR(limits[i] / limits[i - 1], std::pow(10.0, 0.2), 0.04);
   EXPECT_LT(limits[1], 100.0);
-  const std::vector<double> even = band_limits(0.0, 100.0, 300.0);
-  EXPECT_NEAR(even[2] - even[1], even[1] - even[0], 1e-12);
+}
+
+TEST(Levels, KeepAwayFromPlateaus) {
+  std::vector<Spread> values;
+  for (int i = 0; i < 300; ++i) values.push_back({i + 0.5, 1.0});
+  EXPECT_EQ(band_limits(values, 300.0), round_levels(0.5, 300.0, 11));  // 0, 25, 50...
+  for (int i = 0; i < 300; ++i) values.push_back({100.0 + 1e-3 * (i - 150), 1.0});
+  const std::vector<double> limits = band_limits(values, 300.0);
+  for (const double limit : limits) EXPECT_GT(std::abs(limit - 100.0), 2.0);
+  EXPECT_LE(limits.front(), 0.5);
+  EXPECT_GE(limits.back(), 300.0);
+  EXPECT_GE(limits.size(), 9u);
 }
 
 TEST(Levels, PositionOnTheBarGoesBandByBand) {
