@@ -10,11 +10,17 @@ namespace {
 
 bool begins_character(char c) { return (static_cast<unsigned char>(c) & 0xC0U) != 0x80U; }
 
-}  // namespace
-
-std::size_t columns(std::string_view text) {
-  return static_cast<std::size_t>(std::count_if(text.begin(), text.end(), begins_character));
+// The estimate as text in less than `width` columns, the bound widened as far as need be.
+template <class Text>
+std::string narrowed(solver::Estimate estimate, std::size_t width, Text text) {
+  for (int attempt = 0; attempt < 20; ++attempt) {
+    if (columns(text(estimate)) < width || !std::isfinite(estimate.bound)) break;
+    estimate.bound *= 10.0;
+  }
+  return text(estimate);
 }
+
+}  // namespace
 
 std::string left(std::string_view text, std::size_t width) {
   const std::size_t used = columns(text);
@@ -82,13 +88,11 @@ std::string bound_text(const solver::Estimate& estimate) {
 }
 
 std::string fitted(solver::Estimate estimate, std::size_t width) {
-  std::string text;
-  for (int attempt = 0; attempt < 20; ++attempt) {
-    text = value_text(estimate) + " ±" + bound_text(estimate);
-    if (columns(text) < width || !std::isfinite(estimate.bound)) break;
-    estimate.bound *= 10.0;
-  }
-  return text;
+  return narrowed(estimate, width, [](const auto& e) { return value_text(e) + " ±" + bound_text(e); });
+}
+
+std::string fitted_value(solver::Estimate estimate, std::size_t width) {
+  return narrowed(estimate, width, value_text);
 }
 
 std::string brief(double value, int significant) {

@@ -4,15 +4,13 @@
 #include <string>
 #include <string_view>
 
+#include "io/case/layout.hpp"  // columns
 #include "solver/extract/estimate.hpp"
 
 namespace raiser::io {
 
 /// The widest line of any table.
 inline constexpr std::size_t page_width = 80;
-
-/// How many columns a UTF-8 text takes, one for each character.
-std::size_t columns(std::string_view text);
 
 /// Padded with blanks to `width` columns; longer texts stay as they are.
 std::string left(std::string_view text, std::size_t width);
@@ -41,6 +39,8 @@ std::string bound_text(const solver::Estimate& estimate);
 /// "341.16 ±0.03" in less than `width` columns: where it does not fit, the
 /// bound is widened, which leaves it true.
 std::string fitted(solver::Estimate estimate, std::size_t width);
+/// The same without the bound.
+std::string fitted_value(solver::Estimate estimate, std::size_t width);
 
 /// A number that has no bound, with up to `significant` digits, no trailing zeros.
 std::string brief(double value, int significant = 6);

@@ -31,7 +31,7 @@ const solver::HoleFindings& worst(const Outcome& outcome) {
                            [](const auto& a, const auto& b) { return peak(a) < peak(b); });
 }
 
-std::string kt_text(const solver::Concentration& kt) { return kt.kt ? solver::digits(*kt.kt) : "-"; }
+std::string kt_text(const solver::Concentration& kt) { return kt.kt ? fitted_value(*kt.kt, 8) : "-"; }
 
 std::string line(const Outcome& outcome) {
   const std::string head =

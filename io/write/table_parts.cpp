@@ -14,16 +14,19 @@ namespace {
 
 constexpr std::size_t holes_in_full = 3;
 
-// A coordinate to a thousandth of the hole's size, never "-0".
-std::string place_text(double value, double size) {
-  const int decimals = std::clamp(static_cast<int>(std::ceil(3.0 - std::log10(size))), 0, 9);
-  const double rounded = std::round(value * std::pow(10.0, decimals)) / std::pow(10.0, decimals);
+// No more decimals than the uncertainty leaves, never "-0".
+std::string place_text(double value, double uncertainty) {
+  const int decimals = std::clamp(static_cast<int>(std::ceil(-std::log10(uncertainty))), 0, 9);
+  const double scale = std::pow(10.0, decimals);
+  const double rounded = std::round(value * scale) / scale;
   return fmt::format("{:.{}f}", rounded == 0.0 ? 0.0 : rounded, decimals);
 }
 
-std::string degrees_text(double angle) {
-  const double rounded = std::round(angle * 1800.0 / std::numbers::pi) / 10.0;
-  return fmt::format("{:.1f}", rounded == 0.0 ? 0.0 : rounded);
+// How uncertain the place of a smooth extremum is, as a fraction of the hole's
+// size: near it the stress changes with the square of the distance.
+double place_uncertainty(const solver::Estimate& stress) {
+  const double relative = stress.bound / std::abs(stress.value);
+  return std::isfinite(relative) ? std::clamp(std::sqrt(relative), 1e-4, 0.1) : 0.1;
 }
 
 std::string shape_text(const mesh::Hole& hole) {
@@ -39,9 +42,13 @@ std::string shape_text(const mesh::Hole& hole) {
 }
 
 std::string edge_line(std::string_view name, const solver::EdgeValue& value, double size) {
+  const double uncertain = place_uncertainty(value.stress);
+  const double degree = 180.0 / std::numbers::pi;
   return fmt::format("  {}{}{}{}{}{}\n", left(name, 22), right(value_text(value.stress), 12),
-                     right(bound_text(value.stress), 9), right(place_text(value.point.x(), size), 11),
-                     right(place_text(value.point.y(), size), 11), right(degrees_text(value.angle), 11));
+                     right(bound_text(value.stress), 9),
+                     right(place_text(value.point.x(), uncertain * size / 2), 11),
+                     right(place_text(value.point.y(), uncertain * size / 2), 11),
+                     right(place_text(value.angle * degree, uncertain * degree), 11));
 }
 
 std::string concentration_line(std::string_view name, const solver::Concentration& kt) {
@@ -73,7 +80,7 @@ std::string hole_in_full(const mesh::Hole& hole, const solver::HoleFindings& fou
   return text + section_line(found.section);
 }
 
-std::string kt_text(const solver::Concentration& kt) { return kt.kt ? value_text(*kt.kt) : "-"; }
+std::string kt_text(const solver::Concentration& kt) { return kt.kt ? fitted_value(*kt.kt, 8) : "-"; }
 
 std::string hole_line(const mesh::Hole& hole, const solver::HoleFindings& found) {
   return fmt::format("  {}{}{}{}{}{}\n", left(shortened(plain(hole.name), 12), 12),
@@ -92,17 +99,17 @@ std::string hole_lines_head(std::string_view title) {
 
 std::string comparison_lines(const validation::Comparison& line, const mesh::Plate& plate, bool name_load) {
   const std::string where = line.hole < plate.holes.size() ? plain(plate.holes[line.hole].name) : "plate";
-  std::string figures = fmt::format("published {}, here {}, {} {}", brief(line.published, 5),
-                                    with_bound({line.ours, line.bound}), percent(std::abs(line.difference)),
-                                    line.difference < 0 ? "lower" : "higher");
-  if (name_load) figures += fmt::format(", under {}", plain(line.load));
-  std::string source = line.source;
-  if (!line.accuracy.empty()) source += "; accuracy: " + line.accuracy;
-  if (line.from_memory) source += "; figures from memory";
-  std::string text = wrapped(figures, fmt::format("  {} at {}: ", line.quantity, where), 4);
-  if (!line.in_range) text += wrapped("outside its range: " + line.range_note, "    ", 4);
+  const std::string load = name_load ? " under " + plain(line.load) : "";
+  std::string text = wrapped(fmt::format("{} by {}, {} here: {}{}", brief(line.published, 5), line.solution,
+                                         with_bound({line.ours, line.bound}), line.difference < 0 ? "-" : "+",
+                                         percent(std::abs(line.difference))),
+                             fmt::format("  {} at {}{}: ", line.quantity, where, load), 4);
+  if (!line.in_range) text += wrapped(line.range_note, "    outside its range: ", 4);
   if (line.in_range && !line.range_note.empty()) text += wrapped(line.range_note, "    ", 4);
-  return text + wrapped(source, "    ", 4);
+  text += wrapped(line.source, "    ", 4);
+  if (line.accuracy.empty() && !line.from_memory) return text;
+  const std::string memory = line.from_memory ? " (figures from memory)" : "";
+  return text + wrapped(line.accuracy + memory, "    accuracy: ", 4);
 }
 
 }  // namespace
