@@ -5,6 +5,7 @@
 #include <map>
 #include <set>
 
+#include "io/picture/from_result.hpp"
 #include "io/write/csv.hpp"
 #include "io/write/file.hpp"
 #include "io/write/vtu.hpp"
@@ -60,11 +61,14 @@ std::vector<std::string> clashes(const std::vector<std::filesystem::path>& cases
 std::vector<std::filesystem::path> write_results(const Result& result, const std::string& json_text,
                                                  const Target& target) {
   Staging staging(target.folder);
-  const auto path = [&](const char* suffix) { return staging.path(target.stem + suffix); };
-  write_file(path(".vtu"), vtu(cells_of(result.solution.field), result.provenance));
-  write_file(path(".json"), json_text);
-  write_file(path("-edge.csv"), edge_csv(result.input, result.solution));
-  write_file(path("-ligament.csv"), ligament_csv(result.input, result.solution));
+  const std::string& stem = target.stem;
+  staging.add(stem + ".vtu", vtu(cells_of(result.solution.field), result.provenance));
+  staging.add(stem + ".json", json_text);
+  const Picture picture = picture_of(result);
+  staging.add(stem + ".png", [&](const std::filesystem::path& file) { draw_png(picture, file); });
+  staging.add(stem + ".svg", [&](const std::filesystem::path& file) { draw_svg(picture, file); });
+  staging.add(stem + "-edge.csv", edge_csv(result.input, result.solution));
+  staging.add(stem + "-ligament.csv", ligament_csv(result.input, result.solution));
   return staging.publish();
 }
 

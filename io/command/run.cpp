@@ -3,7 +3,6 @@
 #include <fmt/format.h>
 
 #include <atomic>
-#include <cerrno>
 #include <chrono>
 #include <functional>
 #include <future>
@@ -13,6 +12,7 @@
 #include "io/case/describe.hpp"
 #include "io/command/files.hpp"
 #include "io/command/options.hpp"
+#include "io/command/speech.hpp"
 #include "io/write/csv.hpp"
 #include "io/write/file.hpp"
 #include "io/write/json.hpp"
@@ -27,25 +27,9 @@ namespace {
 std::atomic<bool> stop_asked{false};
 static_assert(std::atomic<bool>::is_always_lock_free, "a signal handler may touch no other kind");
 
-// What is running, on one line of the terminal that is wiped before anything else is said.
-class Progress {
- public:
-  Progress(std::ostream& err, bool shown) : err_(err), shown_(shown) {}
-  void show(const std::string& text) {
-    if (shown_) err_ << "\r\x1b[K" << shortened(plain(text), page_width - 1) << std::flush;
-  }
-  void wipe() {
-    if (shown_) err_ << "\r\x1b[K" << std::flush;
-  }
-
- private:
-  std::ostream& err_;
-  bool shown_;
-};
-
 struct Session {
   const Options& options;
-  std::ostream& out;
+  Output output;
   std::ostream& err;
   Terminal terminal;
   Progress progress;
@@ -163,17 +147,6 @@ bool solve_case(Session& session, const std::filesystem::path& file, const std::
   return true;
 }
 
-// Whether all of `out` has gone where it should. A reader that has closed its
-// end wanted no more: that is no fault.
-Exit flushed(std::ostream& out, std::ostream& err, Exit code) {
-  errno = 0;
-  out.flush();
-  if (out || errno == EPIPE) return code;
-  err << "raiser: cannot write to standard output"
-      << (errno != 0 ? ": " + std::generic_category().message(errno) : std::string()) << "\n";
-  return Exit::not_written;
-}
-
 Exit write_summary(const Session& session, const std::vector<Outcome>& outcomes) {
   if (!session.options.files) return Exit::settled;
   const std::filesystem::path folder =
@@ -197,13 +170,13 @@ Exit code_of(const std::vector<Outcome>& outcomes, bool several) {
   return Exit::settled;
 }
 
-void tell(const Session& session, const Run& run, bool first) {
+void tell(Session& session, const Run& run, bool first) {
   for (const std::string& fault : run.faults) session.err << plain(fault) << "\n";
   if (session.options.json) {
-    session.out << (first ? json_begin() : std::string(json_between()))
-                << json_entry(run.outcome, run.faults, run.json);
+    session.output.say(first ? json_begin() : std::string(json_between()));
+    session.output.say(json_entry(run.outcome, run.faults, run.json));
   }
-  session.out << run.table << std::flush;
+  session.output.say(run.table);
 }
 
 Exit solve_cases(Session& session) {
@@ -222,12 +195,13 @@ Exit solve_cases(Session& session) {
     tell(session, run, outcomes.empty());
     outcomes.push_back(std::move(run.outcome));
   }
-  if (session.options.json) session.out << (outcomes.empty() ? json_begin() : "") << json_end();
-  if (several && !session.options.json && !session.options.quiet) session.out << summary_table(outcomes);
+  if (session.options.json)
+    session.output.say((outcomes.empty() ? json_begin() : "") + std::string(json_end()));
+  if (several && !session.options.json && !session.options.quiet) session.output.say(summary_table(outcomes));
   Exit code = code_of(outcomes, several);
   if (several && !outcomes.empty() && write_summary(session, outcomes) != Exit::settled)
     code = Exit::not_written;
-  code = flushed(session.out, session.err, code);
+  code = session.output.ended(code, session.err);
   if (!interrupted) return code;
   session.err << "raiser: interrupted; "
               << (outcomes.empty()
@@ -237,7 +211,7 @@ Exit solve_cases(Session& session) {
   return Exit::interrupted;
 }
 
-Exit check_cases(const Session& session) {
+Exit check_cases(Session& session) {
   const auto& cases = session.options.cases;
   std::vector<Outcome> outcomes;
   for (const auto& file : cases) {
@@ -245,14 +219,15 @@ Exit check_cases(const Session& session) {
     Run run;
     const std::optional<Case> input = read(file, run);
     for (const std::string& fault : run.faults) session.err << plain(fault) << "\n";
-    if (input && !session.options.quiet) session.out << (outcomes.empty() ? "" : "\n") << describe(*input);
+    if (input && !session.options.quiet)
+      session.output.say((outcomes.empty() ? "" : "\n") + describe(*input));
     outcomes.push_back(std::move(run.outcome));
   }
-  return flushed(session.out, session.err, code_of(outcomes, cases.size() > 1));
+  return session.output.ended(code_of(outcomes, cases.size() > 1), session.err);
 }
 
 Exit dispatch(const Options& options, std::ostream& out, std::ostream& err, Terminal terminal) {
-  Session session{options, out, err, terminal, Progress(err, terminal.progress && !options.quiet)};
+  Session session{options, Output(out), err, terminal, Progress(err, terminal.progress && !options.quiet)};
   if (options.command == Options::Command::check) return check_cases(session);
   if (options.files) {
     const std::vector<std::string> faults = clashes(options.cases, options.folder.value_or(""));
@@ -271,8 +246,10 @@ Exit run(const std::vector<std::string>& arguments, std::ostream& out, std::ostr
     const auto parsed = parse(arguments);
     if (const auto* options = std::get_if<Options>(&parsed)) return dispatch(*options, out, err, terminal);
     const Reply& reply = std::get<Reply>(parsed);
-    (reply.code == Exit::settled ? out : err) << reply.text;
-    return flushed(out, err, reply.code);
+    if (reply.code != Exit::settled) err << reply.text;
+    Output output(out);
+    if (reply.code == Exit::settled) output.say(reply.text);
+    return output.ended(reply.code, err);
   } catch (const std::exception& error) {
     err << "raiser: " << error.what() << "\n";
     return Exit::not_met;
