@@ -1,0 +1,184 @@
+#include "io/write/table.hpp"
+
+#include <gtest/gtest.h>
+
+#include <limits>
+#include <string>
+
+#include "io/write/layout.hpp"
+#include "io/write/summary.hpp"
+#include "tests/io/solved.hpp"
+
+namespace raiser::io {
+namespace {
+
+constexpr double infinite = std::numeric_limits<double>::infinity();
+
+bool holds(const std::string& text, const std::string& part) { return text.find(part) != std::string::npos; }
+
+std::size_t occurrences(const std::string& text, const std::string& part) {
+  std::size_t n = 0;
+  for (std::size_t at = text.find(part); at != std::string::npos; at = text.find(part, at + 1)) ++n;
+  return n;
+}
+
+// A result with `n` holes whose peaks grow with their number.
+Result many_holes(std::size_t n) {
+  Result result = test::solved(test::one_hole);
+  mesh::Hole hole = result.input.problem.plate.holes[0];
+  solver::HoleFindings found = result.solution.combined.holes[0];
+  result.input.problem.plate.holes.clear();
+  result.solution.combined.holes.clear();
+  for (std::size_t i = 0; i < n; ++i) {
+    hole.name = "bore " + std::to_string(i);
+    found.hole = i;
+    found.largest.stress = {100.0 + static_cast<double>(i), 0.05};
+    result.input.problem.plate.holes.push_back(hole);
+    result.solution.combined.holes.push_back(found);
+  }
+  result.published.clear();
+  return result;
+}
+
+TEST(Table, FitsThePageAndShowsValueBoundPlaceAndDefinition) {
+  Result result = test::solved(test::one_hole);
+  solver::HoleFindings& found = result.solution.combined.holes[0];
+  found.largest = {{153.41872, 0.03}, mesh::Point(0.004, 5.0), 1.57};
+  found.gross = {solver::Estimate{3.0683744, 0.0006}, 50.0, "F / (W t), gross section x = 0 mm", ""};
+  const std::string text = table(result);
+  EXPECT_LE(test::widest(text), page_width) << text;
+  EXPECT_TRUE(holds(text, "153.42")) << text;
+  EXPECT_FALSE(holds(text, "153.419")) << "a digit that the bound makes meaningless";
+  EXPECT_TRUE(holds(text, "153.42     0.04       0.00       5.00       90.0\n")) << text;
+  EXPECT_TRUE(holds(text, "3.0684 ± 0.0007  on 50 MPa = F / (W t), gross section x = 0 mm")) << text;
+  EXPECT_TRUE(holds(text, "SETTLED"));
+  EXPECT_TRUE(holds(text, "Howland")) << text;
+  EXPECT_TRUE(holds(text, "Not a substitute"));
+}
+
+TEST(Table, SaysWhyAToleranceWasNotMet) {
+  Result result = test::solved(test::two_holes);
+  result.solution.status = solver::Solution::Status::not_met;
+  result.solution.reason = "the budget of 4 refinements is spent";
+  for (auto& hole : result.solution.combined.holes) hole.largest.stress.bound = 0.002 * peak(hole);
+  const std::string text = table(result);
+  EXPECT_TRUE(holds(text, "NOT MET: the budget of 4 refinements is spent")) << text;
+  EXPECT_TRUE(holds(text, "peak at the outlet: largest edge stress at outlet")) << text;
+  EXPECT_FALSE(holds(text, "SETTLED"));
+  EXPECT_LE(test::widest(text), page_width) << text;
+}
+
+TEST(Table, ShowsNoNumberWhereThereIsNone) {
+  Result result = test::solved(test::one_hole);
+  solver::HoleFindings& found = result.solution.combined.holes[0];
+  found.smallest.stress.bound = infinite;
+  found.net.kt.reset();
+  found.net.why = "the loads leave the net section free of stress";
+  const std::string text = table(result);
+  EXPECT_TRUE(holds(text, "Kt net   undefined: the loads leave the net section free of stress")) << text;
+  EXPECT_TRUE(holds(text, "none")) << text;
+  EXPECT_FALSE(holds(text, "inf")) << text;
+}
+
+TEST(Table, ShowsTheWorstOfManyHolesAndCountsTheRest) {
+  const std::string text = table(many_holes(40), {false, "plate.json"});
+  EXPECT_LE(test::widest(text), page_width) << text;
+  EXPECT_TRUE(holds(text, "Hole bore 39: circle")) << text;
+  EXPECT_TRUE(holds(text, "bore 28 "));
+  EXPECT_FALSE(holds(text, "bore 27 "));
+  EXPECT_LT(text.find("bore 38 "), text.find("bore 37 "));
+  EXPECT_TRUE(holds(text, "and 28 more holes, none of them worse: see plate.json")) << text;
+}
+
+TEST(Table, ShowsAFewHolesInFullWorstFirst) {
+  const std::string text = table(many_holes(3));
+  EXPECT_EQ(occurrences(text, "Kt gross"), 3U);
+  EXPECT_LT(text.find("Hole bore 2"), text.find("Hole bore 0"));
+  EXPECT_FALSE(holds(text, "more holes"));
+}
+
+TEST(Table, ShowsEachOfSeveralLoadsByItself) {
+  const std::string text = table(test::solved(test::two_holes));
+  EXPECT_TRUE(holds(text, "Each load by itself")) << text;
+  EXPECT_TRUE(holds(text, "\n  pull "));
+  EXPECT_TRUE(holds(text, "\n  bend "));
+  EXPECT_FALSE(holds(table(test::solved(test::one_hole)), "Each load by itself"));
+}
+
+TEST(Table, StaysOnThePageAtTheFinestTolerance) {
+  Result result = many_holes(5);
+  for (auto& hole : result.solution.combined.holes) {
+    hole.largest.stress = {-12345.678901234, 3e-7};
+    hole.smallest.stress = {-98765.432101234, 3e-7};
+    hole.von_mises.stress = {98765.432101234, 3e-7};
+    hole.gross.kt = {3.0123456789012, 1e-11};
+    hole.net.kt = {3.0123456789012, 1e-11};
+  }
+  const std::string text = table(result);
+  EXPECT_LE(test::widest(text), page_width) << text;
+}
+
+TEST(Table, RemarksOnYield) {
+  Result result = test::solved(test::one_hole);
+  auto& findings = result.solution.combined;
+  findings.holes[0].von_mises.stress = {119.0, 0.5};
+  EXPECT_TRUE(holds(yield_remark(result.input, findings), "99 % of the yield strength"));
+  findings.holes[0].von_mises.stress = {119.8, 0.5};
+  EXPECT_TRUE(holds(yield_remark(result.input, findings), "may exceed the yield strength of 120 MPa"));
+  findings.holes[0].von_mises.stress = {150.0, 0.5};
+  EXPECT_TRUE(holds(yield_remark(result.input, findings), "exceeds the yield strength of 120 MPa"));
+  EXPECT_TRUE(holds(yield_remark(result.input, findings), "elastic peak above yield is fictitious"));
+  result.input.yield_strength.reset();
+  EXPECT_EQ(yield_remark(result.input, findings), "");
+}
+
+TEST(Table, LetsNoControlCharacterThrough) {
+  Result result = test::solved(test::one_hole);
+  result.input.title = "bad \x1b[31m title\xc2\x9b";
+  result.input.problem.plate.holes[0].name = "a\nb\x7f";
+  const std::string text = table(result);
+  EXPECT_FALSE(holds(text, "\x1b"));
+  EXPECT_FALSE(holds(text, "\x7f"));
+  EXPECT_FALSE(holds(text, "\xc2\x9b"));
+  EXPECT_TRUE(holds(text, "Hole a b : circle")) << text;
+  EXPECT_TRUE(holds(table(result, {true, ""}), "\x1b[1;32mSETTLED\x1b[0m"));
+}
+
+TEST(Summary, HasALineForEachCaseAndCountsThem) {
+  const Result result = test::solved(test::two_holes);
+  Outcome good{"a.toml", "", 0, "settled", "", 0.5, {"inlet", "outlet"}, result.solution.combined.holes};
+  good.holes[0].largest.stress = {100.0, 0.5};
+  good.holes[0].smallest.stress = {-500.0, 0.5};
+  good.holes[1].largest.stress = {400.0, 0.5};
+  const Outcome bad{
+      "a/very/long/path/to/a/folder/of/cases/b.toml", "", 3, "not read", std::string(90, 'x'), 0, {}, {}};
+  const std::string text = summary_table({good, bad, good});
+  EXPECT_LE(test::widest(text), page_width) << text;
+  EXPECT_TRUE(holds(text, "-500.0 ±0.5")) << "the largest magnitude, not the largest value\n" << text;
+  EXPECT_TRUE(holds(text, "inlet"));
+  EXPECT_FALSE(holds(text, "outlet"));
+  EXPECT_TRUE(holds(text, "folder/of/cases/b.toml") || holds(text, "cases/b.toml")) << text;
+  EXPECT_TRUE(holds(text, "3 cases: 2 settled, 1 not read")) << text;
+}
+
+TEST(Layout, WrapsAtThePage) {
+  const std::string text =
+      wrapped(std::string(30, 'a') + " " + std::string(30, 'b') + " " + std::string(30, 'c'), "- ", 2);
+  EXPECT_EQ(text,
+            "- " + std::string(30, 'a') + " " + std::string(30, 'b') + "\n  " + std::string(30, 'c') + "\n");
+  EXPECT_EQ(wrapped("x " + std::string(77, 'y')), "x " + std::string(77, 'y') + "\n");
+  EXPECT_EQ(wrapped("±± " + std::string(77, 'y')), "±± " + std::string(77, 'y') + "\n")
+      << "columns, not bytes";
+  EXPECT_EQ(wrapped("xxx " + std::string(77, 'y')), "xxx\n" + std::string(77, 'y') + "\n");
+}
+
+TEST(Layout, ShortensByCharacters) {
+  EXPECT_EQ(shortened("ärger", 5), "ärger");
+  EXPECT_EQ(shortened("ärgern", 5), "ärge…");
+  EXPECT_EQ(count(1), "1");
+  EXPECT_EQ(count(1234567), "1 234 567");
+  EXPECT_EQ(percent(0.00123), "0.12 %");
+}
+
+}  // namespace
+}  // namespace raiser::io
