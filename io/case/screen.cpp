@@ -50,53 +50,61 @@ class Scanner {
   std::string_view rest() const { return text_; }
   int depth() const { return std::max(brackets_, dots_); }
 
+  /// Whether the text goes on where a quote opens or closes in the middle of
+  /// it, as in 3"x" or "a"b. There a parser may not see quotes where this
+  /// scanner does.
+  bool at_misplaced_quote() const {
+    if (text_.empty() || in_quotes() || comment_) return false;
+    const bool quote = text_[0] == '"' || text_[0] == '\'';
+    if (before_ == closing_quote)
+      return std::string_view(" \t\r\n]},=.#").find(text_[0]) == std::string_view::npos;
+    return quote && std::string_view("\n \t\r=[{,.").find(before_) == std::string_view::npos;
+  }
+
+  /// Whether TOML's quotes for texts of several lines open here. No value of a
+  /// case needs them, and a parser may read them otherwise, as in """a" = 1.
+  bool at_tripled_quote() const {
+    return !in_quotes() && !comment_ && (text_.starts_with("\"\"\"") || text_.starts_with("'''"));
+  }
+
   /// Steps over one character of the given length in bytes.
   void step(std::size_t length) {
     const char c = text_[0];
+    const bool quoted = in_quotes();
     if (c == '\n') {
       end_line();
-    } else if (in_quotes()) {
+    } else if (quoted) {
       length = step_in_quotes(length);
     } else if (!comment_) {
       length = step_outside(length);
     }
+    before_ = quoted && !in_quotes() && c != '\n' ? closing_quote : c;
     text_.remove_prefix(length);
     if (c != '\n')
       position_.column += 1 + (length > 1 && static_cast<unsigned char>(c) < 0x80 ? length - 1 : 0);
   }
 
  private:
+  static constexpr char closing_quote = '\x01';  // stands for either kind; no text has it outside quotes
+
   void end_line() {
     ++position_.line;
     position_.column = 1;
     comment_ = false;
     dots_ = 0;
-    if (!multiline_) quote_ = '\0';
+    quote_ = '\0';
   }
-
-  bool tripled() const { return text_.size() >= 3 && text_[1] == text_[0] && text_[2] == text_[0]; }
 
   std::size_t step_in_quotes(std::size_t length) {
     const bool escaped = text_[0] == '\\' && quote_ == '"' && text_.size() > 1;
     if (escaped && (text_[1] == '"' || text_[1] == '\\')) return 2;
-    if (text_[0] != quote_) return length;
-    if (multiline_ && !tripled()) return length;
-    // Up to two quotes before the closing three belong to the text.
-    const std::string_view ahead = text_.substr(0, 5);
-    const std::size_t run = std::min(ahead.find_first_not_of(quote_), ahead.size());
-    const std::size_t closing = multiline_ ? run : 1;
-    quote_ = '\0';
-    multiline_ = false;
-    return closing;
+    if (text_[0] == quote_) quote_ = '\0';
+    return length;
   }
 
   std::size_t step_outside(std::size_t length) {
     const char c = text_[0];
-    if (c == '"' || c == '\'') {
-      quote_ = c;
-      multiline_ = tripled();
-      return multiline_ ? 3 : 1;
-    }
+    if (c == '"' || c == '\'') quote_ = c;
     if (c == '#') comment_ = true;
     if (c == '.') ++dots_;
     if (c == '=' || c == ',') dots_ = 0;
@@ -107,12 +115,34 @@ class Scanner {
 
   std::string_view text_;
   Position position_;
+  char before_ = '\n';  ///< the character stepped over last
   char quote_ = '\0';
-  bool multiline_ = false;
   bool comment_ = false;
   int brackets_ = 0;
   int dots_ = 0;
 };
+
+/// What is wrong with the character of `length` bytes that comes next.
+std::optional<Diagnostic> breach(const Scanner& scanner, std::size_t length, const std::string& name) {
+  if (length == 0 || scanner.rest()[0] == '\0') {
+    return fault_at(name, scanner.position(), "this is not text in UTF-8",
+                    "check that this is a case file, and save it as UTF-8");
+  }
+  if (scanner.at_tripled_quote()) {
+    return fault_at(name, scanner.position(), "three quotes open a text of several lines",
+                    "write each text in one pair of quotes on one line");
+  }
+  if (scanner.at_misplaced_quote()) {
+    return fault_at(name, scanner.position(), "a quote opens or closes in the middle of a word",
+                    "put the whole text in one pair of quotes, and a comma or a new line after it");
+  }
+  if (length > 1 && !scanner.in_quotes() && !scanner.in_comment()) {
+    return fault_at(name, scanner.position(),
+                    fmt::format("the character {} stands outside quotes", scanner.rest().substr(0, length)),
+                    "use straight quotes (\") and plain spaces, and put any other text in quotes");
+  }
+  return std::nullopt;
+}
 
 }  // namespace
 
@@ -135,15 +165,7 @@ std::optional<Diagnostic> screen(std::string_view content, const std::string& na
   }
   for (Scanner scanner(content); !scanner.done();) {
     const std::size_t length = character_length(scanner.rest());
-    if (length == 0 || scanner.rest()[0] == '\0') {
-      return fault_at(name, scanner.position(), "this is not text in UTF-8",
-                      "check that this is a case file, and save it as UTF-8");
-    }
-    if (length > 1 && !scanner.in_quotes() && !scanner.in_comment()) {
-      return fault_at(name, scanner.position(),
-                      fmt::format("the character {} stands outside quotes", scanner.rest().substr(0, length)),
-                      "use straight quotes (\") and plain spaces, and put any other text in quotes");
-    }
+    if (auto fault = breach(scanner, length, name)) return fault;
     scanner.step(length);
     if (scanner.depth() > deepest) {
       return fault_at(name, scanner.position(), "brackets or dots nest deeper than in any case",

@@ -325,6 +325,16 @@ TEST(Case, StandsDeepNestingAndLongJunk) {
                        "nest deeper"));
 }
 
+TEST(Case, RefusesQuotesThatCanBeReadInTwoWays) {
+  EXPECT_TRUE(
+      contains(only_fault("raiser = 1\ntitle = \"\"\"x\"\"\"\n"), "test.toml:2:9: three quotes open"));
+  EXPECT_TRUE(contains(only_fault("'''a' = 1\n"), "test.toml:1:1: three quotes open"));
+  EXPECT_TRUE(contains(only_fault("a = 3\"x\"\n"), "test.toml:1:6: a quote opens or closes in the middle"));
+  EXPECT_TRUE(contains(only_fault("a = \"x\"y\n"), "test.toml:1:8: a quote opens or closes in the middle"));
+  EXPECT_EQ(read("title = \"say \\\"\\\\\\\" # ''' \" # ''' \"\"\"\n" + head + bolt + pull).title,
+            "say \"\\\" # ''' ");
+}
+
 TEST(Describe, FitsEightyColumnsAndMarksDefaults) {
   std::string content = head;
   content.replace(content.find("\"240 mm\""), 8, "\"24 m\"");
