@@ -50,16 +50,12 @@ std::string line(const Outcome& outcome) {
 }  // namespace
 
 std::string tally(const std::vector<Outcome>& outcomes) {
-  std::map<int, std::pair<std::string, std::size_t>> counted;  // by exit code
-  for (const Outcome& outcome : outcomes) {
-    auto& [status, number] = counted[outcome.exit_code];
-    status = outcome.status;
-    ++number;
-  }
+  std::map<std::pair<int, std::string>, std::size_t> counted;  // by exit code, the settled ones first
+  for (const Outcome& outcome : outcomes) ++counted[{outcome.exit_code, outcome.status}];
   std::string text = fmt::format("{} case{}", count(outcomes.size()), outcomes.size() == 1 ? "" : "s");
   const char* separator = ": ";
-  for (const auto& [code, entry] : counted) {
-    text += fmt::format("{}{} {}", separator, count(entry.second), entry.first);
+  for (const auto& [ending, number] : counted) {
+    text += fmt::format("{}{} {}", separator, count(number), ending.second);
     separator = ", ";
   }
   return text;

@@ -2,6 +2,7 @@
 
 #include <fmt/format.h>
 
+#include <Eigen/Geometry>
 #include <algorithm>
 #include <cmath>
 #include <numbers>
@@ -22,8 +23,8 @@ std::string place_text(double value, double uncertainty) {
   return fmt::format("{:.{}f}", rounded == 0.0 ? 0.0 : rounded, decimals);
 }
 
-// How uncertain the place of a smooth extremum is, as a fraction of the hole's
-// size: near it the stress changes with the square of the distance.
+// How uncertain the place of a smooth extremum is, as a fraction of the radius
+// of the edge there: near it the stress changes with the square of the distance.
 double place_uncertainty(const solver::Estimate& stress) {
   const double relative = stress.bound / std::abs(stress.value);
   return std::isfinite(relative) ? std::clamp(std::sqrt(relative), 1e-4, 0.1) : 0.1;
@@ -41,14 +42,24 @@ std::string shape_text(const mesh::Hole& hole) {
   return text + fmt::format(", centre ({}, {}) mm", brief(hole.centre.x()), brief(hole.centre.y()));
 }
 
-std::string edge_line(std::string_view name, const solver::EdgeValue& value, double size) {
-  const double uncertain = place_uncertainty(value.stress);
+// The radius of curvature of a hole's edge at a point where a peak can be, mm.
+double edge_radius(const mesh::Hole& hole, const mesh::Point& at) {
+  const double a = hole.length / 2, b = hole.width / 2;
+  if (hole.shape == mesh::HoleShape::rounded_rectangle) return hole.corner_radius;
+  if (hole.shape != mesh::HoleShape::ellipse) return std::min(a, b);
+  const mesh::Point own = Eigen::Rotation2Dd(-hole.angle) * (at - hole.centre);
+  const double sine = own.y() / b, cosine = own.x() / a;
+  return std::pow(a * a * sine * sine + b * b * cosine * cosine, 1.5) / (a * b);
+}
+
+std::string edge_line(std::string_view name, const solver::EdgeValue& value, const mesh::Hole& hole) {
+  const double uncertain = place_uncertainty(value.stress) * edge_radius(hole, value.point);
   const double degree = 180.0 / std::numbers::pi;
+  const double turn = uncertain / (value.point - hole.centre).norm();
   return fmt::format("  {}{}{}{}{}{}\n", left(name, 22), right(value_text(value.stress), 12),
-                     right(bound_text(value.stress), 9),
-                     right(place_text(value.point.x(), uncertain * size / 2), 11),
-                     right(place_text(value.point.y(), uncertain * size / 2), 11),
-                     right(place_text(value.angle * degree, uncertain * degree), 11));
+                     right(bound_text(value.stress), 9), right(place_text(value.point.x(), uncertain), 11),
+                     right(place_text(value.point.y(), uncertain), 11),
+                     right(place_text(value.angle * degree, turn * degree), 11));
 }
 
 std::string concentration_line(std::string_view name, const solver::Concentration& kt) {
@@ -67,14 +78,13 @@ std::string section_line(const solver::Section& section) {
 }
 
 std::string hole_in_full(const mesh::Hole& hole, const solver::HoleFindings& found) {
-  const double size = std::min(hole.length, hole.width);
   std::string text(1, '\n');
   text += wrapped(shape_text(hole), fmt::format("Hole {}: ", plain(hole.name)), 2);
   text += fmt::format("  {}{}{}{}{}{}\n", left("", 22), right("MPa", 12), right("± MPa", 9),
                       right("x, mm", 11), right("y, mm", 11), right("angle, deg", 11));
-  text += edge_line("largest edge stress", found.largest, size);
-  text += edge_line("smallest edge stress", found.smallest, size);
-  text += edge_line("largest von Mises", found.von_mises, size);
+  text += edge_line("largest edge stress", found.largest, hole);
+  text += edge_line("smallest edge stress", found.smallest, hole);
+  text += edge_line("largest von Mises", found.von_mises, hole);
   text += concentration_line("Kt gross", found.gross);
   text += concentration_line("Kt net  ", found.net);
   return text + section_line(found.section);

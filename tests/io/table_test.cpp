@@ -56,6 +56,20 @@ TEST(Table, FitsThePageAndShowsValueBoundPlaceAndDefinition) {
   EXPECT_TRUE(holds(text, "Not a substitute"));
 }
 
+TEST(Table, PlacesAPeakAsFinelyAsTheEdgeIsCurvedThere) {
+  Result result = test::solved(test::two_holes);
+  mesh::Hole& hole = result.input.problem.plate.holes[1];
+  hole.angle = 0.0;
+  hole.length = 40.0;
+  hole.width = 4.0;  // radius of curvature 0.2 mm at the tip, 200 mm at the crown
+  solver::HoleFindings& found = result.solution.combined.holes[1];
+  found.largest = {{900.0, 0.9}, hole.centre + mesh::Point(20.0, 0.0), 0.0};
+  found.smallest = {{-90.0, 0.09}, hole.centre + mesh::Point(0.0, 2.0), 1.5708};
+  const std::string text = table(result);
+  EXPECT_TRUE(holds(text, "     70.000      0.000       0.00\n")) << text;
+  EXPECT_TRUE(holds(text, "         50          2         90\n")) << text;
+}
+
 TEST(Table, SaysWhyAToleranceWasNotMet) {
   Result result = test::solved(test::two_holes);
   result.solution.status = solver::Solution::Status::not_met;
@@ -152,13 +166,19 @@ TEST(Summary, HasALineForEachCaseAndCountsThem) {
   good.holes[1].largest.stress = {400.0, 0.5};
   const Outcome bad{
       "a/very/long/path/to/a/folder/of/cases/b.toml", "", 3, "not read", std::string(90, 'x'), 0, {}, {}};
-  const std::string text = summary_table({good, bad, good});
+  Outcome unsolved = bad;
+  unsolved.exit_code = 5;
+  unsolved.status = "not solved";
+  Outcome open = good;
+  open.exit_code = 5;
+  open.status = "not met";
+  const std::string text = summary_table({good, bad, good, unsolved, open});
   EXPECT_LE(test::widest(text), page_width) << text;
   EXPECT_TRUE(holds(text, "-500.0 ±0.5")) << "the largest magnitude, not the largest value\n" << text;
   EXPECT_TRUE(holds(text, "inlet"));
   EXPECT_FALSE(holds(text, "outlet"));
   EXPECT_TRUE(holds(text, "folder/of/cases/b.toml") || holds(text, "cases/b.toml")) << text;
-  EXPECT_TRUE(holds(text, "3 cases: 2 settled, 1 not read")) << text;
+  EXPECT_TRUE(holds(text, "5 cases: 2 settled, 1 not read, 1 not met, 1 not solved")) << text;
 }
 
 TEST(Layout, WrapsAtThePage) {
