@@ -20,7 +20,7 @@ endforeach()
 
 # The program; it finds shared libraries of ours beside itself.
 file(RELATIVE_PATH to_libraries ${CMAKE_INSTALL_FULL_BINDIR} ${CMAKE_INSTALL_FULL_LIBDIR})
-set_target_properties(raiser PROPERTIES INSTALL_RPATH $ORIGIN/${to_libraries})
+set_target_properties(raiser PROPERTIES RUNTIME_OUTPUT_DIRECTORY ${PROJECT_BINARY_DIR} INSTALL_RPATH $ORIGIN/${to_libraries})
 install(TARGETS raiser)
 
 install(
