@@ -51,6 +51,11 @@ std::string plain(std::string_view text) {
   return result;
 }
 
+std::string hole_phrase(std::string_view name) {
+  const std::string shown = plain(name);
+  return shown.rfind("hole ", 0) == 0 ? shown : fmt::format("hole {}", shown);
+}
+
 std::string wrapped(std::string_view text, std::string_view first, std::size_t indent) {
   std::string lines, line(first);
   bool empty = true;

@@ -22,6 +22,9 @@ std::string shortened(std::string_view text, std::size_t width);
 /// One line without control characters, for text that a user wrote.
 std::string plain(std::string_view text);
 
+/// "hole bolt" for a hole named bolt, and "hole 2" for one named so by default.
+std::string hole_phrase(std::string_view name);
+
 /// Broken at blanks into lines of at most `page_width` columns, each ended by a
 /// newline. The first line begins with `first`, the others with as many blanks
 /// as `indent` says. A word that is too long gets a line of its own.

@@ -79,7 +79,7 @@ std::string section_line(const solver::Section& section) {
 
 std::string hole_in_full(const mesh::Hole& hole, const solver::HoleFindings& found) {
   std::string text(1, '\n');
-  text += wrapped(shape_text(hole), fmt::format("Hole {}: ", plain(hole.name)), 2);
+  text += wrapped(shape_text(hole), fmt::format("H{}: ", hole_phrase(hole.name).substr(1)), 2);
   text += fmt::format("  {}{}{}{}{}{}\n", left("", 22), right("MPa", 12), right("± MPa", 9),
                       right("x, mm", 11), right("y, mm", 11), right("angle, deg", 11));
   text += edge_line("largest edge stress", found.largest, hole);
@@ -162,8 +162,8 @@ std::string loads_part(const Result& result) {
     text += hole_line(named, *at);
   }
   if (units.size() > most) text += fmt::format("  and {} more loads\n", count(units.size() - most));
-  const std::string hole = plain(result.input.problem.plate.holes.at(worst).name);
-  return hole_lines_head(fmt::format("Each load by itself, at hole {}", hole)) + text;
+  const std::string hole = hole_phrase(result.input.problem.plate.holes.at(worst).name);
+  return hole_lines_head(fmt::format("Each load by itself, at {}", hole)) + text;
 }
 
 std::string published_part(const Result& result, const std::string& rest) {

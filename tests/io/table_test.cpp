@@ -193,6 +193,8 @@ TEST(Layout, WrapsAtThePage) {
 }
 
 TEST(Layout, ShortensByCharacters) {
+  EXPECT_EQ(hole_phrase("bolt"), "hole bolt");
+  EXPECT_EQ(hole_phrase("hole 2"), "hole 2");
   EXPECT_EQ(shortened("ärger", 5), "ärger");
   EXPECT_EQ(shortened("ärgern", 5), "ärge…");
   EXPECT_EQ(count(1), "1");
