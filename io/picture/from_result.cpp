@@ -42,7 +42,7 @@ std::string title_of(const Result& result) {
 }
 
 std::string name_of(const Result& result, std::size_t hole) {
-  return plain(result.input.problem.plate.holes.at(hole).name);
+  return hole_phrase(plain(result.input.problem.plate.holes.at(hole).name));
 }
 
 // The sample on the hole's edge that lies nearest to a point.
@@ -61,8 +61,7 @@ std::string load_words(const Result& result, const solver::Load& load) {
   words += fmt::format(" {}", amount(load.stress, "MPa"));
   if (load.kind == solver::Load::Kind::edge && load.along != 0.0)
     words += fmt::format(" and {} along it", amount(load.along, "MPa"));
-  if (load.kind == solver::Load::Kind::pressure)
-    words += fmt::format(" in hole {}", name_of(result, load.hole));
+  if (load.kind == solver::Load::Kind::pressure) words += fmt::format(" in {}", name_of(result, load.hole));
   return words;
 }
 
@@ -87,9 +86,8 @@ std::vector<std::string> caption(const Result& result, const HoleFindings& found
   const auto& problem = result.input.problem;
   const auto& plate = problem.plate;
   const auto& solution = result.solution;
-  std::vector<std::string> lines{fmt::format("Peak edge stress {} at hole {}",
-                                             amount(peak_place(found).stress, "MPa"),
-                                             name_of(result, found.hole))};
+  std::vector<std::string> lines{fmt::format(
+      "Peak edge stress {} at {}", amount(peak_place(found).stress, "MPa"), name_of(result, found.hole))};
   add_concentration(lines, "Kt gross", found.gross);
   add_concentration(lines, "Kt net", found.net);
   lines.push_back(fmt::format("Plate {} × {} × {}", brief(plate.length), brief(plate.width),
@@ -219,7 +217,7 @@ Picture picture_of(const Result& result) {
 Chart edge_chart(const Result& result, std::size_t hole) {
   const HoleFindings& found = findings(result, hole);
   Chart chart;
-  chart.title = fmt::format("{}: edge of hole {}", title_of(result), name_of(result, hole));
+  chart.title = fmt::format("{}: edge of {}", title_of(result), name_of(result, hole));
   chart.x_name = "edge angle from +x, degrees";
   chart.y_name = "stress, MPa";
   chart.x_step = 45.0;

@@ -11,6 +11,7 @@
 #include "io/picture/levels.hpp"
 #include "io/picture/paint.hpp"
 #include "io/write/file.hpp"
+#include "io/write/layout.hpp"
 
 namespace raiser::io {
 namespace {
@@ -239,7 +240,7 @@ void draw_detail(Canvas& canvas, const Picture& picture, const mesh::Region& reg
   draw_tag(canvas, tag);
   const std::string& name = picture.plate.holes[*picture.focus].name;
   const std::string heading =
-      fmt::format("{}{}enlarged {:.2g} times", name.empty() ? "" : "hole " + name + ", ",
+      fmt::format("{}{}enlarged {:.2g} times", name.empty() ? "" : hole_phrase(name) + ", ",
                   page.at_peak ? "at the peak, " : "", view.scale / page.whole.scale);
   canvas.text(wrapped(heading, page::small, view.box.width - 18).front(), {tag.right() + 5, tag.y + 9.5},
               page::small, ink::text);

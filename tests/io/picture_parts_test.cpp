@@ -188,6 +188,14 @@ TEST(LayoutOfAPicture, KeepsThingsApartForEveryAspect) {
               << i << ", " << j << ", ratio " << ratio << ", hole " << part;
       }
       EXPECT_NEAR(page.whole.box.width / page.whole.box.height, ratio, 1e-9 * ratio);
+      // the box of the whole view is the plate's rectangle, y upwards
+      EXPECT_LT(
+          (page.whole.on_paper({-length / 2, width / 2}) - Spot(page.whole.box.x, page.whole.box.y)).norm(),
+          1e-9);
+      EXPECT_LT((page.whole.on_paper({length / 2, -width / 2}) -
+                 Spot(page.whole.box.right(), page.whole.box.bottom()))
+                    .norm(),
+                1e-9);
       if (page.detail) {
         EXPECT_GT(page.detail->scale, 1.29 * page.whole.scale);
       }
