@@ -4,7 +4,9 @@
 
 #include <algorithm>
 #include <cmath>
+#include <filesystem>
 #include <map>
+#include <set>
 
 #include "io/write/layout.hpp"
 
@@ -33,9 +35,20 @@ const solver::HoleFindings& worst(const Outcome& outcome) {
 
 std::string kt_text(const solver::Concentration& kt) { return kt.kt ? fitted_value(*kt.kt, 8) : "-"; }
 
-std::string line(const Outcome& outcome) {
+// The names of the files, or their paths where two have the same name.
+std::vector<std::string> case_names(const std::vector<Outcome>& outcomes) {
+  std::vector<std::string> names, paths;
+  for (const Outcome& outcome : outcomes) {
+    paths.push_back(outcome.case_file);
+    names.push_back(std::filesystem::path(outcome.case_file).filename().string());
+  }
+  const std::set<std::string> distinct(names.begin(), names.end());
+  return distinct.size() == names.size() ? names : paths;
+}
+
+std::string line(const Outcome& outcome, const std::string& name) {
   const std::string head =
-      left(path_text(outcome.case_file, case_width - 1), case_width) + left(outcome.status, status_width);
+      left(path_text(name, case_width - 1), case_width) + left(outcome.status, status_width);
   if (outcome.holes.empty()) {
     return head + shortened(plain(outcome.message), page_width - case_width - status_width) + "\n";
   }
@@ -65,7 +78,8 @@ std::string summary_table(const std::vector<Outcome>& outcomes) {
   std::string text =
       fmt::format("{}{}{}{}{}{}\n", left("case", case_width), left("status", status_width),
                   left("worst hole", 12), right("peak, MPa", 17), right("Kt gross", 9), right("net", 8));
-  for (const Outcome& outcome : outcomes) text += line(outcome);
+  const std::vector<std::string> names = case_names(outcomes);
+  for (std::size_t i = 0; i < outcomes.size(); ++i) text += line(outcomes[i], names[i]);
   return text + "\n" + wrapped(tally(outcomes));
 }
 

@@ -181,6 +181,16 @@ TEST(Summary, HasALineForEachCaseAndCountsThem) {
   EXPECT_TRUE(holds(text, "5 cases: 2 settled, 1 not read, 1 not met, 1 not solved")) << text;
 }
 
+TEST(Summary, NamesCasesByTheirFilesUnlessTheseAreTheSame) {
+  Outcome a, b;
+  a.case_file = "one/a.toml";
+  b.case_file = "two/b.toml";
+  EXPECT_FALSE(holds(summary_table({a, b}), "one/"));
+  b.case_file = "two/a.toml";
+  EXPECT_TRUE(holds(summary_table({a, b}), "\none/a.toml")) << summary_table({a, b});
+  EXPECT_TRUE(holds(summary_table({a, b}), "\ntwo/a.toml"));
+}
+
 TEST(Layout, WrapsAtThePage) {
   const std::string text =
       wrapped(std::string(30, 'a') + " " + std::string(30, 'b') + " " + std::string(30, 'c'), "- ", 2);
