@@ -146,9 +146,9 @@ std::vector<Point> lattice(int n) {
   return points;
 }
 
-LevelSet cut_at(const std::vector<PictureCell>& cells, double level) {
+LevelSet cut_at(const std::vector<PictureCell>& cells, double level, double joining) {
   const double grid = std::max(1e-9 * extent(cells), 1e-300);
-  EdgeSet region(grid), lines(grid);
+  EdgeSet region(grid), lines(std::max(grid, joining));
   for (const PictureCell& cell : cells) {
     const auto [low, high] = std::minmax_element(cell.values.begin(), cell.values.end());
     if (*high < level) continue;

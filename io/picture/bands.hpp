@@ -30,8 +30,9 @@ struct LevelSet {
 };
 
 /// Cuts the cells at `level`. Edges that two neighbouring parts share cancel,
-/// so that the loops are the outline of the union.
-LevelSet cut_at(const std::vector<PictureCell>& cells, double level);
+/// so that the loops are the outline of the union. The field jumps a little
+/// from cell to cell: ends of lines within about `joining` mm become one point.
+LevelSet cut_at(const std::vector<PictureCell>& cells, double level, double joining = 0.0);
 
 /// Area enclosed by loops, mm^2: anticlockwise loops count positive.
 double area(const std::vector<Polyline>& loops);

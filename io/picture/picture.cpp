@@ -42,6 +42,7 @@ void add_lines(Canvas& canvas, const std::vector<Polyline>& lines, const View& v
   for (const Polyline& line : lines) {
     const Polyline few = simplified(line, 0.12 / view.scale);
     if (few.size() < 2) continue;
+    if (closed && std::abs(area({few})) * view.scale * view.scale < 0.02) continue;  // nothing to see
     canvas.move_to(view.on_paper(few.front()));
     for (std::size_t i = 1; i < few.size(); ++i) canvas.line_to(view.on_paper(few[i]));
     if (closed) canvas.close();
@@ -60,7 +61,7 @@ void draw_bands(Canvas& canvas, const Picture& picture, const View& view, const 
                [&](const PictureCell& cell) { return touches(cell, view); });
   std::vector<std::vector<Polyline>> lines;
   for (std::size_t i = 1; i + 1 < limits.size(); ++i) {
-    LevelSet cut = cut_at(seen, limits[i]);
+    LevelSet cut = cut_at(seen, limits[i], 0.3 / view.scale);
     add_lines(canvas, cut.region, view, true);
     canvas.fill(band_colour(i, limits.size() - 1));
     lines.push_back(std::move(cut.lines));

@@ -90,6 +90,15 @@ TEST(Bands, LinesLieOnTheLevel) {
   EXPECT_NEAR(cut.lines.front().front().y() * cut.lines.front().back().y(), 0.0, 1e-12);
 }
 
+TEST(Bands, LinesJoinAcrossASmallJump) {
+  PictureCell lower{1, {{0, 0}, {1, 0}, {0, 1}}, {0, 1, 0}};
+  PictureCell upper{1, {{1, 1}, {0, 1}, {1, 0}}, {1, 0.002, 1.002}};
+  EXPECT_EQ(cut_at({lower, upper}, 0.5).lines.size(), 2u);
+  const LevelSet joined = cut_at({lower, upper}, 0.5, 0.01);
+  ASSERT_EQ(joined.lines.size(), 1u);
+  EXPECT_NEAR(std::abs(joined.lines[0].front().y() - joined.lines[0].back().y()), 1.0, 0.02);
+}
+
 TEST(Bands, SimplifiedStaysWithinTheTolerance) {
   Polyline arc;
   for (int i = 0; i <= 1000; ++i) arc.emplace_back(std::cos(i * 3e-3), std::sin(i * 3e-3));
