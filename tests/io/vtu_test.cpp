@@ -15,6 +15,8 @@
 #include <cmath>
 #include <random>
 
+#include "tests/io/solved.hpp"
+
 namespace raiser::io {
 namespace {
 
@@ -117,6 +119,35 @@ TEST_P(VtuDegree, ReadsBackAsTheSamePolynomials) {
 }
 
 INSTANTIATE_TEST_SUITE_P(Degrees, VtuDegree, testing::Range(1, 9));
+
+// The whole way: a solved plate, mirror images included, written, read back and
+// compared with the solver inside every cell. The displacement is a polynomial
+// in the reference coordinates and must agree to rounding; the edges are exact
+// arcs in the solver and interpolated in the file.
+TEST(Vtu, ASolvedPlateReadsBackAsTheSolverHasIt) {
+  const Result result = test::solved(test::one_hole);
+  const solver::Field& field = result.solution.field;
+  ASSERT_LE(field.degree(), highest_vtu_degree);
+  ASSERT_TRUE(result.solution.mirrors_used.x && result.solution.mirrors_used.y);
+  Read read(vtu(cells_of(field), result.provenance));
+  ASSERT_EQ(read.grid()->GetNumberOfCells(), static_cast<vtkIdType>(4 * result.solution.triangles));
+  const std::vector<Point> inside{{0.2, 0.3}, {0.61, 0.17}, {0.05, 0.9}};
+  for (std::size_t cell = 0; cell < field.cells(); ++cell) {
+    const std::vector<FieldValue> expected = field.sample(cell, inside);
+    for (std::size_t i = 0; i < inside.size(); ++i) {
+      Point place;
+      const auto u = read.at(static_cast<vtkIdType>(cell), inside[i], "displacement, mm", &place);
+      const auto s = read.at(static_cast<vtkIdType>(cell), inside[i], "stress, MPa");
+      EXPECT_LT((place - expected[i].point).norm(), 1e-5) << "mm; the hole measures 10 mm";
+      EXPECT_LT((Point(u[0], u[1]) - expected[i].displacement).norm(), 1e-12);
+      EXPECT_NEAR(s[0], expected[i].stress.xx, 1e-3);
+      EXPECT_NEAR(s[3], expected[i].stress.xy, 1e-3);
+      const auto there = field.at(place);
+      ASSERT_TRUE(there);
+      EXPECT_LT((Point(u[0], u[1]) - there->displacement).norm(), 1e-7) << "the same place, found by search";
+    }
+  }
+}
 
 TEST(Vtu, CellTypesAreTheStandardOnes) {
   const std::array<std::pair<int, int>, 3> types{
