@@ -37,16 +37,25 @@ double turning(const Curve& curve) {
   return std::abs(std::atan2(a.x() * b.y() - a.y() * b.x(), a.dot(b)));
 }
 
+/// Divides an arc so that no piece turns by more than `limit`: a circular one
+/// into equal pieces, another by halving where it still turns too much.
 void divide_by_turn(const Curve& curve, double limit, std::size_t loop, std::vector<Piece>& out) {
-  const bool is_long =
-      curve.kind == Curve::Kind::arc && (turning(curve) > limit || std::abs(curve.end - curve.begin) > 3.0);
-  if (!is_long) {
+  const double span = std::abs(curve.end - curve.begin);
+  const bool is_circular = std::abs(curve.u.norm() - curve.v.norm()) < 1e-9 * curve.u.norm();
+  if (curve.kind == Curve::Kind::line || (span < 3.0 && turning(curve) <= limit)) {
     out.emplace_back(curve, loop);
     return;
   }
-  const auto [first, second] = split_at(curve, 0.5);
-  divide_by_turn(first, limit, loop, out);
-  divide_by_turn(second, limit, loop, out);
+  const int pieces = is_circular ? static_cast<int>(std::ceil(span / limit - 1e-9)) : 2;
+  Curve piece = curve;
+  for (int k = 1; k <= pieces; ++k) {
+    piece.end = k == pieces ? curve.end : curve.begin + k * (curve.end - curve.begin) / pieces;
+    if (is_circular)
+      out.emplace_back(piece, loop);
+    else
+      divide_by_turn(piece, limit, loop, out);
+    piece.begin = piece.end;
+  }
 }
 
 /// Shortest way between two chords: its length and unit direction from a to b.
@@ -127,10 +136,12 @@ bool split_pass(std::vector<Piece>& pieces, const SizeRule& rule) {
   return any;
 }
 
-/// The smaller radius of curvature where two curves meet, if it jumps there.
-double radius_at_jump(const Curve& a, const Curve& b) {
-  const double ra = a.radius_of_curvature(a.end);
-  const double rb = b.radius_of_curvature(b.begin);
+/// The smaller radius of curvature where two curves meet smoothly, if it jumps
+/// there. Across a mirror line the curve meets its own image: no jump.
+double radius_at_jump(const Piece& a, const Piece& b) {
+  if (a.on_mirror() || b.on_mirror()) return 0.0;
+  const double ra = a.curve.radius_of_curvature(a.curve.end);
+  const double rb = b.curve.radius_of_curvature(b.curve.begin);
   const double smaller = std::min(ra, rb);
   return std::isfinite(smaller) && smaller < 0.99 * std::max(ra, rb) ? smaller : 0.0;
 }
@@ -161,8 +172,8 @@ DividedLoop grade_joints(const std::vector<Piece>& loop, const SizeRule& rule) {
   DividedLoop result;
   const std::size_t n = loop.size();
   for (std::size_t i = 0; i < n; ++i)
-    grade(loop[i], radius_at_jump(loop[(i + n - 1) % n].curve, loop[i].curve),
-          radius_at_jump(loop[i].curve, loop[(i + 1) % n].curve), rule, result);
+    grade(loop[i], radius_at_jump(loop[(i + n - 1) % n], loop[i]), radius_at_jump(loop[i], loop[(i + 1) % n]),
+          rule, result);
   return result;
 }
 

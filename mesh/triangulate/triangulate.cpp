@@ -4,6 +4,7 @@
 
 #include <algorithm>
 #include <map>
+#include <optional>
 #include <stdexcept>
 #include <string>
 
@@ -80,13 +81,18 @@ Triangles read_triangles(const std::vector<Point>& boundary) {
   }
   std::vector<std::size_t> elements, nodes;
   gmsh::model::mesh::getElementsByType(2, elements, nodes, 1);
+  // All run the same way. The sign of one alone would not do: Gmsh sometimes
+  // returns a triangle of no area.
+  double area = 0.0;
   for (std::size_t k = 0; k + 2 < nodes.size(); k += 3) {
-    Mesh::Triangle t{index[nodes[k]], index[nodes[k + 1]], index[nodes[k + 2]]};
+    const Mesh::Triangle t{index[nodes[k]], index[nodes[k + 1]], index[nodes[k + 2]]};
     const Point a = result.points[t[1]] - result.points[t[0]];
     const Point b = result.points[t[2]] - result.points[t[0]];
-    if (a.x() * b.y() - a.y() * b.x() < 0) std::swap(t[1], t[2]);
+    area += a.x() * b.y() - a.y() * b.x();
     result.triangles.push_back(t);
   }
+  if (area < 0)
+    for (Mesh::Triangle& t : result.triangles) std::swap(t[1], t[2]);
   return result;
 }
 
@@ -108,9 +114,10 @@ Triangles run_gmsh(const std::vector<DividedLoop>& loops, double growth) {
   }
 }
 
-/// Finds each boundary piece's triangle side.
-std::vector<BoundarySide> attach(const std::vector<DividedLoop>& loops,
-                                 const std::vector<Mesh::Triangle>& triangles) {
+/// Finds each boundary piece's triangle side. Nothing when some piece has none:
+/// Gmsh sometimes puts a triangle of no area on a straight run of boundary.
+std::optional<std::vector<BoundarySide>> attach(const std::vector<DividedLoop>& loops,
+                                                const std::vector<Mesh::Triangle>& triangles) {
   std::map<std::pair<int, int>, const Curve*> pieces;
   int first = 0;
   for (const DividedLoop& loop : loops) {
@@ -123,8 +130,7 @@ std::vector<BoundarySide> attach(const std::vector<DividedLoop>& loops,
     for (int k = 0; k < 3; ++k)
       if (const auto found = pieces.find({triangles[t][k], triangles[t][(k + 1) % 3]}); found != pieces.end())
         sides.push_back({t, k, *found->second});
-  if (sides.size() != pieces.size())
-    throw std::runtime_error("triangulate: Gmsh lost a piece of the boundary");
+  if (sides.size() != pieces.size()) return std::nullopt;
   return sides;
 }
 
@@ -162,16 +168,22 @@ std::vector<DividedLoop> split_sides(const std::vector<DividedLoop>& loops, cons
 }  // namespace
 
 Mesh triangulate(const Region& region, const SizeRule& rule) {
+  constexpr int most_attempts = 10;
   std::vector<DividedLoop> loops = divide(region, rule);
-  for (int attempt = 0;; ++attempt) {
-    Triangles raw = run_gmsh(loops, rule.growth);
-    std::vector<BoundarySide> boundary = attach(loops, raw.triangles);
-    Mesh mesh(std::move(raw.points), std::move(raw.triangles), std::move(boundary));
-    const std::vector<int> bad = inverted_triangles(mesh);
-    if (bad.empty()) return mesh;
-    if (attempt == 6) throw std::runtime_error("triangulate: some curved triangles stay inverted");
-    loops = split_sides(loops, mesh, bad);
+  double growth = rule.growth;
+  for (int attempt = 0; attempt < most_attempts; ++attempt) {
+    Triangles raw = run_gmsh(loops, growth);
+    if (auto boundary = attach(loops, raw.triangles)) {
+      Mesh mesh(std::move(raw.points), std::move(raw.triangles), std::move(*boundary));
+      std::vector<int> bad = inverted_triangles(mesh);
+      if (bad.empty()) return mesh;
+      // A curved triangle needs shorter sides; a flat one a different mesh.
+      std::erase_if(bad, [&](int t) { return !mesh.is_curved(t); });
+      loops = split_sides(loops, mesh, bad);
+    }
+    growth *= 0.85;
   }
+  throw std::runtime_error("triangulate: some triangles stay inverted or without area");
 }
 
 }  // namespace raiser::mesh
