@@ -18,7 +18,7 @@ constexpr std::size_t status_width = 12;
 
 // The end of a path tells cases apart better than its beginning.
 std::string path_text(const std::string& path, std::size_t width) {
-  const std::string text = plain(path);
+  std::string text = plain(path);
   if (columns(text) <= width) return text;
   std::size_t drop = columns(text) - width + 1, at = 0;
   while (at < text.size() && (drop > 0 || (static_cast<unsigned char>(text[at]) & 0xC0U) == 0x80U)) {
