@@ -42,6 +42,9 @@ void eliminate(const Dense& front) {
   const int border = front.rows - front.eliminated;
   int info = 0;
   dpotrf_("L", &front.eliminated, front.columns, &front.rows, &info);
+  // The pivots of a matrix that is not finite are not numbers, which dpotrf may let pass.
+  for (int k = 0; k < front.eliminated; ++k)
+    if (!(front.column(k)[k] > 0.0)) info = k + 1;
   if (info != 0)
     throw std::runtime_error(
         "Factorisation: a pivot is not positive; the plate can move or a triangle is degenerate");
