@@ -19,6 +19,15 @@ double coordinate(const Point& reference, int k) {
   return k == 0 ? 1.0 - reference.x() - reference.y() : reference[k - 1];
 }
 
+/// Points of the reference triangle in rows, n + 1 along each side.
+std::vector<Point> lattice(int n) {
+  std::vector<Point> points;
+  for (int i = 0; i <= n; ++i)
+    for (int j = 0; i + j <= n; ++j)
+      points.emplace_back(static_cast<double>(i) / n, static_cast<double>(j) / n);
+  return points;
+}
+
 }  // namespace
 
 Mesh::Mesh(std::vector<Point> points, std::vector<Triangle> triangles, std::vector<BoundarySide> boundary,
@@ -85,63 +94,60 @@ Mesh::Bubble Mesh::bubble(const BoundarySide& side, int geometry_degree) {
   return result;
 }
 
-MapPoint Mesh::map(int triangle, const Point& reference) const {
+MapTable::Side::Side(const Point& reference, int a) {
+  const int b = (a + 1) % 3;
+  const double la = coordinate(reference, a);
+  const double lb = coordinate(reference, b);
+  weight = 4 * la * lb;
+  weight_r = 4 * (slope_r[a] * lb + la * slope_r[b]);
+  weight_s = 4 * (slope_s[a] * lb + la * slope_s[b]);
+  along_r = slope_r[b] - slope_r[a];
+  along_s = slope_s[b] - slope_s[a];
+  legendre(Mesh::max_terms - 1, lb - la, value.data(), slope.data());
+}
+
+void MapTable::Side::add(std::span<const Point> coefficients, MapPoint& out) const {
+  Point g = Point::Zero();
+  Point dg = Point::Zero();
+  for (std::size_t j = 0; j < coefficients.size(); ++j) {
+    g += value[j] * coefficients[j];
+    dg += slope[j] * coefficients[j];
+  }
+  out.x += weight * g;
+  out.jacobian.col(0) += weight_r * g + weight * along_r * dg;
+  out.jacobian.col(1) += weight_s * g + weight * along_s * dg;
+}
+
+MapPoint Mesh::linear_map(int triangle, const Point& reference) const {
+  const Triangle& vertices = triangles_[triangle];
+  const Point origin = points_[vertices[0]];
   MapPoint result;
-  MapTable({&reference, 1}).evaluate(*this, triangle, {&result, 1});
+  result.jacobian << points_[vertices[1]] - origin, points_[vertices[2]] - origin;
+  result.x = origin + result.jacobian * reference;
+  return result;
+}
+
+MapPoint Mesh::map(int triangle, const Point& reference) const {
+  MapPoint result = linear_map(triangle, reference);
+  for (int k = first_bubble_[triangle]; k < first_bubble_[triangle + 1]; ++k)
+    MapTable::Side(reference, bubbles_[k].side).add(bubbles_[k].series(), result);
   return result;
 }
 
 MapTable::MapTable(std::span<const Point> reference) : reference_(reference.begin(), reference.end()) {
-  sides_.resize(reference_.size());
-  for (std::size_t i = 0; i < reference_.size(); ++i)
-    for (int a = 0; a < 3; ++a) {
-      const int b = (a + 1) % 3;
-      const double la = coordinate(reference_[i], a);
-      const double lb = coordinate(reference_[i], b);
-      Side& side = sides_[i][a];
-      side.weight = 4 * la * lb;
-      side.weight_r = 4 * (slope_r[a] * lb + la * slope_r[b]);
-      side.weight_s = 4 * (slope_s[a] * lb + la * slope_s[b]);
-      side.slope_r = slope_r[b] - slope_r[a];
-      side.slope_s = slope_s[b] - slope_s[a];
-      legendre(Mesh::max_terms - 1, lb - la, side.value.data(), side.slope.data());
-    }
+  for (const Point& point : reference_) sides_.push_back({Side(point, 0), Side(point, 1), Side(point, 2)});
 }
 
 void MapTable::evaluate(const Mesh& mesh, int triangle, std::span<MapPoint> out) const {
-  const Mesh::Triangle& vertices = mesh.triangles_[triangle];
-  const Point origin = mesh.points_[vertices[0]];
-  Eigen::Matrix2d linear;
-  linear << mesh.points_[vertices[1]] - origin, mesh.points_[vertices[2]] - origin;
-  for (std::size_t i = 0; i < reference_.size(); ++i) {
-    out[i].x = origin + linear * reference_[i];
-    out[i].jacobian = linear;
-  }
-  for (int k = mesh.first_bubble_[triangle]; k < mesh.first_bubble_[triangle + 1]; ++k) {
-    const Mesh::Bubble& bubble = mesh.bubbles_[k];
-    for (std::size_t i = 0; i < reference_.size(); ++i) {
-      const Side& side = sides_[i][bubble.side];
-      Point g = Point::Zero();
-      Point dg = Point::Zero();
-      for (int j = 0; j < bubble.terms; ++j) {
-        g += side.value[j] * bubble.coefficients[j];
-        dg += side.slope[j] * bubble.coefficients[j];
-      }
-      out[i].x += side.weight * g;
-      out[i].jacobian.col(0) += side.weight_r * g + side.weight * side.slope_r * dg;
-      out[i].jacobian.col(1) += side.weight_s * g + side.weight * side.slope_s * dg;
-    }
-  }
+  for (std::size_t i = 0; i < reference_.size(); ++i) out[i] = mesh.linear_map(triangle, reference_[i]);
+  for (int k = mesh.first_bubble_[triangle]; k < mesh.first_bubble_[triangle + 1]; ++k)
+    for (std::size_t i = 0; i < reference_.size(); ++i)
+      sides_[i][mesh.bubbles_[k].side].add(mesh.bubbles_[k].series(), out[i]);
 }
 
 std::vector<int> inverted_triangles(const Mesh& mesh) {
-  constexpr int n = 8;
-  std::vector<Point> lattice;
-  for (int i = 0; i <= n; ++i)
-    for (int j = 0; i + j <= n; ++j)
-      lattice.emplace_back(static_cast<double>(i) / n, static_cast<double>(j) / n);
-  const MapTable table(lattice);
-  std::vector<MapPoint> values(lattice.size());
+  static const MapTable table(lattice(8));
+  std::vector<MapPoint> values(table.size());
   std::vector<int> bad;
   for (int t = 0; t < static_cast<int>(mesh.triangles().size()); ++t) {
     const auto& corner = mesh.triangles()[t];

@@ -73,7 +73,9 @@ class Mesh {
     int side = 0;
     int terms = 0;
     std::array<Point, max_terms> coefficients;
+    std::span<const Point> series() const { return {coefficients.data(), static_cast<std::size_t>(terms)}; }
   };
+  MapPoint linear_map(int triangle, const Point& reference) const;
   static Bubble bubble(const BoundarySide& side, int geometry_degree);
   void number_edges();
 
@@ -95,9 +97,13 @@ class MapTable {
   void evaluate(const Mesh& mesh, int triangle, std::span<MapPoint> out) const;
 
  private:
+  friend class Mesh;
+  /// Factors of a side's bubble at one point.
   struct Side {
+    Side(const Point& reference, int side);
+    void add(std::span<const Point> coefficients, MapPoint& out) const;
     double weight, weight_r, weight_s;  ///< 4 la lb and its derivatives
-    double slope_r, slope_s;            ///< derivatives of lb - la
+    double along_r, along_s;            ///< derivatives of lb - la
     std::array<double, Mesh::max_terms> value, slope;
   };
   std::vector<Point> reference_;

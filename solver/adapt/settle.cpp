@@ -16,7 +16,6 @@ namespace {
 
 using Clock = std::chrono::steady_clock;
 
-constexpr int first_degree = 3;
 constexpr int most_refinements = 5;
 constexpr std::size_t most_unknowns = 3'000'000;
 
@@ -54,22 +53,26 @@ double least_tolerance(const std::vector<Ask>& asks) {
 /// The first mesh for a tolerance, before anything is solved.
 mesh::SizeRule first_rule(const Plate& plate, double tolerance) {
   mesh::SizeRule rule;
+  if (tolerance < 5e-5) rule.turn *= 0.8;
   if (tolerance < 1e-5) rule.joint = tolerance < 1e-7 ? 0.002 : 0.01;
   rule.refine.assign(plate.holes.size(), 1.0);
   return rule;
 }
 
-/// Degrees beyond 8 pay only where many digits are asked for.
+/// Low degrees tell little where many digits are asked for, and degrees beyond
+/// 8 pay only there.
+int first_degree(double tolerance) { return tolerance < 5e-4 ? 4 : 3; }
 int last_degree(double tolerance) { return tolerance < 1e-5 ? max_degree : 8; }
 
 /// Raises the degree until every asked number is met, refinement pays more, or
 /// the budget is spent. Returns the largest excess.
-double raise_degree(DegreeSequence& sequence, const std::vector<Ask>& asks, int last, int refinement,
+double raise_degree(DegreeSequence& sequence, const std::vector<Ask>& asks, double tolerance, int refinement,
                     Clock::time_point start, std::vector<Level>& levels) {
   double worst = std::numeric_limits<double>::infinity();
-  for (int degree = first_degree; degree <= last && worst > 1.0; ++degree) {
+  const int first = first_degree(tolerance);
+  for (int degree = first; degree <= last_degree(tolerance) && worst > 1.0; ++degree) {
     const std::size_t unknowns = Discretisation(sequence.model().mesh(), degree).unknowns();
-    if (unknowns > most_unknowns && degree > first_degree + 2) break;
+    if (unknowns > most_unknowns && degree > first + 2) break;
     sequence.solve(degree);
     worst = 0.0;
     for (const Ask& ask : asks) worst = std::max(worst, sequence.excess(ask));
@@ -114,7 +117,7 @@ Solution settle(const Problem& problem, const std::vector<Ask>& asks) {
     const Model model(mesh::triangulate(region, rule), mirrors, problem.material, problem.plate.thickness,
                       loads);
     DegreeSequence sequence(model, problem.plate);
-    const double worst = raise_degree(sequence, asks, last_degree(tolerance), refinement, start, levels);
+    const double worst = raise_degree(sequence, asks, tolerance, refinement, start, levels);
     const bool is_settled = worst <= 1.0;
     if (is_settled || refinement == most_refinements) {
       Solution solution = report(problem, sequence);

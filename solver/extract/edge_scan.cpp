@@ -3,21 +3,19 @@
 #include <algorithm>
 #include <cmath>
 #include <limits>
-#include <numbers>
 
 namespace raiser::solver {
 namespace {
 
-constexpr int samples = 21;
-
-/// Value at s of the polynomial through `values` at EdgeScanner::positions().
+/// Value at s of the polynomial through `values` at search_points().
 /// Source: barycentric formula, J.-P. Berrut and L. N. Trefethen, SIAM Review
 /// 46 (2004) 501-517.
 double interpolate(const Eigen::VectorXd& values, double s) {
   double above = 0.0;
   double below = 0.0;
+  const int samples = static_cast<int>(search_points().size());
   for (int j = 0; j < samples; ++j) {
-    const double distance = s - EdgeScanner::positions()[j];
+    const double distance = s - search_points()[j];
     if (distance == 0.0) return values[j];
     const double weight = (j % 2 == 0 ? 1.0 : -1.0) * (j == 0 || j == samples - 1 ? 0.5 : 1.0) / distance;
     above += weight * values[j];
@@ -30,9 +28,9 @@ double interpolate(const Eigen::VectorXd& values, double s) {
 double maximise(const Eigen::VectorXd& values) {
   Eigen::Index best = 0;
   values.maxCoeff(&best);
-  const auto& s = EdgeScanner::positions();
+  const auto& s = search_points();
   double low = s[std::max<Eigen::Index>(best - 1, 0)];
-  double high = s[std::min<Eigen::Index>(best + 1, samples - 1)];
+  double high = s[std::min<Eigen::Index>(best + 1, static_cast<Eigen::Index>(s.size()) - 1)];
   const double golden = (std::sqrt(5.0) - 1) / 2;
   double a = high - golden * (high - low);
   double b = low + golden * (high - low);
@@ -73,16 +71,6 @@ Eigen::VectorXd wanted(const SideStress& stress, const Eigen::VectorXd& weight, 
 }
 
 }  // namespace
-
-const std::vector<double>& EdgeScanner::positions() {
-  static const std::vector<double> result = [] {
-    std::vector<double> s;
-    for (int j = 0; j < samples; ++j) s.push_back(-std::cos(std::numbers::pi * j / (samples - 1)));
-    s[samples / 2] = 0.0;
-    return s;
-  }();
-  return result;
-}
 
 EdgeScanner::EdgeScanner(const Model& model, const Plate& plate)
     : model_(&model), holes_(plate.holes.size()) {
@@ -171,7 +159,8 @@ struct EdgeScanner::Search {
 
 EdgeScan EdgeScanner::scan(const Displacements& displacements) const {
   EdgeScan result;
-  const EdgeProbe probe(*model_, displacements.degree, positions());
+  const EdgeProbe probe(*model_, displacements.degree, search_points(),
+                        sides_at_search_points(displacements.degree));
   for (const mesh::BoundarySide& side : sides_) result.sides.push_back(probe.at(side, displacements));
   // With one load, the load alone is all loads together.
   const std::size_t cases = model_->loads().size() == 1 ? 1 : model_->loads().size() + 1;

@@ -21,7 +21,7 @@ using HoleExtremes = std::array<Extreme, quantity_count>;
 /// positions on the sides under all loads.
 struct EdgeScan {
   std::vector<std::vector<HoleExtremes>> extremes;  ///< [case][hole]
-  std::vector<SideStress> sides;                    ///< by EdgeScanner::sides(), per load
+  std::vector<SideStress> sides;                    ///< by EdgeScanner::sides(), at search_points(), per load
 };
 
 /// Searches the edges of all holes between the nodes: every side is sampled at
@@ -35,8 +35,6 @@ class EdgeScanner {
 
   /// The boundary sides that lie on holes.
   const std::vector<mesh::BoundarySide>& sides() const { return sides_; }
-  /// Chebyshev-Lobatto positions in [-1, 1] where the sides are sampled.
-  static const std::vector<double>& positions();
   /// The hole of the whole plate that side `side` lies on in an image.
   std::size_t hole_in(std::size_t side, std::size_t image) const;
   /// Factor of each load's stress in an image for a case.

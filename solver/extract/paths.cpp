@@ -26,6 +26,19 @@ void order(std::vector<EdgeSample>& samples) {
     samples[i].arc_length = samples[i - 1].arc_length + (samples[i].point - samples[i - 1].point).norm();
 }
 
+/// The largest bound along one side from the values of successive degrees. At a
+/// single point the differences may vanish by accident, most of all beside a
+/// jump of curvature, where they fall slowly.
+double largest_bound(const std::vector<Eigen::VectorXd>& degrees, double size) {
+  double largest = 0.0;
+  for (Eigen::Index q = 0; q < degrees.back().size(); ++q) {
+    std::vector<double> sequence;
+    for (const Eigen::VectorXd& values : degrees) sequence.push_back(values[q]);
+    largest = std::max(largest, error_bound(sequence, size));
+  }
+  return largest;
+}
+
 std::string end_name(const Plate& plate, const std::optional<std::size_t>& hole, const char* edge) {
   return hole ? "hole " + plate.holes[*hole].name : std::string(edge);
 }
@@ -72,7 +85,7 @@ std::vector<std::vector<EdgeSample>> edge_samples(const Model& model, const Plat
                                                   const EdgeScanner& scanner,
                                                   const std::vector<EdgeScan>& scans) {
   std::vector<std::vector<EdgeSample>> result(plate.holes.size());
-  const auto& positions = EdgeScanner::positions();
+  const auto& positions = search_points();
   const EdgeScan& last = scans.back();
   for (std::size_t image = 0; image < model.images().size(); ++image) {
     const Eigen::VectorXd weight = scanner.weights(0, image);
@@ -84,6 +97,7 @@ std::vector<std::vector<EdgeSample>> edge_samples(const Model& model, const Plat
       const Eigen::VectorXd shear = last.sides[side].shear * weight;
       const HoleExtremes& extremes = last.extremes[0][hole];
       const double size = std::max(std::abs(extremes[0].value), std::abs(extremes[1].value));
+      const double bound = largest_bound(tangential, size);
       // The side's last point is the next side's first.
       for (std::size_t q = 0; q + 1 < positions.size(); q += 2) {
         EdgeSample sample;
@@ -93,9 +107,7 @@ std::vector<std::vector<EdgeSample>> edge_samples(const Model& model, const Plat
         sample.tangential = tangential.back()[q];
         sample.von_mises = von_mises({tangential.back()[q], normal[q], shear[q],
                                       model.material().through_thickness(tangential.back()[q], normal[q])});
-        std::vector<double> sequence;
-        for (const Eigen::VectorXd& values : tangential) sequence.push_back(values[q]);
-        sample.bound = error_bound(sequence, size);
+        sample.bound = bound;
         result[hole].push_back(sample);
       }
     }

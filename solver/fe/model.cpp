@@ -92,13 +92,8 @@ std::vector<int> Model::pins(const std::vector<bool>& held) const {
 
 Eigen::MatrixXd Model::load_vectors(const Discretisation& space) const {
   Eigen::MatrixXd f = Eigen::MatrixXd::Zero(space.unknowns(), static_cast<Eigen::Index>(loads_.size()));
-  const mesh::GaussRule rule = mesh::gauss_legendre(space.degree() + 6);
-  std::array<ShapeTable, 3> shapes;
-  for (int k = 0; k < 3; ++k) {
-    std::vector<Point> reference;
-    for (const double s : rule.points) reference.push_back(on_side(k, s));
-    shapes[k] = tabulate(space.degree(), reference);
-  }
+  const mesh::GaussRule& rule = traction_rule(space.degree());
+  const auto& shapes = sides_at_gauss_points(space.degree()).shapes;
   Discretisation::Local local;
   for (const BoundarySide& side : mesh_.boundary()) {
     const Owner& owner = side.curve.owner;

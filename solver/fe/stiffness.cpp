@@ -6,19 +6,10 @@
 namespace raiser::solver {
 
 Stiffness::Stiffness(int degree, const Eigen::Matrix3d& law)
-    : law_(law),
-      rule_(triangle_rule(degree + 3)),
-      maps_(rule_.points),
-      shapes_(tabulate(degree, rule_.points)),
-      points_(rule_.points.size()) {
-  const Eigen::Map<const Eigen::VectorXd> weights(rule_.weights.data(),
-                                                  static_cast<Eigen::Index>(rule_.weights.size()));
-  rr_ = shapes_.dr * weights.asDiagonal() * shapes_.dr.transpose();
-  rs_ = shapes_.dr * weights.asDiagonal() * shapes_.ds.transpose();
-  ss_ = shapes_.ds * weights.asDiagonal() * shapes_.ds.transpose();
-}
+    : law_(law), reference_(&reference_element(degree)), points_(reference_->rule.points.size()) {}
 
 void Stiffness::straight(const mesh::Mesh& mesh, int t) {
+  const ReferenceElement& reference = *reference_;
   const auto& corner = mesh.triangles()[t];
   Eigen::Matrix2d jacobian;
   jacobian << mesh.points()[corner[1]] - mesh.points()[corner[0]],
@@ -26,8 +17,8 @@ void Stiffness::straight(const mesh::Mesh& mesh, int t) {
   const double area = jacobian.determinant();
   const Eigen::Matrix2d g = jacobian.inverse();  // rows: gradients of r and s
   const auto combine = [&](int i, int j) -> Eigen::MatrixXd {
-    return area * (g(0, i) * g(0, j) * rr_ + g(0, i) * g(1, j) * rs_ + g(1, i) * g(0, j) * rs_.transpose() +
-                   g(1, i) * g(1, j) * ss_);
+    return area * (g(0, i) * g(0, j) * reference.rr + g(0, i) * g(1, j) * reference.rs +
+                   g(1, i) * g(0, j) * reference.rs.transpose() + g(1, i) * g(1, j) * reference.ss);
   };
   xx_ = combine(0, 0);
   xy_ = combine(0, 1);
@@ -35,15 +26,16 @@ void Stiffness::straight(const mesh::Mesh& mesh, int t) {
 }
 
 void Stiffness::curved(const mesh::Mesh& mesh, int t) {
-  maps_.evaluate(mesh, t, points_);
-  gx_.resize(shapes_.dr.rows(), shapes_.dr.cols());
-  gy_.resize(shapes_.dr.rows(), shapes_.dr.cols());
+  const ShapeTable& shapes = reference_->shapes;
+  reference_->maps.evaluate(mesh, t, points_);
+  gx_.resize(shapes.dr.rows(), shapes.dr.cols());
+  gy_.resize(shapes.dr.rows(), shapes.dr.cols());
   for (Eigen::Index q = 0; q < gx_.cols(); ++q) {
     const Eigen::Matrix2d& j = points_[q].jacobian;
     const double area = j.determinant();
-    const double scale = std::sqrt(rule_.weights[q] * area) / area;
-    gx_.col(q) = scale * (j(1, 1) * shapes_.dr.col(q) - j(1, 0) * shapes_.ds.col(q));
-    gy_.col(q) = scale * (j(0, 0) * shapes_.ds.col(q) - j(0, 1) * shapes_.dr.col(q));
+    const double scale = std::sqrt(reference_->rule.weights[q] * area) / area;
+    gx_.col(q) = scale * (j(1, 1) * shapes.dr.col(q) - j(1, 0) * shapes.ds.col(q));
+    gy_.col(q) = scale * (j(0, 0) * shapes.ds.col(q) - j(0, 1) * shapes.dr.col(q));
   }
   xx_.noalias() = gx_ * gx_.transpose();
   xy_.noalias() = gx_ * gy_.transpose();

@@ -4,7 +4,7 @@
 #include <vector>
 
 #include "mesh/mesh.hpp"
-#include "solver/fe/shape.hpp"
+#include "solver/fe/reference.hpp"
 
 namespace raiser::solver {
 
@@ -28,10 +28,7 @@ class Stiffness {
   void curved(const mesh::Mesh& mesh, int t);
 
   Eigen::Matrix3d law_;
-  TriangleRule rule_;
-  mesh::MapTable maps_;
-  ShapeTable shapes_;
-  Eigen::MatrixXd rr_, rs_, ss_;  ///< reference integrals of products of derivatives
+  const ReferenceElement* reference_;
   Eigen::MatrixXd xx_, xy_, yy_;  ///< the same in the plate's axes, this element
   Eigen::MatrixXd gx_, gy_;
   std::vector<mesh::MapPoint> points_;

@@ -20,20 +20,13 @@ Eigen::Matrix3d to_edge_axes(const Point& t, bool is_strain) {
 
 }  // namespace
 
-EdgeProbe::EdgeProbe(const Model& model, int degree, std::span<const double> s)
-    : model_(&model), space_(model.mesh(), degree), s_(s.begin(), s.end()) {
-  for (int side = 0; side < 3; ++side) {
-    std::vector<Point> reference;
-    for (const double position : s_) reference.push_back(on_side(side, position));
-    shapes_[side] = tabulate(degree, reference);
-    maps_.emplace_back(reference);
-  }
-}
+EdgeProbe::EdgeProbe(const Model& model, int degree, std::span<const double> s, SideTables tables)
+    : model_(&model), space_(model.mesh(), degree), s_(s.begin(), s.end()), tables_(std::move(tables)) {}
 
 SideStress EdgeProbe::at(const mesh::BoundarySide& side, const Displacements& displacements) const {
   const auto points = static_cast<Eigen::Index>(s_.size());
   const Eigen::Index loads = displacements.values.cols();
-  const ShapeTable& shapes = shapes_[side.side];
+  const ShapeTable& shapes = tables_.shapes[side.side];
   Discretisation::Local local;
   space_.local(side.triangle, local);
   Eigen::MatrixXd own(static_cast<Eigen::Index>(local.function.size()), 2 * loads);
@@ -44,7 +37,7 @@ SideStress EdgeProbe::at(const mesh::BoundarySide& side, const Displacements& di
   const Eigen::MatrixXd dr = shapes.dr.transpose() * own;
   const Eigen::MatrixXd ds = shapes.ds.transpose() * own;
   std::vector<mesh::MapPoint> maps(s_.size());
-  maps_[side.side].evaluate(model_->mesh(), side.triangle, maps);
+  tables_.maps[side.side].evaluate(model_->mesh(), side.triangle, maps);
 
   const Eigen::Matrix3d stiffness = model_->material().stiffness();
   const Eigen::Matrix3d compliance = model_->material().compliance();

@@ -6,6 +6,7 @@
 #include <vector>
 
 #include "solver/fe/model.hpp"
+#include "solver/fe/reference.hpp"
 
 namespace raiser::solver {
 
@@ -21,10 +22,14 @@ struct SideStress {
   Eigen::MatrixXd tangential, normal, shear, raw_normal, raw_shear;
 };
 
-/// Evaluates edge stresses at fixed positions s in [-1, 1] along sides.
+/// Evaluates edge stresses at fixed positions s in [-1, 1] along sides. Holds a
+/// reference to the model.
 class EdgeProbe {
  public:
-  EdgeProbe(const Model& model, int degree, std::span<const double> s);
+  EdgeProbe(const Model& model, int degree, std::span<const double> s)
+      : EdgeProbe(model, degree, s, SideTables(degree, s)) {}
+  /// With tables for the same degree and positions.
+  EdgeProbe(const Model& model, int degree, std::span<const double> s, SideTables tables);
 
   SideStress at(const mesh::BoundarySide& side, const Displacements& displacements) const;
 
@@ -32,8 +37,7 @@ class EdgeProbe {
   const Model* model_;
   Discretisation space_;
   std::vector<double> s_;
-  std::array<ShapeTable, 3> shapes_;
-  std::vector<mesh::MapTable> maps_;
+  SideTables tables_;
 };
 
 }  // namespace raiser::solver
