@@ -1,0 +1,94 @@
+#pragma once
+
+#include <cstdint>
+#include <string>
+#include <string_view>
+#include <vector>
+
+#include "solver/solution.hpp"
+
+namespace raiser::validation {
+
+/// One number of a solution held against its truth. Stresses in MPa.
+struct Trial {
+  enum class What { largest, smallest, von_mises, edge_sample, ligament_point };
+  What what = What::largest;
+  std::size_t hole = 0;
+  std::string load;       ///< kind of the load, "together" for several
+  bool is_asked = true;   ///< false: a unit load of several, for which no tolerance is asked
+  double value = 0.0;     ///< MPa
+  double bound = 0.0;     ///< MPa
+  double error = 0.0;     ///< MPa: magnitude of value less truth
+  double doubt = 0.0;     ///< MPa: how far the truth itself may be wrong
+  double scale = 0.0;     ///< MPa: largest magnitude of edge stress on the hole
+  std::string shape;      ///< of the hole
+  double ligament = 0.0;  ///< smallest ligament of the hole over the smaller hole's diameter beside it
+};
+
+/// Whether the truth lies within the bound, with regard to its own doubt.
+enum class Verdict { within, outside, undecided };
+Verdict verdict(const Trial& trial);
+
+/// What came of one plate.
+struct PlateTrial {
+  enum class Truth { finer_solution, closed_form };
+  std::uint64_t seed = 0;
+  Truth truth = Truth::finer_solution;
+  bool is_settled = false;
+  std::string reason;  ///< why not settled, or why nothing could be compared
+  int degree = 0;
+  int refinements = 0;
+  std::size_t triangles = 0;
+  std::size_t unknowns = 0;        ///< before condensation
+  std::size_t truth_unknowns = 0;  ///< of the finer solution, 0 for closed forms
+  double cpu_seconds = 0.0;        ///< CPU time of the solution, report included
+  std::vector<Trial> trials;
+};
+
+/// The tolerance at which everything is asked.
+inline constexpr double calibration_tolerance = 1e-3;
+
+/// Solves random_plate(seed), asking all three quantities at every hole, and
+/// holds every number, those of each unit load, edge samples and ligament
+/// points against a finer solution: of the whole plate (no mirror lines used),
+/// of degree 10 on a mesh with arcs in half as long pieces, half the growth and
+/// joints graded closer. The difference of degrees 9 and 10 is that truth's own
+/// doubt; where it is not below a tenth of every bound, the truth is solved
+/// again on finer meshes, at last with every triangle divided into four. Takes seconds. Never throws: what
+/// fails is a plate that is not settled, with the reason.
+PlateTrial try_random_plate(std::uint64_t seed);
+
+/// One circular or elliptical hole in a plate on whose outline acts the exact
+/// traction of an infinite plate's field, remote stress or pressure in the
+/// hole (Kirsch 1898, Lame 1852, Inglis 1913), so that the truth is a closed
+/// form. Axes ratio 0.1 to 10, any angle and place.
+PlateTrial try_closed_form(std::uint64_t seed);
+
+/// The first `count` seeds whose random plate has at most `most_holes` holes.
+std::vector<std::uint64_t> seeds_with_few_holes(std::size_t count, std::size_t most_holes);
+
+/// Counts over some trials. A ratio is bound over error.
+struct Tally {
+  std::size_t numbers = 0;
+  std::size_t within = 0;
+  std::size_t undecided = 0;
+  double median_ratio = 0.0;
+  double ratio_95 = 0.0;  ///< 95 of 100 ratios are smaller
+
+  /// Share of the numbers that are surely within their bound; 1 for none.
+  double coverage() const;
+};
+Tally tally(const std::vector<const Trial*>& trials);
+
+/// All trials of peaks (not edge samples, not ligament points).
+std::vector<const Trial*> peaks(const std::vector<PlateTrial>& plates);
+
+/// The result as Markdown: coverage and ratios by group, every miss, every
+/// plate that is not settled, unknowns and CPU time.
+std::string calibration_report(const std::vector<PlateTrial>& plates);
+
+/// One plate as lines of text and back, for passing between processes.
+std::string to_lines(const PlateTrial& plate);
+std::vector<PlateTrial> from_lines(std::string_view text);
+
+}  // namespace raiser::validation

@@ -1,0 +1,54 @@
+#include "validation/calibrate/trial.hpp"
+
+#include <algorithm>
+#include <cmath>
+#include <ctime>
+
+#include "mesh/plate/distance.hpp"
+#include "validation/random_plate.hpp"
+
+namespace raiser::validation {
+
+namespace {
+
+double smallest_ligament(const mesh::Plate& plate, std::size_t i) {
+  const mesh::Hole& hole = plate.holes[i];
+  double least = mesh::edge_distance(plate, hole) / mean_diameter(hole);
+  for (std::size_t j = 0; j < plate.holes.size(); ++j)
+    if (j != i) {
+      const double unit = std::min(mean_diameter(hole), mean_diameter(plate.holes[j]));
+      least = std::min(least, mesh::gap(hole, plate.holes[j]) / unit);
+    }
+  return least;
+}
+
+}  // namespace
+
+Trial trial_at(const mesh::Plate& plate, std::size_t hole, Trial::What what) {
+  Trial trial;
+  trial.what = what;
+  trial.hole = hole;
+  trial.shape = mesh::word(plate.holes[hole].shape);
+  trial.ligament = smallest_ligament(plate, hole);
+  return trial;
+}
+
+void hold(Trial& trial, const solver::Estimate& estimate, const Known& truth) {
+  trial.value = estimate.value;
+  trial.bound = estimate.bound;
+  trial.error = std::abs(estimate.value - truth.value);
+  trial.doubt = truth.doubt;
+}
+
+double cpu_seconds() {
+  timespec now{};
+  clock_gettime(CLOCK_PROCESS_CPUTIME_ID, &now);
+  return static_cast<double>(now.tv_sec) + 1e-9 * static_cast<double>(now.tv_nsec);
+}
+
+Verdict verdict(const Trial& trial) {
+  if (trial.error + trial.doubt <= trial.bound) return Verdict::within;
+  return trial.error - trial.doubt > trial.bound ? Verdict::outside : Verdict::undecided;
+}
+
+}  // namespace raiser::validation

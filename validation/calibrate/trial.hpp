@@ -1,0 +1,19 @@
+#pragma once
+
+#include <optional>
+
+#include "validation/calibrate.hpp"
+#include "validation/calibrate/truth.hpp"
+
+namespace raiser::validation {
+
+/// A trial with everything that follows from the plate and the hole.
+Trial trial_at(const mesh::Plate& plate, std::size_t hole, Trial::What what);
+
+/// Holds a value with its bound against what is known of it.
+void hold(Trial& trial, const solver::Estimate& estimate, const Known& truth);
+
+/// CPU seconds of this process so far.
+double cpu_seconds();
+
+}  // namespace raiser::validation
