@@ -2,6 +2,7 @@
 
 #include <gmsh.h>
 
+#include <Eigen/LU>
 #include <algorithm>
 #include <map>
 #include <optional>
@@ -114,6 +115,55 @@ Triangles run_gmsh(const std::vector<DividedLoop>& loops, double growth) {
   }
 }
 
+/// The point after each one on the divided boundary.
+std::vector<int> successors(const std::vector<DividedLoop>& loops) {
+  std::vector<int> next;
+  for (const DividedLoop& loop : loops) {
+    const int first = static_cast<int>(next.size());
+    for (int k = 1; k <= static_cast<int>(loop.size()); ++k)
+      next.push_back(first + k % static_cast<int>(loop.size()));
+  }
+  return next;
+}
+
+/// The triangle's corners in the order of the boundary, if it lies along three
+/// successive points of it without area or with area on the wrong side.
+std::optional<Mesh::Triangle> flat_along_boundary(const Triangles& raw, const Mesh::Triangle& triangle,
+                                                  const std::vector<int>& next) {
+  const auto bounds = static_cast<int>(next.size());
+  if (*std::max_element(triangle.begin(), triangle.end()) >= bounds) return std::nullopt;
+  const int sum = triangle[0] + triangle[1] + triangle[2];
+  for (const int b : triangle) {
+    const int c = next[b];
+    const int a = sum - b - c;
+    if (std::find(triangle.begin(), triangle.end(), c) == triangle.end() || next[a] != b) continue;
+    const Point ab = raw.points[b] - raw.points[a];
+    const Point ac = raw.points[c] - raw.points[a];
+    if (ab.x() * ac.y() - ab.y() * ac.x() < 1e-3 * ac.squaredNorm()) return Mesh::Triangle{a, b, c};
+  }
+  return std::nullopt;
+}
+
+/// Gmsh sometimes lays a flat triangle along the boundary, even one that runs
+/// the wrong way. Exchanges the diagonal of it and of its neighbour across the
+/// longest side.
+void flip_flat_triangles(const std::vector<DividedLoop>& loops, Triangles& raw) {
+  const std::vector<int> next = successors(loops);
+  for (Mesh::Triangle& triangle : raw.triangles) {
+    const auto flat = flat_along_boundary(raw, triangle, next);
+    if (!flat) continue;
+    const auto [a, b, c] = *flat;
+    for (Mesh::Triangle& other : raw.triangles) {
+      const auto has = [&other](int v) { return std::find(other.begin(), other.end(), v) != other.end(); };
+      if (!has(a) || !has(c) || has(b)) continue;
+      const int d = other[0] + other[1] + other[2] - a - c;
+      other = {a, b, d};
+      triangle = {b, c, d};
+      break;
+    }
+  }
+}
+
 /// Finds each boundary piece's triangle side. Nothing when some piece has none:
 /// Gmsh sometimes puts a triangle of no area on a straight run of boundary.
 std::optional<std::vector<BoundarySide>> attach(const std::vector<DividedLoop>& loops,
@@ -165,24 +215,47 @@ std::vector<DividedLoop> split_sides(const std::vector<DividedLoop>& loops, cons
   return result;
 }
 
+/// Whether the triangle's map folds somewhere; a merely thin one does not.
+bool is_folded(const Mesh& mesh, int triangle) {
+  constexpr int n = 8;
+  const auto& corner = mesh.triangles()[triangle];
+  const Point a = mesh.points()[corner[1]] - mesh.points()[corner[0]];
+  const Point b = mesh.points()[corner[2]] - mesh.points()[corner[0]];
+  const double area = a.x() * b.y() - a.y() * b.x();
+  if (!(area > 1e-4 * std::max(a.squaredNorm(), b.squaredNorm()))) return true;
+  for (int i = 0; i <= n; ++i)
+    for (int j = 0; i + j <= n; ++j) {
+      const Point place(static_cast<double>(i) / n, static_cast<double>(j) / n);
+      if (!(mesh.map(triangle, place).jacobian.determinant() > 0.1 * area)) return true;
+    }
+  return false;
+}
+
 }  // namespace
 
 Mesh triangulate(const Region& region, const SizeRule& rule) {
   constexpr int most_attempts = 10;
+  constexpr int attempts_against_thin = 5;
   std::vector<DividedLoop> loops = divide(region, rule);
   double growth = rule.growth;
+  std::optional<Mesh> thin;  // sound, but for triangles that shorter sides only make thinner
   for (int attempt = 0; attempt < most_attempts; ++attempt) {
+    if (thin && attempt >= attempts_against_thin) break;
     Triangles raw = run_gmsh(loops, growth);
+    flip_flat_triangles(loops, raw);
     if (auto boundary = attach(loops, raw.triangles)) {
       Mesh mesh(std::move(raw.points), std::move(raw.triangles), std::move(*boundary));
       std::vector<int> bad = inverted_triangles(mesh);
       if (bad.empty()) return mesh;
+      const auto folded = [&mesh](int t) { return is_folded(mesh, t); };
+      if (!thin && std::none_of(bad.begin(), bad.end(), folded)) thin = mesh;
       // A curved triangle needs shorter sides; a flat one a different mesh.
       std::erase_if(bad, [&](int t) { return !mesh.is_curved(t); });
       loops = split_sides(loops, mesh, bad);
     }
     growth *= 0.85;
   }
+  if (thin) return *std::move(thin);
   throw std::runtime_error("triangulate: some triangles stay inverted or without area");
 }
 

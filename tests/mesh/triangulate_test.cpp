@@ -159,6 +159,26 @@ TEST(Triangulate, ResolvesLigamentsOfTwoHundredthsOfADiameter) {
   }
 }
 
+// Such grading makes triangles so thin that shorter sides only make them
+// thinner: they are taken as they are.
+TEST(Triangulate, TakesThinTrianglesWhereGradingAsksForThem) {
+  const Plate plate{200,
+                    60,
+                    6,
+                    {{"slot", HoleShape::slot, 22, 9, 0, Point(-30, 4), 0.5},
+                     {"bolt", HoleShape::circle, 18, 18, 0, Point(25, -3), 0}}};
+  for (const double refine : {1.0, 0.6, 0.36}) {
+    SizeRule rule;
+    rule.joint = 0.002;
+    rule.refine = {refine, refine};
+    const Mesh mesh = triangulate(trace(plate), rule);
+    const Check found = check(mesh);
+    EXPECT_NEAR(found.area, area(plate), 1e-11 * area(plate));
+    EXPECT_GT(found.least, 0.0);
+    EXPECT_LT(mesh.triangles().size(), 1500u);
+  }
+}
+
 TEST(Triangulate, GivesTheSameMeshAgain) {
   const Plate plate{80, 50, 5, {circle(10, Point(-12, 3)), circle(7, Point(15, -6))}};
   const Mesh one = triangulate(trace(plate), {});
