@@ -186,7 +186,8 @@ TEST(Patch, EdgeStressIsExactToo) {
   const Model probed(mesh, {}, law, 1.0, {{"patch", traction}});
   const std::vector<double> s{-0.7, 0.1, 1.0};
   const Displacements solved = model.solve(5);
-  const EdgeProbe probe(probed, 5, s);
+  const SideTables tables(5, s);
+  const EdgeProbe probe(probed, 5, s, tables);
   for (const mesh::BoundarySide& side : mesh.boundary()) {
     const SideStress seen = probe.at(side, solved);
     for (std::size_t q = 0; q < s.size(); ++q) {
