@@ -10,12 +10,15 @@ double error_bound(std::span<const double> values, double scale) {
   const std::size_t n = values.size();
   if (n < 3) return std::numeric_limits<double>::infinity();
   constexpr double rounding = 2e-12;
-  constexpr double decay = 6.0;  // of an earlier difference, from degree to degree
+  constexpr double decay = 8.0;      // of an earlier difference, from degree to degree
+  constexpr double irregular = 3.0;  // where the last difference is hardly smaller than the one before
+  double bound = 0.0;
+  double share = 1.0;
+  for (std::size_t i = n - 1; i > 0; --i, share /= decay)
+    bound = std::max(bound, share * std::abs(values[i] - values[i - 1]));
   const double last = std::abs(values[n - 1] - values[n - 2]);
   const double before = std::abs(values[n - 2] - values[n - 3]);
-  double bound = std::max(last, before / decay);
-  if (n > 3) bound = std::max(bound, std::abs(values[n - 3] - values[n - 4]) / (decay * decay));
-  if (last > 0.5 * before) bound *= 2.0;
+  if (last > 0.5 * before) bound *= irregular;
   return bound + rounding * std::abs(scale);
 }
 
