@@ -54,8 +54,9 @@ inline constexpr double calibration_tolerance = 1e-3;
 /// of degree 10 on a mesh with arcs in half as long pieces, half the growth and
 /// joints graded closer. The difference of degrees 9 and 10 is that truth's own
 /// doubt; where it is not below a tenth of every bound, the truth is solved
-/// again on finer meshes, at last with every triangle divided into four. Takes seconds. Never throws: what
-/// fails is a plate that is not settled, with the reason.
+/// again on finer meshes, at last with every triangle divided into four. Takes
+/// seconds. Never throws: what fails is a plate that is not settled, or has no
+/// trials, with the reason.
 PlateTrial try_random_plate(std::uint64_t seed);
 
 /// One circular or elliptical hole in a plate on whose outline acts the exact
