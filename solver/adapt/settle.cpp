@@ -85,21 +85,18 @@ double raise_degree(DegreeSequence& sequence, const std::vector<Ask>& asks, doub
   return worst;
 }
 
+/// Why the sequence does not do, for at least one asked number.
 std::string reason_for(const DegreeSequence& sequence, const Plate& plate, const std::vector<Ask>& asks) {
-  std::size_t missed = 0;
-  const Ask* worst = nullptr;
-  for (const Ask& ask : asks) {
-    const double excess = sequence.excess(ask);
-    if (excess <= 1.0) continue;
-    ++missed;
-    if (!worst || excess > sequence.excess(*worst)) worst = &ask;
-  }
+  std::vector<double> excess;
+  for (const Ask& ask : asks) excess.push_back(sequence.excess(ask));
+  const auto missed = std::count_if(excess.begin(), excess.end(), [](double e) { return e > 1.0; });
+  const auto worst = std::max_element(excess.begin(), excess.end());
   return fmt::format(
       "{} of {} asked numbers miss their tolerance after {} refinements and degree {}; the worst, at hole "
       "{}, "
       "has a bound {:.2g} times the tolerance",
       missed, asks.size(), most_refinements, sequence.displacements().back().degree,
-      plate.holes[worst->hole].name, sequence.excess(*worst));
+      plate.holes[asks[worst - excess.begin()].hole].name, *worst);
 }
 
 }  // namespace
