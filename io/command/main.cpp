@@ -7,6 +7,7 @@
 #include <vector>
 
 #include "io/command/run.hpp"
+#include "solver/linear/threads.hpp"
 
 namespace {
 
@@ -35,6 +36,7 @@ bool takes_colour(int descriptor) {
 
 int main(int count, char** arguments) {
   set_signals();
+  raiser::solver::use_one_thread();
   const raiser::io::Terminal terminal{takes_colour(STDOUT_FILENO), ::isatty(STDERR_FILENO) == 1};
   const auto code = raiser::io::run({arguments + 1, arguments + count}, std::cout, std::cerr, terminal);
   if (code == raiser::io::Exit::interrupted) std::_Exit(static_cast<int>(code));
