@@ -51,7 +51,7 @@ inline constexpr double calibration_tolerance = 1e-3;
 /// Solves random_plate(seed), asking all three quantities at every hole, and
 /// holds every number, those of each unit load, edge samples and ligament
 /// points against a finer solution: of the whole plate (no mirror lines used),
-/// of degree 10 on a mesh with arcs in half as long pieces, half the growth and
+/// of degree 10 on a mesh with arcs in half as long pieces, slower growth and
 /// joints graded closer. The difference of degrees 9 and 10 is that truth's own
 /// doubt; where it is not below a tenth of every bound, the truth is solved
 /// again on finer meshes, at last with every triangle divided into four. Takes

@@ -21,17 +21,18 @@ constexpr double far_below = 0.1;  // the truth's doubt over the bound
 /// Meshes for the truth, from cheap to dear: factors on the sizes of the
 /// standard rule, and whether every triangle is divided into four as well.
 struct Finer {
-  double arcs_and_growth;
+  double turn;
+  double growth;
   double joint;
   bool is_divided;
 };
-constexpr std::array finer{Finer{0.5, 0.4, false}, Finer{0.42, 0.3, false}, Finer{0.5, 0.1, true},
-                           Finer{0.35, 0.05, true}};
+constexpr std::array finer{Finer{0.5, 0.75, 0.4, false}, Finer{0.42, 0.6, 0.3, false},
+                           Finer{0.5, 0.75, 0.1, true}, Finer{0.35, 0.5, 0.05, true}};
 
 mesh::Mesh finer_mesh(const mesh::Plate& plate, const Finer& factors) {
   mesh::SizeRule rule;
-  rule.turn *= factors.arcs_and_growth;
-  rule.growth *= factors.arcs_and_growth;
+  rule.turn *= factors.turn;
+  rule.growth *= factors.growth;
   rule.joint *= factors.joint;
   mesh::Mesh mesh = mesh::triangulate(mesh::trace(plate), rule);
   return factors.is_divided ? divided(mesh) : mesh;
