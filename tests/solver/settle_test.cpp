@@ -82,17 +82,18 @@ TEST(Settle, AsksOnlyWhatIsAsked) {
   EXPECT_LE(hole.largest.stress.bound, 1e-6 * peak(hole));
 }
 
+// A little less than rounding allows, so that the bound comes close to it.
 TEST(Settle, SaysWhyAToleranceIsNotMet) {
   const Problem problem{{200, 60, 6, {{"bolt", HoleShape::circle, 18, 18, 0, Point(0, 0), 0}}},
                         {210000, 0.3, PlaneState::stress},
                         {of(Kind::tension, 100)}};
-  const Solution solution = settle(problem, all_at(1e-14, 1));
+  const Solution solution = settle(problem, all_at(1e-12, 1));
   EXPECT_EQ(solution.status, Solution::Status::not_met);
   EXPECT_NE(solution.reason.find("3 of 3 asked numbers"), std::string::npos) << solution.reason;
   EXPECT_NE(solution.reason.find("bolt"), std::string::npos) << solution.reason;
   // The numbers are there all the same, with honest bounds.
   const Estimate largest = solution.combined.holes[0].largest.stress;
-  EXPECT_GT(largest.bound, 1e-14 * largest.value);
+  EXPECT_GT(largest.bound, 1e-12 * largest.value);
   EXPECT_LT(largest.bound, 1e-8 * largest.value);
 }
 

@@ -100,6 +100,22 @@ TEST(Shapes, CountAndOrderAreAsDocumented) {
   }
 }
 
+// l_k(s) is the integral of P_(k-1) from -1 to s: (P_k - P_(k-2)) / (2k - 1).
+TEST(Shapes, OfSidesAreIntegratedLegendrePolynomials) {
+  const std::vector<double> s{-0.8, -0.1, 0.45, 0.9};
+  for (int side = 0; side < 3; ++side) {
+    std::vector<Point> reference;
+    for (const double at : s) reference.push_back(on_side(side, at));
+    const Eigen::MatrixXd value = tabulate(max_degree, reference).value;
+    for (std::size_t q = 0; q < s.size(); ++q)
+      for (int k = 2; k <= max_degree; ++k) {
+        const auto degree = static_cast<unsigned>(k);
+        const double wanted = (std::legendre(degree, s[q]) - std::legendre(degree - 2, s[q])) / (2 * k - 1);
+        EXPECT_NEAR(value(3 + side * (max_degree - 1) + k - 2, static_cast<Eigen::Index>(q)), wanted, 1e-14);
+      }
+  }
+}
+
 // Two triangles that share a side in every position and direction: every
 // global function must have one value on the side, and those that belong to
 // one triangle only must vanish there.
