@@ -54,7 +54,10 @@ double least_tolerance(const std::vector<Ask>& asks) {
 mesh::SizeRule first_rule(const Plate& plate, double tolerance) {
   mesh::SizeRule rule;
   if (tolerance < 5e-5) rule.turn *= 0.8;
-  if (tolerance < 1e-5) rule.joint = tolerance < 1e-7 ? 0.002 : 0.01;
+  if (tolerance < 1e-5) {
+    rule.growth = 0.7;
+    rule.joint = tolerance < 1e-7 ? 0.002 : 0.01;
+  }
   rule.refine.assign(plate.holes.size(), 1.0);
   return rule;
 }
