@@ -7,6 +7,6 @@ top=$(cd "$(dirname "$0")/.." && pwd)
 
 sh "$top/tests/install_packages.sh" build tests
 cd "$top"
-cmake --preset release --log-level=WARNING
+cmake --preset release --log-level=WARNING -D RAISER_TESTS=ON
 cmake --build --preset release -j "$(nproc)"
 ctest --preset release "$@"
