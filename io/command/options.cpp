@@ -84,6 +84,15 @@ void add_cases(CLI::App& command, std::vector<std::string>& cases) {
   command.add_option("CASE", cases)->required();
 }
 
+// The first argument that is no option, when it is no command either.
+std::string no_command(const std::vector<std::string>& arguments) {
+  const auto word = std::find_if(arguments.begin(), arguments.end(),
+                                 [](const std::string& text) { return text.rfind('-', 0) != 0; });
+  const std::string what =
+      word == arguments.end() ? "no command is given" : "\"" + *word + "\" is no command";
+  return what + "; write raiser solve CASE... or raiser check CASE...";
+}
+
 Reply usage_fault(std::string what, const CLI::App& solve, const CLI::App& check) {
   const char* command = solve.parsed() ? "raiser solve" : check.parsed() ? "raiser check" : "raiser";
   what.erase(std::find(what.begin(), what.end(), '\n'), what.end());
@@ -119,6 +128,9 @@ std::variant<Options, Reply> parse(const std::vector<std::string>& arguments) {
     return Reply{std::string(general_help) + exit_codes, Exit::settled};
   } catch (const CLI::CallForVersion&) {
     return Reply{"raiser " + version() + "\n", Exit::settled};
+  } catch (const CLI::RequiredError& error) {
+    const bool named = solve.parsed() || check.parsed();
+    return usage_fault(named ? error.what() : no_command(arguments), solve, check);
   } catch (const CLI::ParseError& error) {
     return usage_fault(error.what(), solve, check);
   }

@@ -4,6 +4,8 @@
 
 #include <algorithm>
 #include <cmath>
+#include <initializer_list>
+#include <utility>
 
 namespace raiser::io {
 namespace {
@@ -18,6 +20,39 @@ std::string narrowed(solver::Estimate estimate, std::size_t width, Text text) {
     estimate.bound *= 10.0;
   }
   return text(estimate);
+}
+
+bool is_one_of(std::string_view word, std::initializer_list<std::string_view> words) {
+  return std::find(words.begin(), words.end(), word) != words.end();
+}
+
+// Whether a line must not break between two words: a number stays with its
+// unit, a value with its bound.
+bool bound_together(std::string_view word, std::string_view next) {
+  const std::size_t end = next.find_last_not_of(",;:.)");
+  next = next.substr(0, end == std::string_view::npos ? 0 : end + 1);
+  if (next == "±" || word == "±") return true;
+  if (word == "N") return next == "mm";
+  const bool number = word.find_first_of("0123456789") == (word.front() == '-' ? 1U : 0U);
+  return number && is_one_of(next, {"mm", "mm^2", "MPa", "N", "s", "deg", "%"});
+}
+
+// The next piece of text that stays on one line, as [begin, end); empty when only blanks are left.
+std::pair<std::size_t, std::size_t> next_piece(std::string_view text, std::size_t at) {
+  const auto word_from = [&](std::size_t from) {
+    const std::size_t begin = std::min(text.find_first_not_of(' ', from), text.size());
+    return std::pair{begin, std::min(text.find(' ', begin), text.size())};
+  };
+  auto word = word_from(at);
+  const std::size_t begin = word.first;
+  while (word.second < text.size()) {
+    const auto next = word_from(word.second);
+    if (!bound_together(text.substr(word.first, word.second - word.first),
+                        text.substr(next.first, next.second - next.first)))
+      break;
+    word = next;
+  }
+  return {begin, word.second};
 }
 
 }  // namespace
@@ -61,10 +96,10 @@ std::string wrapped(std::string_view text, std::string_view first, std::size_t i
   bool empty = true;
   std::size_t at = 0;
   while (at < text.size()) {
-    const std::size_t begin = text.find_first_not_of(' ', at);
-    if (begin == std::string_view::npos) break;
-    at = std::min(text.find(' ', begin), text.size());
-    const std::string_view word = text.substr(begin, at - begin);
+    const auto [begin, end] = next_piece(text, at);
+    if (begin == end) break;
+    at = end;
+    const std::string_view word = text.substr(begin, end - begin);
     const std::size_t gap = empty ? 0 : 1;
     if (!empty && columns(line) + gap + columns(word) > page_width) {
       lines += line + "\n";
@@ -102,7 +137,9 @@ std::string fitted_value(solver::Estimate estimate, std::size_t width) {
 
 std::string brief(double value, int significant) {
   if (!std::isfinite(value)) return "undefined";
-  return fmt::format("{:.{}g}", value == 0.0 ? 0.0 : value, significant);
+  const std::string text = fmt::format("{:.{}g}", value == 0.0 ? 0.0 : value, significant);
+  const bool written_out = text.find("e+") != std::string::npos && std::abs(value) < 1e9;
+  return written_out ? fmt::format("{:.0f}", value) : text;
 }
 
 std::string percent(double fraction) { return brief(100.0 * fraction, 2) + " %"; }

@@ -27,7 +27,8 @@ std::string hole_phrase(std::string_view name);
 
 /// Broken at blanks into lines of at most `page_width` columns, each ended by a
 /// newline. The first line begins with `first`, the others with as many blanks
-/// as `indent` says. A word that is too long gets a line of its own.
+/// as `indent` says. A word that is too long gets a line of its own; a number is
+/// not parted from its unit, nor a value from its bound.
 std::string wrapped(std::string_view text, std::string_view first = "", std::size_t indent = 0);
 
 /// "341.16 ± 0.03"; "341 (no bound)" when the bound is not finite, "undefined"
@@ -46,6 +47,7 @@ std::string fitted(solver::Estimate estimate, std::size_t width);
 std::string fitted_value(solver::Estimate estimate, std::size_t width);
 
 /// A number that has no bound, with up to `significant` digits, no trailing zeros.
+/// Whole numbers below 1e9 are written out: 200000, not 2e+05.
 std::string brief(double value, int significant = 6);
 
 /// A fraction as a percentage with two significant digits, e.g. "0.012 %".

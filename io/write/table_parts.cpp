@@ -71,7 +71,7 @@ std::string concentration_line(std::string_view name, const solver::Concentratio
 std::string section_line(const solver::Section& section) {
   const bool across = section.direction == solver::Section::Direction::across;
   return wrapped(
-      fmt::format("gross {} mm2, net {} mm2; normal force {} N, shear force {} N, moment {} N mm",
+      fmt::format("gross {} mm^2, net {} mm^2; normal force {} N, shear force {} N, moment {} N mm",
                   brief(section.gross_area), brief(section.net_area), brief(section.normal_force, 5),
                   brief(section.shear_force, 5), brief(section.moment, 5)),
       fmt::format("  section {} = {} mm: ", across ? "x" : "y", brief(section.station)), 13);

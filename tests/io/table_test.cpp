@@ -202,6 +202,23 @@ TEST(Layout, WrapsAtThePage) {
   EXPECT_EQ(wrapped("xxx " + std::string(77, 'y')), "xxx\n" + std::string(77, 'y') + "\n");
 }
 
+TEST(Layout, KeepsNumbersWithTheirUnitsAndBounds) {
+  const std::string most(70, 'a');
+  EXPECT_EQ(wrapped(most + " with 0.25 s"), most + " with\n0.25 s\n");
+  EXPECT_EQ(wrapped(most + " x -2.5 N mm; z"), most + " x\n-2.5 N mm; z\n");
+  EXPECT_EQ(wrapped(most + " 3.61 ± 0.02 here"), most + "\n3.61 ± 0.02 here\n");
+  EXPECT_EQ(wrapped(most + " in 12 parts"), most + " in 12\nparts\n") << "no unit, no tie";
+}
+
+TEST(Layout, WritesWholeNumbersOut) {
+  EXPECT_EQ(brief(-200000, 5), "-200000");
+  EXPECT_EQ(brief(99999.7, 5), "100000");
+  EXPECT_EQ(brief(36000, 5), "36000");
+  EXPECT_EQ(brief(2e9, 5), "2e+09");
+  EXPECT_EQ(brief(1.5e-13, 2), "1.5e-13");
+  EXPECT_EQ(percent(2.352), "235 %");
+}
+
 TEST(Layout, ShortensByCharacters) {
   EXPECT_EQ(hole_phrase("bolt"), "hole bolt");
   EXPECT_EQ(hole_phrase("hole 2"), "hole 2");
