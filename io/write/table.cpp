@@ -79,12 +79,15 @@ std::string yield_remark(const Case& input, const solver::LoadFindings& findings
   const solver::Estimate& largest = worst->von_mises.stress;
   const std::string hole = hole_phrase(input.problem.plate.holes.at(worst->hole).name);
   if (largest.value + largest.bound < *input.yield_strength) {
-    return fmt::format("the largest von Mises stress is {} of the yield strength ({} MPa), at {}.",
-                       percent(largest.value / *input.yield_strength), brief(*input.yield_strength), hole);
+    return fmt::format(
+        "the largest von Mises stress on the holes' edges is {} of the yield strength ({} MPa), at {}.",
+        percent(largest.value / *input.yield_strength), brief(*input.yield_strength), hole);
   }
   return fmt::format(
-      "elastic peak above yield is fictitious: the largest von Mises stress, {} MPa at {}, {} the yield "
-      "strength of {} MPa. The material yields there and sheds load; take the peak as a measure for fatigue "
+      "elastic peak above yield is fictitious: the largest von Mises stress on the holes' edges, {} MPa at "
+      "{}, "
+      "{} the yield strength of {} MPa. The material yields there and sheds load; take the peak as a measure "
+      "for fatigue "
       "or for "
       "an estimate of local plasticity, not as a stress that occurs.",
       solver::digits(largest), hole,

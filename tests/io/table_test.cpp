@@ -137,6 +137,7 @@ TEST(Table, RemarksOnYield) {
   auto& findings = result.solution.combined;
   findings.holes[0].von_mises.stress = {119.0, 0.5};
   EXPECT_TRUE(holds(yield_remark(result.input, findings), "99 % of the yield strength"));
+  EXPECT_TRUE(holds(yield_remark(result.input, findings), "on the holes' edges"));
   findings.holes[0].von_mises.stress = {119.8, 0.5};
   EXPECT_TRUE(holds(yield_remark(result.input, findings), "may exceed the yield strength of 120 MPa"));
   findings.holes[0].von_mises.stress = {150.0, 0.5};
