@@ -116,10 +116,21 @@ std::optional<PartialPlate> readable_plate(const Parts& parts) {
 }
 
 void check_geometry(const Parts& parts, const PartialPlate& partial, Report& report) {
+  constexpr std::size_t told_in_full = 3;  // conflicts of one hole with others
+  std::vector<std::size_t> conflicts(partial.plate.holes.size(), 0);
   for (const mesh::PlateFault& fault : mesh::faults(partial.plate)) {
     const bool of_hole = fault.hole != mesh::PlateFault::none;
+    const bool of_pair = of_hole && fault.other != mesh::PlateFault::none;
+    if (of_pair && ++conflicts[fault.hole] > told_in_full) continue;
     const Position at = of_hole ? parts.holes[partial.index[fault.hole]].at : parts.plate_table.node->at;
     add_fault(report, Kind::geometry, at, of_hole ? "hole" : "plate", fault.what, fault.cure);
+  }
+  for (std::size_t i = 0; i < conflicts.size(); ++i) {
+    if (conflicts[i] <= told_in_full) continue;
+    add_fault(report, Kind::geometry, parts.holes[partial.index[i]].at, "hole",
+              fmt::format("hole '{}' lies in the way of {} later holes more", partial.plate.holes[i].name,
+                          conflicts[i] - told_in_full),
+              "move it, or check the positions of all of them");
   }
 }
 
@@ -166,6 +177,7 @@ Diagnostic file_fault(const std::string& name, std::string what, std::string cur
 /// Why the file cannot be read as a case at all, or nothing.
 std::optional<Diagnostic> unreadable(const std::filesystem::path& file) {
   const std::string name = file.string();
+  if (name.empty()) return file_fault("\"\"", "the file's name is empty", "name a case file");
   std::error_code error;
   const auto status = std::filesystem::status(file, error);
   if (status.type() == std::filesystem::file_type::not_found) {
@@ -173,6 +185,10 @@ std::optional<Diagnostic> unreadable(const std::filesystem::path& file) {
   }
   if (std::filesystem::is_directory(status)) {
     return file_fault(name, "this is a folder", "name a case file in it");
+  }
+  if (error) {
+    return file_fault(name, fmt::format("the file cannot be reached: {}", error.message()),
+                      "check the name, its links and the permissions of its folders");
   }
   if (!std::filesystem::is_regular_file(status)) {
     return file_fault(name, "this is not a regular file", "name a case file on disk");

@@ -16,8 +16,8 @@ namespace {
 // One name for one place, whatever way it is written.
 std::string place(const std::filesystem::path& path) {
   std::error_code error;
-  const std::filesystem::path found =
-      std::filesystem::weakly_canonical(std::filesystem::absolute(path), error);
+  std::filesystem::path found = std::filesystem::absolute(path, error);
+  if (!error) found = std::filesystem::weakly_canonical(found, error);
   return error ? path.lexically_normal().string() : found.string();
 }
 
@@ -33,12 +33,22 @@ const std::vector<std::string>& result_suffixes() {
   return suffixes;
 }
 
+std::filesystem::path summary_file(const std::vector<std::filesystem::path>& cases,
+                                   const std::filesystem::path& folder) {
+  return (folder.empty() ? cases.front().parent_path() : folder) / "summary.csv";
+}
+
 std::vector<std::string> clashes(const std::vector<std::filesystem::path>& cases,
                                  const std::filesystem::path& folder) {
   std::vector<std::string> found;
   std::map<std::string, std::filesystem::path> owners;
   std::set<std::string> inputs;
   for (const auto& file : cases) inputs.insert(place(file));
+  if (cases.size() > 1 && inputs.count(place(summary_file(cases, folder))) != 0) {
+    found.push_back(
+        fmt::format("the summary would overwrite the case file {}; rename that case to end in .toml",
+                    summary_file(cases, folder).string()));
+  }
   for (const auto& file : cases) {
     const Target target = target_of(file, folder);
     const std::string base = place(target.folder / target.stem);

@@ -21,6 +21,11 @@ Target target_of(const std::filesystem::path& case_file, const std::filesystem::
 /// What is added to the stem: ".vtu", ".json", "-edge.csv", …
 const std::vector<std::string>& result_suffixes();
 
+/// The table of several cases: in `folder`, or beside the first case when that
+/// is empty. Requires at least one case.
+std::filesystem::path summary_file(const std::vector<std::filesystem::path>& cases,
+                                   const std::filesystem::path& folder);
+
 /// Why the results of these cases would overwrite each other or a case file;
 /// one line for each clash, empty when none would.
 std::vector<std::string> clashes(const std::vector<std::filesystem::path>& cases,

@@ -142,6 +142,10 @@ bool solve_case(Session& session, const std::filesystem::path& file, const std::
                      file.string()));
   } catch (const std::exception& error) {
     fail(run, Exit::not_met, "not solved", fmt::format("{}: not solved: {}", file.string(), error.what()));
+  } catch (...) {  // a library may throw anything; no case may stop the others
+    fail(run, Exit::not_met, "not solved",
+         fmt::format("{}: not solved: a library failed without a reason; change a size or an angle a little",
+                     file.string()));
   }
   session.progress.wipe();
   return true;
@@ -149,11 +153,10 @@ bool solve_case(Session& session, const std::filesystem::path& file, const std::
 
 Exit write_summary(const Session& session, const std::vector<Outcome>& outcomes) {
   if (!session.options.files) return Exit::settled;
-  const std::filesystem::path folder =
-      session.options.folder.value_or(session.options.cases.front().parent_path());
+  const std::filesystem::path file = summary_file(session.options.cases, session.options.folder.value_or(""));
   try {
-    Staging staging(folder);
-    staging.add("summary.csv", summary_csv(outcomes));
+    Staging staging(file.parent_path());
+    staging.add(file.filename().string(), summary_csv(outcomes));
     const auto files = staging.publish();
     if (!session.options.quiet) session.err << "Wrote " << plain(files.front().string()) << "\n";
   } catch (const WriteError& error) {

@@ -45,6 +45,20 @@ int write_all(int descriptor, std::string_view bytes) {
   return 0;
 }
 
+// The folder and those above it that do not exist, innermost first.
+std::vector<std::filesystem::path> missing(std::filesystem::path folder) {
+  std::vector<std::filesystem::path> found;
+  std::error_code ignored;
+  for (; !folder.empty() && !std::filesystem::exists(folder, ignored); folder = folder.parent_path())
+    found.push_back(folder);
+  return found;
+}
+
+// Folders that others have put something into in the meantime stay.
+void remove_empty(const std::vector<std::filesystem::path>& folders) {
+  for (const auto& folder : folders) ::rmdir(folder.c_str());
+}
+
 }  // namespace
 
 WriteError::WriteError(const std::filesystem::path& file, const std::string& why)
@@ -65,17 +79,22 @@ void write_file(const std::filesystem::path& file, std::string_view bytes) {
 
 Staging::Staging(std::filesystem::path folder) : folder_(std::move(folder)) {
   if (folder_.empty()) folder_ = ".";
+  made_ = missing(folder_);
   std::error_code error;
   std::filesystem::create_directories(folder_, error);
-  if (error) throw WriteError(folder_, reason(error.value()));
   std::string pattern = (folder_ / ".raiser-XXXXXX").string();
-  if (::mkdtemp(pattern.data()) == nullptr) throw WriteError(folder_, reason(errno));
+  const int fault = error ? error.value() : ::mkdtemp(pattern.data()) == nullptr ? errno : 0;
+  if (fault != 0) {
+    remove_empty(made_);
+    throw WriteError(folder_, reason(fault));
+  }
   hidden_ = pattern;
 }
 
 Staging::~Staging() {
   std::error_code ignored;
   std::filesystem::remove_all(hidden_, ignored);
+  remove_empty(made_);
 }
 
 void Staging::add(const std::string& name, const std::function<void(const std::filesystem::path&)>& write) {
@@ -103,6 +122,7 @@ std::vector<std::filesystem::path> Staging::publish() {
     published.push_back(folder_ == "." ? std::filesystem::path(name) : target);
   }
   names_.clear();
+  made_.clear();
   return published;
 }
 

@@ -27,7 +27,8 @@ void write_file(const std::filesystem::path& file, std::string_view bytes);
 
 /// A set of files that appear in a folder together or not at all: each is
 /// written inside a hidden folder and moved into place by publish().
-/// Whatever has not been published is removed with the object.
+/// Whatever has not been published is removed with the object, the folders that
+/// were made for it too.
 class Staging {
  public:
   /// Creates `folder` where it is missing. Throws WriteError.
@@ -48,6 +49,7 @@ class Staging {
  private:
   std::filesystem::path folder_;
   std::filesystem::path hidden_;
+  std::vector<std::filesystem::path> made_;  ///< innermost first; emptied by publish()
   std::vector<std::string> names_;
 };
 

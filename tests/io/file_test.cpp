@@ -115,6 +115,18 @@ TEST_F(Files, AppearNotAtAllWhenOneFails) {
   EXPECT_EQ(entries(), 0U);
 }
 
+TEST_F(Files, LeaveNoFolderThatWasMadeInVain) {
+  const fs::path made = folder / "made";
+  { Staging staging(made / "on the way"); }
+  EXPECT_FALSE(fs::exists(made));
+  fs::create_directory(made);
+  { Staging staging(made / "on the way"); }
+  EXPECT_TRUE(fs::exists(made)) << "was there before";
+  EXPECT_FALSE(fs::exists(made / "on the way"));
+  EXPECT_NE(fault([&] { Staging staging(made / "a" / std::string(300, 'x')); }), "");
+  EXPECT_FALSE(fs::exists(made / "a")) << "made before the one that cannot be";
+}
+
 TEST_F(Files, AppearNotAtAllWhenAFolderIsInTheWay) {
   fs::create_directory(folder / "b.txt");
   {

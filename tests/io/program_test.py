@@ -104,6 +104,14 @@ class ExitCodes(Program):
         self.assertEqual(self.names(), ["bad.toml"])
         self.expect(3, self.run_it("solve", "missing.toml"))
         self.expect(3, self.run_it("check", "missing.toml"))
+        self.expect(3, self.run_it("solve", ""))
+        (self.folder / "ring.toml").symlink_to("ring.toml")
+        os.mkfifo(self.folder / "pipe.toml")
+        for name, reason in [("ring.toml", "symbolic links"), ("pipe.toml", "not a regular file"),
+                             ("x" * 300 + ".toml", "too long")]:
+            result = self.run_it("solve", name)
+            self.expect(3, result)
+            self.assertIn(reason, result.stderr)
 
     def test_illegal(self):
         for text in [OUTSIDE, UNBALANCED]:
@@ -111,6 +119,17 @@ class ExitCodes(Program):
             for command in ["solve", "check"]:
                 self.expect(4, self.run_it(command, name))
             self.assertEqual(self.names(), ["illegal.toml"])
+
+    def test_many_conflicts_are_counted_not_listed(self):
+        head, hole, tail = GOOD.partition('[[hole]]\nname = "pin"\nshape = "circle"\ndiameter = "10 mm"\n')
+        self.assertTrue(hole)
+        pile = head + hole.replace('name = "pin"\n', "") * 50 + tail
+        result = self.run_it("check", self.case("pile.toml", pile))
+        self.expect(4, result)
+        lines = result.stderr.splitlines()
+        # Hole i conflicts with 50 - i later ones: three in full, then a count.
+        self.assertEqual(len(lines), 46 * 4 + 3 + 2 + 1)
+        self.assertIn("pile.toml:10:1: hole: hole 'hole 1' lies in the way of 46 later holes more", lines[3])
 
     def test_not_met(self):
         result = self.run_it("solve", self.case("fine.toml", TOO_FINE), "--json")
@@ -185,6 +204,12 @@ class ManyCases(Program):
         self.expect(2, result)
         self.assertIn("overwrite", result.stderr)
         self.assertEqual((self.folder / "a.json").read_text(), GOOD)
+        self.case("summary.csv", GOOD)
+        result = self.run_it("solve", "a.toml", "summary.csv")
+        self.expect(2, result)
+        self.assertIn("the summary would overwrite the case file summary.csv", result.stderr)
+        self.assertEqual((self.folder / "summary.csv").read_text(), GOOD)
+        self.expect(0, self.run_it("solve", "a.toml", "summary.csv", "--out", "x"))
 
 
 class Streams(Program):
@@ -266,7 +291,7 @@ class Failures(Program):
         self.assertEqual(result.stderr.count("cannot write"), 1, result.stderr)
         self.assertIn("strap.vtu", result.stderr)
         self.assertIn("make room", result.stderr)
-        self.assertEqual(self.names("results"), [])
+        self.assertEqual(self.names(), ["strap.toml"])
 
     def test_full_file_system_keeps_older_results(self):
         disk = self.folder / "disk"
