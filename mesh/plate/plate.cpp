@@ -23,6 +23,13 @@ constexpr double thinnest_ligament = 1e-4;
 
 // Distances below this part of the sizes involved are rounding: a touch.
 constexpr double rounding = 1e-12;
+// What the mesh can resolve: smallest radius on a hole's edge over the plate's
+// longer side, corner radius and straight run over a side, and the plate's
+// longer over its shorter side.
+constexpr double smallest_radius = 1e-8;
+constexpr double smallest_corner = 1e-3;
+constexpr double shortest_straight = 1e-6;
+constexpr double longest_plate = 2000.0;
 
 bool positive(double x) { return std::isfinite(x) && x > 0.0; }
 
@@ -41,6 +48,51 @@ void check_plate_sizes(const Plate& plate, Faults& faults) {
       faults.push_back({PlateFault::none, PlateFault::none,
                         fmt::format("the plate's {} is {:.10g} mm", name, size),
                         "give a finite size greater than 0"});
+}
+
+void check_slenderness(const Plate& plate, Faults& faults) {
+  const double ratio = std::max(plate.length / plate.width, plate.width / plate.length);
+  if (positive(plate.length) && positive(plate.width) && ratio > longest_plate)
+    faults.push_back(
+        {PlateFault::none, PlateFault::none,
+         fmt::format("the plate's longer side is {:.4g} times its shorter one, more than {:.4g}", ratio,
+                     longest_plate),
+         "shorten it: a few widths beyond the holes the stress no longer depends on the length"});
+}
+
+/// Sizes that are legal one by one, but too far apart to mesh together.
+void check_resolution(const Plate& plate, std::size_t i, Faults& faults) {
+  const Hole& hole = plate.holes[i];
+  const std::string who = label(plate, i);
+  const auto report = [&](std::string what, std::string cure) {
+    faults.push_back({i, PlateFault::none, std::move(what), std::move(cure)});
+  };
+  double radius = smaller_size(hole) / 2;
+  double straight = 0.0;  // the shorter of its straight runs that are there
+  if (hole.shape == HoleShape::ellipse) {
+    const double larger = std::max(hole.length, hole.width) / 2;
+    radius *= radius / larger;
+  } else if (hole.shape == HoleShape::slot) {
+    straight = hole.length - hole.width;
+  } else if (hole.shape == HoleShape::rounded_rectangle) {
+    radius = hole.corner_radius;
+    if (radius < smallest_corner * smaller_size(hole))
+      report(fmt::format("{}: its corner radius {:.10g} mm is less than {:g} of its smaller side", who,
+                         radius, smallest_corner),
+             fmt::format("give at least {:.4g} mm; a sharper corner has no peak worth the name",
+                         smallest_corner * smaller_size(hole)));
+    const double shorter = smaller_size(hole) - 2 * radius;
+    straight = shorter > rounding * hole.length ? shorter : std::max(hole.length, hole.width) - 2 * radius;
+  }
+  if (straight > rounding * hole.length && straight < shortest_straight * hole.length)
+    report(fmt::format("{}: a straight run of {:.3g} mm is too short to resolve", who, straight),
+           fmt::format("make it 0 by equal sizes, or at least {:.3g} mm", shortest_straight * hole.length));
+  const double side = std::max(plate.length, plate.width);
+  if (std::isfinite(side) && radius < smallest_radius * side)
+    report(fmt::format("{}: the smallest radius on its edge, {:.3g} mm, is less than {:g} of the plate's "
+                       "longer side",
+                       who, radius, smallest_radius),
+           "give a larger radius or a smaller plate");
 }
 
 void check_shape(const Plate& plate, std::size_t i, Faults& faults) {
@@ -231,11 +283,13 @@ std::string_view word(HoleShape shape) {
 std::vector<PlateFault> faults(const Plate& plate) {
   Faults result;
   check_plate_sizes(plate, result);
+  check_slenderness(plate, result);
   const bool outline = positive(plate.length) && positive(plate.width);
   std::vector<std::size_t> sound;
   for (std::size_t i = 0; i < plate.holes.size(); ++i) {
     if (!check_hole(plate, i, result)) continue;
     sound.push_back(i);
+    check_resolution(plate, i, result);
     if (outline) check_edges(plate, i, result);
   }
   check_names(plate, result);

@@ -51,7 +51,8 @@ struct PlateFault {
 
 /// Every reason why the plate cannot be analysed: sizes that are not positive
 /// or not finite, a hole outside, touching or crossing the outline, holes that
-/// overlap, touch or lie inside one another, ligaments too thin to resolve.
+/// overlap, touch or lie inside one another, ligaments, corners and roots too
+/// small beside the rest to resolve, a plate longer than 2,000 times its width.
 /// Empty for a legal plate.
 std::vector<PlateFault> faults(const Plate& plate);
 

@@ -3,7 +3,6 @@
 #include <gtest/gtest.h>
 
 #include <Eigen/Geometry>
-#include <chrono>
 #include <cmath>
 #include <limits>
 #include <numbers>
@@ -317,19 +316,35 @@ TEST(Faults, SayTheShiftThatCures) {
   EXPECT_TRUE(faults(plate).empty());
 }
 
-TEST(Faults, OfAThousandHolesTakeMilliseconds) {
+TEST(Faults, FindTheOneAmongAThousandHoles) {
   Plate plate{1000, 1000, 5, {}};
   std::mt19937 random(5);
   for (int i = 0; i < 1000; ++i)
     plate.holes.push_back({std::to_string(i), HoleShape::ellipse, 33.0, 12.0, 0.0,
                            Point(-480 + 30.0 * (i % 32), -480 + 30.0 * (i / 32)),
                            0.7 + 0.01 * double(random() % 20)});
-  const auto start = std::chrono::steady_clock::now();
+  EXPECT_TRUE(faults(plate).empty());
+  plate.holes[517].length = 60.0;
   const auto found = faults(plate);
-  const std::chrono::duration<double> seconds = std::chrono::steady_clock::now() - start;
-  EXPECT_TRUE(found.empty()) << found.size() << " faults, first: " << found.front().what;
-  EXPECT_LT(seconds.count(), 0.5);  // 10 ms where it was written; sanitizers and shared machines are slower
-  RecordProperty("milliseconds", static_cast<int>(1e3 * seconds.count()));
+  ASSERT_FALSE(found.empty());
+  for (const PlateFault& fault : found) EXPECT_TRUE(fault.hole == 517 || fault.other == 517) << fault.what;
+}
+
+TEST(Faults, SizesTooFarApartToResolve) {
+  const auto rectangle = [](double radius) {
+    return Hole{"", HoleShape::rounded_rectangle, 10, 10, radius, Point(0, 0), 0.2};
+  };
+  expect_one(with({rectangle(0.0099)}), "corner radius 0.0099 mm is less than 0.001 of its smaller side");
+  EXPECT_TRUE(faults(with({rectangle(0.0101)})).empty());
+  expect_one(with({rectangle(4.9999999)}), "straight run of 2e-07 mm is too short");
+  EXPECT_TRUE(faults(with({rectangle(5)})).empty());
+  EXPECT_TRUE(faults(with({rectangle(4.9999)})).empty());
+  expect_one(with({{"", HoleShape::slot, 10.000001, 10, 0, Point(0, 0), 0}}), "straight run of 1e-06 mm");
+  expect_one(with({{"", HoleShape::ellipse, 10, 0.001, 0, Point(0, 0), 0}}),
+             "smallest radius on its edge, 5e-08 mm");
+  EXPECT_TRUE(faults(with({{"", HoleShape::ellipse, 10, 0.01, 0, Point(0, 0), 0}})).empty());
+  expect_one({10001, 5, 1, {circle(1, Point(0, 0))}}, "longer side is 2000 times its shorter one");
+  EXPECT_TRUE(faults(Plate{10000, 5, 1, {circle(1, Point(0, 0))}}).empty());
 }
 
 }  // namespace
