@@ -256,7 +256,10 @@ Mesh triangulate(const Region& region, const SizeRule& rule) {
     growth *= 0.85;
   }
   if (thin) return *std::move(thin);
-  throw std::runtime_error("triangulate: some triangles stay inverted or without area");
+  throw std::runtime_error(
+      "triangulate: some triangles stay inverted or without area; change the smallest radius, corner or "
+      "ligament "
+      "a little and try again");
 }
 
 }  // namespace raiser::mesh
