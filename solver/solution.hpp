@@ -98,10 +98,12 @@ struct PlateChecks {
   double far_station = 0.0;           ///< mm, the section x = const where the nominal stress was recovered
   double far_applied = 0.0;           ///< MPa, mean sigma_xx there from the loads
   double far_recovered = 0.0;         ///< MPa, mean sigma_xx there, integrated from the solution
-  double far_scatter = 0.0;    ///< largest departure of sigma_xx from the linear nominal distribution there,
-                               ///< over the largest nominal stress
-  double strain_energy = 0.0;  ///< N mm
-  double external_work = 0.0;  ///< N mm, half the work of the loads
+  double far_scatter = 0.0;  ///< largest departure of sigma_xx from the linear nominal distribution there,
+                             ///< over the largest nominal stress
+  double outer_von_mises = 0.0;       ///< MPa, the largest on the plate's own edges under all loads; no bound
+  Point outer_point = Point::Zero();  ///< mm, where
+  double strain_energy = 0.0;         ///< N mm
+  double external_work = 0.0;         ///< N mm, half the work of the loads
 };
 
 /// The stress along one ligament: from the hole's edge to the next free edge

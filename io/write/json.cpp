@@ -189,6 +189,8 @@ Json checks(const solver::PlateChecks& c) {
             {"applied_mean_stress", quantity(c.far_applied, "MPa")},
             {"recovered_mean_stress", quantity(c.far_recovered, "MPa")},
             {"scatter", quantity(c.far_scatter, "1")}}},
+          {"outer_edges",
+           {{"largest_von_mises", quantity(c.outer_von_mises, "MPa")}, {"at", position(c.outer_point)}}},
           {"strain_energy", quantity(c.strain_energy, "N mm")},
           {"external_work", quantity(c.external_work, "N mm")}};
 }

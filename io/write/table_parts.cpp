@@ -194,6 +194,17 @@ std::string checks_part(const solver::Solution& solution) {
                   brief(checks.far_station, 4), brief(checks.far_applied), brief(recovered),
                   percent(checks.far_scatter)),
       "  ", 4);
+  double on_holes = 0.0;
+  for (const solver::HoleFindings& hole : solution.combined.holes)
+    on_holes = std::max(on_holes, hole.von_mises.stress.value);
+  if (checks.outer_von_mises > on_holes)
+    text += wrapped(
+        fmt::format(
+            "ATTENTION: the plate's own edge carries more than any hole: von Mises {} MPa at ({}, {}) mm "
+            "(no bound)",
+            brief(checks.outer_von_mises, 4), brief(checks.outer_point.x(), 5),
+            brief(checks.outer_point.y(), 5)),
+        "  ", 4);
   text += wrapped(fmt::format("equilibrium residual {}, reactions {} of the applied force",
                               brief(checks.equilibrium_residual, 2), brief(checks.reaction, 2)),
                   "  ", 4);

@@ -81,6 +81,31 @@ double far_station(const Plate& plate) {
   return best;
 }
 
+/// The largest von Mises stress on the plate's own edges, so that a stress
+/// above those on the holes does not go unsaid.
+void check_outer_edges(const Model& model, const Displacements& displacements, PlateChecks& checks) {
+  const EdgeProbe probe(model, displacements.degree, search_points(),
+                        sides_at_search_points(displacements.degree));
+  for (const mesh::BoundarySide& side : model.mesh().boundary()) {
+    const Owner::Kind kind = side.curve.owner.kind;
+    if (kind == Owner::Kind::hole || kind == Owner::Kind::mirror_x || kind == Owner::Kind::mirror_y) continue;
+    const SideStress stress = probe.at(side, displacements);
+    for (const Image& image : model.images()) {
+      Eigen::VectorXd weight(static_cast<Eigen::Index>(model.loads().size()));
+      for (std::size_t l = 0; l < model.loads().size(); ++l) weight[l] = model.parity(l, image);
+      for (Eigen::Index q = 0; q < stress.tangential.rows(); ++q) {
+        const double tangential = stress.tangential.row(q).dot(weight);
+        const double normal = stress.normal.row(q).dot(weight);
+        const double size = von_mises({tangential, normal, stress.shear.row(q).dot(weight),
+                                       model.material().through_thickness(tangential, normal)});
+        if (size <= checks.outer_von_mises) continue;
+        checks.outer_von_mises = size;
+        checks.outer_point = image.apply(side.curve.at(side.parameter(search_points()[q])));
+      }
+    }
+  }
+}
+
 void check_far_field(const Problem& problem, Solution& solution) {
   PlateChecks& checks = solution.checks;
   checks.far_station = far_station(problem.plate);
@@ -125,6 +150,7 @@ Solution report(const Problem& problem, const DegreeSequence& sequence) {
   solution.checks.reaction = balance.reaction;
   solution.checks.strain_energy = balance.strain_energy;
   solution.checks.external_work = balance.external_work;
+  check_outer_edges(model, last, solution.checks);
   check_far_field(problem, solution);
   return solution;
 }

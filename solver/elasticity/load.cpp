@@ -23,6 +23,25 @@ bool finite(const Load& load) { return std::isfinite(load.stress) && std::isfini
 // -0 prints as 0.
 double plain(double x) { return x + 0.0; }
 
+bool pulls(const std::vector<Load>& loads, Owner::Kind edge) {
+  return std::any_of(loads.begin(), loads.end(), [edge](const Load& load) {
+    return load.kind == Load::Kind::edge && load.edge == edge && load.stress != 0.0;
+  });
+}
+
+/// Moves normal stresses that would only take a load back to the edge across
+/// the plate, where the opposite sign gives the same force.
+std::vector<Load> across_from(std::vector<Load> cure, const std::vector<Load>& loads) {
+  for (Load& load : cure) {
+    if (load.stress == 0.0 || !pulls(loads, load.edge)) continue;
+    const auto other = load.edge == Owner::Kind::left ? Owner::Kind::right : Owner::Kind::top;
+    if (pulls(loads, other)) continue;
+    load.edge = other;
+    load.stress = -load.stress;
+  }
+  return cure;
+}
+
 std::string describe_cure(const std::vector<Load>& cure) {
   std::string text;
   for (const Load& load : cure) {
@@ -117,7 +136,7 @@ std::optional<LoadFault> imbalance(const Plate& plate, const std::vector<Load>& 
       "mm "
       "about the plate's centre (anticlockwise positive)",
       names, plain(fault.by.force.x()), plain(fault.by.force.y()), plain(fault.by.moment));
-  fault.cure = describe_cure(balancing(plate, fault.by));
+  fault.cure = describe_cure(across_from(balancing(plate, fault.by), loads));
   return fault;
 }
 

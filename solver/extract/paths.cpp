@@ -65,7 +65,7 @@ Ligament follow(const Plate& plate, std::size_t hole, const Section& section, co
     for (const Field& field : fields)
       if (const auto value = field.at(x)) {
         values.push_back({value->stress.xx, value->stress.yy, value->stress.xy});
-        point = {value->point, distance, value->stress, 0.0};
+        point = {value->point, k == 0 ? 0.0 : distance, value->stress, 0.0};
       }
     if (values.empty()) continue;
     const double size = von_mises(point.stress);

@@ -297,5 +297,20 @@ TEST(NominalState, AddsLoadsAndCountsOnlyTheHolesOwnPressure) {
   EXPECT_THROW(nominal_state(plate, {}, 4), std::out_of_range);
 }
 
+TEST(Imbalance, CureDoesNotTakeTheLoadBack) {
+  const Plate plate{200, 100, 5, {}};
+  Load pull;
+  pull.kind = Load::Kind::edge;
+  pull.edge = Owner::Kind::left;
+  pull.stress = 10;
+  const auto fault = imbalance(plate, {pull});
+  ASSERT_TRUE(fault);
+  EXPECT_NE(fault->cure.find("a normal stress of 10 MPa on the right edge"), std::string::npos)
+      << fault->cure;
+  Load push = pull;
+  push.edge = Owner::Kind::right;
+  EXPECT_FALSE(imbalance(plate, {pull, push}));
+}
+
 }  // namespace
 }  // namespace raiser::solver

@@ -211,5 +211,22 @@ TEST(Settle, StressOnASectionThroughTheHolesBalancesTheLoad) {
   }
 }
 
+TEST(Settle, SaysWhatTheOuterEdgeCarriesBesideAHoleNearAnEnd) {
+  Problem problem = hanger();
+  problem.plate.holes = {{"bolt", HoleShape::circle, 18, 18, 0, Point(90, 0), 0}};
+  problem.loads = {of(Kind::tension, 100)};
+  const Solution solution = settle(problem, all_at(1e-3, 1));
+  const PlateChecks& checks = solution.checks;
+  EXPECT_GT(checks.outer_von_mises, solution.combined.holes[0].von_mises.stress.value);
+  EXPECT_NEAR(checks.outer_point.x(), 100.0, 1e-9);
+  const auto there = solution.field.at(checks.outer_point - Point(1e-9, 0));
+  ASSERT_TRUE(there);
+  EXPECT_NEAR(von_mises(there->stress), checks.outer_von_mises, 0.01 * checks.outer_von_mises);
+  problem.plate.holes[0].centre.x() = 0.0;
+  const Solution middle = settle(problem, all_at(1e-3, 1));
+  EXPECT_LT(middle.checks.outer_von_mises, middle.combined.holes[0].von_mises.stress.value);
+  EXPECT_GT(middle.checks.outer_von_mises, 100.0);
+}
+
 }  // namespace
 }  // namespace raiser::solver
