@@ -10,15 +10,12 @@ double error_bound(std::span<const double> values, double scale) {
   const std::size_t n = values.size();
   if (n < 3) return std::numeric_limits<double>::infinity();
   constexpr double rounding = 2e-12;
+  constexpr double decay = 8.0;      // of an earlier difference, from degree to degree
   constexpr double irregular = 3.0;  // where the last difference is hardly smaller than the one before
   double bound = 0.0;
   double share = 1.0;
-  double fall = 6.0;  // of a difference from degree to degree: of the one before the last
-  for (std::size_t i = n - 1; i > 0; --i) {
+  for (std::size_t i = n - 1; i > 0; --i, share /= decay)
     bound = std::max(bound, share * std::abs(values[i] - values[i - 1]));
-    share /= fall;
-    fall = 15.0;  // and of earlier ones, which say less
-  }
   const double last = std::abs(values[n - 1] - values[n - 2]);
   const double before = std::abs(values[n - 2] - values[n - 3]);
   if (last > 0.5 * before) bound *= irregular;
