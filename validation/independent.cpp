@@ -14,7 +14,7 @@ constexpr double nominal = 100.0;  // MPa
 constexpr auto integral = "boundary integral equation (Sherman-Lauricella), spectral panels";
 constexpr auto potentials = "complex potentials with boundary collocation";
 
-Hole circle(const char* name, double diameter, Point centre) {
+Hole circle(const char* name, double diameter, const Point& centre) {
   return {name, HoleShape::circle, diameter, diameter, 0.0, centre, 0.0};
 }
 

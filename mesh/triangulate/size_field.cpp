@@ -31,8 +31,10 @@ double SizeField::size_from(const Source& source, const Point& x) const {
 const std::vector<int>& SizeField::relevant(std::size_t cell) {
   std::vector<int>& list = cells_[cell];
   if (!list.empty()) return list;
-  const Point centre = origin_ + cell_size_ * Point(static_cast<double>(cell % columns_) + 0.5,
-                                                    static_cast<double>(cell / columns_) + 0.5);
+  const std::size_t row = cell / columns_;
+  const std::size_t column = cell % columns_;
+  const Point centre =
+      origin_ + cell_size_ * Point(static_cast<double>(column) + 0.5, static_cast<double>(row) + 0.5);
   double smallest = size_from(sources_.front(), centre);
   for (const Source& source : sources_) smallest = std::min(smallest, size_from(source, centre));
   // Each size changes by at most growth * half a diagonal from the centre.
