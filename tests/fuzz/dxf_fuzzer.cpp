@@ -1,0 +1,48 @@
+// libFuzzer entry: whatever the bytes, the import gives an outline or faults,
+// each with its cure, and an outline is closed and the right way round.
+
+#include <cmath>
+#include <cstddef>
+#include <cstdint>
+#include <cstdlib>
+#include <string_view>
+
+#include "io/import/contour.hpp"
+#include "io/import/curve_tools.hpp"
+#include "io/import/dxf.hpp"
+#include "io/import/shapes.hpp"
+
+namespace {
+
+void require(bool condition) {
+  if (!condition) std::abort();
+}
+
+void check(const raiser::mesh::Loop& loop) {
+  require(!loop.empty());
+  for (std::size_t k = 0; k < loop.size(); ++k) {
+    const auto& next = loop[(k + 1) % loop.size()];
+    const double size = 1 + finish(loop[k]).norm();
+    require((finish(loop[k]) - start(next)).norm() < 1e-6 * size);
+  }
+}
+
+}  // namespace
+
+extern "C" int LLVMFuzzerTestOneInput(const std::uint8_t* data, std::size_t size) {
+  using namespace raiser::io;
+  const std::string_view content(reinterpret_cast<const char*>(data), size);
+  const auto reading = read_dxf(content, "part.dxf", std::nullopt);
+  require(reading.value.has_value() == reading.faults.empty());
+  for (const auto& fault : reading.faults) require(!fault.what.empty() && !fault.cure.empty());
+  if (!reading.value) return 0;
+  const Contours found = contours(reading.value->strokes, {});
+  require(found.faults.empty() == !found.outer.empty());
+  if (!found.faults.empty()) return 0;
+  check(found.outer);
+  for (const auto& loop : found.inner) {
+    check(loop);
+    static_cast<void>(hole_of(loop, 1e-6));
+  }
+  return 0;
+}
