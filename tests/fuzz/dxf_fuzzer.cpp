@@ -22,8 +22,8 @@ void check(const raiser::mesh::Loop& loop) {
   require(!loop.empty());
   for (std::size_t k = 0; k < loop.size(); ++k) {
     const auto& next = loop[(k + 1) % loop.size()];
-    const double size = 1 + finish(loop[k]).norm();
-    require((finish(loop[k]) - start(next)).norm() < 1e-6 * size);
+    const double size = 1 + raiser::io::finish(loop[k]).norm();
+    require((raiser::io::finish(loop[k]) - raiser::io::start(next)).norm() < 1e-6 * size);
   }
 }
 

@@ -19,7 +19,7 @@ INCLUDE = re.compile(r'^\s*#\s*include\s*([<"])([^>"]+)[>"]')
 
 # What is heavy: how its headers are recognised, and how many source files may include them.
 HEAVY = {
-    "Gmsh": (re.compile(r"^gmsh\.h"), 1),
+    "Gmsh": (re.compile(r"^gmsh\.h"), 2),
     "VTK": (re.compile(r"^vtk\w+\.h"), 2),
     "toml++": (re.compile(r"^toml(\+\+|plusplus)?[./]"), 2),
     "CLI11": (re.compile(r"^CLI/"), 2),
@@ -129,7 +129,8 @@ class APlantedFault(unittest.TestCase):
         self.expect({"io/d.hpp": "#include <toml++/toml.h>\n"}, "a header includes toml++")
 
     def test_heavy_header_in_too_many_sources(self):
-        self.expect({"mesh/d.cpp": "#include <gmsh.h>\n"}, "Gmsh is included by 2 source files, allowed 1")
+        more = {"mesh/d.cpp": "#include <gmsh.h>\n", "mesh/e.cpp": "#include <gmsh.h>\n"}
+        self.expect(more, "Gmsh is included by 3 source files, allowed 2")
 
     def test_own_header_not_first(self):
         self.expect({"solver/b.cpp": '#include "mesh/a.hpp"\n#include "solver/b.hpp"\n'}, "must be solver/b.hpp")
