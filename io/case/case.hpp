@@ -37,6 +37,7 @@ struct Case {
   std::vector<solver::Ask> asks;
   double tolerance = 1e-3;               ///< relative; of the asks that give none of their own
   std::optional<double> yield_strength;  ///< MPa
+  std::optional<std::string> alloy;      ///< find_alloy() has where its values come from
   /// What the author wrote for each value, by key path: "plate.width",
   /// "hole.2.diameter" (tables count from 1), "load.1.stress". A key that is
   /// absent was left to its default.

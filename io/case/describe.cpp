@@ -6,6 +6,7 @@
 #include <map>
 #include <numbers>
 
+#include "io/case/alloys.hpp"
 #include "io/case/layout.hpp"
 #include "io/case/parts.hpp"
 #include "io/case/words.hpp"
@@ -57,18 +58,55 @@ std::string describe_plate(const Case& input) {
                   fmt::format("{} along", derived(plate.length * plate.thickness, "mm^2"))});
 }
 
+/// "yield strength 355 MPa", with the alloy as its origin where nothing is written.
+std::string constant(const Case& input, std::string_view word, const std::string& key, double value,
+                     std::string_view unit) {
+  if (!input.alloy || input.written.contains(key)) return item(input, word, key, value, unit);
+  return fmt::format("{} {} (of {})", word, amount(value, unit), *input.alloy);
+}
+
+Phrases elastic_constants(const Case& input) {
+  const solver::HookeLaw& law = input.problem.material;
+  if (!law.orthotropy)
+    return {constant(input, "Young's modulus", "material.youngs_modulus", law.youngs_modulus, "MPa"),
+            constant(input, "Poisson's ratio", "material.poissons_ratio", law.poissons_ratio, "")};
+  const solver::Orthotropy& own = *law.orthotropy;
+  return {"orthotropic",
+          item(input, "E1", "material.E1", law.youngs_modulus, "MPa"),
+          item(input, "E2", "material.E2", own.youngs_modulus_2, "MPa"),
+          item(input, "G12", "material.G12", own.shear_modulus, "MPa"),
+          item(input, "nu12", "material.nu12", law.poissons_ratio, ""),
+          item(input, "axis 1 at", "material.angle", own.angle * 180.0 / std::numbers::pi, "deg")};
+}
+
+/// The parts of a text between semicolons.
+Phrases parts_of(std::string_view text) {
+  Phrases parts;
+  for (std::size_t end = text.find("; "); end != std::string_view::npos; end = text.find("; ")) {
+    parts.emplace_back(text.substr(0, end));
+    text.remove_prefix(end + 2);
+  }
+  parts.emplace_back(text);
+  return parts;
+}
+
 std::string describe_material(const Case& input) {
   const solver::HookeLaw& law = input.problem.material;
   const std::string state = law.state == solver::PlaneState::stress ? "plane stress" : "plane strain";
-  Phrases phrases{item(input, "Young's modulus", "material.youngs_modulus", law.youngs_modulus, "MPa"),
-                  item(input, "Poisson's ratio", "material.poissons_ratio", law.poissons_ratio, ""),
-                  state + origin(input, "material.state", state)};
+  Phrases phrases = elastic_constants(input);
+  phrases.push_back(state + origin(input, "material.state", state));
   if (input.yield_strength) {
-    phrases.push_back(item(input, "yield strength", "material.yield_strength", *input.yield_strength, "MPa"));
+    phrases.push_back(
+        constant(input, "yield strength", "material.yield_strength", *input.yield_strength, "MPa"));
   } else {
     phrases.push_back("no yield strength given");
   }
-  return row("Material", phrases);
+  std::string text = row("Material", phrases);
+  if (const auto alloy = input.alloy ? find_alloy(*input.alloy) : std::nullopt) {
+    text += row("", {fmt::format("{}: {}", alloy->name, alloy->condition)}) + row("", parts_of(alloy->range));
+    text += row("", {"no design values; sources:"}) + row("", parts_of(alloy->source));
+  }
+  return text;
 }
 
 std::string article_free_word(const Hole& hole) { return std::string(mesh::word(hole.shape)); }

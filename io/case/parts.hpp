@@ -22,8 +22,10 @@ PlateSizes read_plate(const Table& table);
 struct Material {
   std::optional<solver::HookeLaw> law;
   std::optional<double> yield_strength;  ///< MPa
+  std::optional<std::string> alloy;      ///< the name of a known one
 };
-Material read_material(const Table& table);
+/// The plate's thickness decides whether an alloy's yield strength holds.
+Material read_material(const Table& table, const PlateSizes& plate);
 
 /// A hole as far as it could be read. Its name is always there, so that other
 /// tables can speak of a hole whose sizes are faulty.

@@ -68,8 +68,8 @@ Parts read_parts(const Table& document, const std::string& default_title) {
     parts.plate = read_plate(*table);
     parts.plate_table = *table;
   }
-  if (const auto table = need("material", "youngs_modulus and poissons_ratio"))
-    parts.material = read_material(*table);
+  if (const auto table = need("material", "youngs_modulus and poissons_ratio, or an alloy"))
+    parts.material = read_material(*table, parts.plate);
   parts.holes = read_holes(document);
   std::vector<std::string_view> names;
   for (const HoleReading& hole : parts.holes) names.push_back(hole.name);
@@ -157,6 +157,7 @@ Case assemble(const Parts& parts, mesh::Plate plate, Report& report, const std::
   result.asks = parts.question.asks;
   result.tolerance = parts.question.tolerance;
   result.yield_strength = parts.material.yield_strength;
+  result.alloy = parts.material.alloy;
   result.written = std::move(report.written);
   return result;
 }

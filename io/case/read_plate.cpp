@@ -116,15 +116,6 @@ std::optional<mesh::Hole> read_hole(const Table& table, const std::string& name)
   return mesh::Hole{name, *shape, *sizes.length, *sizes.width, *sizes.corner_radius, *centre, *angle};
 }
 
-/// Poisson's ratio of a stable isotropic solid that is not incompressible.
-std::optional<double> read_poissons_ratio(const Table& table) {
-  const Entry* entry = require(table, "poissons_ratio", "0.3");
-  const auto ratio = quantity(table, entry, Dimension::ratio, Sign::any);
-  if (!ratio || (*ratio > -1.0 && *ratio < 0.5)) return ratio;
-  complain(table, *entry, "Poisson's ratio lies between -1 and 0.5, both excluded", "write e.g. 0.3");
-  return std::nullopt;
-}
-
 }  // namespace
 
 std::string sample_of(const std::vector<std::string_view>& holes) {
@@ -136,26 +127,6 @@ PlateSizes read_plate(const Table& table) {
   refuse_unknown(table, keys);
   return {size(table, "length", "\"240 mm\""), size(table, "width", "\"60 mm\""),
           size(table, "thickness", "\"6 mm\"")};
-}
-
-Material read_material(const Table& table) {
-  constexpr std::array<std::string_view, 4> keys{"youngs_modulus", "poissons_ratio", "state",
-                                                 "yield_strength"};
-  constexpr std::array<std::string_view, 2> states{"plane stress", "plane strain"};
-  refuse_unknown(table, keys);
-  const auto modulus =
-      quantity(table, require(table, "youngs_modulus", "\"210 GPa\""), Dimension::stress, Sign::positive);
-  const auto ratio = read_poissons_ratio(table);
-  const Entry* state_entry = find(table, "state");
-  const auto state =
-      state_entry == nullptr ? std::optional<std::size_t>(0) : choice(table, state_entry, states);
-  Material material;
-  material.yield_strength = quantity(table, find(table, "yield_strength"), Dimension::stress, Sign::positive);
-  if (modulus && ratio && state) {
-    material.law = solver::HookeLaw{*modulus, *ratio,
-                                    *state == 0 ? solver::PlaneState::stress : solver::PlaneState::strain};
-  }
-  return material;
 }
 
 std::vector<HoleReading> read_holes(const Table& document) {

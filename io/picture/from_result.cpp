@@ -82,6 +82,14 @@ void add_concentration(std::vector<std::string>& lines, const char* name,
         fmt::format("{} {} on {}", name, amount(*found.kt, ""), together(brief(found.nominal, 5) + " MPa")));
 }
 
+std::string constants_line(const solver::HookeLaw& law) {
+  if (!law.orthotropy)
+    return fmt::format("E {}, ν {}", amount(law.youngs_modulus, "MPa"), brief(law.poissons_ratio));
+  return fmt::format("E1 {} at {}°, E2 {}, G12 {}, ν12 {}", amount(law.youngs_modulus, "MPa"),
+                     brief(law.orthotropy->angle / degree), amount(law.orthotropy->youngs_modulus_2, "MPa"),
+                     amount(law.orthotropy->shear_modulus, "MPa"), brief(law.poissons_ratio));
+}
+
 std::vector<std::string> caption(const Result& result, const HoleFindings& found) {
   const auto& problem = result.input.problem;
   const auto& plate = problem.plate;
@@ -93,8 +101,7 @@ std::vector<std::string> caption(const Result& result, const HoleFindings& found
   lines.push_back(fmt::format("Plate {} × {} × {}", brief(plate.length), brief(plate.width),
                               amount(plate.thickness, "mm")));
   lines.push_back(
-      fmt::format("E {}, ν {}, {}", amount(problem.material.youngs_modulus, "MPa"),
-                  brief(problem.material.poissons_ratio),
+      fmt::format("{}, {}", constants_line(problem.material),
                   problem.material.state == solver::PlaneState::stress ? "plane stress" : "plane strain"));
   lines.push_back(loads_line(result));
   lines.push_back(fmt::format("Displacement degree {} on {} triangles, {} unknowns", solution.degree,

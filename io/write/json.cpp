@@ -4,6 +4,8 @@
 #include <nlohmann/json.hpp>
 #include <numbers>
 
+#include "io/case/alloys.hpp"
+
 namespace raiser::io {
 namespace {
 
@@ -123,21 +125,39 @@ Json load(const solver::Load& l, const mesh::Plate& plate) {
   return object;
 }
 
+Json material(const Case& c) {
+  const solver::HookeLaw& law = c.problem.material;
+  const char* state = law.state == solver::PlaneState::stress ? "plane stress" : "plane strain";
+  Json object;
+  if (law.orthotropy)
+    object = {{"E1", quantity(law.youngs_modulus, "MPa")},
+              {"E2", quantity(law.orthotropy->youngs_modulus_2, "MPa")},
+              {"G12", quantity(law.orthotropy->shear_modulus, "MPa")},
+              {"nu12", quantity(law.poissons_ratio, "1")},
+              {"angle", quantity(law.orthotropy->angle, "rad")}};
+  else
+    object = {{"youngs_modulus", quantity(law.youngs_modulus, "MPa")},
+              {"poissons_ratio", quantity(law.poissons_ratio, "1")}};
+  object["state"] = state;
+  object["yield_strength"] = c.yield_strength ? quantity(*c.yield_strength, "MPa") : Json(nullptr);
+  if (const auto alloy = c.alloy ? find_alloy(*c.alloy) : std::nullopt)
+    object["alloy"] = {{"name", alloy->name},
+                       {"condition", alloy->condition},
+                       {"range", alloy->range},
+                       {"source", alloy->source}};
+  return object;
+}
+
 Json input(const Case& c) {
   const mesh::Plate& plate = c.problem.plate;
-  const solver::HookeLaw& law = c.problem.material;
   Json holes = Json::array(), loads = Json::array();
   for (const mesh::Hole& h : plate.holes) holes.push_back(hole(h));
   for (const solver::Load& l : c.problem.loads) loads.push_back(load(l, plate));
-  Json material{{"youngs_modulus", quantity(law.youngs_modulus, "MPa")},
-                {"poissons_ratio", quantity(law.poissons_ratio, "1")},
-                {"state", law.state == solver::PlaneState::stress ? "plane stress" : "plane strain"},
-                {"yield_strength", c.yield_strength ? quantity(*c.yield_strength, "MPa") : Json(nullptr)}};
   return {{"plate",
            {{"length", quantity(plate.length, "mm")},
             {"width", quantity(plate.width, "mm")},
             {"thickness", quantity(plate.thickness, "mm")}}},
-          {"material", material},
+          {"material", material(c)},
           {"holes", holes},
           {"loads", loads},
           {"written", c.written}};

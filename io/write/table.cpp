@@ -5,6 +5,7 @@
 #include <algorithm>
 #include <cmath>
 
+#include "io/case/alloys.hpp"
 #include "io/write/layout.hpp"
 #include "io/write/table_parts.hpp"
 
@@ -24,17 +25,29 @@ std::string load_text(const solver::Load& load) {
   return name.empty() || name == solver::word(load.kind) ? text : fmt::format("{} ({})", name, text);
 }
 
+std::string constants_text(const solver::HookeLaw& law) {
+  if (!law.orthotropy)
+    return fmt::format("E = {} MPa, nu = {}", brief(law.youngs_modulus), brief(law.poissons_ratio));
+  return fmt::format("E1 {} MPa at {} deg, E2 {} MPa, G12 {} MPa, nu12 {}", brief(law.youngs_modulus),
+                     brief(law.orthotropy->angle * 180 / std::numbers::pi),
+                     brief(law.orthotropy->youngs_modulus_2), brief(law.orthotropy->shear_modulus),
+                     brief(law.poissons_ratio));
+}
+
 std::string heading(const Case& input) {
   constexpr std::size_t shown = 6;
   const mesh::Plate& plate = input.problem.plate;
   const solver::HookeLaw& material = input.problem.material;
   const auto& loads = input.problem.loads;
   std::string text = input.title.empty() ? "" : wrapped(plain(input.title));
-  text += wrapped(fmt::format("Plate {} x {} x {} mm, plane {}, E = {} MPa, nu = {}; {} hole{}",
-                              brief(plate.length), brief(plate.width), brief(plate.thickness),
-                              material.state == solver::PlaneState::stress ? "stress" : "strain",
-                              brief(material.youngs_modulus), brief(material.poissons_ratio),
-                              plate.holes.size(), plate.holes.size() == 1 ? "" : "s"));
+  text += wrapped(
+      fmt::format("Plate {} x {} x {} mm, plane {}, {}; {} hole{}", brief(plate.length), brief(plate.width),
+                  brief(plate.thickness), material.state == solver::PlaneState::stress ? "stress" : "strain",
+                  constants_text(material), plate.holes.size(), plate.holes.size() == 1 ? "" : "s"));
+  if (const auto alloy = input.alloy ? find_alloy(*input.alloy) : std::nullopt)
+    text += wrapped(fmt::format("{}, {}; {} ({}); no design values", alloy->name, alloy->condition,
+                                alloy->range, alloy->source),
+                    "Material: ", 10);
   std::string list;
   for (std::size_t i = 0; i < std::min(loads.size(), shown); ++i) {
     list += (i == 0 ? "" : ", ") + load_text(loads[i]);

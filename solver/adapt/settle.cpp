@@ -26,6 +26,8 @@ double seconds_since(Clock::time_point start) {
 void require_legal(const Problem& problem, const std::vector<Ask>& asks) {
   if (const auto found = mesh::faults(problem.plate); !found.empty())
     throw std::invalid_argument("settle: the plate is not legal: " + found.front().what);
+  if (const auto found = faults(problem.material); !found.empty())
+    throw std::invalid_argument("settle: the material is not legal: " + found.front().what);
   if (problem.loads.empty()) throw std::invalid_argument("settle: there is no load");
   if (const auto fault = imbalance(problem.plate, problem.loads))
     throw std::invalid_argument("settle: " + fault->what);
@@ -34,9 +36,10 @@ void require_legal(const Problem& problem, const std::vector<Ask>& asks) {
       throw std::invalid_argument("settle: an asked number names no hole or has no tolerance");
 }
 
-/// The mirror lines that the plate and all loads share.
-mesh::Mirrors usable_mirrors(const Plate& plate, const std::vector<UnitLoad>& loads) {
-  mesh::Mirrors shared = mesh::mirrors(plate);
+/// The mirror lines that the plate, its material and all loads share.
+mesh::Mirrors usable_mirrors(const Problem& problem, const std::vector<UnitLoad>& loads) {
+  if (!problem.material.has_mirrors()) return {};
+  mesh::Mirrors shared = mesh::mirrors(problem.plate);
   for (const UnitLoad& load : loads) {
     shared.x = shared.x && load.under_x != UnitLoad::Parity::neither;
     shared.y = shared.y && load.under_y != UnitLoad::Parity::neither;
@@ -108,7 +111,7 @@ Solution settle(const Problem& problem, const std::vector<Ask>& asks) {
   const auto start = Clock::now();
   require_legal(problem, asks);
   const std::vector<UnitLoad> loads = unit_loads(problem.plate, problem.loads);
-  const mesh::Mirrors mirrors = usable_mirrors(problem.plate, loads);
+  const mesh::Mirrors mirrors = usable_mirrors(problem, loads);
   const mesh::Region region = mesh::cut(mesh::trace(problem.plate), mirrors);
   const double tolerance = least_tolerance(asks);
   mesh::SizeRule rule = first_rule(problem.plate, tolerance);

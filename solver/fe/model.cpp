@@ -23,6 +23,8 @@ Model::Model(mesh::Mesh mesh, mesh::Mirrors mirrors, const HookeLaw& material, d
   for (const double y : {1.0, -1.0})
     for (const double x : {1.0, -1.0})
       if ((x > 0 || mirrors.x) && (y > 0 || mirrors.y)) images_.push_back({{x, y}});
+  if ((mirrors.x || mirrors.y) && !material_.has_mirrors())
+    throw std::invalid_argument("Model: the material does not have the mirror lines of the mesh");
   for (std::size_t i = 0; i < loads_.size(); ++i) {
     if ((mirrors.x && loads_[i].under_x == Parity::neither) ||
         (mirrors.y && loads_[i].under_y == Parity::neither))

@@ -39,7 +39,8 @@ struct Balance {
 /// A meshed plate (or its half or quarter between mirror lines) with its
 /// material and self-balanced unit loads: everything but the degree.
 ///
-/// With mirror lines, each load must be even or odd under each of them.
+/// With mirror lines, each load must be even or odd under each of them, and
+/// the material its own mirror image.
 /// Throws std::invalid_argument otherwise.
 class Model {
  public:

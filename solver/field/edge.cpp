@@ -3,23 +3,6 @@
 #include <Eigen/LU>
 
 namespace raiser::solver {
-namespace {
-
-/// Turns a stress or strain (with engineering shear when `is_strain`) given in
-/// the plate's axes into edge axes (t, n).
-Eigen::Matrix3d to_edge_axes(const Point& t, bool is_strain) {
-  const double c = t.x();
-  const double s = t.y();
-  const double half = is_strain ? 0.5 : 1.0;
-  Eigen::Matrix3d m;
-  m << c * c, s * s, 2 * half * c * s,  //
-      s * s, c * c, -2 * half * c * s,  //
-      -c * s / half, c * s / half, c * c - s * s;
-  return m;
-}
-
-}  // namespace
-
 EdgeProbe::EdgeProbe(const Model& model, int degree, std::span<const double> s, SideTables tables)
     : model_(&model), space_(model.mesh(), degree), s_(s.begin(), s.end()), tables_(std::move(tables)) {}
 
@@ -50,9 +33,9 @@ SideStress EdgeProbe::at(const mesh::BoundarySide& side, const Displacements& di
     const Point tangent =
         (side.curve.derivative(parameter) * (side.curve.end > side.curve.begin ? 1.0 : -1.0)).normalized();
     const Point outward(tangent.y(), -tangent.x());
-    const Eigen::Matrix3d strain_turn = to_edge_axes(tangent, true);
-    const Eigen::Matrix3d stress_turn = to_edge_axes(tangent, false);
-    const Eigen::Matrix3d edge_compliance = strain_turn * compliance * stress_turn.inverse();
+    const Eigen::Matrix3d to_strain = strain_turn(tangent);
+    const Eigen::Matrix3d to_stress = stress_turn(tangent);
+    const Eigen::Matrix3d edge_compliance = to_strain * compliance * to_stress.inverse();
     const Eigen::Matrix2d inverse = maps[q].jacobian.inverse();
     const Point x = side.curve.at(parameter);
     for (Eigen::Index l = 0; l < loads; ++l) {
@@ -63,8 +46,8 @@ SideStress EdgeProbe::at(const mesh::BoundarySide& side, const Displacements& di
       const Point traction = model_->loads()[l].traction(side.curve.owner, x, outward);
       const double normal = traction.dot(outward);
       const double shear = -traction.dot(tangent);  // (t, n) with n inward: sigma_tn = -t . traction
-      const double along = (strain_turn * strain)[0];
-      const Eigen::Vector3d raw = stress_turn * (stiffness * strain);
+      const double along = (to_strain * strain)[0];
+      const Eigen::Vector3d raw = to_stress * (stiffness * strain);
       result.tangential(q, l) =
           (along - edge_compliance(0, 1) * normal - edge_compliance(0, 2) * shear) / edge_compliance(0, 0);
       result.normal(q, l) = normal;

@@ -367,3 +367,34 @@ TEST(Describe, GivesTheFiguresThatFollow) {
   EXPECT_TRUE(contains(report, "moment 50.8432 N m")) << report;
   EXPECT_TRUE(contains(report, "written 450 lbf in")) << report;
 }
+
+TEST(Case, ReadsAnOrthotropicMaterial) {
+  const std::string plate = head.substr(0, head.find("[material]"));
+  const Case input = read(plate +
+                          "[material]\nE1 = \"138 GPa\"\nE2 = \"9 GPa\"\nG12 = \"6.9 GPa\"\nnu12 = 0.3\n"
+                          "angle = \"30 deg\"\n" +
+                          bolt + pull);
+  const auto& law = input.problem.material;
+  EXPECT_EQ(law.youngs_modulus, 138e3);
+  EXPECT_EQ(law.poissons_ratio, 0.3);
+  ASSERT_TRUE(law.orthotropy);
+  EXPECT_EQ(law.orthotropy->youngs_modulus_2, 9e3);
+  EXPECT_EQ(law.orthotropy->shear_modulus, 6.9e3);
+  EXPECT_DOUBLE_EQ(law.orthotropy->angle, std::numbers::pi / 6);
+  EXPECT_TRUE(contains(describe(input), "axis 1 at 30 deg"));
+}
+
+TEST(Case, TakesAnAlloyByNameAndOverridesItKeyByKey) {
+  const std::string plate = head.substr(0, head.find("[material]"));
+  const Case plain = read(plate + "[material]\nalloy = \"S355\"\n" + bolt + pull);
+  EXPECT_EQ(plain.alloy, "S355");
+  EXPECT_EQ(plain.problem.material.youngs_modulus, 210e3);
+  EXPECT_EQ(plain.yield_strength, 355.0);
+  EXPECT_TRUE(contains(describe(plain), "EN 10025-2"));
+  EXPECT_TRUE(contains(describe(plain), "yield strength 355 MPa (of S355)"));
+  const Case own = read(plate + "[material]\nalloy = \"S355\"\nyield_strength = \"300 MPa\"\n" + bolt + pull);
+  EXPECT_EQ(own.yield_strength, 300.0);
+  EXPECT_EQ(own.problem.material.poissons_ratio, 0.3);
+  EXPECT_TRUE(contains(describe(own), "yield strength 300 MPa,") ||
+              contains(describe(own), "yield strength 300 MPa\n"));
+}

@@ -28,7 +28,7 @@ VALUES = [True, 5, 0.25, -3, 0, [], ["5 mm"], ["1 mm", "2 mm"], {}, [{}], "", " 
           "plane strain", "von Mises", "a\tb", "1e3 mm", ".5 mm", "5. mm", "5 m m", "5mm", "5 Nm", "5 N*m", "5 in"]
 
 # Faults that no schema can express, by a part of the reader's message.
-BEYOND = ["is taken", "magnitude is outside", "all loads", "nothing is asked for"]
+BEYOND = ["is taken", "magnitude is outside", "all loads", "nothing is asked for", "is too large: strain energy", "its yield strength of"]
 BEYOND_KEYS = ["load.hole = ", "ask.holes = ", "ask.result.hole = "]
 
 

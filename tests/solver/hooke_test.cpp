@@ -2,6 +2,7 @@
 
 #include <Eigen/Dense>
 #include <cmath>
+#include <numbers>
 
 #include "solver/elasticity/hooke_law.hpp"
 
@@ -50,6 +51,90 @@ TEST(HookeLaw, ComplianceInvertsStiffness) {
       const HookeLaw law{1234.5, nu, state};
       EXPECT_TRUE((law.stiffness() * law.compliance()).isIdentity(1e-12)) << nu;
     }
+}
+
+const HookeLaw unidirectional{138000.0, 0.3, PlaneState::stress, Orthotropy{9000.0, 6900.0, 0.0}};
+
+HookeLaw at_angle(double angle) {
+  HookeLaw law = unidirectional;
+  law.orthotropy->angle = angle;
+  return law;
+}
+
+TEST(Orthotropic, OwnAxesGiveTheConstantsBack) {
+  const Eigen::Matrix3d s = unidirectional.compliance();
+  EXPECT_DOUBLE_EQ(1 / s(0, 0), 138000.0);
+  EXPECT_DOUBLE_EQ(1 / s(1, 1), 9000.0);
+  EXPECT_DOUBLE_EQ(1 / s(2, 2), 6900.0);
+  EXPECT_DOUBLE_EQ(-s(1, 0) / s(0, 0), 0.3);
+  EXPECT_DOUBLE_EQ(s(0, 1), s(1, 0));
+}
+
+// E and eta of a sheet pulled at an angle to its fibres: R. M. Jones, Mechanics of Composite Materials, 2nd
+// ed. (1999), equations (2.97), from memory.
+TEST(Orthotropic, ApparentModulusAtAnAngleIsThatOfTheTextbooks) {
+  for (const double angle : {0.2, 0.7, 1.3, -0.9}) {
+    const double c = std::cos(angle), n = std::sin(angle);
+    const double by_formula =
+        std::pow(c, 4) / 138000 + (1 / 6900.0 - 2 * 0.3 / 138000) * c * c * n * n + std::pow(n, 4) / 9000;
+    EXPECT_NEAR(at_angle(angle).compliance()(0, 0), by_formula, 1e-15) << angle;
+  }
+}
+
+TEST(Orthotropic, ComplianceInvertsStiffnessAndIsSymmetricAtEveryAngle) {
+  for (const double angle : {0.0, 0.3, 1.2, 2.5}) {
+    const HookeLaw law = at_angle(angle);
+    EXPECT_TRUE((law.stiffness() * law.compliance()).isIdentity(1e-12)) << angle;
+    EXPECT_TRUE(law.stiffness().isApprox(law.stiffness().transpose(), 1e-13)) << angle;
+  }
+}
+
+TEST(Orthotropic, IsotropicConstantsGiveTheIsotropicLawAtEveryAngle) {
+  const HookeLaw isotropic{70000.0, 0.33, PlaneState::stress};
+  for (const double angle : {0.0, 0.4, 2.0}) {
+    const HookeLaw law{70000.0, 0.33, PlaneState::stress, Orthotropy{70000.0, 70000.0 / 2.66, angle}};
+    EXPECT_TRUE(law.stiffness().isApprox(isotropic.stiffness(), 1e-13)) << angle;
+  }
+}
+
+TEST(Orthotropic, MirrorsAreLostOffTheAxes) {
+  EXPECT_TRUE(at_angle(0.0).has_mirrors());
+  EXPECT_TRUE(at_angle(std::numbers::pi / 2).has_mirrors());
+  EXPECT_TRUE(at_angle(-std::numbers::pi).has_mirrors());
+  EXPECT_FALSE(at_angle(0.3).has_mirrors());
+  EXPECT_FALSE(at_angle(std::numbers::pi / 4).has_mirrors());
+}
+
+TEST(Turns, StressAndStrainDoTheSameWork) {
+  const Eigen::Vector2d first(std::cos(0.7), std::sin(0.7));
+  EXPECT_TRUE((strain_turn(first).transpose() * stress_turn(first)).isIdentity(1e-15));
+}
+
+TEST(MaterialFaults, LegalLawsHaveNone) {
+  EXPECT_TRUE(faults(unidirectional).empty());
+  EXPECT_TRUE(faults(HookeLaw{210000.0, 0.3, PlaneState::strain}).empty());
+  HookeLaw large = unidirectional;
+  large.poissons_ratio = 0.999 * std::sqrt(138.0 / 9.0);
+  EXPECT_TRUE(faults(large).empty());
+}
+
+TEST(MaterialFaults, EveryOneIsNamedAtOnce) {
+  EXPECT_EQ(faults(HookeLaw{-1.0, 0.5, PlaneState::stress}).size(), 2U);
+  const HookeLaw law{0.0, 0.3, PlaneState::strain, Orthotropy{-5.0, std::nan(""), 0.0}};
+  const auto found = faults(law);
+  ASSERT_EQ(found.size(), 4U);
+  EXPECT_EQ(found[2].constant, ElasticConstant::shear_modulus);
+  EXPECT_EQ(found[3].constant, ElasticConstant::state);
+}
+
+TEST(MaterialFaults, ARatioThatLosesTheStrainEnergyIsRefusedWithTheOtherOne) {
+  HookeLaw law{9000.0, 0.3, PlaneState::stress, Orthotropy{138000.0, 6900.0, 0.0}};
+  const auto found = faults(law);
+  ASSERT_EQ(found.size(), 1U);
+  EXPECT_EQ(found[0].constant, ElasticConstant::poissons_ratio);
+  EXPECT_NE(found[0].cure.find("0.0195652"), std::string::npos) << found[0].cure;
+  law.poissons_ratio = 0.0195652;
+  EXPECT_TRUE(faults(law).empty());
 }
 
 TEST(Principal, AgreesWithEigenvaluesLargerFirst) {

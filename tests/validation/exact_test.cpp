@@ -184,6 +184,65 @@ TEST(ExactField, KirschLimits) {
   EXPECT_NEAR(s.xx, 1 + 1 / 8.0 + 3 / 32.0, 1e-14);
 }
 
+solver::HookeLaw orthotropic(double e1, double e2, double g12, double nu12, double angle = 0.0) {
+  return {e1, nu12, solver::PlaneState::stress, solver::Orthotropy{e2, g12, angle}};
+}
+
+/// Record A31: carbon and glass fibres along and across the load.
+TEST(ExactField, FactorOfAnOrthotropicSheetIsThatOfTheRecord) {
+  EXPECT_NEAR(lekhnitskii_factor(orthotropic(138, 9, 6.9, 0.3)), 6.218, 1e-3);
+  EXPECT_NEAR(lekhnitskii_factor(orthotropic(38.6, 8.27, 4.14, 0.26)), 4.623, 1e-3);
+  EXPECT_NEAR(lekhnitskii_factor(orthotropic(9, 138, 6.9, 0.3 * 9 / 138)), 2.333, 1e-3);
+  EXPECT_NEAR(lekhnitskii_factor(orthotropic(70, 70, 70 / 2.6, 0.3)), 3.0, 1e-12);
+}
+
+TEST(ExactField, LekhnitskiiAtTheEndsOfTheDiameterAcross) {
+  const auto law = orthotropic(138, 9, 6.9, 0.3);
+  const Lekhnitskii field(law, {1, 0, 0}, {2.0, 2.0});
+  EXPECT_NEAR(field.at({0, 2}).xx, lekhnitskii_factor(law), 1e-12);
+  EXPECT_NEAR(field.at({0, -2}).xx, lekhnitskii_factor(law), 1e-12);
+  EXPECT_NEAR(field.at({2, 0}).yy, -std::sqrt(9 / 138.0), 1e-12);  // -sqrt(E2 / E1), from memory
+  EXPECT_NEAR(field.at({2e6, 1e6}).xx, 1.0, 1e-9);
+}
+
+TEST(ExactField, LekhnitskiiIsFreeOnTheEdgeAndInBalance) {
+  for (const double angle : {0.0, 0.4, 1.9}) {
+    const Ellipse ellipse{3.0, 1.2};
+    const Lekhnitskii field(orthotropic(138, 9, 6.9, 0.3, angle), {20, 100, 30}, ellipse);
+    for (const double eta : {0.1, 0.9, 2.2, 3.7, 5.5}) {
+      const Point x(ellipse.along_x * std::cos(eta), ellipse.along_y * std::sin(eta));
+      const Point n = Point(std::cos(eta) / ellipse.along_x, std::sin(eta) / ellipse.along_y).normalized();
+      const Stress s = field.at(x);
+      EXPECT_NEAR(s.xx * n.x() + s.xy * n.y(), 0.0, 1e-11 * 600);
+      EXPECT_NEAR(s.xy * n.x() + s.yy * n.y(), 0.0, 1e-11 * 600);
+      const Point y = 1.7 * x;
+      const double h = 1e-4;
+      const auto slope = [&](auto component, const Point& d) {
+        return (component(field.at(y + h * d)) - component(field.at(y - h * d))) / (2 * h);
+      };
+      const auto xx = [](const Stress& t) { return t.xx; };
+      const auto yy = [](const Stress& t) { return t.yy; };
+      const auto xy = [](const Stress& t) { return t.xy; };
+      EXPECT_NEAR(slope(xx, Point::UnitX()) + slope(xy, Point::UnitY()), 0.0, 1e-4);
+      EXPECT_NEAR(slope(xy, Point::UnitX()) + slope(yy, Point::UnitY()), 0.0, 1e-4);
+    }
+  }
+}
+
+/// Almost isotropic: the fields of Inglis within the departure.
+TEST(ExactField, LekhnitskiiTendsToInglis) {
+  const Ellipse ellipse{3.0, 1.2};
+  const RemoteStress remote{20, 100, 30};
+  const Lekhnitskii field(orthotropic(70, 70, 70 / 2.6 * 1.000001, 0.3, 0.3), remote, ellipse);
+  for (const Point& x : {Point(3.5, 1.0), Point(-0.3, 2.0), Point(1.0, -4.0)}) {
+    const Stress a = field.at(x), b = inglis(remote, ellipse, x);
+    EXPECT_NEAR(a.xx, b.xx, 1e-3);
+    EXPECT_NEAR(a.yy, b.yy, 1e-3);
+    EXPECT_NEAR(a.xy, b.xy, 1e-3);
+  }
+  EXPECT_THROW(Lekhnitskii(orthotropic(70, 70, 70 / 2.6, 0.3), remote, ellipse), std::invalid_argument);
+}
+
 TEST(ExactField, TractionIsStressTimesNormal) {
   const auto traction = traction_of([](const Point&) { return Stress{1, 2, 3, 0}; });
   const Point t = traction({}, {0, 0}, {0.6, 0.8});

@@ -100,7 +100,8 @@ void append(std::vector<Comparison>& all, const mesh::Plate& plate, const solver
 std::vector<Comparison> compare(const solver::Problem& problem, const solver::LoadFindings& combined,
                                 const std::vector<solver::LoadFindings>& units) {
   std::vector<Comparison> all;
-  std::vector<std::vector<Load>> groups;  // one for each unit; edge loads come last, together
+  if (problem.material.orthotropy) return all;  // every family here is of isotropic plates
+  std::vector<std::vector<Load>> groups;        // one for each unit; edge loads come last, together
   std::vector<Load> at_edges;
   for (const Load& load : problem.loads) {
     if (load.kind == Load::Kind::edge)

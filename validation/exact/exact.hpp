@@ -1,5 +1,7 @@
 #pragma once
 
+#include <array>
+#include <complex>
 #include <functional>
 #include <utility>
 
@@ -57,6 +59,31 @@ std::pair<double, double> inglis_extremes(const RemoteStress& remote, const Elli
 /// The same hole under the pressure p, nothing else loaded: the field of an
 /// equal biaxial remote tension p less that tension itself.
 Stress inglis_pressure(double pressure, const Ellipse& ellipse, const Point& x);
+
+/// Stress round the same hole, free of traction, in an infinite plate of any
+/// law of elasticity in the plane (MPa; the ellipse's axes along x and y, the
+/// material's axes at any angle to them). Not for a law that is isotropic or so
+/// close to it that the two complex parameters coincide: use inglis().
+/// S. G. Lekhnitskii, Anisotropic Plates (1947; English 1968), chapter VI, by
+/// complex potentials of the affine coordinates x + mu y; derived afresh.
+class Lekhnitskii {
+ public:
+  /// Throws std::invalid_argument when the complex parameters coincide.
+  Lekhnitskii(const solver::HookeLaw& law, const RemoteStress& remote, const Ellipse& ellipse);
+  Stress at(const Point& x) const;
+
+ private:
+  RemoteStress remote_;
+  Ellipse ellipse_;
+  std::array<std::complex<double>, 2> mu_, amplitude_;
+};
+
+/// The largest edge stress over the remote tension for a circular hole in an
+/// infinite orthotropic plate pulled along its first axis, at the ends of the
+/// diameter across: 1 + sqrt(2 (sqrt(E1/E2) - nu12) + E1/G12). It is the largest
+/// on the edge where it exceeds the stress elsewhere, as it does for E1 > E2.
+/// S. G. Lekhnitskii, Anisotropic Plates (1947; English 1968).
+double lekhnitskii_factor(const solver::HookeLaw& law);
 
 /// The stress components in axes turned anticlockwise by `angle` (rad), e.g.
 /// the remote stress in the axes of a hole at that angle.
