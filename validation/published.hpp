@@ -24,6 +24,7 @@ enum class Reference {
   roark_eccentric,
   sjostrom_eccentric,
   half_plane,
+  half_plane_far,
   ling,
   two_along_fit,
   row_across_fit,
@@ -44,6 +45,12 @@ struct Limit {
   double high = 0.0;
 };
 
+/// A dimensionless parameter of a plate, named as in the definitions.
+struct Parameter {
+  std::string_view name;
+  double value = 0.0;
+};
+
 /// Where a solution comes from and what it can promise.
 struct Published {
   Reference reference;
@@ -56,6 +63,7 @@ struct Published {
   std::string_view found;    ///< accuracy found against converged finite elements or exact limits
   double accuracy = 0.0;     ///< largest relative error found within the limits
   bool from_memory = false;  ///< the figures were recalled, not read from the source
+  std::optional<double> claim = std::nullopt;  ///< `claimed` as a relative error, 0 for exact solutions
 };
 
 /// All records, in the order of the enumeration.
@@ -63,6 +71,9 @@ const std::vector<Published>& published();
 
 /// The record of one solution.
 const Published& record(Reference reference);
+
+/// Whether every limit on a parameter given is kept.
+bool covers(const Published& record, const std::vector<Parameter>& parameters);
 
 // Central circular hole of diameter d in a long strip of width W; x = d/W.
 
@@ -105,6 +116,12 @@ double row_across_fit(double x);
 double row_along_fit(double x);
 
 // Other shapes.
+
+/// Largest edge stress over S on an ellipse in an infinite plate, a the longer
+/// half axis, tension S at the angle beta (rad) to it: the largest value over
+/// the eccentric angle of Inglis' stress on the edge, as given by S. P. Timoshenko and
+/// J. N. Goodier, Theory of Elasticity, 3rd ed. (1970). Requires a_over_b > 1.
+double inglis_inclined(double a_over_b, double beta);
 
 /// Kt net of a central ellipse, a semi-axis across the load, b along it; x = 2a/W.
 double roark_ellipse(double a_over_b, double x);

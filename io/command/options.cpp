@@ -12,14 +12,17 @@ constexpr const char* general_help = R"(raiser: how far holes raise the stress i
 
 usage: raiser solve CASE... [--out DIR] [--json] [--quiet] [--no-files]
        raiser check CASE... [--quiet]
+       raiser validate [FAMILY...] [--out DIR] [--quick] [--json]
        raiser --help | --version
 
   solve   solve case files; print peak stresses and Kt, each with an error
           bound, and write result files
   check   read and validate case files; print them as understood, with every
           default and unit
+  validate
+          hold published solutions against this program, in a table and charts
 
-`raiser solve --help` and `raiser check --help` say more.
+`raiser solve --help` and so on say more.
 
 examples:
   raiser check hanger.toml
@@ -79,6 +82,41 @@ example:
   raiser check hanger.toml
 )";
 
+constexpr const char* validate_help =
+    R"(usage: raiser validate [FAMILY...] [--out DIR] [--quick] [--json] [--list]
+
+Solves the plates of published solutions, family by family, and prints each
+published value beside the one computed, with its source, the accuracy that the
+source claims, and whether it keeps it.
+
+  FAMILY     ids of families, as --list prints them; all when none is given
+  --out DIR  also write validation.md, validation.json and a chart FAMILY.svg
+             for each family into DIR; DIR is made where it is missing
+  --no-charts
+             write no charts
+  --quick    a few plates of each family only
+  --json     print one JSON document instead of the tables
+  --list     print the ids of all families and what they are; solve nothing
+  --quiet    print no tables, only faults
+
+Exit code 5 says that a plate was not solved to its tolerance or that an exact
+solution was not met. A source that is less accurate than it claims is reported
+and is no fault of this program.
+
+examples:
+  raiser validate --quick
+  raiser validate ellipse-strip slot-infinite
+  raiser validate --out validation
+)";
+
+void add_validate(CLI::App& command, Options& options) {
+  command.set_help_flag("-h,--help");
+  command.add_option("FAMILY", options.families);
+  command.add_flag("--quick", options.quick);
+  command.add_flag("--list", options.list);
+  command.add_flag("!--no-charts", options.charts);
+}
+
 void add_cases(CLI::App& command, std::vector<std::string>& cases) {
   command.set_help_flag("-h,--help");
   command.add_option("CASE", cases)->required();
@@ -90,14 +128,15 @@ std::string no_command(const std::vector<std::string>& arguments) {
                                  [](const std::string& text) { return text.rfind('-', 0) != 0; });
   const std::string what =
       word == arguments.end() ? "no command is given" : "\"" + *word + "\" is no command";
-  return what + "; write raiser solve CASE... or raiser check CASE...";
+  return what + "; write raiser solve CASE..., raiser check CASE... or raiser validate";
 }
 
-Reply usage_fault(std::string what, const CLI::App& solve, const CLI::App& check) {
-  const char* command = solve.parsed() ? "raiser solve" : check.parsed() ? "raiser check" : "raiser";
+Reply usage_fault(std::string what, const CLI::App& app) {
+  const auto chosen = app.get_subcommands();
+  const std::string command = chosen.empty() ? "raiser" : "raiser " + chosen.front()->get_name();
   what.erase(std::find(what.begin(), what.end(), '\n'), what.end());
   if (what == "CASE is required") what = "no case file is named";
-  return {std::string(command) + ": " + what + "; see " + command + " --help\n", Exit::usage};
+  return {command + ": " + what + "; see " + command + " --help\n", Exit::usage};
 }
 
 }  // namespace
@@ -114,31 +153,38 @@ std::variant<Options, Reply> parse(const std::vector<std::string>& arguments) {
   CLI::App& check = *app.add_subcommand("check");
   add_cases(solve, cases);
   add_cases(check, cases);
-  CLI::Option* out = solve.add_option("-o,--out", folder);
+  CLI::App& validate = *app.add_subcommand("validate");
+  add_validate(validate, options);
   bool no_files = false;
-  solve.add_flag("--json", options.json);
   solve.add_flag("--no-files", no_files);
-  for (CLI::App* command : {&solve, &check}) command->add_flag("-q,--quiet", options.quiet);
+  for (CLI::App* command : {&solve, &validate}) {
+    command->add_option("-o,--out", folder);
+    command->add_flag("--json", options.json);
+  }
+  for (CLI::App* command : {&solve, &check, &validate}) command->add_flag("-q,--quiet", options.quiet);
   if (arguments.empty()) return Reply{general_help, Exit::usage};
   try {
     app.parse(std::vector<std::string>(arguments.rbegin(), arguments.rend()));
   } catch (const CLI::CallForHelp&) {
     if (solve.parsed()) return Reply{std::string(solve_help) + exit_codes, Exit::settled};
     if (check.parsed()) return Reply{std::string(check_help) + exit_codes, Exit::settled};
+    if (validate.parsed()) return Reply{std::string(validate_help) + exit_codes, Exit::settled};
     return Reply{std::string(general_help) + exit_codes, Exit::settled};
   } catch (const CLI::CallForVersion&) {
     return Reply{"raiser " + version() + "\n", Exit::settled};
   } catch (const CLI::RequiredError& error) {
     const bool named = solve.parsed() || check.parsed();
-    return usage_fault(named ? error.what() : no_command(arguments), solve, check);
+    return usage_fault(named ? error.what() : no_command(arguments), app);
   } catch (const CLI::ParseError& error) {
-    return usage_fault(error.what(), solve, check);
+    return usage_fault(error.what(), app);
   }
-  if (out->count() > 0 && folder.empty()) return usage_fault("--out names no folder", solve, check);
-  options.command = check.parsed() ? Options::Command::check : Options::Command::solve;
+  const bool has_folder = solve.count("--out") + validate.count("--out") > 0;
+  if (has_folder && folder.empty()) return usage_fault("--out names no folder", app);
+  if (check.parsed()) options.command = Options::Command::check;
+  if (validate.parsed()) options.command = Options::Command::validate;
   options.cases.assign(cases.begin(), cases.end());
   options.files = !no_files;
-  if (out->count() > 0) options.folder = folder;
+  if (has_folder) options.folder = folder;
   return options;
 }
 

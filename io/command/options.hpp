@@ -12,13 +12,17 @@ namespace raiser::io {
 
 /// What the command line asks for.
 struct Options {
-  enum class Command { solve, check };
+  enum class Command { solve, check, validate };
   Command command = Command::solve;
-  std::vector<std::filesystem::path> cases;     ///< at least one
+  std::vector<std::filesystem::path> cases;     ///< at least one, but for validate
   std::optional<std::filesystem::path> folder;  ///< --out
   bool json = false;
   bool quiet = false;
-  bool files = true;  ///< write result files
+  bool files = true;                  ///< write result files
+  std::vector<std::string> families;  ///< of validate: their ids; empty for all
+  bool quick = false;                 ///< of validate: the short run
+  bool charts = true;                 ///< of validate: draw a chart for each family
+  bool list = false;                  ///< of validate: name the families only
 };
 
 /// The command line is answered by a text: help, version, or what is wrong.

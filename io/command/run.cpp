@@ -13,6 +13,7 @@
 #include "io/command/files.hpp"
 #include "io/command/options.hpp"
 #include "io/command/speech.hpp"
+#include "io/command/validate.hpp"
 #include "io/write/csv.hpp"
 #include "io/write/file.hpp"
 #include "io/write/json.hpp"
@@ -232,6 +233,8 @@ Exit check_cases(Session& session) {
 Exit dispatch(const Options& options, std::ostream& out, std::ostream& err, Terminal terminal) {
   Session session{options, Output(out), err, terminal, Progress(err, terminal.progress && !options.quiet)};
   if (options.command == Options::Command::check) return check_cases(session);
+  if (options.command == Options::Command::validate)
+    return validate(options, session.output, err, session.progress, [] { return stop_asked.load(); });
   if (options.files) {
     const std::vector<std::string> faults = clashes(options.cases, options.folder.value_or(""));
     for (const std::string& fault : faults) err << "raiser solve: " << plain(fault) << "\n";

@@ -154,6 +154,25 @@ class ExitCodes(Program):
         self.expect(0, result)
         self.assertRegex(result.stdout, r"^raiser \d+\.\d+\.\d+\n$")
 
+    def test_validate_holds_published_values_against_ours(self):
+        result = self.run_it("validate", "slot-infinite", "circle-infinite", "--quick", "--out", "charts")
+        self.expect(0, result)
+        self.assertIn("slot-infinite (A15)", result.stdout)
+        self.assertTrue(all(len(line) <= 80 for line in result.stdout.splitlines()))
+        names = {"validation.md", "validation.json", "slot-infinite.svg", "circle-infinite.svg"}
+        self.assertEqual(names, set(os.listdir(self.folder / "charts")))
+        document = json.loads(self.run_it("validate", "circle-infinite", "--json").stdout)
+        self.assertEqual([f["id"] for f in document["families"]], ["circle-infinite"])
+        self.assertEqual(len(document["families"][0]["points"]), 5)
+        self.assertIn("slot-infinite", self.run_it("validate", "--list").stdout)
+
+    def test_validate_names_every_unknown_family(self):
+        result = self.run_it("validate", "slot-infinit", "nonsense", "--quick")
+        self.expect(2, result)
+        self.assertIn("did you mean slot-infinite?", result.stderr)
+        self.assertIn('"nonsense"', result.stderr)
+        self.assertEqual(result.stdout, "")
+
     def test_check_writes_nothing(self):
         result = self.run_it("check", self.case("strap.toml", GOOD))
         self.expect(0, result)

@@ -46,11 +46,6 @@ Strip strip(const Situation& situation);
 /// Strip with the loaded ends x = const: for tension along x and for bending.
 Strip lengthwise(const Situation& situation, double stress);
 
-struct Parameter {
-  std::string_view name;
-  double value = 0.0;
-};
-
 /// Something about the plate that the solution does not know of, with its
 /// expected relative effect on the stress.
 struct Effect {

@@ -1,5 +1,6 @@
 #include <array>
 #include <cmath>
+#include <numbers>
 #include <utility>
 
 #include "validation/published.hpp"
@@ -15,6 +16,28 @@ constexpr std::array<std::pair<double, double>, 6> square_biaxial{
     {{0.05, 6.7225}, {0.1, 4.8384}, {0.2, 3.4211}, {0.3, 2.7446}, {0.4, 2.3132}, {0.5, 2.0}}};
 
 }  // namespace
+
+double inglis_inclined(double a_over_b, double beta) {
+  const double xi = std::atanh(1 / a_over_b);
+  const auto stress = [&](double eta) {
+    return (std::sinh(2 * xi) + std::cos(2 * beta) - std::exp(2 * xi) * std::cos(2 * (beta - eta))) /
+           (std::cosh(2 * xi) - std::cos(2 * eta));
+  };
+  constexpr int steps = 2000;
+  constexpr double step = std::numbers::pi / steps;
+  double at = 0.0;  // the stress repeats after half a turn
+  for (int k = 1; k < steps; ++k)
+    if (stress(k * step) > stress(at)) at = k * step;
+  double low = at - step, high = at + step;  // halved round the one maximum between
+  for (int k = 0; k < 100; ++k) {
+    const double third = (high - low) / 3;
+    if (stress(low + third) < stress(high - third))
+      low += third;
+    else
+      high -= third;
+  }
+  return stress((low + high) / 2);
+}
 
 double roark_ellipse(double a_over_b, double x) {
   const double s = std::sqrt(a_over_b);

@@ -1,0 +1,24 @@
+#include "validation/families/list.hpp"
+
+namespace raiser::validation {
+
+std::vector<Family> families() {
+  return {circle_infinite(),
+          circle_strip_tension(),
+          circle_strip_bending(),
+          ellipse_infinite(),
+          ellipse_inclined(),
+          circle_eccentric(),
+          circle_eccentric_chart(),
+          circle_half_plane(),
+          two_circles(),
+          two_circles_along(),
+          ellipse_strip(),
+          slot_infinite(),
+          rounded_rectangle_infinite(),
+          rounded_square_infinite(),
+          pressure_infinite(),
+          pressure_half_plane()};
+}
+
+}  // namespace raiser::validation

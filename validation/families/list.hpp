@@ -1,0 +1,25 @@
+#pragma once
+
+#include "validation/families.hpp"
+
+/// The families, a file a group; families() puts them in order.
+namespace raiser::validation {
+
+Family circle_infinite();
+Family circle_strip_tension();
+Family circle_strip_bending();
+Family ellipse_infinite();
+Family ellipse_inclined();
+Family circle_eccentric();
+Family circle_eccentric_chart();
+Family circle_half_plane();
+Family two_circles();
+Family two_circles_along();
+Family ellipse_strip();
+Family slot_infinite();
+Family rounded_rectangle_infinite();
+Family rounded_square_infinite();
+Family pressure_infinite();
+Family pressure_half_plane();
+
+}  // namespace raiser::validation

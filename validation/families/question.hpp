@@ -1,0 +1,47 @@
+#pragma once
+
+#include <functional>
+#include <vector>
+
+#include "solver/solution.hpp"
+#include "validation/exact/exact.hpp"
+#include "validation/families.hpp"
+
+/// How the plates of the families are put together and our number is read off.
+namespace raiser::validation {
+
+using Question = std::function<Ours(double tolerance)>;
+using Measure = std::function<std::optional<solver::Estimate>(const solver::Solution&)>;
+
+/// E 200 GPa, nu 0.3, plane stress: what the families are solved with. With
+/// given tractions the stresses do not depend on it.
+inline constexpr solver::HookeLaw family_material{200e3, 0.3, solver::PlaneState::stress};
+
+/// Nominal stress of the families' loads, MPa.
+inline constexpr double unit_stress = 100.0;
+
+mesh::Hole circle(double diameter, const Point& centre = Point::Zero());
+/// A hole with sizes along x and along y.
+mesh::Hole sized_hole(mesh::HoleShape shape, double along_x, double along_y, double corner_radius = 0.0);
+
+/// A load of unit_stress.
+solver::Load unit_load(solver::Load::Kind kind);
+/// A plate of unit thickness under loads of unit_stress each.
+solver::Problem plate_under(double length, double width, std::vector<mesh::Hole> holes,
+                            const std::vector<solver::Load::Kind>& loads);
+
+/// Solves with settle(), asking the largest edge stress at `hole`; our number is
+/// what `measure` reads. `model` as in Ours.
+Question settled(solver::Problem problem, Measure measure, double model = 0.0, std::size_t hole = 0);
+
+/// The largest edge stress at a hole over a nominal stress, MPa.
+Measure largest_over(double nominal, std::size_t hole = 0);
+/// The edge stress at the end of an axis of the hole that is free of traction
+/// there, parallel to an axis of the plate.
+Measure stress_at(const Point& point, double nominal, std::size_t hole = 0);
+
+/// One hole in a plate on whose outline acts the traction of a field that is
+/// known: our number is the largest or smallest edge stress over `nominal`.
+Question exact_field(mesh::Plate plate, StressField field, solver::Quantity quantity, double nominal);
+
+}  // namespace raiser::validation
