@@ -1,4 +1,4 @@
-#include "validation/published.hpp"
+#include "validation/published/records.hpp"
 
 namespace raiser::validation {
 
@@ -269,7 +269,8 @@ std::vector<Published> other_shapes() {
 std::vector<Published> all() {
   std::vector<Published> list;
   for (auto& part :
-       {infinite_plate(), central_circle(), eccentric_circle(), several_circles(), other_shapes()}) {
+       {infinite_plate(), central_circle(), eccentric_circle(), several_circles(), other_shapes(),
+        notch_records(), step_and_lug_records(), strip_crack_records(), hole_crack_records()}) {
     list.insert(list.end(), part.begin(), part.end());
   }
   return list;
