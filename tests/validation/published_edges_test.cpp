@@ -166,14 +166,6 @@ TEST(PublishedEdges, Lug) {
   }
 }
 
-// Uniaxial carbon and glass laminates and their transverse direction.
-TEST(PublishedEdges, OrthotropicHole) {
-  EXPECT_NEAR(orthotropic_circle(138.0 / 9, 0.3, 138 / 6.9), 6.21839, 1e-5);
-  EXPECT_NEAR(orthotropic_circle(38.6 / 8.27, 0.26, 38.6 / 4.14), 4.62278, 1e-5);
-  EXPECT_NEAR(orthotropic_circle(9.0 / 138, 0.3 * 9 / 138, 9 / 6.9), 2.33266, 1e-5);
-  EXPECT_NEAR(orthotropic_circle(1, 0.3, 2.6), 3, 1e-12);
-}
-
 TEST(PublishedEdges, OrthotropicStrip) {
   EXPECT_NEAR(orthotropic_strip(6.21839, 0.2), 6.50296, 6e-5 * 6.50296);
   EXPECT_NEAR(orthotropic_strip(6.21839, 0.4), 7.39973, 6e-5 * 7.39973);

@@ -13,12 +13,16 @@ std::vector<Family> families() {
           circle_half_plane(),
           two_circles(),
           two_circles_along(),
+          row_across(),
+          row_along(),
           ellipse_strip(),
           slot_infinite(),
           rounded_rectangle_infinite(),
           rounded_square_infinite(),
           pressure_infinite(),
-          pressure_half_plane()};
+          pressure_half_plane(),
+          orthotropic_infinite(),
+          orthotropic_strip_tension()};
 }
 
 }  // namespace raiser::validation

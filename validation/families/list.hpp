@@ -15,11 +15,15 @@ Family circle_eccentric_chart();
 Family circle_half_plane();
 Family two_circles();
 Family two_circles_along();
+Family row_across();
+Family row_along();
 Family ellipse_strip();
 Family slot_infinite();
 Family rounded_rectangle_infinite();
 Family rounded_square_infinite();
 Family pressure_infinite();
 Family pressure_half_plane();
+Family orthotropic_infinite();
+Family orthotropic_strip_tension();
 
 }  // namespace raiser::validation

@@ -3,6 +3,7 @@
 #include <functional>
 #include <vector>
 
+#include "solver/fe/model.hpp"
 #include "solver/solution.hpp"
 #include "validation/exact/exact.hpp"
 #include "validation/families.hpp"
@@ -15,7 +16,7 @@ using Measure = std::function<std::optional<solver::Estimate>(const solver::Solu
 
 /// E 200 GPa, nu 0.3, plane stress: what the families are solved with. With
 /// given tractions the stresses do not depend on it.
-inline constexpr solver::HookeLaw family_material{200e3, 0.3, solver::PlaneState::stress};
+inline const solver::HookeLaw family_material{200e3, 0.3, solver::PlaneState::stress};
 
 /// Nominal stress of the families' loads, MPa.
 inline constexpr double unit_stress = 100.0;
@@ -42,6 +43,12 @@ Measure stress_at(const Point& point, double nominal, std::size_t hole = 0);
 
 /// One hole in a plate on whose outline acts the traction of a field that is
 /// known: our number is the largest or smallest edge stress over `nominal`.
-Question exact_field(mesh::Plate plate, StressField field, solver::Quantity quantity, double nominal);
+Question exact_field(mesh::Plate plate, StressField field, solver::Quantity quantity, double nominal,
+                     const solver::HookeLaw& material = family_material);
+
+/// Raises the degree on a model's mesh until a number at the first hole meets
+/// the tolerance; the model must have one load.
+Ours with_rising_degree(const solver::Model& model, const mesh::Plate& plate, solver::Quantity quantity,
+                        double tolerance, double nominal);
 
 }  // namespace raiser::validation

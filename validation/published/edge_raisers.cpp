@@ -122,10 +122,6 @@ double lug_net(double x) { return 12.882 + x * (-52.714 + x * (89.762 - 51.667 *
 
 double lug_bearing(double x) { return 0.2880 + x * (8.820 + x * (-23.196 + 29.167 * x)); }
 
-double orthotropic_circle(double e1_over_e2, double nu12, double e1_over_g12) {
-  return 1 + std::sqrt(2 * (std::sqrt(e1_over_e2) - nu12) + e1_over_g12);
-}
-
 double orthotropic_strip(double kt_infinite, double x) {
   const double isotropic = 3 * (1 - x) / (2 + std::pow(1 - x, 3));  // infinite over strip
   const double m2 = (std::sqrt(1 - 8 * (isotropic - 1)) - 1) / (2 * x * x);

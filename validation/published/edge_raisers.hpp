@@ -57,9 +57,8 @@ double lug_bearing(double x);
 
 // Orthotropic plate with a circular hole, tension along its axis 1.
 
-/// Kt at the side of the hole in an infinite plate: 1 + sqrt(2(sqrt(E1/E2) - nu12) + E1/G12).
-double orthotropic_circle(double e1_over_e2, double nu12, double e1_over_g12);
-/// Kt gross in a strip of width W, x = d/W, from that of the infinite plate.
+/// Kt gross in a strip of width W, x = d/W, from that of the infinite plate
+/// (lekhnitskii_factor).
 double orthotropic_strip(double kt_infinite, double x);
 
 }  // namespace raiser::validation
