@@ -1,6 +1,8 @@
 #include <algorithm>
 #include <cmath>
+#include <numbers>
 
+#include "mesh/region/vertex.hpp"
 #include "mesh/triangulate/size_rule.hpp"
 
 namespace raiser::mesh {
@@ -146,19 +148,36 @@ double radius_at_jump(const Piece& a, const Piece& b) {
   return std::isfinite(smaller) && smaller < 0.99 * std::max(ra, rb) ? smaller : 0.0;
 }
 
-/// Pieces of `piece` that shrink geometrically towards a jump of curvature at
-/// its begin (`before` > 0) and its end (`after` > 0).
+/// Whether stress is singular, or asked to be taken as such, where two pieces meet.
+bool is_singular(const Piece& a, const Piece& b, const SizeRule& rule) {
+  double angle = angle_between(a.curve, b.curve);
+  if (a.on_mirror() || b.on_mirror()) angle *= 2;  // with its mirror image
+  if (angle > std::numbers::pi + least_corner && !(a.on_mirror() && b.on_mirror())) return true;
+  const double close = 1e-9 * (a.length + b.length);
+  return std::any_of(rule.singular.begin(), rule.singular.end(),
+                     [&](const Point& x) { return (x - b.from).norm() <= close; });
+}
+
+/// Wanted length of the sides where two pieces meet, if they are to shrink
+/// towards that place: at a singular place or a jump of curvature.
+double size_at_joint(const Piece& a, const Piece& b, const SizeRule& rule) {
+  if (is_singular(a, b, rule)) return rule.corner * std::min(a.length, b.length);
+  const double factor = std::min(rule.factor(a.curve.owner), rule.factor(b.curve.owner));
+  return rule.joint * factor * radius_at_jump(a, b);
+}
+
+/// Pieces of `piece` that shrink geometrically to a wanted length at its begin
+/// (`before` > 0) and its end (`after` > 0).
 void grade(const Piece& piece, double before, double after, const SizeRule& rule, DividedLoop& out) {
-  const double size = rule.joint * rule.factor(piece.curve.owner);
   const double enough = std::sqrt(rule.joint_growth);
-  if (before > 0 && after > 0 && piece.length > size * std::min(before, after) * enough) {
+  if (before > 0 && after > 0 && piece.length > std::min(before, after) * enough) {
     const auto [first, second] = split_at(piece.curve, 0.5);
     grade(Piece(first, piece.loop), before, 0, rule, out);
     grade(Piece(second, piece.loop), 0, after, rule, out);
     return;
   }
   const double near = std::max(before, after);
-  if (near == 0.0 || piece.length <= size * near * enough) {
+  if (near == 0.0 || piece.length <= near * enough) {
     out.push_back(piece.curve);
     return;
   }
@@ -172,8 +191,8 @@ DividedLoop grade_joints(const std::vector<Piece>& loop, const SizeRule& rule) {
   DividedLoop result;
   const std::size_t n = loop.size();
   for (std::size_t i = 0; i < n; ++i)
-    grade(loop[i], radius_at_jump(loop[(i + n - 1) % n], loop[i]), radius_at_jump(loop[i], loop[(i + 1) % n]),
-          rule, result);
+    grade(loop[i], size_at_joint(loop[(i + n - 1) % n], loop[i], rule),
+          size_at_joint(loop[i], loop[(i + 1) % n], rule), rule, result);
   return result;
 }
 

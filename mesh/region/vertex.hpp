@@ -1,0 +1,31 @@
+#pragma once
+
+#include <vector>
+
+#include "mesh/region/region.hpp"
+
+namespace raiser::mesh {
+
+/// A place of the boundary where one curve ends and the next begins.
+struct Vertex {
+  Point at = Point::Zero();
+  double angle = 0.0;  ///< rad, of the material between both curves, in (0, 2 pi)
+  double direction =
+      0.0;       ///< rad, of the tangent of `after` at `at`; the material lies anticlockwise from it
+  Curve before;  ///< arrives at the place
+  Curve after;   ///< leaves it
+  double reach =
+      0.0;  ///< mm, of a disc about it that meets no boundary but these two curves, and neither's end
+};
+
+/// Smallest departure of the angle from pi that counts as a corner, rad: below
+/// it a drawing's rounding rules, and the strength of the singularity is nil.
+inline constexpr double least_corner = 0.0175;
+
+/// Every place where two curves of the region meet.
+std::vector<Vertex> vertices(const Region& region);
+
+/// The angle of the material where `before` ends and `after` begins, rad, in (0, 2 pi).
+double angle_between(const Curve& before, const Curve& after);
+
+}  // namespace raiser::mesh
