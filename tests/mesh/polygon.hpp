@@ -1,0 +1,25 @@
+#pragma once
+
+#include <vector>
+
+#include "mesh/region/region.hpp"
+
+namespace raiser::mesh {
+
+/// A region bounded by straight lines through the points, anticlockwise; line k
+/// starts at point k and is owned by hole k, so that each can be told apart.
+inline Region polygon(const std::vector<Point>& points) {
+  Region region;
+  region.loops.emplace_back();
+  for (std::size_t k = 0; k < points.size(); ++k)
+    region.loops.back().push_back({Curve::Kind::line,
+                                   points[k],
+                                   points[(k + 1) % points.size()] - points[k],
+                                   Point::Zero(),
+                                   0.0,
+                                   1.0,
+                                   {Owner::Kind::hole, k}});
+  return region;
+}
+
+}  // namespace raiser::mesh
