@@ -8,6 +8,21 @@
 namespace raiser::mesh {
 namespace {
 
+/// The sharp convex corners that a piece's whole curve runs into, and whether
+/// the piece itself touches them. Numbers count the region's corners.
+struct Sharp {
+  static constexpr int none = -1;
+  int begin = none;
+  int end = none;
+  bool touches_begin = true;
+  bool touches_end = true;
+
+  bool has(int corner) const { return corner != none && (corner == begin || corner == end); }
+  bool touches(int corner) const {
+    return corner != none && ((corner == begin && touches_begin) || (corner == end && touches_end));
+  }
+};
+
 /// One piece of boundary with its chord.
 struct Piece {
   Curve curve;
@@ -15,8 +30,10 @@ struct Piece {
   Point inward;  ///< unit normal of the chord, into the material
   double length;
   std::size_t loop;
+  Sharp sharp;
 
-  Piece(const Curve& c, std::size_t l) : curve(c), from(c.at(c.begin)), to(c.at(c.end)), loop(l) {
+  Piece(const Curve& c, std::size_t l, const Sharp& corners = {})
+      : curve(c), from(c.at(c.begin)), to(c.at(c.end)), loop(l), sharp(corners) {
     const Point chord = to - from;
     length = chord.norm();
     inward = Point(-chord.y(), chord.x()) / length;
@@ -79,12 +96,24 @@ Way way(const Piece& a, const Piece& b) {
   return {length, length > 0 ? Point(best / length) : Point::Zero()};
 }
 
+/// Whether the two meet at, or run towards, a sharp corner that `piece` touches:
+/// the distance between them vanishes there, whatever their length.
+bool share_corner(const Piece& piece, const Piece& other) {
+  const auto shared = [&](int corner) { return piece.sharp.touches(corner) && other.sharp.has(corner); };
+  return shared(piece.sharp.begin) || shared(piece.sharp.end);
+}
+
 /// Whether `piece` is too long beside `other`. Pieces of boundary limit each
 /// other across the material between them. A mirror line lies inside the
 /// material: it limits as half a ligament and is graded like the triangles.
 bool is_too_long(const Piece& piece, const Piece& other, const SizeRule& rule) {
   const Way between = way(piece, other);
-  if (between.length == 0.0) return piece.length > (piece.on_mirror() ? 2.0 : rule.neighbour) * other.length;
+  const bool at_corner = share_corner(piece, other);
+  if (between.length == 0.0) {
+    if (at_corner && !share_corner(other, piece)) return false;
+    return piece.length > (piece.on_mirror() ? 2.0 : rule.neighbour) * other.length;
+  }
+  if (at_corner) return false;
   if (piece.on_mirror() && piece.length > 2.0 * other.length + rule.growth * between.length) return true;
   constexpr double facing = 0.1;
   if (between.direction.dot(piece.inward) < facing || -between.direction.dot(other.inward) < facing)
@@ -130,8 +159,10 @@ bool split_pass(std::vector<Piece>& pieces, const SizeRule& rule) {
       continue;
     }
     const auto [first, second] = split_at(pieces[i].curve, 0.5);
-    result.emplace_back(first, pieces[i].loop);
-    result.emplace_back(second, pieces[i].loop);
+    result.emplace_back(first, pieces[i].loop, pieces[i].sharp);
+    result.back().sharp.touches_end = false;
+    result.emplace_back(second, pieces[i].loop, pieces[i].sharp);
+    result.back().sharp.touches_begin = false;
   }
   const bool any = result.size() != pieces.size();
   pieces = std::move(result);
@@ -196,13 +227,29 @@ DividedLoop grade_joints(const std::vector<Piece>& loop, const SizeRule& rule) {
   return result;
 }
 
+/// Divides a loop by turning, and marks its sharp corners: convex ones of less
+/// than a right angle. `corners` counts those of the loops before.
+void divide_loop(const Loop& loop, std::size_t index, const SizeRule& rule, int& corners,
+                 std::vector<Piece>& out) {
+  const std::size_t n = loop.size();
+  std::vector<int> corner(n, Sharp::none);  // where curve k begins
+  for (std::size_t k = 0; k < n; ++k)
+    if (angle_between(loop[(k + n - 1) % n], loop[k]) < std::numbers::pi / 2 - 1e-6) corner[k] = corners++;
+  for (std::size_t k = 0; k < n; ++k) {
+    const std::size_t first = out.size();
+    divide_by_turn(loop[k], rule.turn * rule.factor(loop[k].owner), index, out);
+    for (std::size_t i = first; i < out.size(); ++i)
+      out[i].sharp = {corner[k], corner[(k + 1) % n], i == first, i + 1 == out.size()};
+  }
+}
+
 }  // namespace
 
 std::vector<DividedLoop> divide(const Region& region, const SizeRule& rule) {
   std::vector<Piece> pieces;
+  int corners = 0;
   for (std::size_t l = 0; l < region.loops.size(); ++l)
-    for (const Curve& curve : region.loops[l])
-      divide_by_turn(curve, rule.turn * rule.factor(curve.owner), l, pieces);
+    divide_loop(region.loops[l], l, rule, corners, pieces);
   while (split_pass(pieces, rule)) {
   }
   std::vector<std::vector<Piece>> loops(region.loops.size());

@@ -1,6 +1,8 @@
 #include "solver/corner/intensity.hpp"
 
+#include <Eigen/Geometry>
 #include <Eigen/LU>
+#include <Eigen/QR>
 #include <algorithm>
 #include <cmath>
 #include <numbers>
@@ -70,27 +72,142 @@ void add_arc_form(const FieldValue& value, const Point& origin, const Polar::Pla
   }
 }
 
-/// Minus the integral of (t u* - t* u) . grad(weight) over the disc.
-void add_domain(const Field& field, const CornerSite& site, double radius, const Point& origin,
-                const std::vector<WedgeMode>& duals, const PlaneConstants& material, std::vector<Complex>& out) {
-  const TriangleRule rule = triangle_rule(field.degree() + 7);
-  const Polar polar(site);
-  const Weight weight{radius};
+/// Whether a cell lies beyond the disc for certain.
+bool is_outside(const Field& field, std::size_t cell, const Point& at, double radius) {
   const mesh::Mesh& mesh = field.mesh();
-  std::vector<Point> corners{{0, 0}, {1, 0}, {0, 1}};
+  const Image& image = field.images()[cell / mesh.triangles().size()];
+  Eigen::AlignedBox2d box;
+  for (const int v : mesh.triangles()[cell % mesh.triangles().size()])
+    box.extend(image.apply(mesh.points()[v]));
+  const Point margin = 0.3 * box.sizes();  // for curved sides
+  return Eigen::AlignedBox2d(box.min() - margin, box.max() + margin).exteriorDistance(at) >= radius;
+}
+
+/// Area of a cell at reference points of its sample.
+double area_factor(const Field& field, std::size_t cell, const Point& reference) {
+  const std::size_t triangles = field.mesh().triangles().size();
+  const bool flips = field.images()[cell / triangles].flips();
+  const Point own = flips ? Point(reference.y(), reference.x()) : reference;
+  return field.mesh().map(static_cast<int>(cell % triangles), own).jacobian.determinant();
+}
+
+/// Minus the integral of (t u* - t* u) . grad(weight) over the disc.
+void add_domain(const Field& field, const Polar& polar, const Weight& weight, const Point& origin,
+                const std::vector<WedgeMode>& duals, const PlaneConstants& material,
+                std::vector<Complex>& out) {
+  const TriangleRule rule = triangle_rule(field.degree() + 7);
   for (std::size_t cell = 0; cell < field.cells(); ++cell) {
-    const mesh::Box box = field.box(cell);
-    if ((site.vertex.at.cwiseMax(box.low).cwiseMin(box.high) - site.vertex.at).norm() >= radius) continue;
+    if (is_outside(field, cell, polar.at(0.0, 0.0), weight.radius)) continue;
     const std::vector<FieldValue> values = field.sample(cell, rule.points);
-    const int triangle = static_cast<int>(cell % mesh.triangles().size());
     for (std::size_t q = 0; q < values.size(); ++q) {
       const Polar::Place p = polar.place(values[q].point);
-      if (p.r >= radius) continue;
-      const double area = field.jacobian(cell, rule.points[q]) * rule.weights[q];
+      if (p.r >= weight.radius) continue;
+      const double area = area_factor(field, cell, rule.points[q]) * rule.weights[q];
       add_arc_form(values[q], origin, p, -weight.slope(p.r) * area, duals, material, out);
     }
   }
 }
 
+/// The parameter at which a curve leaves the disc, from its end at the vertex.
+double leaving(const mesh::Curve& curve, bool starts, const Point& at, double radius) {
+  double inside = starts ? curve.begin : curve.end;
+  double outside = starts ? curve.end : curve.begin;
+  for (int step = 0; step < 80; ++step) {
+    const double middle = (inside + outside) / 2;
+    ((curve.at(middle) - at).norm() < radius ? inside : outside) = middle;
+  }
+  return inside;
+}
+
+/// The integral of weight (t u* - t* u) along one edge within the disc; t* is
+/// zero on a straight one.
+void add_edge(const Field& field, const CornerSite& site, int edge, const Polar& polar, const Weight& weight,
+              const Point& origin, const std::vector<WedgeMode>& duals, const PlaneConstants& material,
+              std::vector<Complex>& out) {
+  const mesh::Curve& curve = edge == 0 ? site.vertex.after : site.vertex.before;
+  const WedgeEdge hold = edge == 0 ? site.wedge.first : site.wedge.second;
+  const double from = edge == 0 ? curve.begin : curve.end;
+  const double to = leaving(curve, edge == 0, site.vertex.at, weight.radius);
+  const double strongest = duals.empty() ? 0.0 : -duals.back().exponent.real();
+  const double power = std::clamp(1.0 / (1.0 - strongest), 2.0, 100.0);
+  const mesh::GaussRule rule = mesh::gauss_legendre(40);
+  for (std::size_t q = 0; q < rule.points.size(); ++q) {
+    const double s = (1 + rule.points[q]) / 2;
+    const double parameter = from + (to - from) * std::pow(s, power);
+    const Point x = curve.at(parameter);
+    const Polar::Place p = polar.place(x);
+    if (!(p.r > 0)) continue;
+    const Point along = (curve.derivative(parameter) * (curve.end > curve.begin ? 1.0 : -1.0)).normalized();
+    const Point outward(along.y(), -along.x());
+    const double step = rule.weights[q] / 2 * power * std::pow(s, power - 1) * std::abs(to - from) *
+                        curve.derivative(parameter).norm() * weight.value(p.r);
+    const bool is_curved = curve.kind != mesh::Curve::Kind::line && hold == WedgeEdge::free;
+    const auto value = is_curved ? field.at(x) : std::nullopt;
+    const Point t = site.traction ? site.traction(edge, x, outward) : Point::Zero();
+    // The face of a slit is told by its edge, not by the angle's rounding.
+    const double theta = edge == 0 && p.theta > 0.5 * site.wedge.angle    ? p.theta - 2 * std::numbers::pi
+                         : edge == 1 && p.theta < -0.5 * site.wedge.angle ? p.theta + 2 * std::numbers::pi
+                                                                          : p.theta;
+    for (std::size_t m = 0; m < duals.size(); ++m) {
+      const Parts d = parts(duals[m], p.r, theta, material);
+      out[m] += step * (t.dot(p.e_r) * d(&WedgeField::u_r) + t.dot(p.e_t) * d(&WedgeField::u_t));
+      if (!value) continue;
+      const Point u = value->displacement - origin;
+      const double n_r = outward.dot(p.e_r);
+      const double n_t = outward.dot(p.e_t);
+      out[m] -= step * ((n_r * d(&WedgeField::rr) + n_t * d(&WedgeField::rt)) * u.dot(p.e_r) +
+                        (n_r * d(&WedgeField::rt) + n_t * d(&WedgeField::tt)) * u.dot(p.e_t));
+    }
+  }
+}
+
+double square(const Stress& s) { return s.xx * s.xx + s.yy * s.yy + 2 * s.xy * s.xy; }
+
 }  // namespace
+
+std::vector<Complex> amplitudes(const Field& field, const CornerSite& site,
+                                const std::vector<WedgeMode>& modes, const PlaneConstants& material,
+                                double radius) {
+  std::vector<WedgeMode> duals;
+  for (const WedgeMode& mode : modes) duals.push_back(dual(mode, site.wedge, material));
+  const Polar polar(site);
+  const Weight weight{radius};
+  const auto tip = field.at(site.vertex.at);
+  const Point origin = tip ? tip->displacement : Point::Zero();
+  std::vector<Complex> result(modes.size(), 0.0);
+  add_domain(field, polar, weight, origin, duals, material, result);
+  for (const int edge : {0, 1}) add_edge(field, site, edge, polar, weight, origin, duals, material, result);
+  for (std::size_t m = 0; m < modes.size(); ++m) {
+    // Of a conjugate pair one field is real twice: the solution is half the sum of both.
+    const double share = modes[m].is_complex() ? 2.0 : 1.0;
+    result[m] *= share / pairing(modes[m], duals[m], site.wedge, material);
+    if (!modes[m].is_complex()) result[m] = result[m].real();
+  }
+  return result;
+}
+
+std::optional<double> measured_exponent(const Field& field, const CornerSite& site, double inner,
+                                        double outer) {
+  constexpr int angles = 24;
+  constexpr int radii = 12;
+  const Polar polar(site);
+  Eigen::MatrixX2d lines(radii, 2);
+  Eigen::VectorXd logs(radii);
+  for (int k = 0; k < radii; ++k) {
+    const double r = inner * std::pow(outer / inner, static_cast<double>(k) / (radii - 1));
+    double sum = 0.0;
+    for (int i = 0; i < angles; ++i) {
+      const double theta = site.wedge.angle * ((i + 0.5) / angles - 0.5);
+      const auto value = field.at(polar.at(r, theta));
+      if (!value) return std::nullopt;
+      sum += square(value->stress);
+    }
+    if (!(sum > 0)) return std::nullopt;
+    lines.row(k) << 1.0, std::log(r);
+    logs[k] = 0.5 * std::log(sum);
+  }
+  const Eigen::Vector2d fit = lines.colPivHouseholderQr().solve(logs);
+  return fit[1] + 1.0;
+}
+
 }  // namespace raiser::solver

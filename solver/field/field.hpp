@@ -30,6 +30,9 @@ class Field {
 
   std::size_t cells() const { return images_.size() * mesh_.triangles().size(); }
   int degree() const { return degree_; }
+  /// The meshed part; cell k is triangle k modulo its triangles in image k over them.
+  const mesh::Mesh& mesh() const { return mesh_; }
+  const std::vector<Image>& images() const { return images_; }
 
   /// Values at reference points of cell `cell`, in order.
   std::vector<FieldValue> sample(std::size_t cell, std::span<const Point> reference) const;

@@ -95,5 +95,29 @@ TEST(Corners, MayBeAsFineAsAsked) {
   }
 }
 
+// Two edges that meet at a sharp convex angle come arbitrarily close: they must
+// not divide one another for ever.
+TEST(Corners, SharpConvexOnesAreMeshed) {
+  for (const double half : {0.7, 0.5, 0.3, 0.15, 0.05}) {
+    const double w = 40 * std::tan(half);
+    for (const auto& points : {std::vector<Point>{{0, 0}, {40, -w}, {40, w}},
+                               std::vector<Point>{{0, 0}, {40, -w}, {80, 0}, {40, w}}}) {
+      const Mesh mesh = triangulate(polygon(points), {});
+      EXPECT_TRUE(inverted_triangles(mesh).empty()) << half;
+      EXPECT_LT(mesh.triangles().size(), 400U) << half;
+    }
+  }
+}
+
+TEST(Corners, SharpConvexOnesAreMeshedOnMirrorLinesToo) {
+  for (const double half : {0.7, 0.3, 0.1}) {
+    const double w = 40 * std::tan(half);
+    const Region whole = polygon({{-40, 0}, {0, -w}, {40, 0}, {0, w}});
+    const Mesh mesh = triangulate(cut(whole, {.x = true, .y = true}), {});
+    EXPECT_TRUE(inverted_triangles(mesh).empty()) << half;
+    EXPECT_LT(mesh.triangles().size(), 200U) << half;
+  }
+}
+
 }  // namespace
 }  // namespace raiser::mesh
