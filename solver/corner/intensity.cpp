@@ -4,6 +4,7 @@
 #include <Eigen/LU>
 #include <Eigen/QR>
 #include <algorithm>
+#include <array>
 #include <cmath>
 #include <numbers>
 
@@ -13,15 +14,6 @@ namespace raiser::solver {
 namespace {
 
 using Complex = std::complex<double>;
-
-/// A mode's field as complex numbers.
-struct Parts {
-  WedgeField real, imaginary;
-  Complex operator()(double WedgeField::*part) const { return {real.*part, imaginary.*part}; }
-};
-Parts parts(const WedgeMode& mode, double r, double theta, const PlaneConstants& material) {
-  return {mode.at(r, theta, material), mode.at(r, theta, material, Complex(0, -1))};
-}
 
 /// Polar coordinates about a vertex, angles from the bisector of the material.
 class Polar {
@@ -66,9 +58,9 @@ void add_arc_form(const FieldValue& value, const Point& origin, const Polar::Pla
   const Point t = stress * p.e_r;
   const Point u = value.displacement - origin;
   for (std::size_t m = 0; m < duals.size(); ++m) {
-    const Parts d = parts(duals[m], p.r, p.theta, material);
-    out[m] += factor * (t.dot(p.e_r) * d(&WedgeField::u_r) + t.dot(p.e_t) * d(&WedgeField::u_t) -
-                        d(&WedgeField::rr) * u.dot(p.e_r) - d(&WedgeField::rt) * u.dot(p.e_t));
+    const ComplexWedgeField d = duals[m].complex_at(p.r, p.theta, material);
+    out[m] +=
+        factor * (t.dot(p.e_r) * d.u_r + t.dot(p.e_t) * d.u_t - d.rr * u.dot(p.e_r) - d.rt * u.dot(p.e_t));
   }
 }
 
@@ -149,19 +141,47 @@ void add_edge(const Field& field, const CornerSite& site, int edge, const Polar&
                          : edge == 1 && p.theta < -0.5 * site.wedge.angle ? p.theta + 2 * std::numbers::pi
                                                                           : p.theta;
     for (std::size_t m = 0; m < duals.size(); ++m) {
-      const Parts d = parts(duals[m], p.r, theta, material);
-      out[m] += step * (t.dot(p.e_r) * d(&WedgeField::u_r) + t.dot(p.e_t) * d(&WedgeField::u_t));
+      const ComplexWedgeField d = duals[m].complex_at(p.r, theta, material);
+      out[m] += step * (t.dot(p.e_r) * d.u_r + t.dot(p.e_t) * d.u_t);
       if (!value) continue;
       const Point u = value->displacement - origin;
       const double n_r = outward.dot(p.e_r);
       const double n_t = outward.dot(p.e_t);
-      out[m] -= step * ((n_r * d(&WedgeField::rr) + n_t * d(&WedgeField::rt)) * u.dot(p.e_r) +
-                        (n_r * d(&WedgeField::rt) + n_t * d(&WedgeField::tt)) * u.dot(p.e_t));
+      out[m] -= step * ((n_r * d.rr + n_t * d.rt) * u.dot(p.e_r) + (n_r * d.rt + n_t * d.tt) * u.dot(p.e_t));
     }
   }
 }
 
-double square(const Stress& s) { return s.xx * s.xx + s.yy * s.yy + 2 * s.xy * s.xy; }
+/// Stress in polar axes: rr, tt, rt.
+Eigen::Vector3d polar_stress(const FieldValue& value, const Polar::Place& p) {
+  Eigen::Matrix2d stress;
+  stress << value.stress.xx, value.stress.xy, value.stress.xy, value.stress.yy;
+  return {p.e_r.dot(stress * p.e_r), p.e_t.dot(stress * p.e_t), p.e_r.dot(stress * p.e_t)};
+}
+
+/// Sum of squares of the stress along an arc, of its symmetric or antisymmetric
+/// part about the bisector, or of all of it.
+std::optional<double> stress_on_arc(const Field& field, const CornerSite& site, const Polar& polar, double r,
+                                    WedgeMode::Symmetry symmetry) {
+  constexpr int half_angles = 12;
+  const double sign = symmetry == WedgeMode::Symmetry::symmetric ? 1.0 : -1.0;
+  double sum = 0.0;
+  for (int i = 0; i < half_angles; ++i) {
+    std::array<Eigen::Vector3d, 2> sides;
+    for (const int side : {0, 1}) {
+      const double theta = (side == 0 ? 0.5 : -0.5) * site.wedge.angle * (i + 0.5) / half_angles;
+      const auto value = field.at(polar.at(r, theta));
+      if (!value) return std::nullopt;
+      sides[side] = polar_stress(*value, polar.place(value->point));
+    }
+    const Eigen::Vector3d turned(sides[1][0], sides[1][1], -sides[1][2]);
+    if (symmetry == WedgeMode::Symmetry::none)
+      sum += sides[0].squaredNorm() + sides[1].squaredNorm();
+    else
+      sum += (sides[0] + sign * turned).squaredNorm();
+  }
+  return sum;
+}
 
 }  // namespace
 
@@ -186,25 +206,18 @@ std::vector<Complex> amplitudes(const Field& field, const CornerSite& site,
   return result;
 }
 
-std::optional<double> measured_exponent(const Field& field, const CornerSite& site, double inner,
-                                        double outer) {
-  constexpr int angles = 24;
+std::optional<double> measured_exponent(const Field& field, const CornerSite& site,
+                                        WedgeMode::Symmetry symmetry, double inner, double outer) {
   constexpr int radii = 12;
   const Polar polar(site);
   Eigen::MatrixX2d lines(radii, 2);
   Eigen::VectorXd logs(radii);
   for (int k = 0; k < radii; ++k) {
     const double r = inner * std::pow(outer / inner, static_cast<double>(k) / (radii - 1));
-    double sum = 0.0;
-    for (int i = 0; i < angles; ++i) {
-      const double theta = site.wedge.angle * ((i + 0.5) / angles - 0.5);
-      const auto value = field.at(polar.at(r, theta));
-      if (!value) return std::nullopt;
-      sum += square(value->stress);
-    }
-    if (!(sum > 0)) return std::nullopt;
+    const auto sum = stress_on_arc(field, site, polar, r, symmetry);
+    if (!sum || !(*sum > 0)) return std::nullopt;
     lines.row(k) << 1.0, std::log(r);
-    logs[k] = 0.5 * std::log(sum);
+    logs[k] = 0.5 * std::log(*sum);
   }
   const Eigen::Vector2d fit = lines.colPivHouseholderQr().solve(logs);
   return fit[1] + 1.0;

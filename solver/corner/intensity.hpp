@@ -34,9 +34,10 @@ std::vector<std::complex<double>> amplitudes(const Field& field, const CornerSit
                                              const PlaneConstants& material, double radius);
 
 /// The exponent e of a growth of stress as r^(e - 1) between two distances from
-/// the vertex, from the root mean square of the stress along arcs about it.
-/// Nothing when a point on them is not in the plate.
-std::optional<double> measured_exponent(const Field& field, const CornerSite& site, double inner,
-                                        double outer);
+/// the vertex, from the root mean square of the stress along arcs about it: of
+/// the part that is symmetric or antisymmetric about the bisector, or of all of
+/// it. Nothing when a point of them is not in the plate or the part is zero.
+std::optional<double> measured_exponent(const Field& field, const CornerSite& site,
+                                        WedgeMode::Symmetry symmetry, double inner, double outer);
 
 }  // namespace raiser::solver

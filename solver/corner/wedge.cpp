@@ -105,22 +105,20 @@ using Row = std::array<Complex, 4>;
 Row shape_row(Complex e, double t) {
   return {std::cos((e + 1.0) * t), std::sin((e + 1.0) * t), std::cos((e - 1.0) * t), std::sin((e - 1.0) * t)};
 }
-Row slope_row(Complex e, double t) {
-  const Row s = shape_row(e, t);
+/// The first and second derivative of F, from its own row.
+Row slope_row(Complex e, const Row& s) {
   return {-(e + 1.0) * s[1], (e + 1.0) * s[0], -(e - 1.0) * s[3], (e - 1.0) * s[2]};
 }
-Row curvature_row(Complex e, double t) {
-  Row s = shape_row(e, t);
-  for (int k = 0; k < 4; ++k) s[k] *= -(k < 2 ? (e + 1.0) * (e + 1.0) : (e - 1.0) * (e - 1.0));
-  return s;
+Row curvature_row(Complex e, const Row& s) {
+  const Complex a = -(e + 1.0) * (e + 1.0);
+  const Complex b = -(e - 1.0) * (e - 1.0);
+  return {a * s[0], a * s[1], b * s[2], b * s[3]};
 }
 /// 2 mu u_r and 2 mu u_t, from Kolosov's formula.
-Row radial_row(Complex e, double t, double kappa) {
-  const Row s = shape_row(e, t);
+Row radial_row(Complex e, const Row& s, double kappa) {
   return {-(e + 1.0) * s[0], -(e + 1.0) * s[1], (kappa - e) * s[2], (kappa - e) * s[3]};
 }
-Row hoop_row(Complex e, double t, double kappa) {
-  const Row s = shape_row(e, t);
+Row hoop_row(Complex e, const Row& s, double kappa) {
   return {(e + 1.0) * s[1], -(e + 1.0) * s[0], (kappa + e) * s[3], -(kappa + e) * s[2]};
 }
 
@@ -134,10 +132,11 @@ std::array<Complex, 4> coefficients(const Wedge& wedge, Complex e, Symmetry symm
   const std::array edges{wedge.first, wedge.second};
   for (int k = 0; k < 2; ++k) {
     const double t = (k == 0 ? -0.5 : 0.5) * wedge.angle;
-    const Row first = edges[k] == WedgeEdge::free      ? shape_row(e, t)
-                      : edges[k] == WedgeEdge::clamped ? radial_row(e, t, kappa)
-                                                       : slope_row(e, t);
-    const Row second = edges[k] == WedgeEdge::free ? slope_row(e, t) : hoop_row(e, t, kappa);
+    const Row shape = shape_row(e, t);
+    const Row first = edges[k] == WedgeEdge::free      ? shape
+                      : edges[k] == WedgeEdge::clamped ? radial_row(e, shape, kappa)
+                                                       : slope_row(e, shape);
+    const Row second = edges[k] == WedgeEdge::free ? slope_row(e, shape) : hoop_row(e, shape, kappa);
     for (int c = 0; c < 4; ++c) {
       conditions(2 * k, c) = first[c];
       conditions(2 * k + 1, c) = second[c];
@@ -163,7 +162,7 @@ Complex hoop_stress(const WedgeMode& mode, double t) {
   return mode.exponent * (mode.exponent + 1.0) * times(shape_row(mode.exponent, t), mode.coefficients);
 }
 Complex shear_stress(const WedgeMode& mode, double t) {
-  return -mode.exponent * times(slope_row(mode.exponent, t), mode.coefficients);
+  return -mode.exponent * times(slope_row(mode.exponent, shape_row(mode.exponent, t)), mode.coefficients);
 }
 
 void normalise(WedgeMode& mode, const Wedge& wedge) {
@@ -184,22 +183,6 @@ WedgeMode mode_of(const Wedge& wedge, Complex exponent, Symmetry symmetry, const
   return {exponent, symmetry, coefficients(wedge, exponent, symmetry, material.kappa)};
 }
 
-/// The complex field, of amplitude one.
-struct ComplexField {
-  Complex rr, tt, rt, u_r, u_t;
-};
-ComplexField complex_field(const WedgeMode& mode, double r, double t, const PlaneConstants& material) {
-  const Complex e = mode.exponent;
-  const double kappa = material.kappa;
-  const Complex stress = std::pow(Complex(r), e - 1.0);
-  const Complex displacement = std::pow(Complex(r), e) / (2 * material.shear_modulus);
-  const Complex shape = times(shape_row(e, t), mode.coefficients);
-  return {stress * (times(curvature_row(e, t), mode.coefficients) + (e + 1.0) * shape),
-          stress * e * (e + 1.0) * shape, -stress * e * times(slope_row(e, t), mode.coefficients),
-          displacement * times(radial_row(e, t, kappa), mode.coefficients),
-          displacement * times(hoop_row(e, t, kappa), mode.coefficients)};
-}
-
 }  // namespace
 
 PlaneConstants plane_constants(const HookeLaw& material) {
@@ -208,8 +191,22 @@ PlaneConstants plane_constants(const HookeLaw& material) {
           material.state == PlaneState::stress ? (3 - nu) / (1 + nu) : 3 - 4 * nu};
 }
 
+ComplexWedgeField WedgeMode::complex_at(double r, double theta, const PlaneConstants& material) const {
+  const Complex e = exponent;
+  const double kappa = material.kappa;
+  const Complex growth = is_complex() ? std::pow(Complex(r), e) : Complex(std::pow(r, e.real()));
+  const Complex stress = growth / r;
+  const Complex displacement = growth / (2 * material.shear_modulus);
+  const Row row = shape_row(e, theta);
+  const Complex shape = times(row, coefficients);
+  return {stress * (times(curvature_row(e, row), coefficients) + (e + 1.0) * shape),
+          stress * e * (e + 1.0) * shape, -stress * e * times(slope_row(e, row), coefficients),
+          displacement * times(radial_row(e, row, kappa), coefficients),
+          displacement * times(hoop_row(e, row, kappa), coefficients)};
+}
+
 WedgeField WedgeMode::at(double r, double theta, const PlaneConstants& material, Complex amplitude) const {
-  const ComplexField f = complex_field(*this, r, theta, material);
+  const ComplexWedgeField f = complex_at(r, theta, material);
   const auto part = [&](Complex value) { return (amplitude * value).real(); };
   return {part(f.rr), part(f.tt), part(f.rt), part(f.u_r), part(f.u_t)};
 }
@@ -247,8 +244,8 @@ Complex pairing(const WedgeMode& mode, const WedgeMode& other, const Wedge& wedg
   Complex sum = 0.0;
   for (std::size_t q = 0; q < rule.points.size(); ++q) {
     const double t = 0.5 * wedge.angle * rule.points[q];
-    const ComplexField a = complex_field(mode, 1.0, t, material);
-    const ComplexField b = complex_field(other, 1.0, t, material);
+    const ComplexWedgeField a = mode.complex_at(1.0, t, material);
+    const ComplexWedgeField b = other.complex_at(1.0, t, material);
     sum += rule.weights[q] * (a.rr * b.u_r + a.rt * b.u_t - b.rr * a.u_r - b.rt * a.u_t);
   }
   return 0.5 * wedge.angle * sum;

@@ -34,6 +34,11 @@ struct WedgeField {
   double u_r = 0.0, u_t = 0.0;          ///< mm
 };
 
+/// The same of a complex field, whose real part is one of the wedge.
+struct ComplexWedgeField {
+  std::complex<double> rr, tt, rt, u_r, u_t;
+};
+
 /// One field of the form r^exponent that keeps the wedge's edge conditions:
 /// Airy's function is r^(exponent + 1) F(theta) with
 ///   F = c0 cos (e+1)t + c1 sin (e+1)t + c2 cos (e-1)t + c3 sin (e-1)t,
@@ -49,6 +54,8 @@ struct WedgeMode {
   std::array<std::complex<double>, 4> coefficients;
 
   bool is_complex() const { return exponent.imag() != 0.0; }
+  /// The complex field at (r, theta), r in mm.
+  ComplexWedgeField complex_at(double r, double theta, const PlaneConstants& material) const;
   /// The field of a complex amplitude at (r, theta), r in mm.
   WedgeField at(double r, double theta, const PlaneConstants& material,
                 std::complex<double> amplitude = 1.0) const;
