@@ -14,7 +14,7 @@ DegreeSequence::DegreeSequence(const Model& model, const Plate& plate)
 void DegreeSequence::solve(int degree) {
   if (!displacements_.empty() && displacements_.back().degree >= degree)
     throw std::invalid_argument("DegreeSequence: the degree must rise");
-  displacements_.push_back(model_->solve(degree));
+  displacements_.push_back(model_->solve(degree, room_));
   scans_.push_back(scanner_.scan(displacements_.back()));
 }
 

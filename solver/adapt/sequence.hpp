@@ -34,6 +34,7 @@ class DegreeSequence {
   const Model* model_;
   const Plate* plate_;
   EdgeScanner scanner_;
+  Room room_;
   std::vector<Displacements> displacements_;
   std::vector<EdgeScan> scans_;
 };

@@ -135,6 +135,11 @@ Factorisation::ElementMatrix Model::element_matrices(const Discretisation& space
 }
 
 Displacements Model::solve(int degree) const {
+  Room room;
+  return solve(degree, room);
+}
+
+Displacements Model::solve(int degree, Room& room) const {
   const Discretisation space(mesh_, degree);
   const Eigen::MatrixXd f = load_vectors(space);
   const auto element = element_matrices(space);
@@ -142,7 +147,7 @@ Displacements Model::solve(int degree) const {
   for (const Class& cls : classes_) {
     std::vector<bool> held = held_on_mirrors(space, cls);
     for (const int u : pins(held)) held[u] = true;
-    const Factorisation factors(tree_, space, held, element);
+    const Factorisation factors(tree_, space, held, element, room);
     Eigen::MatrixXd columns(f.rows(), static_cast<Eigen::Index>(cls.loads.size()));
     for (std::size_t k = 0; k < cls.loads.size(); ++k) columns.col(k) = f.col(cls.loads[k]);
     const Eigen::MatrixXd solved = factors.solve(columns);

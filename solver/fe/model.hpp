@@ -58,6 +58,8 @@ class Model {
 
   /// Solves for all loads. Throws std::runtime_error when the factorisation fails.
   Displacements solve(int degree) const;
+  /// The same with memory that is used again from call to call.
+  Displacements solve(int degree, Room& room) const;
 
   Balance balance(const Displacements& displacements) const;
 

@@ -37,6 +37,7 @@ ReferenceElement::ReferenceElement(int degree)
                                                   static_cast<Eigen::Index>(rule.weights.size()));
   rr = shapes.dr * weights.asDiagonal() * shapes.dr.transpose();
   rs = shapes.dr * weights.asDiagonal() * shapes.ds.transpose();
+  sr = rs.transpose();
   ss = shapes.ds * weights.asDiagonal() * shapes.ds.transpose();
 }
 

@@ -19,7 +19,7 @@ struct ReferenceElement {
   TriangleRule rule;
   mesh::MapTable maps;
   ShapeTable shapes;
-  Eigen::MatrixXd rr, rs, ss;  ///< integrals of da/dr db/dr, da/dr db/ds, da/ds db/ds
+  Eigen::MatrixXd rr, rs, sr, ss;  ///< integrals of da/dr db/dr, da/dr db/ds, da/ds db/dr, da/ds db/ds
 };
 
 /// Shape functions and map factors at positions s along each of the three sides.

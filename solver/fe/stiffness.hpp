@@ -1,6 +1,7 @@
 #pragma once
 
 #include <Eigen/Core>
+#include <array>
 #include <vector>
 
 #include "mesh/mesh.hpp"
@@ -24,13 +25,16 @@ class Stiffness {
   void element(const mesh::Mesh& mesh, int t, Eigen::MatrixXd& out);
 
  private:
-  void straight(const mesh::Mesh& mesh, int t);
-  void curved(const mesh::Mesh& mesh, int t);
+  void straight(const mesh::Mesh& mesh, int t, Eigen::MatrixXd& out) const;
+  void curved(const mesh::Mesh& mesh, int t, Eigen::MatrixXd& out);
 
-  Eigen::Matrix3d law_;
+  /// [a][b](i, j): stiffness between the slope of component a along i and that
+  /// of component b along j.
+  std::array<std::array<Eigen::Matrix2d, 2>, 2> weights_;
   const ReferenceElement* reference_;
-  Eigen::MatrixXd xx_, xy_, yy_;  ///< the same in the plate's axes, this element
-  Eigen::MatrixXd gx_, gy_;
+  Eigen::MatrixXd
+      gradients_;  ///< of a curved triangle: x, then y; one column a point, square root of weight in
+  Eigen::MatrixXd products_;
   std::vector<mesh::MapPoint> points_;
 };
 

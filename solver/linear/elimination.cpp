@@ -27,14 +27,42 @@ struct Dense {
   }
 };
 
-/// Adds the lower triangle of a child's square where `place` says.
-void add_child(const Dense& front, const double* square, const std::vector<int>& place) {
-  const int n = static_cast<int>(place.size());
-  for (int c = 0; c < n; ++c) {
-    double* to = front.column(place[c]);
-    const double* from = square + static_cast<std::size_t>(c) * n;
-    for (int r = c; r < n; ++r) to[place[r]] += from[r];
+/// Consecutive rows of a matrix that go to consecutive rows of a front.
+struct Run {
+  int from;
+  int to;
+  int length;
+};
+
+/// The runs of `place`, which holds by row of a matrix its row in the front, or
+/// -1 for a row that is left out. An entity's functions are consecutive, so
+/// runs are long.
+void find_runs(const std::vector<int>& place, std::vector<Run>& runs) {
+  runs.clear();
+  for (int k = 0; k < static_cast<int>(place.size()); ++k) {
+    if (place[k] < 0) continue;
+    if (!runs.empty() && runs.back().from + runs.back().length == k &&
+        runs.back().to + runs.back().length == place[k])
+      ++runs.back().length;
+    else
+      runs.push_back({k, place[k], 1});
   }
+}
+
+/// Adds a symmetric n x n matrix to the lower triangle of the front. Read are
+/// only entries whose place is in that triangle.
+void add(const Dense& front, const double* matrix, int n, const std::vector<Run>& runs) {
+  for (const Run& across : runs)
+    for (int c = 0; c < across.length; ++c) {
+      double* to = front.column(across.to + c);
+      const double* from = matrix + static_cast<std::size_t>(across.from + c) * n;
+      for (const Run& down : runs) {
+        if (down.to < across.to) continue;
+        double* target = to + down.to;
+        const double* source = from + down.from;
+        for (int r = &down == &across ? c : 0; r < down.length; ++r) target[r] += source[r];
+      }
+    }
 }
 
 void eliminate(const Dense& front) {
@@ -71,7 +99,7 @@ void Factorisation::number(const EliminationTree& tree, const Discretisation& sp
   }
 }
 
-void Factorisation::lay_out(const EliminationTree& tree) {
+void Factorisation::lay_out(const EliminationTree& tree, Room& room) {
   std::size_t size = 0;
   int first = 0;
   fronts_.reserve(tree.groups().size());
@@ -87,16 +115,18 @@ void Factorisation::lay_out(const EliminationTree& tree) {
     size += static_cast<std::size_t>(front.eliminated) * (front.eliminated + front.border.size());
     fronts_.push_back(std::move(front));
   }
-  factors_.assign(size, 0.0);
+  factors_ = room.take(size);
+  entries_ = size;
 }
 
 Factorisation::Factorisation(const EliminationTree& tree, const Discretisation& space,
-                             const std::vector<bool>& held, const ElementMatrix& element) {
+                             const std::vector<bool>& held, const ElementMatrix& element, Room& room) {
   number(tree, space, held);
-  lay_out(tree);
+  lay_out(tree, room);
   std::vector<int> row_of(free_, 0);  // by place in elimination order: row in the current front
   std::vector<std::vector<double>> squares(fronts_.size());
   std::vector<int> place;
+  std::vector<Run> runs;
   Discretisation::Local local;
   Eigen::MatrixXd matrix;
   for (std::size_t g = 0; g < fronts_.size(); ++g) {
@@ -104,8 +134,9 @@ Factorisation::Factorisation(const EliminationTree& tree, const Discretisation& 
     const EliminationTree::Group& group = tree.groups()[g];
     const int border = static_cast<int>(front.border.size());
     squares[g].assign(static_cast<std::size_t>(border) * border, 0.0);
-    const Dense dense{factors_.data() + front.offset, squares[g].data(), front.eliminated + border,
+    const Dense dense{factors_ + front.offset, squares[g].data(), front.eliminated + border,
                       front.eliminated};
+    std::fill_n(dense.columns, static_cast<std::size_t>(dense.rows) * dense.eliminated, 0.0);
     for (int k = 0; k < front.eliminated; ++k) row_of[front.first + k] = k;
     for (int k = 0; k < border; ++k) row_of[front.border[k]] = front.eliminated + k;
     if (group.triangle >= 0) {
@@ -115,18 +146,14 @@ Factorisation::Factorisation(const EliminationTree& tree, const Discretisation& 
       for (const int f : local.function)
         for (int c = 0; c < 2; ++c)
           place.push_back(position_[2 * f + c] < 0 ? -1 : row_of[position_[2 * f + c]]);
-      const int n = static_cast<int>(place.size());
-      for (int c = 0; c < n; ++c) {
-        if (place[c] < 0) continue;
-        double* to = dense.column(place[c]);
-        for (int r = 0; r < n; ++r)
-          if (place[r] >= place[c]) to[place[r]] += matrix(r, c);
-      }
+      find_runs(place, runs);
+      add(dense, matrix.data(), static_cast<int>(place.size()), runs);
     } else {
       for (const int child : group.children) {
         place.clear();
         for (const int u : fronts_[child].border) place.push_back(row_of[u]);
-        add_child(dense, squares[child].data(), place);
+        find_runs(place, runs);
+        add(dense, squares[child].data(), static_cast<int>(place.size()), runs);
         std::vector<double>().swap(squares[child]);
       }
     }
@@ -140,7 +167,7 @@ Eigen::MatrixXd Factorisation::solve(const Eigen::MatrixXd& loads) const {
   for (Eigen::Index u = 0; u < loads.rows(); ++u)
     if (position_[u] >= 0) x.row(position_[u]) = loads.row(u);
   Eigen::MatrixXd border;
-  const auto panel = [&](const Front& front) { return factors_.data() + front.offset; };
+  const auto panel = [&](const Front& front) { return factors_ + front.offset; };
   const auto triangular = [&](const Front& front, CBLAS_TRANSPOSE transpose) {
     const int rows = front.eliminated + static_cast<int>(front.border.size());
     cblas_dtrsm(CblasColMajor, CblasLeft, CblasLower, transpose, CblasNonUnit, front.eliminated, columns, 1.0,

@@ -6,13 +6,15 @@
 #include <vector>
 
 #include "solver/fe/discretisation.hpp"
+#include "solver/linear/room.hpp"
 
 namespace raiser::solver {
 
-/// In which order the unknowns of a mesh are eliminated: triangles are halved
-/// again and again across the longer extent of their group, and an entity
-/// (vertex, edge, triangle) is eliminated in the smallest group that contains
-/// all triangles it belongs to. Depends on the mesh only, not on the degree.
+/// In which order the unknowns of a mesh are eliminated: groups of triangles
+/// are divided again and again by a line along x or y that cuts few sides and
+/// leaves at least three tenths on either side, and an entity (vertex, edge,
+/// triangle) is eliminated in the smallest group that contains all triangles
+/// it belongs to. Depends on the mesh only, not on the degree.
 /// Source: nested dissection by elements, A. George, SIAM J. Numer. Anal. 10
 /// (1973) 345-363; multifrontal elimination, I. S. Duff and J. K. Reid, ACM
 /// Trans. Math. Softw. 9 (1983) 302-325.
@@ -32,7 +34,8 @@ class EliminationTree {
   const std::vector<int>& order() const { return order_; }
 
  private:
-  int build(std::vector<int>& triangles, int first, int last, const std::vector<mesh::Point>& centres);
+  class Divider;
+  int build(std::vector<int>& triangles, int first, int last, Divider& divider);
   std::vector<Group> groups_;
   std::vector<int> order_;
 };
@@ -45,17 +48,19 @@ class Factorisation {
   /// Discretisation::local with components interleaved.
   using ElementMatrix = std::function<void(int triangle, Eigen::MatrixXd& out)>;
 
-  /// `held[u]`: unknown u is zero. Throws std::runtime_error when a pivot is
-  /// not positive (the plate can still move, or the matrix is not finite).
+  /// `held[u]`: unknown u is zero. The factors stand in `room`, which must
+  /// outlive them and serve nothing else meanwhile. Throws std::runtime_error
+  /// when a pivot is not positive (the plate can still move, or the matrix is
+  /// not finite).
   Factorisation(const EliminationTree& tree, const Discretisation& space, const std::vector<bool>& held,
-                const ElementMatrix& element);
+                const ElementMatrix& element, Room& room);
 
   /// Displacements for right-hand sides, one column each, unknowns by rows.
   /// Entries of held unknowns are ignored, and zero in the result.
   Eigen::MatrixXd solve(const Eigen::MatrixXd& loads) const;
 
   /// Numbers stored in the factors.
-  std::size_t entries() const { return factors_.size(); }
+  std::size_t entries() const { return entries_; }
 
  private:
   struct Front {
@@ -65,14 +70,15 @@ class Factorisation {
     std::size_t offset = 0;   ///< of its columns in factors_
   };
   void number(const EliminationTree& tree, const Discretisation& space, const std::vector<bool>& held);
-  void lay_out(const EliminationTree& tree);
+  void lay_out(const EliminationTree& tree, Room& room);
 
   std::vector<int> position_;  ///< by unknown: place in elimination order, -1 when held
   int free_ = 0;
   std::vector<int> entity_first_;  ///< by entity: its first place
   std::vector<int> entity_count_;
   std::vector<Front> fronts_;
-  std::vector<double> factors_;
+  double* factors_ = nullptr;
+  std::size_t entries_ = 0;
 };
 
 }  // namespace raiser::solver

@@ -87,7 +87,8 @@ TEST(Factorisation, SolvesAsEigensSparseCholeskyDoes) {
       for (Eigen::Index u = 0; u < loads.rows(); ++u)
         if (held[u]) free_loads.row(u).setZero();
 
-      const Factorisation factors(tree, space, held, element);
+      Room room;
+      const Factorisation factors(tree, space, held, element, room);
       const Eigen::MatrixXd ours = factors.solve(loads);
       const Eigen::SimplicialLDLT<Eigen::SparseMatrix<double>> eigen(matrix);
       ASSERT_EQ(eigen.info(), Eigen::Success);
@@ -116,15 +117,46 @@ TEST(Factorisation, RefusesAMatrixThatIsNotPositive) {
       if (t == 5) out *= factor;
     };
   };
-  EXPECT_NO_THROW(Factorisation(tree, space, held, changed(1.0)));
-  EXPECT_THROW(Factorisation(tree, space, held, changed(-100.0)), std::runtime_error);
-  EXPECT_THROW(Factorisation(tree, space, held, changed(std::numeric_limits<double>::quiet_NaN())),
+  Room room;
+  EXPECT_NO_THROW(Factorisation(tree, space, held, changed(1.0), room));
+  EXPECT_THROW(Factorisation(tree, space, held, changed(-100.0), room), std::runtime_error);
+  EXPECT_THROW(Factorisation(tree, space, held, changed(std::numeric_limits<double>::quiet_NaN()), room),
                std::runtime_error);
-  EXPECT_THROW(Factorisation(tree, space, held,
-                             [&](int, Eigen::MatrixXd& out) {
-                               out = Eigen::MatrixXd::Zero(2 * shape_count(3), 2 * shape_count(3));
-                             }),
+  EXPECT_THROW(Factorisation(
+                   tree, space, held,
+                   [&](int, Eigen::MatrixXd& out) {
+                     out = Eigen::MatrixXd::Zero(2 * shape_count(3), 2 * shape_count(3));
+                   },
+                   room),
                std::runtime_error);
+}
+
+TEST(Factorisation, IsTheSameInARoomThatHasServedBefore) {
+  const mesh::Mesh mesh = plate_mesh();
+  const EliminationTree tree(mesh);
+  Room room;
+  for (const int degree : {5, 2, 6}) {
+    const Discretisation space(mesh, degree);
+    const Eigen::MatrixXd loads = Eigen::MatrixXd::Ones(space.unknowns(), 1);
+    Room fresh;
+    const auto solved = [&](Room& in) {
+      return Factorisation(tree, space, held_in(space, 0), element_of(mesh, space), in).solve(loads);
+    };
+    EXPECT_EQ(solved(room), solved(fresh)) << "degree " << degree;
+  }
+}
+
+// Median cuts, straight through holes or not, list 61 entities a triangle here.
+TEST(EliminationTree, CutsWhereFewSidesAre) {
+  mesh::Plate plate{300, 200, 3, {}};
+  for (const double x : {-100.0, 0.0, 100.0})
+    for (const double y : {-60.0, 0.0, 60.0})
+      plate.holes.push_back({"", mesh::HoleShape::circle, 40, 40, 0, Point(x, y), 0});
+  const mesh::Mesh mesh = mesh::triangulate(mesh::trace(plate), {});
+  const EliminationTree tree(mesh);
+  std::size_t listed = 0;
+  for (const auto& group : tree.groups()) listed += group.entities.size() * group.eliminated;
+  EXPECT_LT(listed, 52 * mesh.triangles().size());
 }
 
 TEST(EliminationTree, EliminatesEveryEntityOnceAfterItsTriangles) {
