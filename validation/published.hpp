@@ -88,7 +88,9 @@ enum class Reference {
   pressurised_wall,
   t_stress,
   williams,
-  point_forces
+  point_forces,
+  gere_bars,
+  bhandari_bars
 };
 
 /// The range of one parameter that a solution is good for, ends included.

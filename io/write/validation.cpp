@@ -187,7 +187,7 @@ std::string validation_summary(const std::vector<FamilyResult>& results) {
   std::string text = left("family", 27) + left("records", 10) + right("plates", 7) + right("values", 8) +
                      right("worst off", 11) + "  sound\n";
   for (const FamilyResult& result : results)
-    text += left(result.family->id, 27) + left(result.family->records, 10) +
+    text += left(result.family->id, 27) + left(shortened(result.family->records, 9), 10) +
             right(count(result.points.size()), 7) + right(count(held_count(result)), 8) +
             right(off_text(worst_off(result)), 11) + (is_sound(result) ? "  yes\n" : "  NO\n");
   const auto broken = breaches(results);

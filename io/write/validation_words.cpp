@@ -25,7 +25,8 @@ std::string off_text(double off) {
   if (size < 1e-9) return "0 %";
   const char* sign = off < 0 ? "-" : "+";
   if (size >= 0.095) return fmt::format("{}{:.{}f} %", sign, size, size < 9.95 ? 2 : 1);
-  return size >= 0.0095 ? fmt::format("{}{:.2f} %", sign, size) : fmt::format("{}{:.0e} %", sign, size);
+  if (size >= 0.00095) return fmt::format("{}{:.{}f} %", sign, size, size < 0.0095 ? 3 : 2);
+  return fmt::format("{}{:.0e} %", sign, size);
 }
 
 std::string ours_text(const validation::Ours& ours) {

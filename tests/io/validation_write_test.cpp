@@ -150,6 +150,7 @@ TEST(ValidationWords, OffSaysSomethingAtEverySize) {
   EXPECT_EQ(off_text(4e-8), "+4e-06 %");
   EXPECT_EQ(off_text(-4.4e-4), "-0.04 %");
   EXPECT_EQ(off_text(-2e-6), "-2e-04 %");
+  EXPECT_EQ(off_text(2e-5), "+0.002 %");
 }
 
 }  // namespace

@@ -22,7 +22,9 @@ std::vector<Family> families() {
           pressure_infinite(),
           pressure_half_plane(),
           orthotropic_infinite(),
-          orthotropic_strip_tension()};
+          orthotropic_strip_tension(),
+          corner_exponents(),
+          textbook_holes()};
 }
 
 }  // namespace raiser::validation

@@ -25,5 +25,7 @@ Family pressure_infinite();
 Family pressure_half_plane();
 Family orthotropic_infinite();
 Family orthotropic_strip_tension();
+Family corner_exponents();
+Family textbook_holes();
 
 }  // namespace raiser::validation

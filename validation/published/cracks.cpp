@@ -124,6 +124,33 @@ constexpr std::array<Entry, 9> t_two_edges{{{0.1, -0.5249},
                                             {0.8, -0.5783},
                                             {0.9, -0.5826}}};
 
+/// Opening in degrees and exponent: M. L. Williams, J. Appl. Mech. 19 (1952) 526, roots to four digits.
+constexpr std::array<Entry, 12> exponent_one{{{0, 0.5},
+                                              {15, 0.5002},
+                                              {30, 0.5015},
+                                              {45, 0.505},
+                                              {60, 0.5122},
+                                              {75, 0.5247},
+                                              {90, 0.5445},
+                                              {105, 0.5739},
+                                              {120, 0.6157},
+                                              {135, 0.6736},
+                                              {150, 0.752},
+                                              {165, 0.8573}}};
+
+constexpr std::array<Entry, 12> exponent_two{{{0, 0.5},
+                                              {15, 0.5453},
+                                              {30, 0.5982},
+                                              {45, 0.6597},
+                                              {60, 0.7309},
+                                              {75, 0.8132},
+                                              {90, 0.9085},
+                                              {105, 1.0193},
+                                              {120, 1.1489},
+                                              {135, 1.3021},
+                                              {150, 1.4858},
+                                              {165, 1.7113}}};
+
 std::optional<double> entry(std::span<const Entry> table, double x) {
   for (const auto& [at, value] : table)
     if (std::abs(at - x) < 1e-9) return value;
@@ -285,6 +312,10 @@ std::optional<double> t_stress(Cracked cracked, double x) {
       return entry(t_two_edges, x);
   }
   return std::nullopt;
+}
+
+std::optional<double> corner_exponent(bool is_symmetric, double opening) {
+  return entry(is_symmetric ? exponent_one : exponent_two, opening);
 }
 
 double point_forces(double x) { return (1.297 - 0.297 * std::cos(pi * x / 2)) / std::sqrt(std::sin(pi * x)); }

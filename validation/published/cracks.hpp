@@ -80,6 +80,10 @@ double notch_crack_lukas(double kt, double l_over_rho);  ///< P. Lukas and M. Kl
 enum class Cracked { centre, edge, edge_bending, two_edges };
 std::optional<double> t_stress(Cracked cracked, double x);
 
+/// Exponent of a sharp notch with free flanks by its opening in degrees, printed
+/// to four digits (entries only): symmetric or antisymmetric.
+std::optional<double> corner_exponent(bool is_symmetric, double opening);
+
 /// Point forces P per thickness on the middle of a centre crack's faces: K t sqrt(b)/P; x = a/b.
 double point_forces(double x);
 

@@ -227,6 +227,28 @@ std::vector<Published> hole_crack_records() {
        "not known before",
        0.02,
        false},
+      {Reference::gere_bars,
+       "Gere and Goodno",
+       "J. M. Gere and B. J. Goodno, Mechanics of Materials, 7th ed., Problems 2.10-1 and 2.10-2",
+       "flat bars with a hole or with fillets, tension; Kt on the net or narrow section, read off the book's "
+       "chart",
+       Basis::net,
+       {},
+       "three digits off a chart",
+       "holes within 0.6 %, fillets up to 2.4 % low",
+       2.5e-2,
+       false},
+      {Reference::bhandari_bars,
+       "Bhandari",
+       "V. B. Bhandari, Design of Machine Elements, Examples 5.1, 5.3 and 5.5",
+       "flat bars with a hole or with fillets, tension; Kt on the net or narrow section, read off the book's "
+       "chart",
+       Basis::net,
+       {},
+       "three digits off a chart",
+       "holes within 0.7 %, fillets 8 to 10 % low",
+       1e-1,
+       false},
   };
 }
 
