@@ -16,7 +16,6 @@ namespace {
 
 constexpr double plot_height = 300.0;
 constexpr double off_height = 130.0;
-constexpr double label_room = 96.0;  // right of the plots, for the names of series
 constexpr Ink covered_ink{0.945, 0.95, 0.93};
 constexpr Ink claim_ink{0.80, 0.87, 0.87, 0.75};
 constexpr Ink our_ink{0.05, 0.30, 0.33};
@@ -60,7 +59,7 @@ void check(const FamilyChart& chart) {
   for (const SourceTrace& trace : chart.traces)
     for (const Point& p : trace.points) finite(p);
   for (const OffTrace& trace : chart.off)
-    for (const Point& p : trace.points) finite(p);
+    for (const OurMark& mark : trace.marks) finite(mark.point);
   if (marks == 0) throw std::invalid_argument("a chart of a family needs points of ours");
 }
 
@@ -80,6 +79,13 @@ struct Range {
   }
 };
 
+// Right of the plots, for the names of series.
+double room_for_names(const FamilyChart& chart) {
+  double widest = 0.0;
+  for (const OurSeries& series : chart.ours) widest = std::max(widest, text_width(series.label, page::small));
+  return widest > 0 ? widest + 12 : 0.0;
+}
+
 Panel upper(const FamilyChart& chart, double top) {
   Range x, y;
   for (const OurSeries& series : chart.ours)
@@ -87,17 +93,21 @@ Panel upper(const FamilyChart& chart, double top) {
   for (const SourceTrace& trace : chart.traces)
     for (const Point& p : trace.points) x.take(p.x()), y.take(p.y());
   const auto [low, high] = y.rounded(8);
-  if (x.high == x.low) x.high = x.low + 1;
+  const double air = x.high > x.low ? 0.02 * (x.high - x.low) : 0.5;
+  if (x.low != 0) x.low -= air;
+  x.high += air;
   const double left = page::margin + page::axis_left + 12;
-  return {
-      {left, top, page::width - page::margin - left - label_room, plot_height}, {x.low, low}, {x.high, high}};
+  return {{left, top, page::width - page::margin - left - room_for_names(chart), plot_height},
+          {x.low, low},
+          {x.high, high}};
 }
 
 Panel lower(const FamilyChart& chart, const Panel& above) {
   Range y;
   y.take(0.0);
   for (const OffTrace& trace : chart.off)
-    for (const Point& p : trace.points) y.take(p.y());
+    for (const OurMark& mark : trace.marks)
+      y.take(mark.point.y() - mark.bound), y.take(mark.point.y() + mark.bound);
   const double widest = std::max(std::abs(y.low), std::abs(y.high));
   if (chart.claim && *chart.claim < 4 * widest) y.take(-*chart.claim), y.take(*chart.claim);
   const auto [low, high] = y.rounded(4);
@@ -115,8 +125,9 @@ void shade(Canvas& canvas, const Panel& panel, double from, double to, double lo
   canvas.fill(ink);
 }
 
-void draw_grid(Canvas& canvas, const Panel& panel, int most) {
-  for (const double y : ticks(panel.low.y(), panel.high.y(), most)) {
+// At the ticks of the y axis.
+void draw_grid(Canvas& canvas, const Panel& panel) {
+  for (const double y : ticks(panel.low.y(), panel.high.y(), static_cast<int>(panel.box.height / 21))) {
     canvas.move_to(panel.on_paper({panel.low.x(), y}));
     canvas.line_to(panel.on_paper({panel.high.x(), y}));
   }
@@ -155,7 +166,7 @@ void draw_trace(Canvas& canvas, const Panel& panel, const SourceTrace& trace) {
   draw_line(canvas, panel, inside, style);
 }
 
-void draw_ours(Canvas& canvas, const Panel& panel, const OurMark& mark) {
+void draw_dot(Canvas& canvas, const Panel& panel, const OurMark& mark, const Ink& ink) {
   const Spot at = panel.on_paper(mark.point);
   const double reach = mark.bound / (panel.high.y() - panel.low.y()) * panel.box.height;
   if (reach > 2.6) {
@@ -165,10 +176,10 @@ void draw_ours(Canvas& canvas, const Panel& panel, const OurMark& mark) {
       canvas.move_to(at + Spot(-3, end));
       canvas.line_to(at + Spot(3, end));
     }
-    canvas.stroke(our_ink, 1.0);
+    canvas.stroke(ink, 1.0);
   }
   canvas.circle(at, 2.6);
-  canvas.fill(our_ink);
+  canvas.fill(ink);
 }
 
 // Names of series at the right of the panel, level with their last points and kept apart.
@@ -228,7 +239,7 @@ void draw_upper(Canvas& canvas, const FamilyChart& chart, const Panel& panel) {
   if (chart.covered)
     shade(canvas, panel, chart.covered->first, chart.covered->second, panel.low.y(), panel.high.y(),
           covered_ink);
-  draw_grid(canvas, panel, 12);
+  draw_grid(canvas, panel);
   draw_x_axis(canvas, panel.box, 0, {panel.low.x(), panel.high.x(), "", {}});
   draw_y_axis(canvas, panel.box, 0, {panel.low.y(), panel.high.y(), chart.y_name, {}});
   canvas.save();
@@ -236,7 +247,7 @@ void draw_upper(Canvas& canvas, const FamilyChart& chart, const Panel& panel) {
   canvas.clip();
   for (const SourceTrace& trace : chart.traces) draw_trace(canvas, panel, trace);
   for (const OurSeries& series : chart.ours)
-    for (const OurMark& mark : series.marks) draw_ours(canvas, panel, mark);
+    for (const OurMark& mark : series.marks) draw_dot(canvas, panel, mark, our_ink);
   canvas.restore();
   std::vector<std::pair<double, std::string>> names;
   for (const OurSeries& series : chart.ours)
@@ -251,7 +262,7 @@ void draw_lower(Canvas& canvas, const FamilyChart& chart, const Panel& panel) {
           covered_ink);
   if (chart.claim)
     shade(canvas, panel, panel.low.x(), panel.high.x(), -*chart.claim, *chart.claim, claim_ink);
-  draw_grid(canvas, panel, 6);
+  draw_grid(canvas, panel);
   draw_x_axis(canvas, panel.box, 0, {panel.low.x(), panel.high.x(), chart.x_name, {}});
   draw_y_axis(canvas, panel.box, 0, {panel.low.y(), panel.high.y(), "source off by, %", {}});
   canvas.move_to(panel.on_paper({panel.low.x(), 0}));
@@ -261,13 +272,12 @@ void draw_lower(Canvas& canvas, const FamilyChart& chart, const Panel& panel) {
   for (const OffTrace& trace : chart.off) {
     Pen style = pen(trace.source);
     style.width = 1.0;
-    draw_line(canvas, panel, trace.points, style);
-    for (const Point& p : trace.points) {
-      canvas.circle(panel.on_paper(p), 2.2);
-      canvas.fill(style.ink);
-    }
-    if (!trace.label.empty() && !trace.points.empty())
-      names.emplace_back(panel.on_paper(trace.points.back()).y(), trace.label);
+    std::vector<Point> line;
+    for (const OurMark& mark : trace.marks) line.push_back(mark.point);
+    draw_line(canvas, panel, line, style);
+    for (const OurMark& mark : trace.marks) draw_dot(canvas, panel, mark, style.ink);
+    if (!trace.label.empty() && !trace.marks.empty())
+      names.emplace_back(panel.on_paper(trace.marks.back().point).y(), trace.label);
   }
   draw_names(canvas, panel, std::move(names));
 }

@@ -28,8 +28,8 @@ struct OurMark {
 /// How far sources are off ours along one series, in per cent.
 struct OffTrace {
   std::size_t source = 0;
-  std::vector<Point> points;
-  std::string label;  ///< of the series; may be empty
+  std::vector<OurMark> marks;  ///< y and bound in per cent
+  std::string label;           ///< of the series; may be empty
 };
 
 /// Marks of one series and what they are called; the label may be empty.

@@ -116,7 +116,7 @@ TEST_F(Written, ChartKeepsEachSourceToItsRange) {
   ASSERT_EQ(chart.ours.size(), 1U);
   EXPECT_EQ(chart.ours[0].marks.size(), 3U);  // the one without a value is left out
   ASSERT_EQ(chart.off.size(), 2U);
-  EXPECT_NEAR(chart.off[0].points[0].y(), 100 * (2.5 / 2.475 - 1), 1e-9);
+  EXPECT_NEAR(chart.off[0].marks[0].point.y(), 100 * (2.5 / 2.475 - 1), 1e-9);
 }
 
 TEST_F(Written, ChartIsDrawnInBothKinds) {

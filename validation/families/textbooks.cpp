@@ -12,17 +12,29 @@ namespace {
 /// A bar with a central hole as the book gives it, in its own unit of length.
 struct Bar {
   Reference book;
-  const char* series;
-  double width, diameter;
+  double diameter, width;
   double factor;
+
+  double share() const { return diameter / width; }
 };
 
-constexpr std::array<Bar, 6> bars{{{Reference::gere_bars, "Gere 2.10-1", 6, 1, 2.60},
-                                   {Reference::gere_bars, "Gere 2.10-1", 6, 2, 2.31},
-                                   {Reference::gere_bars, "Gere 2.10-2", 60, 12, 2.51},
-                                   {Reference::gere_bars, "Gere 2.10-2", 60, 20, 2.31},
-                                   {Reference::bhandari_bars, "Bhandari 5.3", 50, 10, 2.51},
-                                   {Reference::bhandari_bars, "Bhandari 5.1", 30, 15, 2.16}}};
+constexpr std::array<Bar, 5> bars{{{Reference::gere_bars, 1, 6, 2.60},
+                                   {Reference::gere_bars, 12, 60, 2.51},
+                                   {Reference::gere_bars, 2, 6, 2.31},
+                                   {Reference::bhandari_bars, 10, 50, 2.51},
+                                   {Reference::bhandari_bars, 15, 30, 2.16}}};
+
+FamilyCurve curve_of(Reference book) {
+  FamilyCurve curve{book, "", {}, 0.1, 0.5, true, {}};
+  for (const Bar& bar : bars)
+    if (bar.book == book) curve.points.push_back(bar.share());
+  curve.at = [book](double x) -> std::optional<double> {
+    for (const Bar& bar : bars)
+      if (bar.book == book && std::abs(bar.share() - x) < 1e-9) return bar.factor;
+    return std::nullopt;
+  };
+  return curve;
+}
 
 }  // namespace
 
@@ -38,30 +50,16 @@ Family textbook_holes() {
            {},
            {}};
   for (const Bar& bar : bars) {
-    const double x = bar.diameter / bar.width;
+    const double x = bar.share();
     auto problem =
         plate_under(6 * bar.width, bar.width, {circle(bar.diameter)}, {solver::Load::Kind::tension});
-    f.points.push_back({bar.series,
+    f.points.push_back({"",
                         {{"d/W", x}},
                         {{bar.book, bar.factor}},
                         settled(std::move(problem), largest_over(unit_stress / (1 - x))),
                         x == 0.5 || x == 0.2});
   }
-  for (const char* series : {"Gere 2.10-1", "Gere 2.10-2", "Bhandari 5.3", "Bhandari 5.1"}) {
-    FamilyCurve curve{Reference::gere_bars, series, {}, 0.1, 0.5, true, {}};
-    for (const Bar& bar : bars)
-      if (std::string_view(bar.series) == series) {
-        curve.reference = bar.book;
-        curve.points.push_back(bar.diameter / bar.width);
-      }
-    curve.at = [series](double x) -> std::optional<double> {
-      for (const Bar& bar : bars)
-        if (std::string_view(bar.series) == series && std::abs(bar.diameter / bar.width - x) < 1e-9)
-          return bar.factor;
-      return std::nullopt;
-    };
-    f.curves.push_back(std::move(curve));
-  }
+  f.curves = {curve_of(Reference::gere_bars), curve_of(Reference::bhandari_bars)};
   return f;
 }
 
