@@ -23,23 +23,25 @@ struct Problem {
 };
 
 /// One asked number and its tolerance, relative to the largest magnitude of
-/// edge stress on that hole under all loads together.
+/// edge stress on that raiser under all loads together. `raiser` is an index
+/// into mesh::raisers(plate), the holes first.
 struct Ask {
   Quantity quantity = Quantity::largest_edge_stress;
-  std::size_t hole = 0;
+  std::size_t raiser = 0;
   double tolerance = 1e-3;
   std::string name;  ///< the user's, may be empty
 };
 
-/// A stress on a hole's edge and where it is.
+/// A stress on a raiser's edge and where it is.
 struct EdgeValue {
   Estimate stress;              ///< MPa
   Point point = Point::Zero();  ///< mm
-  double angle = 0.0;           ///< rad, of the point seen from the hole's centre, from +x, in (-pi, pi]
+  double angle = 0.0;           ///< rad, of the point seen from the raiser's centre, from +x, in (-pi, pi]
   double traction_miss = 0.0;   ///< MPa: how far the raw stress misses the known traction there
 };
 
-/// A straight section through the plate and the holes it cuts.
+/// A straight section through the plate, and what it cuts. Of a fillet: the
+/// section of the narrow part; gross_area alone is that of the wide part.
 struct Section {
   using Direction = mesh::Direction;  ///< across: the line x = station; along: y = station
   Direction direction = Direction::across;
@@ -50,12 +52,12 @@ struct Section {
   double net_inertia = 0.0;   ///< mm^4, second moment about net_centroid, times thickness
   double normal_force = 0.0;  ///< N, tension positive
   double shear_force = 0.0;   ///< N
-  double moment = 0.0;        ///< N mm, about the middle of the gross section
+  double moment = 0.0;        ///< N mm, about the centroid of the gross section
 };
 
 /// Kt with the nominal stress it stands on. `kt` is empty where it is not
 /// defined, and `why` says so. Kt is the largest magnitude of edge stress on
-/// the hole over the magnitude of the nominal stress.
+/// the raiser over the magnitude of the nominal stress.
 struct Concentration {
   std::optional<Estimate> kt;
   double nominal = 0.0;    ///< MPa
@@ -63,13 +65,13 @@ struct Concentration {
   std::string why;
 };
 
-/// What was found at one hole under one load (or all together).
-struct HoleFindings {
-  std::size_t hole = 0;
-  EdgeValue largest;    ///< algebraically largest edge stress
-  EdgeValue smallest;   ///< algebraically smallest edge stress
-  EdgeValue von_mises;  ///< largest von Mises stress on the edge
-  Section section;      ///< the one that the nominal stresses stand on
+/// What was found at one raiser under one load (or all together).
+struct RaiserFindings {
+  std::size_t raiser = 0;  ///< index into mesh::raisers(plate)
+  EdgeValue largest;       ///< algebraically largest edge stress
+  EdgeValue smallest;      ///< algebraically smallest edge stress
+  EdgeValue von_mises;     ///< largest von Mises stress on the edge
+  Section section;         ///< the one that the nominal stresses stand on
   Concentration gross;
   Concentration net;
 };
@@ -77,7 +79,7 @@ struct HoleFindings {
 /// One load by itself, or all together.
 struct LoadFindings {
   std::string name;  ///< the load's name, "all loads" for the combination
-  std::vector<HoleFindings> holes;
+  std::vector<RaiserFindings> raisers;
 };
 
 /// One step of the sequence that the bounds stand on.
@@ -86,7 +88,7 @@ struct Level {
   int degree = 0;
   std::size_t triangles = 0;
   std::size_t unknowns = 0;  ///< before condensation
-  double peak = 0.0;         ///< MPa: the largest magnitude of edge stress over the holes
+  double peak = 0.0;         ///< MPa: the largest magnitude of edge stress over the raisers
   double worst = 0.0;        ///< largest ratio of bound to tolerance among what is asked
   double seconds = 0.0;
 };
@@ -106,27 +108,28 @@ struct PlateChecks {
   double external_work = 0.0;         ///< N mm, half the work of the loads
 };
 
-/// The stress along one ligament: from the hole's edge to the next free edge
+/// The stress along one ligament: from the raiser's edge to the next free edge
 /// along the section.
 struct LigamentPoint {
   Point point = Point::Zero();
-  double distance = 0.0;  ///< mm from the hole's edge
+  double distance = 0.0;  ///< mm from the raiser's edge
   Stress stress;          ///< MPa
   double bound = 0.0;     ///< MPa, on each component
 };
 struct Ligament {
-  std::size_t hole = 0;
-  std::string from;    ///< e.g. "hole bolt, y > centre"
+  std::size_t raiser = 0;
+  std::string from;    ///< e.g. "hole bolt, y > centre", "notch a"
   std::string to;      ///< e.g. "top edge", "hole b"
   double width = 0.0;  ///< mm
   std::vector<LigamentPoint> points;
 };
 
-/// The stress along a hole's edge.
+/// The stress along a raiser's edge.
 struct EdgeSample {
   Point point = Point::Zero();
-  double angle = 0.0;       ///< rad, as in EdgeValue
-  double arc_length = 0.0;  ///< mm, anticlockwise from the first sample
+  double angle = 0.0;  ///< rad, as in EdgeValue
+  double arc_length =
+      0.0;  ///< mm from the first sample: anticlockwise round a hole, along the outline elsewhere
   double tangential = 0.0;  ///< MPa
   double von_mises = 0.0;   ///< MPa
   double bound = 0.0;       ///< MPa, on the tangential stress
@@ -148,7 +151,7 @@ struct Solution {
   mesh::Mirrors mirrors_used;
   double seconds = 0.0;
 
-  std::vector<std::vector<EdgeSample>> edges;  ///< by hole, under all loads
+  std::vector<std::vector<EdgeSample>> edges;  ///< by raiser, under all loads
   std::vector<Ligament> ligaments;             ///< under all loads
   Field field;                                 ///< under all loads, over the whole plate
 };

@@ -153,7 +153,7 @@ Load random_load(Dice& dice, Load::Kind kind, std::size_t holes) {
   return load;
 }
 
-Load edge_load(const char* name, mesh::Owner::Kind edge, double stress, double along) {
+Load edge_load(const char* name, std::size_t edge, double stress, double along) {
   Load load;
   load.kind = Load::Kind::edge;
   load.name = name;
@@ -174,10 +174,10 @@ std::vector<Load> balanced_edges(Dice& dice, const Plate& plate) {
   const double bottom_along = -(right_along + left_along + top_along);
   const double left = right + (bottom_along - top_along) * ratio;
   const double bottom = top + (right_along - left_along) / ratio;
-  return {edge_load("right", mesh::Owner::Kind::right, right, right_along),
-          edge_load("top", mesh::Owner::Kind::top, top, top_along),
-          edge_load("left", mesh::Owner::Kind::left, left, left_along),
-          edge_load("bottom", mesh::Owner::Kind::bottom, bottom, bottom_along)};
+  return {edge_load("right", mesh::rectangle::right, right, right_along),
+          edge_load("top", mesh::rectangle::top, top, top_along),
+          edge_load("left", mesh::rectangle::left, left, left_along),
+          edge_load("bottom", mesh::rectangle::bottom, bottom, bottom_along)};
 }
 
 /// One kind alone, two to four kinds together, or a group of edge loads.

@@ -196,24 +196,11 @@ Phrases meaning(const Plate& plate, const Load& load) {
     case Load::Kind::edge:
       break;
   }
-  const bool end = load.edge == mesh::Owner::Kind::right || load.edge == mesh::Owner::Kind::left;
+  const bool end = load.edge == mesh::rectangle::right || load.edge == mesh::rectangle::left;
   const double area = end ? across : along;
   return {fmt::format("normal {} = {}", stress, kilonewtons(load.stress * area)),
           fmt::format("shear {} = {} (positive anticlockwise)", derived(load.along, "MPa"),
                       kilonewtons(load.along * area))};
-}
-
-std::string edge_of(const Load& load) {
-  switch (load.edge) {
-    case mesh::Owner::Kind::right:
-      return "right edge";
-    case mesh::Owner::Kind::top:
-      return "top edge";
-    case mesh::Owner::Kind::left:
-      return "left edge";
-    default:
-      return "bottom edge";
-  }
 }
 
 /// What the author wrote for the load's size where the reading does not say it
@@ -233,7 +220,8 @@ std::string describe_load(const Case& input, std::size_t index) {
   const Load& load = input.problem.loads[index];
   const std::string path = fmt::format("load.{}.", index + 1);
   Phrases phrases = meaning(input.problem.plate, load);
-  if (load.kind == Load::Kind::edge) phrases.insert(phrases.begin(), edge_of(load));
+  if (load.kind == Load::Kind::edge)
+    phrases.insert(phrases.begin(), mesh::edge_names(input.problem.plate).at(load.edge) + " edge");
   if (load.kind == Load::Kind::tension && !input.written.contains(path + "direction")) {
     phrases.push_back("direction along" + std::string(default_mark));
   }
@@ -271,9 +259,10 @@ std::string describe_question(const Case& input) {
   }
   for (const solver::Ask& ask : input.asks) {
     if (ask.name.empty()) continue;
-    result += row("  " + ask.name,
-                  {fmt::format("{} at {}", word(ask.quantity), input.problem.plate.holes[ask.hole].name),
-                   fmt::format("tolerance {}", percent(ask.tolerance))});
+    result +=
+        row("  " + ask.name,
+            {fmt::format("{} at {}", word(ask.quantity), mesh::raiser(input.problem.plate, ask.raiser).name),
+             fmt::format("tolerance {}", percent(ask.tolerance))});
   }
   return result;
 }

@@ -10,7 +10,6 @@ namespace raiser::io {
 namespace {
 
 using solver::Load;
-using solver::Owner;
 using Keys = std::span<const std::string_view>;
 
 constexpr std::array<std::string_view, 13> load_keys{
@@ -25,7 +24,6 @@ constexpr std::array<std::string_view, 7> edge_keys{"name",         "kind",  "ed
 constexpr std::array kinds{Load::Kind::tension, Load::Kind::shear, Load::Kind::bending, Load::Kind::pressure,
                            Load::Kind::edge};
 constexpr std::array<std::string_view, 4> edge_words{"right", "top", "left", "bottom"};
-constexpr std::array edges{Owner::Kind::right, Owner::Kind::top, Owner::Kind::left, Owner::Kind::bottom};
 
 /// Where and for what the loads are read.
 struct Context {
@@ -131,7 +129,7 @@ std::optional<Load> read_edge(const Table& table, const Context& context) {
   if (!edge || !normal || !along) return std::nullopt;
   Load load;
   load.kind = Load::Kind::edge;
-  load.edge = edges[*edge];
+  load.edge = *edge;
   load.stress = *normal;
   load.along = *along;
   return load;
@@ -178,9 +176,7 @@ std::string default_name(const std::optional<Load>& load, const Context& context
     case Load::Kind::pressure:
       return fmt::format("pressure in {}", context.holes[load->hole]);
     case Load::Kind::edge:
-      for (std::size_t i = 0; i < edges.size(); ++i) {
-        if (edges[i] == load->edge) return fmt::format("{} edge", edge_words[i]);
-      }
+      return fmt::format("{} edge", edge_words[load->edge]);
   }
   return std::string(solver::word(load->kind));
 }

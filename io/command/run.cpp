@@ -89,9 +89,9 @@ void keep_findings(Outcome& outcome, const Result& result) {
   outcome.status = words(result.solution.status);
   outcome.message = result.solution.reason;
   outcome.seconds = result.solution.seconds;
-  outcome.holes = result.solution.combined.holes;
-  for (const solver::HoleFindings& found : outcome.holes) {
-    outcome.hole_names.push_back(result.input.problem.plate.holes.at(found.hole).name);
+  outcome.raisers = result.solution.combined.raisers;
+  for (const solver::RaiserFindings& found : outcome.raisers) {
+    outcome.raiser_names.push_back(mesh::raiser(result.input.problem.plate, found.raiser).name);
   }
 }
 

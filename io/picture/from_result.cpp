@@ -14,7 +14,7 @@ namespace {
 
 using mesh::Owner;
 using solver::EdgeValue;
-using solver::HoleFindings;
+using solver::RaiserFindings;
 
 constexpr double degree = std::numbers::pi / 180.0;
 
@@ -31,7 +31,7 @@ std::string amount(const solver::Estimate& estimate, const std::string& unit) {
 
 std::string amount(double value, const std::string& unit) { return together(brief(value) + " " + unit); }
 
-const EdgeValue& peak_place(const HoleFindings& found) {
+const EdgeValue& peak_place(const RaiserFindings& found) {
   return std::abs(found.largest.stress.value) >= std::abs(found.smallest.stress.value) ? found.largest
                                                                                        : found.smallest;
 }
@@ -41,13 +41,13 @@ std::string title_of(const Result& result) {
   return title.empty() ? result.input.file.stem().string() : title;
 }
 
-std::string name_of(const Result& result, std::size_t hole) {
-  return hole_phrase(plain(result.input.problem.plate.holes.at(hole).name));
+std::string name_of(const Result& result, std::size_t raiser) {
+  return phrase(mesh::raiser(result.input.problem.plate, raiser));
 }
 
-// The sample on the hole's edge that lies nearest to a point.
-double von_mises_near(const Result& result, std::size_t hole, const Point& point) {
-  const auto& edge = result.solution.edges.at(hole);
+// The sample on the raiser's edge that lies nearest to a point.
+double von_mises_near(const Result& result, std::size_t raiser, const Point& point) {
+  const auto& edge = result.solution.edges.at(raiser);
   const auto nearest = std::min_element(edge.begin(), edge.end(), [&](const auto& a, const auto& b) {
     return (a.point - point).squaredNorm() < (b.point - point).squaredNorm();
   });
@@ -90,12 +90,12 @@ std::string constants_line(const solver::HookeLaw& law) {
                      amount(law.orthotropy->shear_modulus, "MPa"), brief(law.poissons_ratio));
 }
 
-std::vector<std::string> caption(const Result& result, const HoleFindings& found) {
+std::vector<std::string> caption(const Result& result, const RaiserFindings& found) {
   const auto& problem = result.input.problem;
   const auto& plate = problem.plate;
   const auto& solution = result.solution;
   std::vector<std::string> lines{fmt::format(
-      "Peak edge stress {} at {}", amount(peak_place(found).stress, "MPa"), name_of(result, found.hole))};
+      "Peak edge stress {} at {}", amount(peak_place(found).stress, "MPa"), name_of(result, found.raiser))};
   add_concentration(lines, "Kt gross", found.gross);
   add_concentration(lines, "Kt net", found.net);
   lines.push_back(fmt::format("Plate {} × {} × {}", brief(plate.length), brief(plate.width),
@@ -174,7 +174,7 @@ std::vector<LoadArrow> arrows(const solver::Problem& problem) {
   return result;
 }
 
-std::vector<ChartLevel> nominal_levels(const HoleFindings& found) {
+std::vector<ChartLevel> nominal_levels(const RaiserFindings& found) {
   std::vector<ChartLevel> levels;
   if (found.gross.nominal != 0.0)
     levels.push_back(
@@ -185,8 +185,8 @@ std::vector<ChartLevel> nominal_levels(const HoleFindings& found) {
   return levels;
 }
 
-const HoleFindings& findings(const Result& result, std::size_t hole) {
-  return result.solution.combined.holes.at(hole);
+const RaiserFindings& findings(const Result& result, std::size_t raiser) {
+  return result.solution.combined.raisers.at(raiser);
 }
 
 CellSource source_of(const solver::Field& field) {
@@ -202,7 +202,7 @@ CellSource source_of(const solver::Field& field) {
 
 Picture picture_of(const Result& result) {
   const auto& solution = result.solution;
-  const HoleFindings& worst = findings(result, worst_first(solution.combined).front());
+  const RaiserFindings& worst = findings(result, worst_first(solution.combined).front());
   const EdgeValue& peak = peak_place(worst);
   Picture picture;
   picture.title = title_of(result);
@@ -210,10 +210,10 @@ Picture picture_of(const Result& result) {
   for (mesh::Hole& hole : picture.plate.holes) hole.name = plain(hole.name);
   picture.quantity = "von Mises stress";
   picture.unit = "MPa";
-  picture.focus = worst.hole;
+  picture.focus = worst.raiser;
   std::string label = "peak edge stress " + amount(peak.stress, "MPa");
   if (worst.gross.kt) label += ", " + together("Kt gross ") + amount(*worst.gross.kt, "");
-  picture.peaks.push_back({peak.point, von_mises_near(result, worst.hole, peak.point), label});
+  picture.peaks.push_back({peak.point, von_mises_near(result, worst.raiser, peak.point), label});
   picture.arrows = arrows(result.input.problem);
   picture.caption = caption(result, worst);
   picture.caution = "Linear elastic, 2D, nominal geometry; not a substitute for an independent check.";
@@ -222,7 +222,7 @@ Picture picture_of(const Result& result) {
 }
 
 Chart edge_chart(const Result& result, std::size_t hole) {
-  const HoleFindings& found = findings(result, hole);
+  const RaiserFindings& found = findings(result, hole);
   Chart chart;
   chart.title = fmt::format("{}: edge of {}", title_of(result), name_of(result, hole));
   chart.x_name = "edge angle from +x, degrees";
@@ -255,7 +255,7 @@ Chart ligament_chart(const Result& result, std::size_t index) {
   const solver::Ligament& ligament = result.solution.ligaments.at(index);
   Chart chart;
   chart.title = fmt::format("{}: from {} to {}", title_of(result), plain(ligament.from), plain(ligament.to));
-  chart.x_name = "distance from the hole's edge, mm";
+  chart.x_name = "distance from the edge, mm";
   chart.y_name = "stress, MPa";
   const Point run = ligament.points.back().point - ligament.points.front().point;
   const bool across = std::abs(run.y()) >= std::abs(run.x());
@@ -266,7 +266,7 @@ Chart ligament_chart(const Result& result, std::size_t index) {
     equivalent.points.emplace_back(point.distance, solver::von_mises(point.stress));
   }
   chart.curves = {std::move(normal), std::move(equivalent)};
-  chart.levels = nominal_levels(findings(result, ligament.hole));
+  chart.levels = nominal_levels(findings(result, ligament.raiser));
   chart.note = loads_line(result);
   return chart;
 }

@@ -1,5 +1,6 @@
 #include "io/picture/layout.hpp"
 
+#include <Eigen/Geometry>
 #include <algorithm>
 #include <cmath>
 #include <utility>
@@ -91,7 +92,21 @@ double side_by_side(Layout& page, const Picture& picture, double top, double sca
 
 }  // namespace
 
+namespace {
+
+// Of a notch or fillet: twice the square around its curves.
+Window around(const mesh::Outline& outline, std::size_t raiser) {
+  Eigen::AlignedBox2d box;
+  for (const mesh::Curve& curve : outline.curves)
+    if (curve.owner == mesh::Owner{mesh::Owner::Kind::raiser, raiser})
+      for (int i = 0; i <= 8; ++i) box.extend(curve.at(curve.begin + (curve.end - curve.begin) * i / 8));
+  return {box.center(), box.sizes().maxCoeff()};
+}
+
+}  // namespace
+
 Window neighbourhood(const mesh::Plate& plate, std::size_t index) {
+  if (index >= plate.holes.size() && plate.outline) return around(*plate.outline, index - plate.holes.size());
   const mesh::Hole& hole = plate.holes.at(index);
   const double reach =
       std::max(mesh::half_extent(hole, Point::UnitX()), mesh::half_extent(hole, Point::UnitY()));

@@ -239,9 +239,9 @@ void draw_detail(Canvas& canvas, const Picture& picture, const mesh::Region& reg
   canvas.stroke(ink::text, 1.0);
   const Box tag{view.box.x, view.box.y - 18, tag_size, tag_size};
   draw_tag(canvas, tag);
-  const std::string& name = picture.plate.holes[*picture.focus].name;
+  const mesh::Raiser focus = mesh::raiser(picture.plate, *picture.focus);
   const std::string heading =
-      fmt::format("{}{}enlarged {:.2g} times", name.empty() ? "" : hole_phrase(name) + ", ",
+      fmt::format("{}{}enlarged {:.2g} times", focus.name.empty() ? "" : phrase(focus) + ", ",
                   page.at_peak ? "at the peak, " : "", view.scale / page.whole.scale);
   canvas.text(wrapped(heading, page::small, view.box.width - 18).front(), {tag.right() + 5, tag.y + 9.5},
               page::small, ink::text);

@@ -33,20 +33,20 @@ struct Picture {
   std::string unit;      ///< e.g. "MPa"
   std::vector<PictureCell> cells;
   std::vector<PeakMark> peaks;
-  std::optional<std::size_t> focus;  ///< the hole to show enlarged, if any
+  std::optional<std::size_t> focus;  ///< the raiser to show enlarged, if any
   std::vector<LoadArrow> arrows;
   std::vector<std::string> caption;  ///< lines, the first one stressed
   std::string caution;               ///< the line at the foot
 };
 
-/// The part of the plate around a hole that an enlargement shows: the hole,
-/// room around it, and the ligament to the nearest edge where that is not
-/// much wider than the hole. A square.
+/// The part of the plate around a raiser that an enlargement shows: the hole,
+/// notch or fillet and room around it; of a hole also the ligament to the
+/// nearest edge where that is not much wider than the hole. A square.
 struct Window {
   Point centre = Point::Zero();
   double half = 0.0;
 };
-Window neighbourhood(const mesh::Plate& plate, std::size_t hole);
+Window neighbourhood(const mesh::Plate& plate, std::size_t raiser);
 
 /// The limits of the bands that the picture is drawn with.
 std::vector<double> limits_of(const Picture& picture);

@@ -35,7 +35,9 @@ std::string line(std::initializer_list<std::string> cells) {
 
 double degrees(double angle) { return angle * 180.0 / std::numbers::pi; }
 
-std::string hole_name(const Case& input, std::size_t hole) { return input.problem.plate.holes.at(hole).name; }
+std::string name_of(const Case& input, std::size_t raiser) {
+  return mesh::raiser(input.problem.plate, raiser).name;
+}
 
 std::string stress_cells(const solver::EdgeValue& value) {
   std::string text = line({cell(value.stress.value), cell(value.stress.bound), cell(value.point.x()),
@@ -58,10 +60,10 @@ std::string case_cells(const Outcome& outcome) {
 
 std::string edge_csv(const Case& input, const solver::Solution& solution) {
   std::string text =
-      "hole,angle_deg,x_mm,y_mm,arc_length_mm,tangential_stress_MPa,bound_MPa,von_mises_stress_MPa\n";
-  for (std::size_t hole = 0; hole < solution.edges.size(); ++hole) {
-    const std::string name = cell(hole_name(input, hole));
-    for (const solver::EdgeSample& at : solution.edges[hole]) {
+      "raiser,angle_deg,x_mm,y_mm,arc_length_mm,tangential_stress_MPa,bound_MPa,von_mises_stress_MPa\n";
+  for (std::size_t raiser = 0; raiser < solution.edges.size(); ++raiser) {
+    const std::string name = cell(name_of(input, raiser));
+    for (const solver::EdgeSample& at : solution.edges[raiser]) {
       text += line({name, cell(degrees(at.angle)), cell(at.point.x()), cell(at.point.y()),
                     cell(at.arc_length), cell(at.tangential), cell(at.bound), cell(at.von_mises)});
     }
@@ -71,10 +73,10 @@ std::string edge_csv(const Case& input, const solver::Solution& solution) {
 
 std::string ligament_csv(const Case& input, const solver::Solution& solution) {
   std::string text =
-      "hole,from,to,ligament_width_mm,distance_mm,x_mm,y_mm,stress_xx_MPa,stress_yy_MPa,stress_xy_MPa,"
+      "raiser,from,to,ligament_width_mm,distance_mm,x_mm,y_mm,stress_xx_MPa,stress_yy_MPa,stress_xy_MPa,"
       "stress_zz_MPa,bound_MPa\n";
   for (const solver::Ligament& ligament : solution.ligaments) {
-    const std::string name = cell(hole_name(input, ligament.hole));
+    const std::string name = cell(name_of(input, ligament.raiser));
     const std::string from = cell(ligament.from), to = cell(ligament.to), width = cell(ligament.width);
     for (const solver::LigamentPoint& at : ligament.points) {
       text += line({name, from, to, width, cell(at.distance), cell(at.point.x()), cell(at.point.y()),
@@ -86,7 +88,7 @@ std::string ligament_csv(const Case& input, const solver::Solution& solution) {
 }
 
 std::string summary_csv(const std::vector<Outcome>& outcomes) {
-  std::string text = "case,title,status,exit_code,message,seconds,hole";
+  std::string text = "case,title,status,exit_code,message,seconds,raiser";
   for (const std::string_view name :
        {"largest_edge_stress", "smallest_edge_stress", "largest_von_mises_stress"}) {
     text += fmt::format(",{0}_MPa,{0}_bound_MPa,{0}_x_mm,{0}_y_mm,{0}_angle_deg", name);
@@ -95,15 +97,15 @@ std::string summary_csv(const std::vector<Outcome>& outcomes) {
     text += fmt::format(",{0},{0}_bound,{0}_nominal_stress_MPa,{0}_definition", name);
   }
   text += "\n";
-  constexpr std::size_t hole_columns = 1 + 3 * 5 + 2 * 4;
+  constexpr std::size_t raiser_columns = 1 + 3 * 5 + 2 * 4;
   for (const Outcome& outcome : outcomes) {
     const std::string head = case_cells(outcome);
-    if (outcome.holes.empty()) text += head + std::string(hole_columns, ',') + "\n";
-    for (std::size_t i = 0; i < outcome.holes.size(); ++i) {
-      const solver::HoleFindings& found = outcome.holes[i];
-      text +=
-          line({head, cell(outcome.hole_names[i]), stress_cells(found.largest), stress_cells(found.smallest),
-                stress_cells(found.von_mises), kt_cells(found.gross), kt_cells(found.net)});
+    if (outcome.raisers.empty()) text += head + std::string(raiser_columns, ',') + "\n";
+    for (std::size_t i = 0; i < outcome.raisers.size(); ++i) {
+      const solver::RaiserFindings& found = outcome.raisers[i];
+      text += line({head, cell(outcome.raiser_names[i]), stress_cells(found.largest),
+                    stress_cells(found.smallest), stress_cells(found.von_mises), kt_cells(found.gross),
+                    kt_cells(found.net)});
     }
   }
   return text;

@@ -5,6 +5,7 @@
 #include <numbers>
 
 #include "io/case/alloys.hpp"
+#include "io/write/layout.hpp"
 
 namespace raiser::io {
 namespace {
@@ -74,18 +75,20 @@ Json concentration(const solver::Concentration& kt) {
   return object;
 }
 
+// One list for each kind of raiser; that of the holes is always there.
 Json findings(const solver::LoadFindings& load, const mesh::Plate& plate) {
-  Json holes = Json::array();
-  for (const solver::HoleFindings& found : load.holes) {
-    holes.push_back({{"hole", plate.holes.at(found.hole).name},
-                     {"largest_edge_stress", edge_value(found.largest)},
-                     {"smallest_edge_stress", edge_value(found.smallest)},
-                     {"largest_von_mises_stress", edge_value(found.von_mises)},
-                     {"kt_gross", concentration(found.gross)},
-                     {"kt_net", concentration(found.net)},
-                     {"section", section(found.section)}});
+  Json object{{"load", load.name}, {"holes", Json::array()}};
+  for (const solver::RaiserFindings& found : load.raisers) {
+    const mesh::Raiser at = mesh::raiser(plate, found.raiser);
+    object[plural(at.kind)].push_back({{std::string(mesh::word(at.kind)), at.name},
+                                       {"largest_edge_stress", edge_value(found.largest)},
+                                       {"smallest_edge_stress", edge_value(found.smallest)},
+                                       {"largest_von_mises_stress", edge_value(found.von_mises)},
+                                       {"kt_gross", concentration(found.gross)},
+                                       {"kt_net", concentration(found.net)},
+                                       {"section", section(found.section)}});
   }
-  return {{"load", load.name}, {"holes", holes}};
+  return object;
 }
 
 Json hole(const mesh::Hole& h) {
@@ -98,24 +101,11 @@ Json hole(const mesh::Hole& h) {
           {"angle", quantity(h.angle * degrees_per_radian, "deg")}};
 }
 
-std::string_view edge_word(mesh::Owner::Kind edge) {
-  switch (edge) {
-    case mesh::Owner::Kind::top:
-      return "top";
-    case mesh::Owner::Kind::left:
-      return "left";
-    case mesh::Owner::Kind::bottom:
-      return "bottom";
-    default:
-      return "right";
-  }
-}
-
 Json load(const solver::Load& l, const mesh::Plate& plate) {
   Json object{{"name", l.name}, {"kind", solver::word(l.kind)}, {"stress", quantity(l.stress, "MPa")}};
   if (l.kind == solver::Load::Kind::pressure) object["hole"] = plate.holes.at(l.hole).name;
   if (l.kind == solver::Load::Kind::edge) {
-    object["edge"] = edge_word(l.edge);
+    object["edge"] = mesh::edge_names(plate).at(l.edge);
     object["along"] = quantity(l.along, "MPa");
   }
   const solver::Resultant sum = solver::resultant(plate, l);
@@ -167,9 +157,10 @@ Json asked(const Result& result) {
   Json list = Json::array();
   for (const Answer& answer : answers(result.input, result.solution)) {
     const std::string& name = answer.ask.name;
+    const mesh::Raiser at = mesh::raiser(result.input.problem.plate, answer.ask.raiser);
     list.push_back({{"name", name.empty() ? Json(nullptr) : Json(name)},
                     {"quantity", words(answer.ask.quantity)},
-                    {"hole", result.input.problem.plate.holes.at(answer.ask.hole).name},
+                    {std::string(mesh::word(at.kind)), at.name},
                     {"result", edge_value(answer.value)},
                     {"tolerance", quantity(answer.ask.tolerance, "1")},
                     {"largest_bound_allowed", quantity(answer.allowed, "MPa")},

@@ -86,9 +86,14 @@ std::string plain(std::string_view text) {
   return result;
 }
 
-std::string hole_phrase(std::string_view name) {
-  const std::string shown = plain(name);
-  return shown.rfind("hole ", 0) == 0 ? shown : fmt::format("hole {}", shown);
+std::string plural(mesh::Raiser::Kind kind) {
+  return std::string(mesh::word(kind)) + (kind == mesh::Raiser::Kind::notch ? "es" : "s");
+}
+
+std::string phrase(const mesh::Raiser& raiser) {
+  const std::string shown = plain(raiser.name);
+  const std::string kind = std::string(mesh::word(raiser.kind)) + " ";
+  return shown.rfind(kind, 0) == 0 ? shown : kind + shown;
 }
 
 std::string wrapped(std::string_view text, std::string_view first, std::size_t indent) {

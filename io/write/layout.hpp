@@ -5,6 +5,7 @@
 #include <string_view>
 
 #include "io/case/layout.hpp"  // columns
+#include "mesh/plate/outline.hpp"
 #include "solver/extract/estimate.hpp"
 
 namespace raiser::io {
@@ -22,8 +23,12 @@ std::string shortened(std::string_view text, std::size_t width);
 /// One line without control characters, for text that a user wrote.
 std::string plain(std::string_view text);
 
-/// "hole bolt" for a hole named bolt, and "hole 2" for one named so by default.
-std::string hole_phrase(std::string_view name);
+/// "hole bolt" for a hole named bolt, and "hole 2" for one named so by default;
+/// the same for notches and fillets.
+std::string phrase(const mesh::Raiser& raiser);
+
+/// "holes", "notches", "fillets".
+std::string plural(mesh::Raiser::Kind kind);
 
 /// Broken at blanks into lines of at most `page_width` columns, each ended by a
 /// newline. The first line begins with `first`, the others with as many blanks

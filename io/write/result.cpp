@@ -7,7 +7,7 @@
 namespace raiser::io {
 namespace {
 
-const solver::EdgeValue& value_of(const solver::HoleFindings& found, solver::Quantity quantity) {
+const solver::EdgeValue& value_of(const solver::RaiserFindings& found, solver::Quantity quantity) {
   switch (quantity) {
     case solver::Quantity::smallest_edge_stress:
       return found.smallest;
@@ -21,17 +21,17 @@ const solver::EdgeValue& value_of(const solver::HoleFindings& found, solver::Qua
 
 }  // namespace
 
-double peak(const solver::HoleFindings& findings) {
+double peak(const solver::RaiserFindings& findings) {
   return std::max(std::abs(findings.largest.stress.value), std::abs(findings.smallest.stress.value));
 }
 
 std::vector<Answer> answers(const Case& input, const solver::Solution& solution) {
   std::vector<Answer> all;
   for (const solver::Ask& ask : input.asks) {
-    const auto& holes = solution.combined.holes;
-    const auto found = std::find_if(holes.begin(), holes.end(),
-                                    [&](const auto& findings) { return findings.hole == ask.hole; });
-    if (found == holes.end()) continue;
+    const auto& raisers = solution.combined.raisers;
+    const auto found = std::find_if(raisers.begin(), raisers.end(),
+                                    [&](const auto& findings) { return findings.raiser == ask.raiser; });
+    if (found == raisers.end()) continue;
     Answer answer{ask, value_of(*found, ask.quantity), ask.tolerance * peak(*found), false};
     answer.met = answer.value.stress.bound <= answer.allowed;
     all.push_back(answer);
@@ -56,11 +56,11 @@ std::string_view words(solver::Solution::Status status) {
 }
 
 std::vector<std::size_t> worst_first(const solver::LoadFindings& findings) {
-  std::vector<std::size_t> order(findings.holes.size());
+  std::vector<std::size_t> order(findings.raisers.size());
   std::iota(order.begin(), order.end(), std::size_t{0});
   // Equal peaks, as of mirror images, keep the order of the case file.
   std::stable_sort(order.begin(), order.end(), [&](std::size_t a, std::size_t b) {
-    const double pa = peak(findings.holes[a]), pb = peak(findings.holes[b]);
+    const double pa = peak(findings.raisers[a]), pb = peak(findings.raisers[b]);
     return pa > pb * (1 + 1e-9);
   });
   return order;

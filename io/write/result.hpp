@@ -37,12 +37,12 @@ std::string_view words(solver::Quantity quantity);
 /// The words for a status: "settled", "not met".
 std::string_view words(solver::Solution::Status status);
 
-/// Positions of the holes in solution.combined.holes, the largest magnitude
+/// Positions in findings.raisers, the largest magnitude
 /// of edge stress first.
 std::vector<std::size_t> worst_first(const solver::LoadFindings& findings);
 
-/// The largest magnitude of edge stress at a hole, MPa.
-double peak(const solver::HoleFindings& findings);
+/// The largest magnitude of edge stress at a raiser, MPa.
+double peak(const solver::RaiserFindings& findings);
 
 /// The part of the plate that was solved: "whole plate", "half of the plate"…
 std::string_view solved_part(const mesh::Mirrors& mirrors);
@@ -55,8 +55,8 @@ struct Outcome {
   std::string status;   ///< "settled", "not met", "not read", …
   std::string message;  ///< the first fault or the reason; empty when settled
   double seconds = 0.0;
-  std::vector<std::string> hole_names;      ///< of `holes`, in the same order
-  std::vector<solver::HoleFindings> holes;  ///< under all loads; empty when not solved
+  std::vector<std::string> raiser_names;        ///< of `raisers`, in the same order
+  std::vector<solver::RaiserFindings> raisers;  ///< under all loads; empty when not solved
 };
 
 }  // namespace raiser::io

@@ -28,8 +28,8 @@ std::string path_text(const std::string& path, std::size_t width) {
   return "…" + text.substr(at);
 }
 
-const solver::HoleFindings& worst(const Outcome& outcome) {
-  return *std::max_element(outcome.holes.begin(), outcome.holes.end(),
+const solver::RaiserFindings& worst(const Outcome& outcome) {
+  return *std::max_element(outcome.raisers.begin(), outcome.raisers.end(),
                            [](const auto& a, const auto& b) { return peak(a) < peak(b); });
 }
 
@@ -49,13 +49,13 @@ std::vector<std::string> case_names(const std::vector<Outcome>& outcomes) {
 std::string line(const Outcome& outcome, const std::string& name) {
   const std::string head =
       left(path_text(name, case_width - 1), case_width) + left(outcome.status, status_width);
-  if (outcome.holes.empty()) {
+  if (outcome.raisers.empty()) {
     return head + shortened(plain(outcome.message), page_width - case_width - status_width) + "\n";
   }
-  const solver::HoleFindings& found = worst(outcome);
-  const std::size_t index = static_cast<std::size_t>(&found - outcome.holes.data());
+  const solver::RaiserFindings& found = worst(outcome);
+  const std::size_t index = static_cast<std::size_t>(&found - outcome.raisers.data());
   const bool upper = std::abs(found.largest.stress.value) >= std::abs(found.smallest.stress.value);
-  return fmt::format("{}{}{}{}{}\n", head, left(shortened(plain(outcome.hole_names[index]), 11), 12),
+  return fmt::format("{}{}{}{}{}\n", head, left(shortened(plain(outcome.raiser_names[index]), 11), 12),
                      right(fitted(upper ? found.largest.stress : found.smallest.stress, 17), 17),
                      right(kt_text(found.gross), 9), right(kt_text(found.net), 8));
 }
@@ -77,7 +77,7 @@ std::string tally(const std::vector<Outcome>& outcomes) {
 std::string summary_table(const std::vector<Outcome>& outcomes) {
   std::string text =
       fmt::format("{}{}{}{}{}{}\n", left("case", case_width), left("status", status_width),
-                  left("worst hole", 12), right("peak, MPa", 17), right("Kt gross", 9), right("net", 8));
+                  left("worst at", 12), right("peak, MPa", 17), right("Kt gross", 9), right("net", 8));
   const std::vector<std::string> names = case_names(outcomes);
   for (std::size_t i = 0; i < outcomes.size(); ++i) text += line(outcomes[i], names[i]);
   return text + "\n" + wrapped(tally(outcomes));

@@ -4,6 +4,8 @@
 
 #include <algorithm>
 #include <cmath>
+#include <map>
+#include <vector>
 
 #include "io/case/alloys.hpp"
 #include "io/write/layout.hpp"
@@ -34,16 +36,26 @@ std::string constants_text(const solver::HookeLaw& law) {
                      brief(law.poissons_ratio));
 }
 
+// "1 hole", "2 holes, 1 notch".
+std::string count_of_raisers(const mesh::Plate& plate) {
+  std::map<mesh::Raiser::Kind, std::size_t> counts;
+  for (const mesh::Raiser& raiser : mesh::raisers(plate)) ++counts[raiser.kind];
+  std::vector<std::string> parts;
+  for (const auto& [kind, number] : counts)
+    parts.push_back(fmt::format("{} {}", number, number == 1 ? std::string(mesh::word(kind)) : plural(kind)));
+  return fmt::format("{}", fmt::join(parts, ", "));
+}
+
 std::string heading(const Case& input) {
   constexpr std::size_t shown = 6;
   const mesh::Plate& plate = input.problem.plate;
   const solver::HookeLaw& material = input.problem.material;
   const auto& loads = input.problem.loads;
   std::string text = input.title.empty() ? "" : wrapped(plain(input.title));
-  text += wrapped(
-      fmt::format("Plate {} x {} x {} mm, plane {}, {}; {} hole{}", brief(plate.length), brief(plate.width),
-                  brief(plate.thickness), material.state == solver::PlaneState::stress ? "stress" : "strain",
-                  constants_text(material), plate.holes.size(), plate.holes.size() == 1 ? "" : "s"));
+  text += wrapped(fmt::format("Plate {} x {} x {} mm, plane {}, {}; {}", brief(plate.length),
+                              brief(plate.width), brief(plate.thickness),
+                              material.state == solver::PlaneState::stress ? "stress" : "strain",
+                              constants_text(material), count_of_raisers(plate)));
   if (const auto alloy = input.alloy ? find_alloy(*input.alloy) : std::nullopt)
     text += wrapped(fmt::format("{}, {}; {} ({}); no design values", alloy->name, alloy->condition,
                                 alloy->range, alloy->source),
@@ -71,10 +83,10 @@ std::string asked_lines(const Result& result) {
   for (const Answer& answer : answers(result.input, result.solution)) {
     if (answer.ask.name.empty() && answer.met) continue;
     if (++lines > shown && ++left_out > 0) continue;
-    const std::string& hole = result.input.problem.plate.holes.at(answer.ask.hole).name;
+    const std::string place = mesh::raiser(result.input.problem.plate, answer.ask.raiser).name;
     const std::string name = answer.ask.name.empty() ? "" : plain(answer.ask.name) + ": ";
     text += wrapped(fmt::format("{}{} at {} {} MPa, tolerance {} {}", name, words(answer.ask.quantity),
-                                plain(hole), with_bound(answer.value.stress), percent(answer.ask.tolerance),
+                                plain(place), with_bound(answer.value.stress), percent(answer.ask.tolerance),
                                 answer.met ? "met" : "NOT MET"),
                     "  ", 4);
   }
@@ -84,26 +96,35 @@ std::string asked_lines(const Result& result) {
 
 }  // namespace
 
+namespace {
+
+// Whose edges are searched, in words.
+std::string_view edges_of(const mesh::Plate& plate) {
+  return plate.outline ? "edges of holes, notches and fillets" : "holes' edges";
+}
+
+}  // namespace
+
 std::string yield_remark(const Case& input, const solver::LoadFindings& findings) {
-  if (!input.yield_strength || findings.holes.empty()) return "";
+  if (!input.yield_strength || findings.raisers.empty()) return "";
   const auto worst = std::max_element(
-      findings.holes.begin(), findings.holes.end(),
+      findings.raisers.begin(), findings.raisers.end(),
       [](const auto& a, const auto& b) { return a.von_mises.stress.value < b.von_mises.stress.value; });
   const solver::Estimate& largest = worst->von_mises.stress;
-  const std::string hole = hole_phrase(input.problem.plate.holes.at(worst->hole).name);
+  const std::string place = phrase(mesh::raiser(input.problem.plate, worst->raiser));
   if (largest.value + largest.bound < *input.yield_strength) {
-    return fmt::format(
-        "the largest von Mises stress on the holes' edges is {} of the yield strength ({} MPa), at {}.",
-        percent(largest.value / *input.yield_strength), brief(*input.yield_strength), hole);
+    return fmt::format("the largest von Mises stress on the {} is {} of the yield strength ({} MPa), at {}.",
+                       edges_of(input.problem.plate), percent(largest.value / *input.yield_strength),
+                       brief(*input.yield_strength), place);
   }
   return fmt::format(
-      "elastic peak above yield is fictitious: the largest von Mises stress on the holes' edges, {} MPa at "
+      "elastic peak above yield is fictitious: the largest von Mises stress on the {}, {} MPa at "
       "{}, "
       "{} the yield strength of {} MPa. The material yields there and sheds load; take the peak as a measure "
       "for fatigue "
       "or for "
       "an estimate of local plasticity, not as a stress that occurs.",
-      solver::digits(largest), hole,
+      edges_of(input.problem.plate), solver::digits(largest), place,
       largest.value - largest.bound > *input.yield_strength ? "exceeds" : "may exceed",
       brief(*input.yield_strength));
 }
@@ -119,10 +140,10 @@ std::string table(const Result& result, const TableStyle& style) {
   std::string text = heading(result.input);
   text += fmt::format("\n{}", status_lines(result, style.colour));
   text += asked_lines(result);
-  text += holes_part(result, style.rest);
+  text += raisers_part(result, style.rest);
   text += loads_part(result);
   text += published_part(result, style.rest);
-  text += checks_part(result.solution);
+  text += checks_part(result);
   text += "\n";
   if (!yield.empty()) text += wrapped(yield, "Yield: ", 7);
   text += wrapped(cautions(), "Caution: ", 9);

@@ -4,6 +4,7 @@
 
 #include <Eigen/Geometry>
 #include <algorithm>
+#include <cctype>
 #include <cmath>
 #include <numbers>
 
@@ -13,7 +14,7 @@
 namespace raiser::io {
 namespace {
 
-constexpr std::size_t holes_in_full = 3;
+constexpr std::size_t raisers_in_full = 3;
 
 // No more decimals than the uncertainty leaves, never "-0".
 std::string place_text(double value, double uncertainty) {
@@ -42,8 +43,14 @@ std::string shape_text(const mesh::Hole& hole) {
   return text + fmt::format(", centre ({}, {}) mm", brief(hole.centre.x()), brief(hole.centre.y()));
 }
 
-// The radius of curvature of a hole's edge at a point where a peak can be, mm.
-double edge_radius(const mesh::Hole& hole, const mesh::Point& at) {
+std::string shape_text(const mesh::Plate& plate, std::size_t raiser) {
+  return raiser < plate.holes.size() ? shape_text(plate.holes[raiser]) : mesh::raiser(plate, raiser).shape;
+}
+
+// The radius of curvature of a raiser's edge at a point where a peak can be, mm.
+double edge_radius(const mesh::Plate& plate, std::size_t raiser, const mesh::Point& at) {
+  if (raiser >= plate.holes.size()) return mesh::raiser(plate, raiser).radius;
+  const mesh::Hole& hole = plate.holes[raiser];
   const double a = hole.length / 2, b = hole.width / 2;
   if (hole.shape == mesh::HoleShape::rounded_rectangle) return hole.corner_radius;
   if (hole.shape != mesh::HoleShape::ellipse) return std::min(a, b);
@@ -52,10 +59,11 @@ double edge_radius(const mesh::Hole& hole, const mesh::Point& at) {
   return std::pow(a * a * sine * sine + b * b * cosine * cosine, 1.5) / (a * b);
 }
 
-std::string edge_line(std::string_view name, const solver::EdgeValue& value, const mesh::Hole& hole) {
-  const double uncertain = place_uncertainty(value.stress) * edge_radius(hole, value.point);
+std::string edge_line(std::string_view name, const solver::EdgeValue& value, const mesh::Plate& plate,
+                      std::size_t raiser) {
+  const double uncertain = place_uncertainty(value.stress) * edge_radius(plate, raiser, value.point);
   const double degree = 180.0 / std::numbers::pi;
-  const double turn = uncertain / (value.point - hole.centre).norm();
+  const double turn = uncertain / (value.point - mesh::raiser(plate, raiser).centre).norm();
   return fmt::format("  {}{}{}{}{}{}\n", left(name, 22), right(value_text(value.stress), 12),
                      right(bound_text(value.stress), 9), right(place_text(value.point.x(), uncertain), 11),
                      right(place_text(value.point.y(), uncertain), 11),
@@ -77,14 +85,16 @@ std::string section_line(const solver::Section& section) {
       fmt::format("  section {} = {} mm: ", across ? "x" : "y", brief(section.station)), 13);
 }
 
-std::string hole_in_full(const mesh::Hole& hole, const solver::HoleFindings& found) {
+std::string raiser_in_full(const mesh::Plate& plate, const solver::RaiserFindings& found) {
+  const std::string name = phrase(mesh::raiser(plate, found.raiser));
   std::string text(1, '\n');
-  text += wrapped(shape_text(hole), fmt::format("H{}: ", hole_phrase(hole.name).substr(1)), 2);
+  text += wrapped(shape_text(plate, found.raiser),
+                  fmt::format("{}{}: ", static_cast<char>(std::toupper(name.front())), name.substr(1)), 2);
   text += fmt::format("  {}{}{}{}{}{}\n", left("", 22), right("MPa", 12), right("± MPa", 9),
                       right("x, mm", 11), right("y, mm", 11), right("angle, deg", 11));
-  text += edge_line("largest edge stress", found.largest, hole);
-  text += edge_line("smallest edge stress", found.smallest, hole);
-  text += edge_line("largest von Mises", found.von_mises, hole);
+  text += edge_line("largest edge stress", found.largest, plate, found.raiser);
+  text += edge_line("smallest edge stress", found.smallest, plate, found.raiser);
+  text += edge_line("largest von Mises", found.von_mises, plate, found.raiser);
   text += concentration_line("Kt gross", found.gross);
   text += concentration_line("Kt net  ", found.net);
   return text + section_line(found.section);
@@ -92,15 +102,14 @@ std::string hole_in_full(const mesh::Hole& hole, const solver::HoleFindings& fou
 
 std::string kt_text(const solver::Concentration& kt) { return kt.kt ? fitted_value(*kt.kt, 8) : "-"; }
 
-std::string hole_line(const mesh::Hole& hole, const solver::HoleFindings& found) {
-  return fmt::format("  {}{}{}{}{}{}\n", left(shortened(plain(hole.name), 12), 12),
-                     right(fitted(found.largest.stress, 17), 17),
-                     right(fitted(found.smallest.stress, 17), 17),
-                     right(fitted(found.von_mises.stress, 16), 16), right(kt_text(found.gross), 8),
-                     right(kt_text(found.net), 8));
+std::string raiser_line(const std::string& name, const solver::RaiserFindings& found) {
+  return fmt::format(
+      "  {}{}{}{}{}{}\n", left(shortened(plain(name), 12), 12), right(fitted(found.largest.stress, 17), 17),
+      right(fitted(found.smallest.stress, 17), 17), right(fitted(found.von_mises.stress, 16), 16),
+      right(kt_text(found.gross), 8), right(kt_text(found.net), 8));
 }
 
-std::string hole_lines_head(std::string_view title) {
+std::string raiser_lines_head(std::string_view title) {
   return fmt::format("\n{}\n  {}{}{}{}{}{}\n", title, left("", 12), right("largest edge", 17),
                      right("smallest edge", 17), right("von Mises", 16), right("Kt", 8), right("Kt", 8)) +
          fmt::format("  {}{}{}{}{}{}\n", left("", 12), right("MPa", 17), right("MPa", 17), right("MPa", 16),
@@ -124,23 +133,24 @@ std::string comparison_lines(const validation::Comparison& line, const mesh::Pla
 
 }  // namespace
 
-std::string holes_part(const Result& result, const std::string& rest) {
-  const auto& holes = result.solution.combined.holes;
+std::string raisers_part(const Result& result, const std::string& rest) {
+  const auto& raisers = result.solution.combined.raisers;
   const mesh::Plate& plate = result.input.problem.plate;
+  const std::string_view others = plate.outline ? "raisers" : "holes";
   const std::vector<std::size_t> order = worst_first(result.solution.combined);
-  const std::size_t full = holes.size() <= holes_in_full ? holes.size() : 1;
+  const std::size_t full = raisers.size() <= raisers_in_full ? raisers.size() : 1;
   std::string text;
-  for (std::size_t i = 0; i < full; ++i)
-    text += hole_in_full(plate.holes.at(holes[order[i]].hole), holes[order[i]]);
-  if (full == holes.size()) return text;
-  const std::size_t shown = std::min(holes.size(), table_holes);
-  text += hole_lines_head("The other holes, worst first");
+  for (std::size_t i = 0; i < full; ++i) text += raiser_in_full(plate, raisers[order[i]]);
+  if (full == raisers.size()) return text;
+  const std::size_t shown = std::min(raisers.size(), table_holes);
+  text += raiser_lines_head(fmt::format("The other {}, worst first", others));
   for (std::size_t i = full; i < shown; ++i)
-    text += hole_line(plate.holes.at(holes[order[i]].hole), holes[order[i]]);
-  if (shown < holes.size()) {
+    text += raiser_line(mesh::raiser(plate, raisers[order[i]].raiser).name, raisers[order[i]]);
+  if (shown < raisers.size()) {
     const std::string where = rest.empty() ? "" : ": see " + rest;
     text += wrapped(
-        fmt::format("and {} more holes, none of them worse{}", count(holes.size() - shown), where), "  ", 2);
+        fmt::format("and {} more {}, none of them worse{}", count(raisers.size() - shown), others, where),
+        "  ", 2);
   }
   return text;
 }
@@ -148,22 +158,19 @@ std::string holes_part(const Result& result, const std::string& rest) {
 std::string loads_part(const Result& result) {
   const auto& units = result.solution.units;
   const auto& combined = result.solution.combined;
-  if (units.size() < 2 || combined.holes.empty()) return "";
+  if (units.size() < 2 || combined.raisers.empty()) return "";
   constexpr std::size_t most = 12;
-  const std::size_t worst = combined.holes[worst_first(combined).front()].hole;
+  const std::size_t worst = combined.raisers[worst_first(combined).front()].raiser;
   std::string text;
   for (std::size_t i = 0; i < std::min(units.size(), most); ++i) {
-    const auto& holes = units[i].holes;
-    const auto at =
-        std::find_if(holes.begin(), holes.end(), [&](const auto& found) { return found.hole == worst; });
-    if (at == holes.end()) continue;
-    mesh::Hole named;
-    named.name = units[i].name;
-    text += hole_line(named, *at);
+    const auto& raisers = units[i].raisers;
+    const auto at = std::find_if(raisers.begin(), raisers.end(),
+                                 [&](const auto& found) { return found.raiser == worst; });
+    if (at != raisers.end()) text += raiser_line(units[i].name, *at);
   }
   if (units.size() > most) text += fmt::format("  and {} more loads\n", count(units.size() - most));
-  const std::string hole = hole_phrase(result.input.problem.plate.holes.at(worst).name);
-  return hole_lines_head(fmt::format("Each load by itself, at {}", hole)) + text;
+  const std::string place = phrase(mesh::raiser(result.input.problem.plate, worst));
+  return raiser_lines_head(fmt::format("Each load by itself, at {}", place)) + text;
 }
 
 std::string published_part(const Result& result, const std::string& rest) {
@@ -180,12 +187,13 @@ std::string published_part(const Result& result, const std::string& rest) {
   return text + wrapped(fmt::format("and {} more{}", count(result.published.size() - shown), where), "  ", 2);
 }
 
-std::string checks_part(const solver::Solution& solution) {
+std::string checks_part(const Result& result) {
+  const solver::Solution& solution = result.solution;
   const solver::PlateChecks& checks = solution.checks;
   // A mean stress that vanishes leaves rounding behind, which is no finding.
   double largest = 0.0;
-  for (const solver::HoleFindings& hole : solution.combined.holes)
-    largest = std::max(largest, hole.gross.nominal);
+  for (const solver::RaiserFindings& found : solution.combined.raisers)
+    largest = std::max(largest, found.gross.nominal);
   const double recovered = std::abs(checks.far_recovered) < 1e-12 * largest ? 0.0 : checks.far_recovered;
   std::string text = "\nChecks\n";
   text += wrapped(
@@ -194,16 +202,16 @@ std::string checks_part(const solver::Solution& solution) {
                   brief(checks.far_station, 4), brief(checks.far_applied), brief(recovered),
                   percent(checks.far_scatter)),
       "  ", 4);
-  double on_holes = 0.0;
-  for (const solver::HoleFindings& hole : solution.combined.holes)
-    on_holes = std::max(on_holes, hole.von_mises.stress.value);
-  if (checks.outer_von_mises > on_holes)
+  double on_raisers = 0.0;
+  for (const solver::RaiserFindings& found : solution.combined.raisers)
+    on_raisers = std::max(on_raisers, found.von_mises.stress.value);
+  if (checks.outer_von_mises > on_raisers)
     text += wrapped(
         fmt::format(
-            "ATTENTION: the plate's own edge carries more than any hole: von Mises {} MPa at ({}, {}) mm "
+            "ATTENTION: the plate's own edge carries more than any {}: von Mises {} MPa at ({}, {}) mm "
             "(no bound)",
-            brief(checks.outer_von_mises, 4), brief(checks.outer_point.x(), 5),
-            brief(checks.outer_point.y(), 5)),
+            result.input.problem.plate.outline ? "raiser" : "hole", brief(checks.outer_von_mises, 4),
+            brief(checks.outer_point.x(), 5), brief(checks.outer_point.y(), 5)),
         "  ", 4);
   text += wrapped(fmt::format("equilibrium residual {}, reactions {} of the applied force",
                               brief(checks.equilibrium_residual, 2), brief(checks.reaction, 2)),

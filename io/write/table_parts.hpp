@@ -10,7 +10,7 @@ namespace raiser::io {
 // or nothing when there is nothing to say.
 
 /// The holes, worst first: in full where there is room, else a line for each.
-std::string holes_part(const Result& result, const std::string& rest);
+std::string raisers_part(const Result& result, const std::string& rest);
 
 /// What each of several loads does by itself at the worst hole.
 std::string loads_part(const Result& result);
@@ -19,6 +19,6 @@ std::string loads_part(const Result& result);
 std::string published_part(const Result& result, const std::string& rest);
 
 /// Checks on the whole plate and how it was computed.
-std::string checks_part(const solver::Solution& solution);
+std::string checks_part(const Result& result);
 
 }  // namespace raiser::io

@@ -1,16 +1,14 @@
 #pragma once
 
-#include <Eigen/Core>
 #include <cstddef>
+#include <optional>
 #include <string>
 #include <string_view>
 #include <vector>
 
-namespace raiser::mesh {
+#include "mesh/plate/outline.hpp"
 
-/// A position in the plate's plane, in mm. The origin is the plate's centre,
-/// x runs along the length and y across it.
-using Point = Eigen::Vector2d;
+namespace raiser::mesh {
 
 enum class HoleShape { circle, ellipse, slot, rounded_rectangle };
 
@@ -28,13 +26,30 @@ struct Hole {
   double angle = 0.0;  ///< rad, from the plate's x axis to the hole's first axis
 };
 
-/// A rectangular plate of one thickness with holes. Lengths in mm.
+/// A plate of one thickness with holes: a rectangle, or what `outline` says.
+/// Lengths in mm.
 struct Plate {
-  double length = 0.0;  ///< along x
-  double width = 0.0;   ///< along y
+  double length = 0.0;  ///< of the bounding box, along x
+  double width = 0.0;   ///< of the bounding box, along y
   double thickness = 0.0;
   std::vector<Hole> holes;
+  /// The outline, its bounding box centred at the origin; none for the rectangle.
+  std::optional<Outline> outline = std::nullopt;
 };
+
+/// The plate's outline, also where it is the rectangle.
+Outline outline_of(const Plate& plate);
+
+/// The names of the plate's edges, which Owner::index of kind edge counts:
+/// right, top, left and bottom for the rectangle.
+std::vector<std::string> edge_names(const Plate& plate);
+
+/// Everything on the plate whose edge is searched for peaks, which Owner::index
+/// of kind raiser counts: the holes first, then what its outline has.
+std::vector<Raiser> raisers(const Plate& plate);
+std::size_t raiser_count(const Plate& plate);
+/// One of them. Throws std::out_of_range when there is none of that index.
+Raiser raiser(const Plate& plate, std::size_t index);
 
 /// The word used for a shape in case files, tables and messages.
 std::string_view word(HoleShape shape);

@@ -79,6 +79,82 @@ Piece through(const Hole& hole, const Line& line) {
   return std::nullopt;
 }
 
+// Below this part of the plate's size two places are one.
+constexpr double rounding = 1e-12;
+
+struct Crossing {
+  double position = 0.0;
+  Owner owner;
+};
+
+// The parameter where a piece of curve, monotone in `axis`, passes the station.
+// `from` and `to` are its ends' distances beyond it, 0 within rounding.
+double passing(const Curve& piece, int axis, double station, double from, double to) {
+  if (from == 0.0) return piece.begin;
+  if (to == 0.0) return piece.end;
+  const auto found = crossings(piece, axis, station);
+  if (!found.empty()) return found.front();
+  return std::abs(from) < std::abs(to) ? piece.begin : piece.end;
+}
+
+// Where a chain passes from one side of the line to the other. `touching_is_before`
+// says on which side what lies on the line itself counts.
+std::vector<Crossing> passages(const Loop& loop, int axis, double station, double tolerance,
+                               bool touching_is_before) {
+  const auto beyond = [&](const Point& x) {
+    const double distance = x[axis] - station;
+    return std::abs(distance) <= tolerance ? 0.0 : distance;
+  };
+  const auto is_before = [&](double distance) {
+    return touching_is_before ? distance <= 0.0 : distance < 0.0;
+  };
+  std::vector<Crossing> result;
+  for (std::size_t i = 0; i < loop.size(); ++i) {
+    std::vector<double> stops = extremes(loop[i], axis);
+    stops.push_back(loop[i].end);
+    double from = loop[i].begin;
+    for (const double to : stops) {
+      const Curve piece = part(loop[i], from, to);
+      from = to;
+      const double a = beyond(piece.start());
+      const double b = beyond(piece.finish());
+      if (is_before(a) == is_before(b)) continue;
+      const double t = passing(piece, axis, station, a, b);
+      Owner owner = loop[i].owner;
+      // At a joint with a raiser, the raiser bounds the section.
+      const auto& next = loop[(i + (t == loop[i].end ? 1 : loop.size() - 1)) % loop.size()];
+      if ((t == loop[i].end || t == loop[i].begin) && next.owner.kind == Owner::Kind::raiser)
+        owner = next.owner;
+      result.push_back({piece.at(t)[1 - axis], owner});
+    }
+  }
+  std::sort(result.begin(), result.end(),
+            [](const Crossing& a, const Crossing& b) { return a.position < b.position; });
+  return result;
+}
+
+// The pieces of the line inside a chain of the plate's outline.
+std::vector<Interval> inside(const Loop& loop, const Plate& plate, Direction direction, double station) {
+  const int axis = direction == Direction::across ? 0 : 1;
+  const double tolerance = rounding * (plate.length + plate.width);
+  auto found = passages(loop, axis, station, tolerance, false);
+  if (found.empty()) found = passages(loop, axis, station, tolerance, true);
+  std::vector<Interval> result;
+  for (std::size_t i = 0; i + 1 < found.size(); i += 2) {
+    for (const std::size_t k : {i, i + 1})
+      if (found[k].owner.kind == Owner::Kind::raiser) found[k].owner.index += plate.holes.size();
+    result.push_back({found[i].position, found[i + 1].position, found[i].owner, found[i + 1].owner});
+  }
+  return result;
+}
+
+std::vector<Interval> whole(const Plate& plate, bool across) {
+  const double half = 0.5 * (across ? plate.width : plate.length);
+  const auto edge = [](std::size_t index) { return Owner{Owner::Kind::edge, index}; };
+  return {{-half, half, edge(across ? rectangle::bottom : rectangle::left),
+           edge(across ? rectangle::top : rectangle::right)}};
+}
+
 }  // namespace
 
 std::optional<Chord> chord(const Hole& hole, Direction direction, double station) {
@@ -94,10 +170,18 @@ std::optional<Chord> chord(const Hole& hole, Direction direction, double station
   return result;
 }
 
+std::vector<Interval> gross_along(const Plate& plate, Direction direction, double station) {
+  const bool across = direction == Direction::across;
+  if (!(std::abs(station) <= 0.5 * (across ? plate.length : plate.width) * (1.0 + rounding))) return {};
+  if (plate.outline) return inside(plate.outline->gross(), plate, direction, station);
+  return whole(plate, across);
+}
+
 std::vector<Interval> material_along(const Plate& plate, Direction direction, double station) {
   const bool across = direction == Direction::across;
-  if (!(std::abs(station) <= 0.5 * (across ? plate.length : plate.width))) return {};
-  const double half = 0.5 * (across ? plate.width : plate.length);
+  if (!(std::abs(station) <= 0.5 * (across ? plate.length : plate.width) * (1.0 + rounding))) return {};
+  const auto pieces =
+      plate.outline ? inside(plate.outline->curves, plate, direction, station) : whole(plate, across);
 
   struct Gap {
     Chord chord;
@@ -110,13 +194,37 @@ std::vector<Interval> material_along(const Plate& plate, Direction direction, do
             [](const Gap& a, const Gap& b) { return a.chord.begin < b.chord.begin; });
 
   std::vector<Interval> result;
-  Interval open{-half, half, std::nullopt, std::nullopt};
-  for (const Gap& next : gaps) {
-    result.push_back({open.begin, next.chord.begin, open.hole_at_begin, next.hole});
-    open.begin = next.chord.end;
-    open.hole_at_begin = next.hole;
+  for (Interval open : pieces) {
+    const Interval piece = open;
+    for (const Gap& next : gaps) {
+      if (next.chord.begin < piece.begin || next.chord.end > piece.end) continue;
+      const Owner hole{Owner::Kind::raiser, next.hole};
+      result.push_back({open.begin, next.chord.begin, open.at_begin, hole});
+      open.begin = next.chord.end;
+      open.at_begin = hole;
+    }
+    result.push_back(open);
   }
-  result.push_back(open);
+  return result;
+}
+
+SectionShape shape_of(const std::vector<Interval>& pieces) {
+  SectionShape result;
+  if (pieces.empty()) return result;
+  double first_moment = 0.0;
+  for (const Interval& piece : pieces) {
+    const double length = piece.end - piece.begin;
+    result.length += length;
+    first_moment += length * 0.5 * (piece.begin + piece.end);
+  }
+  result.centroid = result.length > 0.0 ? first_moment / result.length : 0.0;
+  for (const Interval& piece : pieces) {
+    const double length = piece.end - piece.begin;
+    const double arm = 0.5 * (piece.begin + piece.end) - result.centroid;
+    result.inertia += length * (length * length / 12.0 + arm * arm);
+  }
+  result.low = pieces.front().begin;
+  result.high = pieces.back().end;
   return result;
 }
 

@@ -21,18 +21,40 @@ struct Chord {
 /// misses or only touches it. Exact for every shape at any angle.
 std::optional<Chord> chord(const Hole& hole, Direction direction, double station);
 
-/// A piece of material on a section: positions in mm, begin < end. A side that
-/// ends at a hole names it (index into Plate::holes), one that ends at the
-/// plate's own edge names nothing.
+/// A piece of material on a section: positions in mm, begin < end, and what
+/// bounds it there.
 struct Interval {
   double begin = 0.0;
   double end = 0.0;
-  std::optional<std::size_t> hole_at_begin;
-  std::optional<std::size_t> hole_at_end;
+  Owner at_begin;
+  Owner at_end;
+
+  std::optional<std::size_t> raiser_at_begin() const { return raiser(at_begin); }
+  std::optional<std::size_t> raiser_at_end() const { return raiser(at_end); }
+
+ private:
+  static std::optional<std::size_t> raiser(const Owner& owner) {
+    return owner.kind == Owner::Kind::raiser ? std::optional(owner.index) : std::nullopt;
+  }
 };
 
 /// The pieces of material along a section of a legal plate, in rising order.
-/// Empty when the station lies outside the plate.
+/// Empty when the station lies outside the plate. Where the outline jumps at
+/// the station, the side of smaller x (or y) counts.
 std::vector<Interval> material_along(const Plate& plate, Direction direction, double station);
+
+/// The same for the plate without its holes and notches, on which gross
+/// sections stand.
+std::vector<Interval> gross_along(const Plate& plate, Direction direction, double station);
+
+/// Figures of a section, for a thickness of 1 mm.
+struct SectionShape {
+  double length = 0.0;    ///< mm, of all pieces together
+  double centroid = 0.0;  ///< mm
+  double inertia = 0.0;   ///< mm^3, second moment about the centroid
+  double low = 0.0;       ///< mm, where the first piece begins
+  double high = 0.0;      ///< mm, where the last piece ends
+};
+SectionShape shape_of(const std::vector<Interval>& pieces);
 
 }  // namespace raiser::mesh

@@ -1,38 +1,10 @@
 #include <algorithm>
-#include <cmath>
-#include <numbers>
 #include <stdexcept>
 
 #include "mesh/region/region.hpp"
 
 namespace raiser::mesh {
 namespace {
-
-/// Parameters strictly inside the curve where its coordinate `axis` is zero.
-std::vector<double> crossings(const Curve& curve, int axis) {
-  const double low = std::min(curve.begin, curve.end);
-  const double high = std::max(curve.begin, curve.end);
-  const double margin = 1e-9 * (high - low);
-  std::vector<double> found;
-  const auto keep = [&](double t) {
-    if (t > low + margin && t < high - margin) found.push_back(t);
-  };
-  if (curve.kind == Curve::Kind::line) {
-    if (curve.u[axis] != 0.0) keep(-curve.centre[axis] / curve.u[axis]);
-  } else {
-    const double amplitude = std::hypot(curve.u[axis], curve.v[axis]);
-    const double cosine = -curve.centre[axis] / amplitude;
-    if (std::abs(cosine) < 1.0) {
-      const double phase = std::atan2(curve.v[axis], curve.u[axis]);
-      const double turn = 2 * std::numbers::pi;
-      for (double t : {phase - std::acos(cosine), phase + std::acos(cosine)})
-        for (t -= turn * std::floor((t - low) / turn); t < high; t += turn) keep(t);
-    }
-  }
-  std::sort(found.begin(), found.end());
-  if (curve.end < curve.begin) std::reverse(found.begin(), found.end());
-  return found;
-}
 
 struct Chain {
   Loop curves;
@@ -46,7 +18,7 @@ void split(const Loop& loop, int axis, std::vector<Loop>& whole, std::vector<Cha
   std::vector<Curve> pieces;
   std::vector<bool> inside;
   for (const Curve& curve : loop) {
-    std::vector<double> stops = crossings(curve, axis);
+    std::vector<double> stops = crossings(curve, axis, 0.0);
     stops.push_back(curve.end);
     double from = curve.begin;
     for (double to : stops) {
@@ -100,9 +72,7 @@ std::vector<Loop> join(const std::vector<Chain>& chains, int axis, Owner owner) 
     for (std::size_t i = first; !used[i]; i = next[i]) {
       used[i] = true;
       loop.insert(loop.end(), chains[i].curves.begin(), chains[i].curves.end());
-      const Point from = chains[i].finish();
-      loop.push_back(
-          {Curve::Kind::line, from, chains[next[i]].start() - from, Point::Zero(), 0.0, 1.0, owner});
+      loop.push_back(line(chains[i].finish(), chains[next[i]].start(), owner));
     }
     loops.push_back(std::move(loop));
   }

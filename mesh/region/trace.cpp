@@ -19,8 +19,7 @@ class HoleLoop {
 
   void line(double x0, double y0, double x1, double y1) {
     if (x0 == x1 && y0 == y1) return;
-    const Point from = place(x0, y0);
-    loop_.push_back({Curve::Kind::line, from, place(x1, y1) - from, Point::Zero(), 0.0, 1.0, owner_});
+    loop_.push_back(mesh::line(place(x0, y0), place(x1, y1), owner_));
   }
   /// A quarter of an ellipse about (x, y), run clockwise from `begin`.
   void arc(double x, double y, double a, double b, double begin) {
@@ -36,7 +35,7 @@ class HoleLoop {
 };
 
 Loop trace_hole(const Hole& hole, std::size_t index) {
-  HoleLoop loop(hole, {Owner::Kind::hole, index});
+  HoleLoop loop(hole, {Owner::Kind::raiser, index});
   const double a = hole.length / 2;
   const double b = hole.width / 2;
   if (hole.shape == HoleShape::circle || hole.shape == HoleShape::ellipse) {
@@ -58,19 +57,9 @@ Loop trace_hole(const Hole& hole, std::size_t index) {
 }
 
 Loop trace_outline(const Plate& plate) {
-  const double x = plate.length / 2;
-  const double y = plate.width / 2;
-  const Point corners[] = {{-x, -y}, {x, -y}, {x, y}, {-x, y}};
-  const Owner::Kind owners[] = {Owner::Kind::bottom, Owner::Kind::right, Owner::Kind::top, Owner::Kind::left};
-  Loop loop;
-  for (int k = 0; k < 4; ++k)
-    loop.push_back({Curve::Kind::line,
-                    corners[k],
-                    corners[(k + 1) % 4] - corners[k],
-                    Point::Zero(),
-                    0.0,
-                    1.0,
-                    {owners[k], 0}});
+  Loop loop = outline_of(plate).curves;
+  for (Curve& curve : loop)
+    if (curve.owner.kind == Owner::Kind::raiser) curve.owner.index += plate.holes.size();
   return loop;
 }
 

@@ -16,10 +16,10 @@ struct SizeRule {
   double growth = 1.0;          ///< increase of triangle size with distance from a finer side
   double corner = 1e-4;         ///< side length at a re-entrant corner over the shorter side before grading
   std::vector<Point> singular;  ///< places on the boundary that are graded as re-entrant corners are
-  std::vector<double> refine;   ///< by hole: factor on the side lengths there; 1 where absent
+  std::vector<double> refine;   ///< by raiser: factor on the side lengths there; 1 where absent
 
   double factor(const Owner& owner) const {
-    return owner.kind == Owner::Kind::hole && owner.hole < refine.size() ? refine[owner.hole] : 1.0;
+    return owner.kind == Owner::Kind::raiser && owner.index < refine.size() ? refine[owner.index] : 1.0;
   }
 };
 

@@ -38,37 +38,52 @@ std::vector<std::vector<Load>> loads_of_units(const std::vector<Load>& loads,
 LoadFindings findings(const Problem& problem, const DegreeSequence& sequence, std::size_t load_case,
                       const std::string& name, const std::vector<Load>& loads) {
   LoadFindings result{name, {}};
-  for (std::size_t h = 0; h < problem.plate.holes.size(); ++h) {
-    HoleFindings hole;
-    hole.hole = h;
-    hole.largest = sequence.value(load_case, h, Quantity::largest_edge_stress);
-    hole.smallest = sequence.value(load_case, h, Quantity::smallest_edge_stress);
-    hole.von_mises = sequence.value(load_case, h, Quantity::von_mises);
-    const bool is_tensile = std::abs(hole.largest.stress.value) >= std::abs(hole.smallest.stress.value);
-    const Estimate& peak = is_tensile ? hole.largest.stress : hole.smallest.stress;
-    const Nominal basis = nominal(problem.plate, loads, h);
-    hole.section = basis.section;
-    hole.gross = concentration(peak, basis.gross);
-    hole.net = concentration(peak, basis.net);
-    result.holes.push_back(std::move(hole));
+  for (std::size_t r = 0; r < mesh::raiser_count(problem.plate); ++r) {
+    RaiserFindings found;
+    found.raiser = r;
+    found.largest = sequence.value(load_case, r, Quantity::largest_edge_stress);
+    found.smallest = sequence.value(load_case, r, Quantity::smallest_edge_stress);
+    found.von_mises = sequence.value(load_case, r, Quantity::von_mises);
+    const bool is_tensile = std::abs(found.largest.stress.value) >= std::abs(found.smallest.stress.value);
+    const Estimate& peak = is_tensile ? found.largest.stress : found.smallest.stress;
+    const Nominal basis = nominal(problem.plate, loads, r);
+    found.section = basis.section;
+    found.gross = concentration(peak, basis.gross);
+    found.net = concentration(peak, basis.net);
+    result.raisers.push_back(std::move(found));
   }
   return result;
 }
 
-/// The section farthest from every hole and both ends.
-double far_station(const Plate& plate) {
-  std::vector<std::pair<double, double>> holes;
+/// From where to where along x each hole and each raiser of the outline reaches.
+std::vector<std::pair<double, double>> reaches(const Plate& plate) {
+  std::vector<std::pair<double, double>> result;
   for (const mesh::Hole& hole : plate.holes) {
     const double half = mesh::half_extent(hole, {1.0, 0.0});
-    holes.emplace_back(hole.centre.x() - half, hole.centre.x() + half);
+    result.emplace_back(hole.centre.x() - half, hole.centre.x() + half);
   }
-  std::sort(holes.begin(), holes.end());
+  if (!plate.outline) return result;
+  for (const mesh::Curve& curve : plate.outline->curves) {
+    if (curve.owner.kind != Owner::Kind::raiser) continue;
+    std::vector<double> stops = mesh::extremes(curve, 0);
+    stops.insert(stops.end(), {curve.begin, curve.end});
+    std::vector<double> x;
+    for (const double t : stops) x.push_back(curve.at(t).x());
+    result.emplace_back(*std::min_element(x.begin(), x.end()), *std::max_element(x.begin(), x.end()));
+  }
+  return result;
+}
+
+/// The section farthest from every raiser and both ends.
+double far_station(const Plate& plate) {
+  std::vector<std::pair<double, double>> taken = reaches(plate);
+  std::sort(taken.begin(), taken.end());
   double best = 0.0;
   double room = -1.0;
   double from = -plate.length / 2;
-  holes.emplace_back(plate.length / 2, plate.length / 2);
-  for (const auto& [begin, end] : holes) {
-    // The ends are loaded as the far field is: stay near them rather than near a hole.
+  taken.emplace_back(plate.length / 2, plate.length / 2);
+  for (const auto& [begin, end] : taken) {
+    // The ends are loaded as the far field is: stay near them rather than near a raiser.
     const bool at_start = from == -plate.length / 2;
     const bool at_end = begin == plate.length / 2;
     const double share = at_start == at_end ? 0.5 : (at_start ? 0.25 : 0.75);
@@ -82,13 +97,12 @@ double far_station(const Plate& plate) {
 }
 
 /// The largest von Mises stress on the plate's own edges, so that a stress
-/// above those on the holes does not go unsaid.
+/// above those on the raisers does not go unsaid.
 void check_outer_edges(const Model& model, const Displacements& displacements, PlateChecks& checks) {
   const EdgeProbe probe(model, displacements.degree, search_points(),
                         sides_at_search_points(displacements.degree));
   for (const mesh::BoundarySide& side : model.mesh().boundary()) {
-    const Owner::Kind kind = side.curve.owner.kind;
-    if (kind == Owner::Kind::hole || kind == Owner::Kind::mirror_x || kind == Owner::Kind::mirror_y) continue;
+    if (side.curve.owner.kind != Owner::Kind::edge) continue;
     const SideStress stress = probe.at(side, displacements);
     for (const Image& image : model.images()) {
       Eigen::VectorXd weight(static_cast<Eigen::Index>(model.loads().size()));
@@ -111,14 +125,18 @@ void check_far_field(const Problem& problem, Solution& solution) {
   checks.far_station = far_station(problem.plate);
   const SectionForces forces =
       section_forces(problem.plate, problem.loads, mesh::Direction::across, checks.far_station);
-  const double area = problem.plate.width * problem.plate.thickness;
-  checks.far_applied = forces.normal / area;
-  const double bending = 6 * forces.moment / (area * problem.plate.width);
+  const auto shape =
+      mesh::shape_of(mesh::gross_along(problem.plate, mesh::Direction::across, checks.far_station));
+  const double thickness = problem.plate.thickness;
+  checks.far_applied = forces.normal / (shape.length * thickness);
+  const double slope = forces.moment / (shape.inertia * thickness);
+  const double bending = slope * std::max(shape.high - shape.centroid, shape.centroid - shape.low);
   const FarStress far =
-      far_stress(problem.plate, solution.field, checks.far_station, checks.far_applied, bending);
+      far_stress(problem.plate, solution.field, checks.far_station, checks.far_applied, slope);
   checks.far_recovered = far.mean;
   double largest = std::max({std::abs(checks.far_applied), std::abs(bending)});
-  for (const HoleFindings& hole : solution.combined.holes) largest = std::max(largest, hole.gross.nominal);
+  for (const RaiserFindings& found : solution.combined.raisers)
+    largest = std::max(largest, found.gross.nominal);
   checks.far_scatter = largest > 0 ? far.scatter / largest : 0.0;
 }
 
@@ -141,7 +159,7 @@ Solution report(const Problem& problem, const DegreeSequence& sequence) {
   std::vector<Field> fields;
   for (const Displacements& level : last_of(sequence.displacements())) fields.emplace_back(model, level);
   std::vector<Section> sections;
-  for (const HoleFindings& hole : solution.combined.holes) sections.push_back(hole.section);
+  for (const RaiserFindings& found : solution.combined.raisers) sections.push_back(found.section);
   solution.ligaments = ligaments(problem.plate, sections, fields);
   solution.field = std::move(fields.back());
 

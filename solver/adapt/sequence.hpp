@@ -8,7 +8,7 @@
 namespace raiser::solver {
 
 /// Solutions of rising degree on one mesh, and what is known from all of them.
-/// Holds references to the model and the plate.
+/// Holds a reference to the model.
 class DegreeSequence {
  public:
   DegreeSequence(const Model& model, const Plate& plate);
@@ -22,17 +22,17 @@ class DegreeSequence {
   const std::vector<EdgeScan>& scans() const { return scans_; }
 
   /// The value of the last degree with its bound from all of them.
-  EdgeValue value(std::size_t load_case, std::size_t hole, Quantity quantity) const;
+  EdgeValue value(std::size_t load_case, std::size_t raiser, Quantity quantity) const;
 
-  /// Largest magnitude of edge stress on the hole under all loads, MPa.
-  double peak(std::size_t hole) const;
+  /// Largest magnitude of edge stress on the raiser under all loads, MPa.
+  double peak(std::size_t raiser) const;
 
   /// Bound of an asked number over its tolerance; it is met at 1 or below.
   double excess(const Ask& ask) const;
 
  private:
   const Model* model_;
-  const Plate* plate_;
+  std::vector<Point> centres_;  ///< of the raisers
   EdgeScanner scanner_;
   Room room_;
   std::vector<Displacements> displacements_;

@@ -32,8 +32,8 @@ void require_legal(const Problem& problem, const std::vector<Ask>& asks) {
   if (const auto fault = imbalance(problem.plate, problem.loads))
     throw std::invalid_argument("settle: " + fault->what);
   for (const Ask& ask : asks)
-    if (ask.hole >= problem.plate.holes.size() || !(ask.tolerance > 0))
-      throw std::invalid_argument("settle: an asked number names no hole or has no tolerance");
+    if (ask.raiser >= mesh::raiser_count(problem.plate) || !(ask.tolerance > 0))
+      throw std::invalid_argument("settle: an asked number names no raiser or has no tolerance");
 }
 
 /// The mirror lines that the plate, its material and all loads share.
@@ -61,7 +61,7 @@ mesh::SizeRule first_rule(const Plate& plate, double tolerance) {
     rule.growth = 0.7;
     rule.joint = tolerance < 1e-7 ? 0.002 : 0.01;
   }
-  rule.refine.assign(plate.holes.size(), 1.0);
+  rule.refine.assign(mesh::raiser_count(plate), 1.0);
   return rule;
 }
 
@@ -97,12 +97,12 @@ std::string reason_for(const DegreeSequence& sequence, const Plate& plate, const
   for (const Ask& ask : asks) excess.push_back(sequence.excess(ask));
   const auto missed = std::count_if(excess.begin(), excess.end(), [](double e) { return e > 1.0; });
   const auto worst = std::max_element(excess.begin(), excess.end());
+  const mesh::Raiser at = mesh::raiser(plate, asks[worst - excess.begin()].raiser);
   return fmt::format(
-      "{} of {} asked numbers miss their tolerance after {} refinements and degree {}; the worst, at hole "
-      "{}, "
+      "{} of {} asked numbers miss their tolerance after {} refinements and degree {}; the worst, at {} {}, "
       "has a bound {:.2g} times the tolerance",
-      missed, asks.size(), most_refinements, sequence.displacements().back().degree,
-      plate.holes[asks[worst - excess.begin()].hole].name, *worst);
+      missed, asks.size(), most_refinements, sequence.displacements().back().degree, word(at.kind), at.name,
+      *worst);
 }
 
 }  // namespace
@@ -131,7 +131,7 @@ Solution settle(const Problem& problem, const std::vector<Ask>& asks) {
       return solution;
     }
     for (const Ask& ask : asks)
-      if (sequence.excess(ask) > 1.0) rule.refine[ask.hole] = std::pow(0.6, refinement + 1);
+      if (sequence.excess(ask) > 1.0) rule.refine[ask.raiser] = std::pow(0.6, refinement + 1);
   }
 }
 

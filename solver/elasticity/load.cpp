@@ -4,6 +4,7 @@
 
 #include <algorithm>
 #include <cmath>
+#include <stdexcept>
 
 #include "solver/elasticity/outer_edge.hpp"
 
@@ -23,7 +24,7 @@ bool finite(const Load& load) { return std::isfinite(load.stress) && std::isfini
 // -0 prints as 0.
 double plain(double x) { return x + 0.0; }
 
-bool pulls(const std::vector<Load>& loads, Owner::Kind edge) {
+bool pulls(const std::vector<Load>& loads, std::size_t edge) {
   return std::any_of(loads.begin(), loads.end(), [edge](const Load& load) {
     return load.kind == Load::Kind::edge && load.edge == edge && load.stress != 0.0;
   });
@@ -34,7 +35,7 @@ bool pulls(const std::vector<Load>& loads, Owner::Kind edge) {
 std::vector<Load> across_from(std::vector<Load> cure, const std::vector<Load>& loads) {
   for (Load& load : cure) {
     if (load.stress == 0.0 || !pulls(loads, load.edge)) continue;
-    const auto other = load.edge == Owner::Kind::left ? Owner::Kind::right : Owner::Kind::top;
+    const auto other = load.edge == mesh::rectangle::left ? mesh::rectangle::right : mesh::rectangle::top;
     if (pulls(loads, other)) continue;
     load.edge = other;
     load.stress = -load.stress;
@@ -42,13 +43,14 @@ std::vector<Load> across_from(std::vector<Load> cure, const std::vector<Load>& l
   return cure;
 }
 
-std::string describe_cure(const std::vector<Load>& cure) {
+std::string describe_cure(const Plate& plate, const std::vector<Load>& cure) {
+  const std::vector<std::string> edges = mesh::edge_names(plate);
   std::string text;
   for (const Load& load : cure) {
     const bool normal = load.stress != 0.0;
     text += fmt::format("{}{} {:.12g} MPa on the {} edge", text.empty() ? "" : ", ",
                         normal ? "a normal stress of" : "a stress along the edge of",
-                        normal ? load.stress : load.along, edge_words[loaded_edge(load)]);
+                        normal ? load.stress : load.along, edges[load.edge]);
   }
   return "add " + text + ", or change the edge loads so that they balance";
 }
@@ -64,6 +66,51 @@ std::optional<LoadFault> not_finite(const std::vector<Load>& loads) {
   }
   if (fault.loads.empty()) return std::nullopt;
   fault.cure = "give finite stresses";
+  return fault;
+}
+
+std::optional<LoadFault> cannot_act(const Plate& plate, const std::vector<Load>& loads) {
+  for (std::size_t i = 0; i < loads.size(); ++i) try {
+      static_cast<void>(traction(plate, loads[i]));
+    } catch (const std::invalid_argument& reason) {
+      return LoadFault{
+          {},
+          {i},
+          fmt::format("the load '{}' has nothing to act on: {}", name_of(loads[i]), reason.what()),
+          "load an edge by its name with kind \"edge\""};
+    }
+  return std::nullopt;
+}
+
+/// The fault of the loads with the given indices, which must balance together.
+std::optional<LoadFault> left_over(const Plate& plate, const std::vector<Load>& loads,
+                                   const std::vector<std::size_t>& together) {
+  LoadFault fault;
+  fault.loads = together;
+  double size = 0.0;
+  std::string names;
+  for (const std::size_t i : together) {
+    const Resultant own = resultant(plate, loads[i]);
+    const double area = plate.thickness * std::max(plate.length, plate.width);
+    const bool at_edge = loads[i].kind == Load::Kind::edge;
+    size += at_edge ? own.force.norm() : std::abs(loads[i].stress) * area;
+    add(fault.by, own);
+    names += fmt::format("{}'{}'", names.empty() ? "" : ", ", name_of(loads[i]));
+  }
+  constexpr double tolerance = 1e-9;
+  const double moment_size = 0.5 * size * std::max(plate.length, plate.width);
+  for (double& component : fault.by.force)
+    if (std::abs(component) <= tolerance * size) component = 0.0;
+  if (std::abs(fault.by.moment) <= tolerance * moment_size) fault.by.moment = 0.0;
+  if (fault.by.force.isZero(0.0) && fault.by.moment == 0.0) return std::nullopt;
+  const bool at_edges = loads[together.front()].kind == Load::Kind::edge;
+  fault.what = fmt::format(
+      "the {} {} do{} not balance: {} a force of ({:.6g}, {:.6g}) N and a moment of {:.6g} N mm about the "
+      "plate's centre (anticlockwise positive)",
+      at_edges ? "edge loads" : "load", names, at_edges ? "" : "es", at_edges ? "they leave" : "it leaves",
+      plain(fault.by.force.x()), plain(fault.by.force.y()), plain(fault.by.moment));
+  fault.cure = plate.outline ? "change the loads so that they balance"
+                             : describe_cure(plate, across_from(balancing(plate, fault.by), loads));
   return fault;
 }
 
@@ -88,13 +135,13 @@ std::string_view word(Load::Kind kind) {
 }
 
 Resultant resultant(const Plate& plate, const Load& load) {
-  if (load.kind != Load::Kind::edge) return {};
-  return resultant(plate, whole_edge(plate, loaded_edge(load)), load.stress, load.along, Point::Zero());
+  if (load.kind == Load::Kind::pressure || (!plate.outline && load.kind != Load::Kind::edge)) return {};
+  return integrate(mesh::outline_of(plate).curves, plate.thickness, traction(plate, load), Point::Zero());
 }
 
 std::vector<Load> balancing(const Plate& plate, const Resultant& left_over) {
   std::vector<Load> result;
-  const auto put = [&](Owner::Kind edge, double stress, double along) {
+  const auto put = [&](std::size_t edge, double stress, double along) {
     if (stress == 0.0 && along == 0.0) return;
     Load load;
     load.kind = Load::Kind::edge;
@@ -104,40 +151,27 @@ std::vector<Load> balancing(const Plate& plate, const Resultant& left_over) {
     result.push_back(load);
   };
   const double along = -left_over.moment / (plate.length * plate.width * plate.thickness);
-  put(Owner::Kind::left, left_over.force.x() / (plate.width * plate.thickness), 0.0);
-  put(Owner::Kind::bottom, left_over.force.y() / (plate.length * plate.thickness), 0.0);
-  put(Owner::Kind::right, 0.0, along);
-  put(Owner::Kind::left, 0.0, along);
+  put(mesh::rectangle::left, left_over.force.x() / (plate.width * plate.thickness), 0.0);
+  put(mesh::rectangle::bottom, left_over.force.y() / (plate.length * plate.thickness), 0.0);
+  put(mesh::rectangle::right, 0.0, along);
+  put(mesh::rectangle::left, 0.0, along);
   return result;
 }
 
 std::optional<LoadFault> imbalance(const Plate& plate, const std::vector<Load>& loads) {
   if (auto fault = not_finite(loads)) return fault;
-  LoadFault fault;
-  double size = 0.0;
-  std::string names;
+  if (auto fault = cannot_act(plate, loads)) return fault;
+  std::vector<std::size_t> edge_loads;
   for (std::size_t i = 0; i < loads.size(); ++i) {
-    if (loads[i].kind != Load::Kind::edge) continue;
-    const Resultant own = resultant(plate, loads[i]);
-    size += own.force.norm();
-    add(fault.by, own);
-    fault.loads.push_back(i);
-    names += fmt::format("{}'{}'", names.empty() ? "" : ", ", name_of(loads[i]));
+    if (loads[i].kind == Load::Kind::edge) {
+      edge_loads.push_back(i);
+    } else if (auto fault = left_over(plate, loads, {i})) {
+      fault->cure =
+          "give edge loads that balance instead: this kind of load needs edges that face each other";
+      return fault;
+    }
   }
-  constexpr double tolerance = 1e-9;
-  const double moment_size = 0.5 * size * std::max(plate.length, plate.width);
-  for (double& component : fault.by.force)
-    if (std::abs(component) <= tolerance * size) component = 0.0;
-  if (std::abs(fault.by.moment) <= tolerance * moment_size) fault.by.moment = 0.0;
-  if (fault.by.force.isZero(0.0) && fault.by.moment == 0.0) return std::nullopt;
-
-  fault.what = fmt::format(
-      "the edge loads {} do not balance: they leave a force of ({:.6g}, {:.6g}) N and a moment of {:.6g} N "
-      "mm "
-      "about the plate's centre (anticlockwise positive)",
-      names, plain(fault.by.force.x()), plain(fault.by.force.y()), plain(fault.by.moment));
-  fault.cure = describe_cure(across_from(balancing(plate, fault.by), loads));
-  return fault;
+  return left_over(plate, loads, edge_loads);
 }
 
 }  // namespace raiser::solver

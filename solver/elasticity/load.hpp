@@ -17,39 +17,46 @@ using mesh::Plate;
 using mesh::Point;
 
 /// What acts on the plate. Stresses in MPa on the gross section.
-/// `tension`: uniform normal stress on the ends x = +-length/2.
-/// `transverse`: uniform normal stress on the sides y = +-width/2.
-/// `shear`: uniform shear stress sigma_xy on all four edges.
+/// `tension`: normal stress on the ends x = +-length/2, uniform; on ends of
+///   different size `stress` is that on the smaller one, and the other carries
+///   the same force along the same line (see LoadedEnds).
+/// `transverse`: the same on the sides y = +-width/2.
+/// `shear`: uniform shear stress sigma_xy on all edges.
 /// `bending`: stress on the ends that varies linearly with y; `stress` is its
-///   value at y = +width/2 (positive: that side in tension).
+///   largest value on the smaller end (positive: larger y in tension).
 /// `pressure`: uniform pressure on the edge of hole `hole`, positive when it
 ///   pushes on the material.
-/// `edge`: uniform traction on one outer edge `edge`: `stress` along its
-///   outward normal, `along` along its direction (anticlockwise round the plate).
+/// `edge`: uniform traction on edge `edge` of mesh::edge_names(): `stress` along
+///   its outward normal, `along` along its direction (anticlockwise round the plate).
 struct Load {
   enum class Kind { tension, transverse, shear, bending, pressure, edge };
   Kind kind = Kind::tension;
   std::string name;
   double stress = 0.0;
-  double along = 0.0;                     ///< kind edge only
-  std::size_t hole = 0;                   ///< kind pressure only
-  Owner::Kind edge = Owner::Kind::right;  ///< kind edge only
+  double along = 0.0;                         ///< kind edge only
+  std::size_t hole = 0;                       ///< kind pressure only
+  std::size_t edge = mesh::rectangle::right;  ///< kind edge only
 };
 
 /// The word used for a kind of load in case files, tables and messages.
 std::string_view word(Load::Kind kind);
 
-/// Resultant of loads about the plate's centre: forces in N, moment in N mm
+/// Resultant of loads about the origin: forces in N, moment in N mm
 /// (anticlockwise positive).
 struct Resultant {
   Point force = Point::Zero();
   double moment = 0.0;
 };
-Resultant resultant(const Plate& plate, const Load& load);
 
 /// Traction on the boundary, MPa, at point x of a piece of boundary with
 /// outward unit normal n.
 using Traction = std::function<Point(const Owner&, const Point& x, const Point& n)>;
+
+/// The traction of one load. Throws std::invalid_argument where it has nothing
+/// to act on: a hole or an edge that is not there, ends that are not straight.
+Traction traction(const Plate& plate, const Load& load);
+
+Resultant resultant(const Plate& plate, const Load& load);
 
 /// A self-balanced load solved as one right-hand side. How it behaves under a
 /// mirror line: even (the load is its own mirror image), odd (its mirror image
@@ -65,7 +72,7 @@ struct UnitLoad {
 /// Edge loads that take up a resultant about the plate's centre: together with
 /// whatever left it over they balance. A normal stress on the left and bottom
 /// edge for the force, a stress along the right and left edge for the moment;
-/// components that are exactly zero get none.
+/// components that are exactly zero get none. Of a rectangle only.
 std::vector<Load> balancing(const Plate& plate, const Resultant& left_over);
 
 /// Why a set of loads cannot be solved: it does not balance. `by` is the
@@ -76,8 +83,9 @@ struct LoadFault {
   std::string what;
   std::string cure;
 };
-/// Nothing when the loads balance within 1e-9 of their own size. Stresses that
-/// are not finite are a fault as well.
+/// Nothing when the loads balance within 1e-9 of their own size: all edge loads
+/// together, the others each by itself. Stresses that are not finite are a
+/// fault as well, and loads with nothing to act on.
 std::optional<LoadFault> imbalance(const Plate& plate, const std::vector<Load>& loads);
 
 /// One unit load for each load that balances by itself, in order, and one
@@ -87,20 +95,20 @@ std::optional<LoadFault> imbalance(const Plate& plate, const std::vector<Load>& 
 /// no hole of the plate or an edge load no outer edge.
 std::vector<UnitLoad> unit_loads(const Plate& plate, const std::vector<Load>& loads);
 
-/// The stress state that the loads would produce in the plate without holes,
-/// at x = `station`: linear in y. MPa.
+/// The stress state that the loads would produce in the plate without holes and
+/// notches on the gross sections of one raiser: linear in y. MPa.
 struct NominalState {
   double xx = 0.0;        ///< mean sigma_xx
-  double bending = 0.0;   ///< sigma_xx at y = +width/2 less the mean
+  double bending = 0.0;   ///< sigma_xx less the mean at the edge farthest from the centroid
   double yy = 0.0;        ///< mean sigma_yy
   double xy = 0.0;        ///< mean sigma_xy
-  double pressure = 0.0;  ///< pressure on the hole in question
+  double pressure = 0.0;  ///< pressure on the raiser in question
 };
 
 /// What a section of the plate without holes carries under balanced loads. N and
 /// N mm. `normal` is tension positive, `shear` has the sign of sigma_xy, and
-/// `moment`, about the middle of the section, is positive when it stretches the
-/// side of positive y (across) or positive x (along).
+/// `moment`, about the centroid of the gross section, is positive when it
+/// stretches the side of larger y (across) or larger x (along).
 struct SectionForces {
   double normal = 0.0;
   double shear = 0.0;
@@ -109,9 +117,9 @@ struct SectionForces {
 SectionForces section_forces(const Plate& plate, const std::vector<Load>& loads, mesh::Direction direction,
                              double station);
 
-/// The undisturbed state at hole `hole`: of the sections x and y = its centre.
+/// The undisturbed state at a raiser: of the gross sections through its mouth.
 /// Edge loads count through what those sections carry. Throws
-/// std::out_of_range when there is no such hole.
-NominalState nominal_state(const Plate& plate, const std::vector<Load>& loads, std::size_t hole);
+/// std::out_of_range when there is no such raiser.
+NominalState nominal_state(const Plate& plate, const std::vector<Load>& loads, std::size_t raiser);
 
 }  // namespace raiser::solver

@@ -1,3 +1,4 @@
+#include <algorithm>
 #include <cmath>
 
 #include "solver/elasticity/load.hpp"
@@ -7,18 +8,7 @@ namespace raiser::solver {
 
 namespace {
 
-// The edge load's resultant on the part of the plate beyond the section, about
-// the middle of the section. What lies on the section itself (an edge whose
-// every point has coordinate `station`) counts as beyond.
-Resultant beyond_section(const Plate& plate, const Load& load, int axis, double station) {
-  Point middle = Point::Zero();
-  middle[axis] = station;
-  const EdgePiece whole = whole_edge(plate, loaded_edge(load));
-  if (whole.from[axis] < station && whole.to[axis] < station) return {};
-  return resultant(plate, beyond(whole, axis, station), load.stress, load.along, middle);
-}
-
-// Stress times area for the loads that act on the whole plate.
+// Stress times area for the loads that act on the whole of a rectangle.
 SectionForces of_uniform(const Plate& plate, const Load& load, bool across) {
   const double area = plate.thickness * (across ? plate.width : plate.length);
   switch (load.kind) {
@@ -35,20 +25,30 @@ SectionForces of_uniform(const Plate& plate, const Load& load, bool across) {
   }
 }
 
+// What the load's traction on the part of the plate beyond the section adds up to.
+SectionForces of_traction(const Plate& plate, const Load& load, const mesh::Loop& outside,
+                          const Point& middle, bool across) {
+  const Resultant sum = integrate(outside, plate.thickness, traction(plate, load), middle);
+  return {across ? sum.force.x() : sum.force.y(), across ? sum.force.y() : sum.force.x(),
+          across ? -sum.moment : sum.moment};
+}
+
 }  // namespace
 
 SectionForces section_forces(const Plate& plate, const std::vector<Load>& loads, mesh::Direction direction,
                              double station) {
   const bool across = direction == mesh::Direction::across;
+  const int axis = across ? 0 : 1;
+  const mesh::Loop outside = beyond(mesh::outline_of(plate).curves, axis, station);
+  Point middle;
+  middle[axis] = station;
+  middle[1 - axis] = mesh::shape_of(mesh::gross_along(plate, direction, station)).centroid;
   SectionForces sum;
   for (const Load& load : loads) {
-    SectionForces own = of_uniform(plate, load, across);
-    if (load.kind == Load::Kind::edge) {
-      const Resultant outside = beyond_section(plate, load, across ? 0 : 1, station);
-      own.normal = across ? outside.force.x() : outside.force.y();
-      own.shear = across ? outside.force.y() : outside.force.x();
-      own.moment = across ? -outside.moment : outside.moment;
-    }
+    if (load.kind == Load::Kind::pressure) continue;
+    const bool integrated = load.kind == Load::Kind::edge || plate.outline;
+    const SectionForces own =
+        integrated ? of_traction(plate, load, outside, middle, across) : of_uniform(plate, load, across);
     sum.normal += own.normal;
     sum.shear += own.shear;
     sum.moment += own.moment;
@@ -56,18 +56,21 @@ SectionForces section_forces(const Plate& plate, const std::vector<Load>& loads,
   return sum;
 }
 
-NominalState nominal_state(const Plate& plate, const std::vector<Load>& loads, std::size_t hole) {
-  const Point centre = plate.holes.at(hole).centre;
-  const SectionForces across = section_forces(plate, loads, mesh::Direction::across, centre.x());
-  const SectionForces along = section_forces(plate, loads, mesh::Direction::along, centre.y());
-  const double area = plate.width * plate.thickness;
+NominalState nominal_state(const Plate& plate, const std::vector<Load>& loads, std::size_t raiser) {
+  const Point at = mesh::raiser(plate, raiser).mouth;
+  const SectionForces across = section_forces(plate, loads, mesh::Direction::across, at.x());
+  const SectionForces along = section_forces(plate, loads, mesh::Direction::along, at.y());
+  const auto shape = mesh::shape_of(mesh::gross_along(plate, mesh::Direction::across, at.x()));
+  const double area = shape.length * plate.thickness;
+  const double reach = std::max(shape.high - shape.centroid, shape.centroid - shape.low);
+  const double length = mesh::shape_of(mesh::gross_along(plate, mesh::Direction::along, at.y())).length;
   NominalState state;
   state.xx = across.normal / area;
-  state.bending = 6.0 * across.moment / (area * plate.width);
-  state.yy = along.normal / (plate.length * plate.thickness);
+  state.bending = across.moment * reach / (shape.inertia * plate.thickness);
+  state.yy = along.normal / (length * plate.thickness);
   state.xy = across.shear / area;
   for (const Load& load : loads)
-    if (load.kind == Load::Kind::pressure && load.hole == hole) state.pressure += load.stress;
+    if (load.kind == Load::Kind::pressure && load.hole == raiser) state.pressure += load.stress;
   return state;
 }
 

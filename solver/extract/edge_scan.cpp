@@ -3,6 +3,8 @@
 #include <algorithm>
 #include <cmath>
 #include <limits>
+#include <numeric>
+#include <stdexcept>
 
 namespace raiser::solver {
 namespace {
@@ -70,25 +72,27 @@ Eigen::VectorXd wanted(const SideStress& stress, const Eigen::VectorXd& weight, 
   return tangential;
 }
 
+std::vector<std::size_t> image_of(const Plate& plate, mesh::Mirrors mirror) {
+  if (auto image = mesh::mirror_image(plate, mirror)) return std::move(image->raisers);
+  throw std::invalid_argument("EdgeScanner: the plate does not have the mirror lines of the mesh");
+}
+
 }  // namespace
 
 EdgeScanner::EdgeScanner(const Model& model, const Plate& plate)
-    : model_(&model), holes_(plate.holes.size()) {
+    : model_(&model), raisers_(mesh::raiser_count(plate)) {
   for (const mesh::BoundarySide& side : model.mesh().boundary())
-    if (side.curve.owner.kind == Owner::Kind::hole) sides_.push_back(side);
-  std::vector<bool> meshed(holes_, false);
-  for (const mesh::BoundarySide& side : sides_) meshed[side.curve.owner.hole] = true;
+    if (side.curve.owner.kind == Owner::Kind::raiser) sides_.push_back(side);
   for (const Image& image : model.images()) {
-    std::vector<std::size_t> map(holes_, 0);
-    for (std::size_t h = 0; h < holes_; ++h)
-      if (meshed[h])
-        map[h] = image.mirror() == mesh::Mirrors{} ? h : mesh::mirror_image(plate, h, image.mirror());
-    hole_of_.push_back(std::move(map));
+    std::vector<std::size_t> map(raisers_);
+    std::iota(map.begin(), map.end(), std::size_t{0});
+    if (image.mirror() != mesh::Mirrors{}) map = image_of(plate, image.mirror());
+    raiser_of_.push_back(std::move(map));
   }
 }
 
-std::size_t EdgeScanner::hole_in(std::size_t side, std::size_t image) const {
-  return hole_of_[image][sides_[side].curve.owner.hole];
+std::size_t EdgeScanner::raiser_in(std::size_t side, std::size_t image) const {
+  return raiser_of_[image][sides_[side].curve.owner.index];
 }
 
 Eigen::VectorXd EdgeScanner::weights(std::size_t load_case, std::size_t image) const {
@@ -98,7 +102,7 @@ Eigen::VectorXd EdgeScanner::weights(std::size_t load_case, std::size_t image) c
   return weight;
 }
 
-/// The search for one quantity in one case over all holes.
+/// The search for one quantity in one case over all raisers.
 struct EdgeScanner::Search {
   const EdgeScanner& scanner;
   const Displacements& displacements;
@@ -124,20 +128,20 @@ struct EdgeScanner::Search {
   }
 
   std::vector<Best> between_nodes() const {
-    std::vector<Best> sampled(scanner.holes_);
+    std::vector<Best> sampled(scanner.raisers_);
     each([&](std::size_t side, std::size_t image, const Eigen::VectorXd& values) {
-      Best& best = sampled[scanner.hole_in(side, image)];
+      Best& best = sampled[scanner.raiser_in(side, image)];
       best.value = std::max(best.value, values.maxCoeff());
       best.least = std::min(best.least, values.minCoeff());
     });
-    std::vector<Best> result(scanner.holes_);
+    std::vector<Best> result(scanner.raisers_);
     each([&](std::size_t side, std::size_t image, const Eigen::VectorXd& values) {
-      const std::size_t hole = scanner.hole_in(side, image);
-      const double margin = 0.05 * (sampled[hole].value - sampled[hole].least);
-      if (values.maxCoeff() < sampled[hole].value - margin) return;
+      const std::size_t raiser = scanner.raiser_in(side, image);
+      const double margin = 0.05 * (sampled[raiser].value - sampled[raiser].least);
+      if (values.maxCoeff() < sampled[raiser].value - margin) return;
       const double s = maximise(values);
       const double value = interpolate(values, s);
-      if (value > result[hole].value) result[hole] = {value, 0.0, s, side, image};
+      if (value > result[raiser].value) result[raiser] = {value, 0.0, s, side, image};
     });
     return result;
   }
@@ -164,12 +168,12 @@ EdgeScan EdgeScanner::scan(const Displacements& displacements) const {
   for (const mesh::BoundarySide& side : sides_) result.sides.push_back(probe.at(side, displacements));
   // With one load, the load alone is all loads together.
   const std::size_t cases = model_->loads().size() == 1 ? 1 : model_->loads().size() + 1;
-  result.extremes.assign(cases, std::vector<HoleExtremes>(holes_));
+  result.extremes.assign(cases, std::vector<RaiserExtremes>(raisers_));
   for (std::size_t c = 0; c < cases; ++c)
     for (std::size_t k = 0; k < quantity_count; ++k) {
       const Search search{*this, displacements, result, c, static_cast<Quantity>(k)};
       const auto best = search.between_nodes();
-      for (std::size_t h = 0; h < holes_; ++h) result.extremes[c][h][k] = search.from_solution(best[h]);
+      for (std::size_t h = 0; h < raisers_; ++h) result.extremes[c][h][k] = search.from_solution(best[h]);
     }
   if (cases == 1) result.extremes.push_back(result.extremes.front());
   return result;

@@ -8,23 +8,23 @@
 
 namespace raiser::solver {
 
-/// An extreme value on a hole's edge in one solution.
+/// An extreme value on a raiser's edge in one solution.
 struct Extreme {
   double value = 0.0;           ///< MPa
   Point point = Point::Zero();  ///< mm
   double traction_miss = 0.0;   ///< MPa: how far the raw stress misses the known traction there
 };
-using HoleExtremes = std::array<Extreme, quantity_count>;
+using RaiserExtremes = std::array<Extreme, quantity_count>;
 
-/// The edges of all holes in one solution: extremes for each case (0: all
-/// loads together, 1 + l: load l alone) and hole, and the stress at fixed
+/// The edges of all raisers in one solution: extremes for each case (0: all
+/// loads together, 1 + l: load l alone) and raiser, and the stress at fixed
 /// positions on the sides under all loads.
 struct EdgeScan {
-  std::vector<std::vector<HoleExtremes>> extremes;  ///< [case][hole]
-  std::vector<SideStress> sides;                    ///< by EdgeScanner::sides(), at search_points(), per load
+  std::vector<std::vector<RaiserExtremes>> extremes;  ///< [case][raiser]
+  std::vector<SideStress> sides;  ///< by EdgeScanner::sides(), at search_points(), per load
 };
 
-/// Searches the edges of all holes between the nodes: every side is sampled at
+/// Searches the edges of all raisers between the nodes: every side is sampled at
 /// Chebyshev points, the interpolant through them maximised, and the value at
 /// its maximum taken from the solution itself. Holds a reference to the model.
 class EdgeScanner {
@@ -33,19 +33,19 @@ class EdgeScanner {
 
   EdgeScan scan(const Displacements& displacements) const;
 
-  /// The boundary sides that lie on holes.
+  /// The boundary sides that lie on raisers.
   const std::vector<mesh::BoundarySide>& sides() const { return sides_; }
-  /// The hole of the whole plate that side `side` lies on in an image.
-  std::size_t hole_in(std::size_t side, std::size_t image) const;
+  /// The raiser of the whole plate that side `side` lies on in an image.
+  std::size_t raiser_in(std::size_t side, std::size_t image) const;
   /// Factor of each load's stress in an image for a case.
   Eigen::VectorXd weights(std::size_t load_case, std::size_t image) const;
 
  private:
   struct Search;
   const Model* model_;
-  std::size_t holes_;
+  std::size_t raisers_;
   std::vector<mesh::BoundarySide> sides_;
-  std::vector<std::vector<std::size_t>> hole_of_;  ///< [image][hole in the mesh]
+  std::vector<std::vector<std::size_t>> raiser_of_;  ///< [image][raiser in the mesh]
 };
 
 }  // namespace raiser::solver

@@ -1,7 +1,11 @@
 #include "solver/extract/paths.hpp"
 
+#include <Eigen/LU>
 #include <algorithm>
 #include <cmath>
+#include <limits>
+#include <numbers>
+#include <utility>
 
 #include "mesh/legendre.hpp"
 #include "mesh/plate/section.hpp"
@@ -12,18 +16,65 @@ namespace {
 
 constexpr int ligament_points = 41;
 
-double angle_about(const mesh::Hole& hole, const Point& x) {
-  const Point arm = x - hole.centre;
+double angle_about(const Point& centre, const Point& x) {
+  const Point arm = x - centre;
   return std::atan2(arm.y(), arm.x());
 }
 
-/// Puts samples in anticlockwise order and measures the way along the edge
-/// through them. Holes are star-shaped about their centres.
-void order(std::vector<EdgeSample>& samples) {
-  std::sort(samples.begin(), samples.end(),
-            [](const EdgeSample& a, const EdgeSample& b) { return a.angle < b.angle; });
-  for (std::size_t i = 1; i < samples.size(); ++i)
-    samples[i].arc_length = samples[i - 1].arc_length + (samples[i].point - samples[i - 1].point).norm();
+/// How far along a chain a point on it lies: the position of the curve plus
+/// the share of its length; of the nearest curve that holds it.
+double way_along(const mesh::Loop& chain, const Point& x) {
+  double best = std::numeric_limits<double>::infinity();
+  double way = 0.0;
+  for (std::size_t i = 0; i < chain.size(); ++i) {
+    const mesh::Curve& curve = chain[i];
+    const double low = std::min(curve.begin, curve.end);
+    const double high = std::max(curve.begin, curve.end);
+    const Point arm = x - curve.centre;
+    double t = curve.u.dot(arm) / curve.u.squaredNorm();
+    if (curve.kind == mesh::Curve::Kind::arc) {
+      Eigen::Matrix2d axes;
+      axes << curve.u, curve.v;
+      const Point own = axes.inverse() * arm;
+      constexpr double turn = 2 * std::numbers::pi;
+      t = std::atan2(own.y(), own.x());
+      t += turn * std::round(((low + high) / 2 - t) / turn);
+    }
+    t = std::clamp(t, low, high);
+    const double miss = (curve.at(t) - x).norm();
+    if (!(miss < best)) continue;
+    best = miss;
+    way = static_cast<double>(i) + (t - curve.begin) / (curve.end - curve.begin);
+  }
+  return way;
+}
+
+/// Puts samples in order and measures the way along the edge through them.
+/// Holes are star-shaped about their centres; other raisers have a chain of
+/// curves to follow.
+void order(std::vector<EdgeSample>& samples, const mesh::Loop& chain) {
+  std::vector<std::pair<double, EdgeSample>> placed;
+  for (EdgeSample& sample : samples)
+    placed.emplace_back(chain.empty() ? sample.angle : way_along(chain, sample.point), sample);
+  std::sort(placed.begin(), placed.end(), [](const auto& a, const auto& b) { return a.first < b.first; });
+  for (std::size_t i = 0; i < samples.size(); ++i) {
+    samples[i] = placed[i].second;
+    if (i > 0)
+      samples[i].arc_length = samples[i - 1].arc_length + (samples[i].point - samples[i - 1].point).norm();
+  }
+}
+
+/// The curves of a raiser of the outline in their order, none for a hole.
+mesh::Loop chain_of(const Plate& plate, const mesh::Loop& outline, std::size_t raiser) {
+  mesh::Loop chain;
+  if (raiser < plate.holes.size()) return chain;
+  const Owner own{Owner::Kind::raiser, raiser - plate.holes.size()};
+  const std::size_t n = outline.size();
+  std::size_t first = 0;  // the chain may run over the outline's own beginning
+  while (first < n && !(outline[first].owner == own && outline[(first + n - 1) % n].owner != own)) ++first;
+  for (std::size_t k = 0; k < n; ++k)
+    if (const mesh::Curve& curve = outline[(first + k) % n]; curve.owner == own) chain.push_back(curve);
+  return chain;
 }
 
 /// The largest bound along one side from the values of successive degrees. At a
@@ -39,22 +90,29 @@ double largest_bound(const std::vector<Eigen::VectorXd>& degrees, double size) {
   return largest;
 }
 
-std::string end_name(const Plate& plate, const std::optional<std::size_t>& hole, const char* edge) {
-  return hole ? "hole " + plate.holes[*hole].name : std::string(edge);
+std::string name_of(const mesh::Raiser& raiser) { return std::string(word(raiser.kind)) + " " + raiser.name; }
+
+std::string end_name(const Plate& plate, const Owner& owner) {
+  if (owner.kind == Owner::Kind::raiser) return name_of(mesh::raiser(plate, owner.index));
+  const auto edges = mesh::edge_names(plate);
+  return owner.index < edges.size() ? edges[owner.index] + " edge" : "edge";
 }
 
-Ligament follow(const Plate& plate, std::size_t hole, const Section& section, const mesh::Interval& piece,
+std::string start_name(const mesh::Raiser& raiser, bool across, bool from_begin) {
+  if (raiser.kind != mesh::Raiser::Kind::hole) return name_of(raiser);
+  return name_of(raiser) + (across ? ", y " : ", x ") + (from_begin ? ">" : "<") + " centre";
+}
+
+Ligament follow(const Plate& plate, std::size_t raiser, const Section& section, const mesh::Interval& piece,
                 bool from_begin, const std::vector<Field>& fields) {
   const bool across = section.direction == Section::Direction::across;
   Ligament ligament;
-  ligament.hole = hole;
-  ligament.from =
-      "hole " + plate.holes[hole].name + (across ? ", y " : ", x ") + (from_begin ? ">" : "<") + " centre";
-  ligament.to = from_begin ? end_name(plate, piece.hole_at_end, across ? "top edge" : "right edge")
-                           : end_name(plate, piece.hole_at_begin, across ? "bottom edge" : "left edge");
+  ligament.raiser = raiser;
+  ligament.from = start_name(mesh::raiser(plate, raiser), across, from_begin);
+  ligament.to = end_name(plate, from_begin ? piece.at_end : piece.at_begin);
   ligament.width = piece.end - piece.begin;
   for (int k = 0; k < ligament_points; ++k) {
-    // Denser towards the hole's edge; a hair inside the material at both ends.
+    // Denser towards the raiser's edge; a hair inside the material at both ends.
     const double share =
         std::clamp(std::pow(static_cast<double>(k) / (ligament_points - 1), 2), 1e-12, 1 - 1e-12);
     const double distance = share * ligament.width;
@@ -84,18 +142,19 @@ Ligament follow(const Plate& plate, std::size_t hole, const Section& section, co
 std::vector<std::vector<EdgeSample>> edge_samples(const Model& model, const Plate& plate,
                                                   const EdgeScanner& scanner,
                                                   const std::vector<EdgeScan>& scans) {
-  std::vector<std::vector<EdgeSample>> result(plate.holes.size());
+  std::vector<std::vector<EdgeSample>> result(mesh::raiser_count(plate));
+  const std::vector<mesh::Raiser> raisers = mesh::raisers(plate);
   const auto& positions = search_points();
   const EdgeScan& last = scans.back();
   for (std::size_t image = 0; image < model.images().size(); ++image) {
     const Eigen::VectorXd weight = scanner.weights(0, image);
     for (std::size_t side = 0; side < scanner.sides().size(); ++side) {
-      const std::size_t hole = scanner.hole_in(side, image);
+      const std::size_t raiser = scanner.raiser_in(side, image);
       std::vector<Eigen::VectorXd> tangential;
       for (const EdgeScan& scan : scans) tangential.push_back(scan.sides[side].tangential * weight);
       const Eigen::VectorXd normal = last.sides[side].normal * weight;
       const Eigen::VectorXd shear = last.sides[side].shear * weight;
-      const HoleExtremes& extremes = last.extremes[0][hole];
+      const RaiserExtremes& extremes = last.extremes[0][raiser];
       const double size = std::max(std::abs(extremes[0].value), std::abs(extremes[1].value));
       const double bound = largest_bound(tangential, size);
       // The side's last point is the next side's first.
@@ -103,48 +162,49 @@ std::vector<std::vector<EdgeSample>> edge_samples(const Model& model, const Plat
         EdgeSample sample;
         const mesh::BoundarySide& at = scanner.sides()[side];
         sample.point = model.images()[image].apply(at.curve.at(at.parameter(positions[q])));
-        sample.angle = angle_about(plate.holes[hole], sample.point);
+        sample.angle = angle_about(raisers[raiser].centre, sample.point);
         sample.tangential = tangential.back()[q];
         sample.von_mises = von_mises({tangential.back()[q], normal[q], shear[q],
                                       model.material().through_thickness(tangential.back()[q], normal[q])});
         sample.bound = bound;
-        result[hole].push_back(sample);
+        result[raiser].push_back(sample);
       }
     }
   }
-  for (auto& samples : result) order(samples);
+  const mesh::Loop outline = mesh::outline_of(plate).curves;
+  for (std::size_t i = 0; i < result.size(); ++i) order(result[i], chain_of(plate, outline, i));
   return result;
 }
 
 std::vector<Ligament> ligaments(const Plate& plate, const std::vector<Section>& sections,
                                 const std::vector<Field>& fields) {
   std::vector<Ligament> result;
-  for (std::size_t hole = 0; hole < sections.size(); ++hole)
+  for (std::size_t i = 0; i < sections.size(); ++i)
     for (const mesh::Interval& piece :
-         mesh::material_along(plate, sections[hole].direction, sections[hole].station)) {
-      if (piece.hole_at_begin == hole)
-        result.push_back(follow(plate, hole, sections[hole], piece, true, fields));
-      if (piece.hole_at_end == hole)
-        result.push_back(follow(plate, hole, sections[hole], piece, false, fields));
+         mesh::material_along(plate, sections[i].direction, sections[i].station)) {
+      if (piece.raiser_at_begin() == i) result.push_back(follow(plate, i, sections[i], piece, true, fields));
+      if (piece.raiser_at_end() == i) result.push_back(follow(plate, i, sections[i], piece, false, fields));
     }
   return result;
 }
 
-FarStress far_stress(const Plate& plate, const Field& field, double station, double nominal_mean,
-                     double nominal_bending) {
+FarStress far_stress(const Plate& plate, const Field& field, double station, double mean, double slope) {
   constexpr int panels = 16;
   static const mesh::GaussRule rule = mesh::gauss_legendre(4);
+  const auto pieces = mesh::gross_along(plate, mesh::Direction::across, station);
+  const mesh::SectionShape shape = mesh::shape_of(pieces);
   FarStress result;
-  for (int panel = 0; panel < panels; ++panel)
-    for (std::size_t q = 0; q < rule.points.size(); ++q) {
-      const double share = (panel + (1 + rule.points[q]) / 2) / panels;
-      const double y = plate.width * (share - 0.5);
-      const auto value = field.at({station, y});
-      if (!value) continue;
-      result.mean += rule.weights[q] / 2 / panels * value->stress.xx;
-      const double nominal = nominal_mean + nominal_bending * 2 * y / plate.width;
-      result.scatter = std::max(result.scatter, std::abs(value->stress.xx - nominal));
-    }
+  for (const mesh::Interval& piece : pieces)
+    for (int panel = 0; panel < panels; ++panel)
+      for (std::size_t q = 0; q < rule.points.size(); ++q) {
+        const double length = piece.end - piece.begin;
+        const double y = piece.begin + length * (panel + (1 + rule.points[q]) / 2) / panels;
+        const auto value = field.at({station, y});
+        if (!value) continue;
+        result.mean += rule.weights[q] / 2 / panels * length / shape.length * value->stress.xx;
+        const double nominal = mean + slope * (y - shape.centroid);
+        result.scatter = std::max(result.scatter, std::abs(value->stress.xx - nominal));
+      }
   return result;
 }
 

@@ -7,26 +7,27 @@
 
 namespace raiser::solver {
 
-/// The stress along every hole's edge under all loads, by hole, anticlockwise
-/// from the point of smallest angle. `scans` are those of successive degrees on
+/// The stress along every raiser's edge under all loads, by raiser: of a hole
+/// anticlockwise from the point of smallest angle, elsewhere along the outline
+/// (anticlockwise round the plate). `scans` are those of successive degrees on
 /// the model's mesh; the last gives the values, all together the bounds.
 std::vector<std::vector<EdgeSample>> edge_samples(const Model& model, const Plate& plate,
                                                   const EdgeScanner& scanner,
                                                   const std::vector<EdgeScan>& scans);
 
-/// The ligaments on both sides of every hole along the section that its
+/// The ligaments on every side of every raiser along the section that its
 /// nominal stresses stand on, under all loads. `fields` are those of
 /// successive degrees; the last gives the values.
 std::vector<Ligament> ligaments(const Plate& plate, const std::vector<Section>& sections,
                                 const std::vector<Field>& fields);
 
-/// The mean of sigma_xx over the section x = station of the plate, and its
-/// largest departure from the straight line of the nominal distribution.
+/// The mean of sigma_xx over the gross section x = station of the plate, and
+/// its largest departure from the nominal distribution, which is `mean` at the
+/// section's centroid and rises by `slope` (MPa / mm) with y.
 struct FarStress {
   double mean = 0.0;
   double scatter = 0.0;
 };
-FarStress far_stress(const Plate& plate, const Field& field, double station, double nominal_mean,
-                     double nominal_bending);
+FarStress far_stress(const Plate& plate, const Field& field, double station, double mean, double slope);
 
 }  // namespace raiser::solver

@@ -77,7 +77,14 @@ std::string definition(const Symbols& symbols, const Present& has, const Nominal
   return text + tail + pressure;
 }
 
-Basis gross_basis(const NominalState& state, const Present& has, const Point& centre) {
+Symbols gross_symbols(const Plate& plate, const mesh::SectionShape& across, const mesh::SectionShape& along) {
+  const auto whole = [](double length, double size) { return std::abs(length - size) <= 1e-12 * size; };
+  const bool is_width = whole(across.length, plate.width);
+  return {"gross", is_width ? "(W t)" : "A_gross", whole(along.length, plate.length) ? "(L t)" : "A_gross",
+          is_width ? "6 M / (W^2 t) at the plate's edge" : "M c / I_gross at the plate's edge"};
+}
+
+Basis gross_basis(const Plate& plate, const mesh::Raiser& at, const NominalState& state, const Present& has) {
   if (has.count() == 0 && state.pressure != 0.0)
     return {std::abs(state.pressure), "p, the pressure in the hole", ""};
   if (has.count() == 0)
@@ -85,37 +92,55 @@ Basis gross_basis(const NominalState& state, const Present& has, const Point& ce
         0.0, "",
         fmt::format("the loads leave the plate without holes unstressed at x = {:.6g} mm, y = {:.6g} mm: use "
                     "the edge stress itself",
-                    centre.x() + 0.0, centre.y() + 0.0)};
-  const Symbols symbols{"gross", "(W t)", "(L t)", "6 M / (W^2 t) at the plate's edge"};
+                    at.mouth.x() + 0.0, at.mouth.y() + 0.0)};
+  const Symbols symbols =
+      gross_symbols(plate, mesh::shape_of(mesh::gross_along(plate, Direction::across, at.mouth.x())),
+                    mesh::shape_of(mesh::gross_along(plate, Direction::along, at.mouth.y())));
+  const char* part = at.kind == mesh::Raiser::Kind::fillet ? ", in the wide part" : "";
   return {std::max(largest_principal(state.xx + state.bending, state.yy, state.xy),
                    largest_principal(state.xx - state.bending, state.yy, state.xy)),
-          definition(symbols, has, state, centre), ""};
+          definition(symbols, has, state, at.mouth) + part, ""};
 }
 
-Basis net_basis(const mesh::Hole& hole, const NominalState& state, const Present& has, const Section& across,
-                const Section& along) {
+// Distances from the net centroid of the places where the section ends at the
+// raiser; of the section's ends where it does not.
+std::vector<double> arms(const Plate& plate, std::size_t raiser, const Section& across) {
+  std::vector<double> result;
+  const auto pieces = mesh::material_along(plate, Direction::across, across.station);
+  for (const mesh::Interval& piece : pieces) {
+    if (piece.raiser_at_begin() == raiser) result.push_back(piece.begin - across.net_centroid);
+    if (piece.raiser_at_end() == raiser) result.push_back(piece.end - across.net_centroid);
+  }
+  if (result.empty() && !pieces.empty())
+    result = {pieces.front().begin - across.net_centroid, pieces.back().end - across.net_centroid};
+  return result;
+}
+
+Basis net_basis(const Plate& plate, std::size_t raiser, const mesh::Raiser& at, const NominalState& state,
+                const Present& has, const Section& across, const Section& along) {
   if (has.count() == 0 && state.pressure != 0.0)
     return {
         0.0, "",
         "a pressure in the hole puts no outer force on the net section: use Kt gross, which stands on the "
         "pressure"};
-  if (has.count() == 0) return {0.0, "", gross_basis(state, has, hole.centre).why};
-  const double xx = across.normal_force / across.net_area;
-  const double yy = along.normal_force / along.net_area;
-  const double xy = across.shear_force / across.net_area;
+  if (has.count() == 0) return {0.0, "", gross_basis(plate, at, state, has).why};
+  const double xx = has.xx ? across.normal_force / across.net_area : 0.0;
+  const double yy = has.yy ? along.normal_force / along.net_area : 0.0;
+  const double xy = has.xy ? across.shear_force / across.net_area : 0.0;
   Basis basis;
   double lever = 0.0;
-  if (const auto cut = mesh::chord(hole, Direction::across, across.station))
-    for (const double y : {cut->begin, cut->end}) {
-      const double arm = y - across.net_centroid;
-      const double bending = has.bending ? across.moment * arm / across.net_inertia : 0.0;
-      basis.stress = std::max(basis.stress, largest_principal(xx + bending, yy, xy));
-      lever = std::max(lever, std::abs(arm));
-    }
-  const Symbols symbols{
-      "net", "A_net", "A_net",
-      fmt::format("M c / I_net at the hole's edge (c = {:.6g} mm from the net centroid)", lever)};
-  basis.definition = definition(symbols, has, state, hole.centre) + ", all holes on it taken out";
+  for (const double arm : arms(plate, raiser, across)) {
+    const double bending = has.bending ? across.moment * arm / across.net_inertia : 0.0;
+    basis.stress = std::max(basis.stress, largest_principal(xx + bending, yy, xy));
+    lever = std::max(lever, std::abs(arm));
+  }
+  const Symbols symbols{"net", "A_net", "A_net",
+                        fmt::format("M c / I_net at the {}'s edge (c = {:.6g} mm from the net centroid)",
+                                    word(at.kind), lever)};
+  const char* part = at.kind == mesh::Raiser::Kind::fillet ? ", in the narrow part" : "";
+  const char* taken =
+      plate.outline ? ", all holes and notches on it taken out" : ", all holes on it taken out";
+  basis.definition = definition(symbols, has, state, at.root) + part + taken;
   return basis;
 }
 
@@ -123,40 +148,35 @@ Basis net_basis(const mesh::Hole& hole, const NominalState& state, const Present
 
 Section section_at(const Plate& plate, const std::vector<Load>& loads, mesh::Direction direction,
                    double station) {
-  const bool across = direction == Direction::across;
+  const auto gross = mesh::shape_of(mesh::gross_along(plate, direction, station));
+  const auto net = mesh::shape_of(mesh::material_along(plate, direction, station));
+  const SectionForces forces = section_forces(plate, loads, direction, station);
   Section section;
   section.direction = direction;
   section.station = station;
-  section.gross_area = plate.thickness * (across ? plate.width : plate.length);
-  const auto pieces = mesh::material_along(plate, direction, station);
-  double first_moment = 0.0;
-  for (const mesh::Interval& piece : pieces) {
-    const double area = plate.thickness * (piece.end - piece.begin);
-    section.net_area += area;
-    first_moment += area * 0.5 * (piece.begin + piece.end);
-  }
-  section.net_centroid = section.net_area > 0.0 ? first_moment / section.net_area : 0.0;
-  for (const mesh::Interval& piece : pieces) {
-    const double size = piece.end - piece.begin;
-    const double arm = 0.5 * (piece.begin + piece.end) - section.net_centroid;
-    section.net_inertia += plate.thickness * size * (size * size / 12.0 + arm * arm);
-  }
-  const SectionForces forces = section_forces(plate, loads, direction, station);
+  section.gross_area = plate.thickness * gross.length;
+  section.net_area = plate.thickness * net.length;
+  section.net_centroid = net.centroid;
+  section.net_inertia = plate.thickness * net.inertia;
   section.normal_force = forces.normal;
   section.shear_force = forces.shear;
   section.moment = forces.moment;
   return section;
 }
 
-Nominal nominal(const Plate& plate, const std::vector<Load>& loads, std::size_t hole) {
-  const mesh::Hole& at = plate.holes.at(hole);
-  const NominalState state = nominal_state(plate, loads, hole);
+Nominal nominal(const Plate& plate, const std::vector<Load>& loads, std::size_t raiser) {
+  const mesh::Raiser at = mesh::raiser(plate, raiser);
+  const NominalState state = nominal_state(plate, loads, raiser);
   const Present has = present(state, largest_load(loads));
-  const Section across = section_at(plate, loads, Direction::across, at.centre.x());
-  const Section along = section_at(plate, loads, Direction::along, at.centre.y());
+  Section across = section_at(plate, loads, Direction::across, at.root.x());
+  Section along = section_at(plate, loads, Direction::along, at.root.y());
   const bool only_transverse = has.yy && has.count() == 1;
-  return {only_transverse ? along : across, gross_basis(state, has, at.centre),
-          net_basis(at, state, has, across, along)};
+  const Basis net = net_basis(plate, raiser, at, state, has, across, along);
+  if (at.kind == mesh::Raiser::Kind::fillet) {
+    across.gross_area = section_at(plate, loads, Direction::across, at.mouth.x()).gross_area;
+    along.gross_area = section_at(plate, loads, Direction::along, at.mouth.y()).gross_area;
+  }
+  return {only_transverse ? along : across, gross_basis(plate, at, state, has), net};
 }
 
 Concentration concentration(const Estimate& peak, const Basis& basis) {

@@ -16,14 +16,16 @@ struct Basis {
   std::string why;
 };
 
-/// Both nominal stresses at one hole and the section they stand on.
+/// Both nominal stresses at one raiser and the section they stand on.
 ///
 /// gross: the principal stress of largest magnitude in the plate without holes
-///   at the sections through the hole's centre, bending counted at the plate's
-///   edges. Where the loads leave that at zero, the pressure in the hole.
+///   and notches at the sections through the raiser's mouth (of a fillet: in the
+///   wide part), bending counted at the plate's edges. Where the loads leave that
+///   at zero, the pressure in the hole.
 /// net: the same with every component on its own net section through the
-///   hole's centre, all holes on it taken out: N / A_net (the offset of N from
-///   the net centroid is not counted), M c / I_net at the hole's edge, V / A_net.
+///   raiser's root (a hole's centre; of a fillet: its end in the narrow part),
+///   all holes and notches on it taken out: N / A_net (the offset of N from the
+///   net centroid is not counted), M c / I_net at the raiser's edge, V / A_net.
 struct Nominal {
   Section section;
   Basis gross;
@@ -35,9 +37,9 @@ struct Nominal {
 Section section_at(const Plate& plate, const std::vector<Load>& loads, mesh::Direction direction,
                    double station);
 
-/// Nominal stresses at hole `hole` under the loads together. Throws
-/// std::out_of_range when there is no such hole.
-Nominal nominal(const Plate& plate, const std::vector<Load>& loads, std::size_t hole);
+/// Nominal stresses at a raiser under the loads together. Throws
+/// std::out_of_range when there is no such raiser.
+Nominal nominal(const Plate& plate, const std::vector<Load>& loads, std::size_t raiser);
 
 /// Kt from the edge stress of largest magnitude (its sign does not matter).
 Concentration concentration(const Estimate& peak, const Basis& basis);

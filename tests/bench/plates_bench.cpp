@@ -72,7 +72,7 @@ void settle(benchmark::State& state, const solver::Problem& problem, double tole
 void settle_reference(benchmark::State& state) {
   const solver::Problem problem = reference_case();
   settle(state, problem, 1e-4);
-  const auto found = solver::settle(problem, every_peak(problem, 1e-4)).combined.holes[0].gross.kt;
+  const auto found = solver::settle(problem, every_peak(problem, 1e-4)).combined.raisers[0].gross.kt;
   if (!found || found->bound > 1e-4 * reference_kt || std::abs(found->value - reference_kt) > found->bound)
     state.SkipWithError("Kt is not within its bound");
 }

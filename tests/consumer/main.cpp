@@ -40,7 +40,7 @@ int main() {
     std::cerr << "not settled: " << solution.reason << '\n';
     return 1;
   }
-  const auto& kt = solution.combined.holes.at(0).gross.kt;
+  const auto& kt = solution.combined.raisers.at(0).gross.kt;
   if (!kt) {
     std::cerr << "no Kt on the gross section\n";
     return 1;

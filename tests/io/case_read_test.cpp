@@ -13,7 +13,6 @@
 
 using namespace raiser::io;
 using raiser::mesh::HoleShape;
-using raiser::mesh::Owner;
 using raiser::solver::Load;
 using raiser::solver::PlaneState;
 using raiser::solver::Quantity;
@@ -190,12 +189,12 @@ shear = "-20 MPa"
 )");
   const auto& loads = input.problem.loads;
   ASSERT_EQ(loads.size(), 4U);
-  EXPECT_EQ(loads[0].edge, Owner::Kind::top);
+  EXPECT_EQ(loads[0].edge, raiser::mesh::rectangle::top);
   EXPECT_EQ(loads[0].stress, 100.0);
   EXPECT_EQ(loads[0].along, 20.0);
-  EXPECT_EQ(loads[1].edge, Owner::Kind::bottom);
+  EXPECT_EQ(loads[1].edge, raiser::mesh::rectangle::bottom);
   EXPECT_EQ(loads[1].along, 20.0);
-  EXPECT_EQ(loads[2].edge, Owner::Kind::left);
+  EXPECT_EQ(loads[2].edge, raiser::mesh::rectangle::left);
   EXPECT_EQ(loads[2].along, -20.0);
   EXPECT_EQ(loads[2].stress, 0.0);
   EXPECT_EQ(loads[3].name, "right edge");
@@ -227,10 +226,10 @@ hole = "pin"
 )");
   ASSERT_EQ(input.asks.size(), 3U);
   EXPECT_EQ(input.asks[0].quantity, Quantity::von_mises);
-  EXPECT_EQ(input.asks[0].hole, 1U);
+  EXPECT_EQ(input.asks[0].raiser, 1U);
   EXPECT_EQ(input.asks[0].tolerance, 0.005);
   EXPECT_EQ(input.asks[1].quantity, Quantity::smallest_edge_stress);
-  EXPECT_EQ(input.asks[1].hole, 0U);
+  EXPECT_EQ(input.asks[1].raiser, 0U);
   EXPECT_EQ(input.asks[1].tolerance, 1e-5);
   EXPECT_EQ(input.asks[1].name, "peak");
   EXPECT_EQ(input.asks[2].tolerance, 0.005);

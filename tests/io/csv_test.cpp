@@ -47,7 +47,7 @@ TEST(Csv, EdgeHasEverySampleOfEveryHole) {
   expect_rectangular(table);
   const auto& edges = result.solution.edges;
   ASSERT_EQ(table.size(), 1 + edges[0].size() + edges[1].size());
-  EXPECT_EQ(table[0][0], "hole");
+  EXPECT_EQ(table[0][0], "raiser");
   EXPECT_EQ(table[0][5], "tangential_stress_MPa");
   EXPECT_EQ(table[1][0], "inlet, left") << "a comma inside a name";
   const auto& last = edges[1].back();
@@ -78,9 +78,15 @@ TEST(Csv, LigamentHasEveryPoint) {
 
 TEST(Csv, SummaryHasALineForEachHoleAndForEachFailure) {
   const Result result = test::solved(test::two_holes);
-  Outcome good{
-      "a.toml", "Bracket", 0, "settled", "", 0.5, {"inlet, left", "outlet"}, result.solution.combined.holes};
-  good.holes[1].gross.kt.reset();
+  Outcome good{"a.toml",
+               "Bracket",
+               0,
+               "settled",
+               "",
+               0.5,
+               {"inlet, left", "outlet"},
+               result.solution.combined.raisers};
+  good.raisers[1].gross.kt.reset();
   const Outcome bad{"b.toml", "", 3, "not read", "b.toml:1:1: no\nplate", 0.0, {}, {}};
   const Rows table = rows(summary_csv({good, bad}));
   expect_rectangular(table);
@@ -91,11 +97,11 @@ TEST(Csv, SummaryHasALineForEachHoleAndForEachFailure) {
     const auto& head = table.front();
     return static_cast<std::size_t>(std::find(head.begin(), head.end(), name) - head.begin());
   };
-  EXPECT_EQ(std::stod(table[2].at(column("largest_edge_stress_MPa"))), good.holes[1].largest.stress.value);
-  EXPECT_EQ(std::stod(table[1].at(column("kt_gross"))), good.holes[0].gross.kt->value);
+  EXPECT_EQ(std::stod(table[2].at(column("largest_edge_stress_MPa"))), good.raisers[1].largest.stress.value);
+  EXPECT_EQ(std::stod(table[1].at(column("kt_gross"))), good.raisers[0].gross.kt->value);
   EXPECT_EQ(table[2].at(column("kt_gross")), "");
-  EXPECT_EQ(std::stod(table[2].at(column("kt_net"))), good.holes[1].net.kt->value);
-  EXPECT_EQ(std::stod(table[2].at(column("kt_net_nominal_stress_MPa"))), good.holes[1].net.nominal);
+  EXPECT_EQ(std::stod(table[2].at(column("kt_net"))), good.raisers[1].net.kt->value);
+  EXPECT_EQ(std::stod(table[2].at(column("kt_net_nominal_stress_MPa"))), good.raisers[1].net.nominal);
   EXPECT_EQ(table[3].at(column("message")), "b.toml:1:1: no\nplate");
   EXPECT_EQ(table[3].at(column("kt_net_definition")), "");
 }

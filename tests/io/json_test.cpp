@@ -25,7 +25,7 @@ TEST(Json, HoldsEveryNumberToTheLastBit) {
   EXPECT_EQ(document["results"][0]["load"], "all loads");
   EXPECT_EQ(document["results"][1]["load"], "pull");
   for (std::size_t h = 0; h < 2; ++h) {
-    const solver::HoleFindings& found = result.solution.combined.holes[h];
+    const solver::RaiserFindings& found = result.solution.combined.raisers[h];
     const auto& hole = document["results"][0]["holes"][h];
     EXPECT_EQ(hole["largest_edge_stress"]["value"].get<double>(), found.largest.stress.value);
     EXPECT_EQ(hole["largest_edge_stress"]["bound"].get<double>(), found.largest.stress.bound);
@@ -49,7 +49,7 @@ TEST(Json, SaysWhatWasAskedAndWhetherItIsMet) {
   EXPECT_EQ(asked[6]["name"], "peak at the outlet");
   EXPECT_EQ(asked[6]["hole"], "outlet");
   EXPECT_TRUE(asked[6]["met"].get<bool>());
-  for (auto& hole : result.solution.combined.holes) hole.largest.stress.bound = 0.002 * peak(hole);
+  for (auto& hole : result.solution.combined.raisers) hole.largest.stress.bound = 0.002 * peak(hole);
   const auto loose = parsed(result)["asked"];
   EXPECT_FALSE(loose[6]["met"].get<bool>()) << "0.2 % does not meet 0.1 %";
   EXPECT_TRUE(loose[0]["met"].get<bool>()) << "0.2 % meets 0.5 %";
@@ -57,7 +57,7 @@ TEST(Json, SaysWhatWasAskedAndWhetherItIsMet) {
 
 TEST(Json, HasNullWithAReasonForWhatIsNoNumber) {
   Result result = test::solved(test::one_hole);
-  solver::HoleFindings& found = result.solution.combined.holes[0];
+  solver::RaiserFindings& found = result.solution.combined.raisers[0];
   found.largest.stress = {no_number, infinite};
   found.smallest.stress.bound = infinite;
   found.net.kt.reset();

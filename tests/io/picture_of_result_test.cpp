@@ -22,7 +22,7 @@ TEST(PictureOfAResult, CoversThePlateAndReachesThePeak) {
   }
   // chords of the hole's edge leave out less than one part in a thousand of it
   EXPECT_NEAR(covered, plate.length * plate.width - hole, 1e-3 * hole);
-  const auto& found = result.solution.combined.holes[0];
+  const auto& found = result.solution.combined.raisers[0];
   EXPECT_NEAR(largest, found.von_mises.stress.value, 0.01 * found.von_mises.stress.value);
   EXPECT_NEAR(picture.peaks.at(0).value, found.von_mises.stress.value, 0.01 * found.von_mises.stress.value);
   EXPECT_EQ(picture.peaks[0].point, found.largest.point);
@@ -59,7 +59,7 @@ TEST(PictureOfAResult, NeedsNoMoreThanTheCaseSays) {
   const Picture picture = picture_of(result);
   EXPECT_EQ(picture.title, "cover");
   const auto worst = worst_first(result.solution.combined).front();
-  EXPECT_EQ(picture.focus, result.solution.combined.holes[worst].hole);
+  EXPECT_EQ(picture.focus, result.solution.combined.raisers[worst].raiser);
   ASSERT_FALSE(picture.caption.empty());
   EXPECT_NE(picture.caption[0].find(picture.plate.holes[*picture.focus].name), std::string::npos);
 }
@@ -74,7 +74,7 @@ TEST(ChartOfAResult, EdgeRunsOnceRoundAndMeetsTheExtremes) {
   for (std::size_t i = 1; i < points.size(); ++i) EXPECT_GE(points[i].x(), points[i - 1].x());
   const auto [low, high] = std::minmax_element(points.begin(), points.end(),
                                                [](const Point& a, const Point& b) { return a.y() < b.y(); });
-  const auto& found = result.solution.combined.holes[0];
+  const auto& found = result.solution.combined.raisers[0];
   const double size = found.largest.stress.value;
   EXPECT_NEAR(high->y(), found.largest.stress.value, 0.01 * size);
   EXPECT_NEAR(low->y(), found.smallest.stress.value, 0.01 * size);
@@ -89,7 +89,7 @@ TEST(ChartOfAResult, LigamentStartsAtTheEdgeAndCarriesTheLoad) {
   ASSERT_FALSE(result.solution.ligaments.empty());
   const Chart chart = ligament_chart(result, 0);
   const auto& points = chart.curves.at(0).points;
-  const auto& found = result.solution.combined.holes[0];
+  const auto& found = result.solution.combined.raisers[0];
   EXPECT_NEAR(points.front().x(), 0.0, 1e-9);
   EXPECT_NEAR(points.back().x(), result.solution.ligaments[0].width, 1e-9);
   EXPECT_NEAR(points.front().y(), found.largest.stress.value, 0.02 * found.largest.stress.value);

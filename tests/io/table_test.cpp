@@ -26,15 +26,15 @@ std::size_t occurrences(const std::string& text, const std::string& part) {
 Result many_holes(std::size_t n) {
   Result result = test::solved(test::one_hole);
   mesh::Hole hole = result.input.problem.plate.holes[0];
-  solver::HoleFindings found = result.solution.combined.holes[0];
+  solver::RaiserFindings found = result.solution.combined.raisers[0];
   result.input.problem.plate.holes.clear();
-  result.solution.combined.holes.clear();
+  result.solution.combined.raisers.clear();
   for (std::size_t i = 0; i < n; ++i) {
     hole.name = "bore " + std::to_string(i);
-    found.hole = i;
+    found.raiser = i;
     found.largest.stress = {100.0 + static_cast<double>(i), 0.05};
     result.input.problem.plate.holes.push_back(hole);
-    result.solution.combined.holes.push_back(found);
+    result.solution.combined.raisers.push_back(found);
   }
   result.published.clear();
   return result;
@@ -42,7 +42,7 @@ Result many_holes(std::size_t n) {
 
 TEST(Table, FitsThePageAndShowsValueBoundPlaceAndDefinition) {
   Result result = test::solved(test::one_hole);
-  solver::HoleFindings& found = result.solution.combined.holes[0];
+  solver::RaiserFindings& found = result.solution.combined.raisers[0];
   found.largest = {{153.41872, 0.03}, mesh::Point(0.004, 5.0), 1.57};
   found.gross = {solver::Estimate{3.0683744, 0.0006}, 50.0, "F / (W t), gross section x = 0 mm", ""};
   const std::string text = table(result);
@@ -62,7 +62,7 @@ TEST(Table, PlacesAPeakAsFinelyAsTheEdgeIsCurvedThere) {
   hole.angle = 0.0;
   hole.length = 40.0;
   hole.width = 4.0;  // radius of curvature 0.2 mm at the tip, 200 mm at the crown
-  solver::HoleFindings& found = result.solution.combined.holes[1];
+  solver::RaiserFindings& found = result.solution.combined.raisers[1];
   found.largest = {{900.0, 0.9}, hole.centre + mesh::Point(20.0, 0.0), 0.0};
   found.smallest = {{-90.0, 0.09}, hole.centre + mesh::Point(0.0, 2.0), 1.5708};
   const std::string text = table(result);
@@ -74,7 +74,7 @@ TEST(Table, SaysWhyAToleranceWasNotMet) {
   Result result = test::solved(test::two_holes);
   result.solution.status = solver::Solution::Status::not_met;
   result.solution.reason = "the budget of 4 refinements is spent";
-  for (auto& hole : result.solution.combined.holes) hole.largest.stress.bound = 0.002 * peak(hole);
+  for (auto& hole : result.solution.combined.raisers) hole.largest.stress.bound = 0.002 * peak(hole);
   const std::string text = table(result);
   EXPECT_TRUE(holds(text, "NOT MET: the budget of 4 refinements is spent")) << text;
   EXPECT_TRUE(holds(text, "peak at the outlet: largest edge stress at outlet")) << text;
@@ -84,7 +84,7 @@ TEST(Table, SaysWhyAToleranceWasNotMet) {
 
 TEST(Table, ShowsNoNumberWhereThereIsNone) {
   Result result = test::solved(test::one_hole);
-  solver::HoleFindings& found = result.solution.combined.holes[0];
+  solver::RaiserFindings& found = result.solution.combined.raisers[0];
   found.smallest.stress.bound = infinite;
   found.net.kt.reset();
   found.net.why = "the loads leave the net section free of stress";
@@ -121,7 +121,7 @@ TEST(Table, ShowsEachOfSeveralLoadsByItself) {
 
 TEST(Table, StaysOnThePageAtTheFinestTolerance) {
   Result result = many_holes(5);
-  for (auto& hole : result.solution.combined.holes) {
+  for (auto& hole : result.solution.combined.raisers) {
     hole.largest.stress = {-12345.678901234, 3e-7};
     hole.smallest.stress = {-98765.432101234, 3e-7};
     hole.von_mises.stress = {98765.432101234, 3e-7};
@@ -135,12 +135,12 @@ TEST(Table, StaysOnThePageAtTheFinestTolerance) {
 TEST(Table, RemarksOnYield) {
   Result result = test::solved(test::one_hole);
   auto& findings = result.solution.combined;
-  findings.holes[0].von_mises.stress = {119.0, 0.5};
+  findings.raisers[0].von_mises.stress = {119.0, 0.5};
   EXPECT_TRUE(holds(yield_remark(result.input, findings), "99 % of the yield strength"));
   EXPECT_TRUE(holds(yield_remark(result.input, findings), "on the holes' edges"));
-  findings.holes[0].von_mises.stress = {119.8, 0.5};
+  findings.raisers[0].von_mises.stress = {119.8, 0.5};
   EXPECT_TRUE(holds(yield_remark(result.input, findings), "may exceed the yield strength of 120 MPa"));
-  findings.holes[0].von_mises.stress = {150.0, 0.5};
+  findings.raisers[0].von_mises.stress = {150.0, 0.5};
   EXPECT_TRUE(holds(yield_remark(result.input, findings), "exceeds the yield strength of 120 MPa"));
   EXPECT_TRUE(holds(yield_remark(result.input, findings), "elastic peak above yield is fictitious"));
   result.input.yield_strength.reset();
@@ -161,10 +161,10 @@ TEST(Table, LetsNoControlCharacterThrough) {
 
 TEST(Summary, HasALineForEachCaseAndCountsThem) {
   const Result result = test::solved(test::two_holes);
-  Outcome good{"a.toml", "", 0, "settled", "", 0.5, {"inlet", "outlet"}, result.solution.combined.holes};
-  good.holes[0].largest.stress = {100.0, 0.5};
-  good.holes[0].smallest.stress = {-500.0, 0.5};
-  good.holes[1].largest.stress = {400.0, 0.5};
+  Outcome good{"a.toml", "", 0, "settled", "", 0.5, {"inlet", "outlet"}, result.solution.combined.raisers};
+  good.raisers[0].largest.stress = {100.0, 0.5};
+  good.raisers[0].smallest.stress = {-500.0, 0.5};
+  good.raisers[1].largest.stress = {400.0, 0.5};
   const Outcome bad{
       "a/very/long/path/to/a/folder/of/cases/b.toml", "", 3, "not read", std::string(90, 'x'), 0, {}, {}};
   Outcome unsolved = bad;
@@ -221,8 +221,13 @@ TEST(Layout, WritesWholeNumbersOut) {
 }
 
 TEST(Layout, ShortensByCharacters) {
-  EXPECT_EQ(hole_phrase("bolt"), "hole bolt");
-  EXPECT_EQ(hole_phrase("hole 2"), "hole 2");
+  mesh::Raiser raiser;
+  raiser.name = "bolt";
+  EXPECT_EQ(phrase(raiser), "hole bolt");
+  raiser.name = "hole 2";
+  EXPECT_EQ(phrase(raiser), "hole 2");
+  raiser.kind = mesh::Raiser::Kind::notch;
+  EXPECT_EQ(phrase(raiser), "notch hole 2");
   EXPECT_EQ(shortened("ärger", 5), "ärger");
   EXPECT_EQ(shortened("ärgern", 5), "ärge…");
   EXPECT_EQ(count(1), "1");

@@ -241,11 +241,11 @@ TEST(MaterialAlong, NamesWhatBoundsEachPiece) {
   EXPECT_DOUBLE_EQ(pieces[1].end, 7.0);
   EXPECT_DOUBLE_EQ(pieces[2].begin, 17.0);
   EXPECT_DOUBLE_EQ(pieces[2].end, 30.0);
-  EXPECT_FALSE(pieces[0].hole_at_begin);
-  EXPECT_EQ(pieces[0].hole_at_end, std::optional<std::size_t>(1));
-  EXPECT_EQ(pieces[1].hole_at_begin, std::optional<std::size_t>(1));
-  EXPECT_EQ(pieces[2].hole_at_begin, std::optional<std::size_t>(0));
-  EXPECT_FALSE(pieces[2].hole_at_end);
+  EXPECT_FALSE(pieces[0].raiser_at_begin());
+  EXPECT_EQ(pieces[0].raiser_at_end(), std::optional<std::size_t>(1));
+  EXPECT_EQ(pieces[1].raiser_at_begin(), std::optional<std::size_t>(1));
+  EXPECT_EQ(pieces[2].raiser_at_begin(), std::optional<std::size_t>(0));
+  EXPECT_FALSE(pieces[2].raiser_at_end());
   EXPECT_EQ(material_along(plate, Direction::along, 0.0).size(), 2u);
   EXPECT_TRUE(material_along(plate, Direction::across, 50.1).empty());
   EXPECT_EQ(material_along(plate, Direction::across, 5.0).size(), 1u);  // touches the one, misses the other

@@ -7,7 +7,7 @@
 namespace raiser::mesh {
 
 /// A region bounded by straight lines through the points, anticlockwise; line k
-/// starts at point k and is owned by hole k, so that each can be told apart.
+/// starts at point k and is owned by raiser k, so that each can be told apart.
 inline Region polygon(const std::vector<Point>& points) {
   Region region;
   region.loops.emplace_back();
@@ -18,7 +18,7 @@ inline Region polygon(const std::vector<Point>& points) {
                                    Point::Zero(),
                                    0.0,
                                    1.0,
-                                   {Owner::Kind::hole, k}});
+                                   {Owner::Kind::raiser, k}});
   return region;
 }
 

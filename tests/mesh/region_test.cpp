@@ -130,7 +130,7 @@ TEST(Trace, EncirclesTheMaterialOnItsLeft) {
       for (const Curve& curve : region.loops[0]) outer += measure(curve).area;
       for (const Curve& curve : region.loops[1]) {
         inner += measure(curve).area;
-        EXPECT_EQ(curve.owner, (Owner{Owner::Kind::hole, 0}));
+        EXPECT_EQ(curve.owner, (Owner{Owner::Kind::raiser, 0}));
       }
       EXPECT_NEAR(outer, length * width, 1e-9);
       EXPECT_NEAR(inner, -area(hole), 1e-12 * area(hole));
@@ -141,11 +141,11 @@ TEST(Trace, NamesTheOutlineByItsPlace) {
   const Region region = trace(with({}));
   for (const Curve& curve : region.loops[0]) {
     const Point middle = curve.at(0.5);
-    const auto expected = middle.x() > 1    ? Owner::Kind::right
-                          : middle.x() < -1 ? Owner::Kind::left
-                          : middle.y() > 0  ? Owner::Kind::top
-                                            : Owner::Kind::bottom;
-    EXPECT_EQ(curve.owner.kind, expected);
+    const auto expected = middle.x() > 1    ? rectangle::right
+                          : middle.x() < -1 ? rectangle::left
+                          : middle.y() > 0  ? rectangle::top
+                                            : rectangle::bottom;
+    EXPECT_EQ(curve.owner, (Owner{Owner::Kind::edge, expected}));
   }
 }
 

@@ -102,9 +102,9 @@ TEST(Triangulate, FollowsTheSizeRuleOnArcs) {
   std::map<std::size_t, double> longest;
   const Mesh mesh = triangulate(trace(plate), rule);
   for (const BoundarySide& side : mesh.boundary())
-    if (side.curve.owner.kind == Owner::Kind::hole)
-      longest[side.curve.owner.hole] =
-          std::max(longest[side.curve.owner.hole], std::abs(side.curve.end - side.curve.begin));
+    if (side.curve.owner.kind == Owner::Kind::raiser)
+      longest[side.curve.owner.index] =
+          std::max(longest[side.curve.owner.index], std::abs(side.curve.end - side.curve.begin));
   EXPECT_LE(longest[0], 0.3 + 1e-12);
   EXPECT_GT(longest[0], 0.2);
   EXPECT_LE(longest[1], 0.15 + 1e-12);

@@ -56,7 +56,7 @@ void expect_same(const Estimate& a, const Estimate& b, double factor = 1.0) {
   EXPECT_LT(slack, 2.1e-3 * std::max(std::abs(b.value), 100.0)) << "bounds too wide to say anything";
 }
 
-void expect_same(const HoleFindings& a, const HoleFindings& b, double factor = 1.0) {
+void expect_same(const RaiserFindings& a, const RaiserFindings& b, double factor = 1.0) {
   if (factor > 0) {
     expect_same(a.largest.stress, b.largest.stress, factor);
     expect_same(a.smallest.stress, b.smallest.stress, factor);
@@ -72,10 +72,10 @@ void expect_same(const HoleFindings& a, const HoleFindings& b, double factor = 1
 }
 
 void expect_same(const Solution& a, const Solution& b, double factor = 1.0) {
-  ASSERT_EQ(a.combined.holes.size(), b.combined.holes.size());
-  for (std::size_t h = 0; h < a.combined.holes.size(); ++h) {
+  ASSERT_EQ(a.combined.raisers.size(), b.combined.raisers.size());
+  for (std::size_t h = 0; h < a.combined.raisers.size(); ++h) {
     SCOPED_TRACE("hole " + std::to_string(h));
-    expect_same(a.combined.holes[h], b.combined.holes[h], factor);
+    expect_same(a.combined.raisers[h], b.combined.raisers[h], factor);
   }
 }
 
@@ -83,9 +83,9 @@ void expect_same(const Solution& a, const Solution& b, double factor = 1.0) {
 // its own error.
 void expect_moved(const Solution& a, const Solution& b, const std::function<Point(const Point&)>& move,
                   double size) {
-  for (std::size_t h = 0; h < a.combined.holes.size(); ++h) {
-    const Point wanted = move(a.combined.holes[h].largest.point);
-    EXPECT_LT((b.combined.holes[h].largest.point - wanted).norm(), 2e-3 * size) << "hole " << h;
+  for (std::size_t h = 0; h < a.combined.raisers.size(); ++h) {
+    const Point wanted = move(a.combined.raisers[h].largest.point);
+    EXPECT_LT((b.combined.raisers[h].largest.point - wanted).norm(), 2e-3 * size) << "hole " << h;
   }
 }
 
@@ -154,9 +154,9 @@ TEST(Metamorphic, StressFollowsTheLoads) {
     Problem other = problem;
     for (Load& load : other.loads) load.stress *= factor;
     const Solution after = solved(other);
-    for (std::size_t h = 0; h < before.combined.holes.size(); ++h) {
-      const HoleFindings& a = before.combined.holes[h];
-      const HoleFindings& b = after.combined.holes[h];
+    for (std::size_t h = 0; h < before.combined.raisers.size(); ++h) {
+      const RaiserFindings& a = before.combined.raisers[h];
+      const RaiserFindings& b = after.combined.raisers[h];
       const double scale = 1e-9 * std::abs(factor) * 300;  // the same discrete problem: to rounding
       const bool turned = factor < 0;
       EXPECT_NEAR(factor * a.largest.stress.value, (turned ? b.smallest : b.largest).stress.value, scale);
@@ -172,14 +172,15 @@ TEST(Metamorphic, TheOrderOfHolesAndLoadsDoesNotMatter) {
   std::reverse(other.loads.begin(), other.loads.end());
   const Solution before = solved(problem);
   const Solution after = solved(other);
-  const std::size_t last = before.combined.holes.size() - 1;
+  const std::size_t last = before.combined.raisers.size() - 1;
   for (std::size_t h = 0; h <= last; ++h)
-    expect_same(before.combined.holes[h], after.combined.holes[last - h]);
+    expect_same(before.combined.raisers[h], after.combined.raisers[last - h]);
   ASSERT_EQ(before.units.size(), 3u);
   for (std::size_t l = 0; l < 3; ++l) {
     EXPECT_EQ(before.units[l].name, after.units[2 - l].name);
     for (std::size_t h = 0; h <= last; ++h)
-      expect_same(before.units[l].holes[h].largest.stress, after.units[2 - l].holes[last - h].largest.stress);
+      expect_same(before.units[l].raisers[h].largest.stress,
+                  after.units[2 - l].raisers[last - h].largest.stress);
   }
 }
 
@@ -188,9 +189,9 @@ TEST(Metamorphic, StressDoesNotDependOnYoungsModulus) {
   const Solution before = solved(problem);
   problem.material.youngs_modulus /= 3000;
   const Solution after = solved(problem);
-  for (std::size_t h = 0; h < before.combined.holes.size(); ++h)
-    EXPECT_NEAR(before.combined.holes[h].largest.stress.value, after.combined.holes[h].largest.stress.value,
-                1e-7);
+  for (std::size_t h = 0; h < before.combined.raisers.size(); ++h)
+    EXPECT_NEAR(before.combined.raisers[h].largest.stress.value,
+                after.combined.raisers[h].largest.stress.value, 1e-7);
   EXPECT_NEAR(after.checks.strain_energy / before.checks.strain_energy, 3000, 1e-5);
 }
 
@@ -204,9 +205,9 @@ TEST(Metamorphic, StressDoesNotDependOnPoissonsRatioNorThePlaneState) {
                              {210000, 0.3, PlaneState::strain}}) {
     problem.material = law;
     const Solution after = solved(problem, 1e-6);
-    for (std::size_t h = 0; h < before.combined.holes.size(); ++h) {
-      expect_same(before.combined.holes[h].largest.stress, after.combined.holes[h].largest.stress);
-      expect_same(before.combined.holes[h].smallest.stress, after.combined.holes[h].smallest.stress);
+    for (std::size_t h = 0; h < before.combined.raisers.size(); ++h) {
+      expect_same(before.combined.raisers[h].largest.stress, after.combined.raisers[h].largest.stress);
+      expect_same(before.combined.raisers[h].smallest.stress, after.combined.raisers[h].smallest.stress);
     }
   }
 }
@@ -235,7 +236,7 @@ TEST(Metamorphic, MirrorLinesChangeNothing) {
   for (int degree = 3; degree <= 9; ++degree) sequence.solve(degree);
   for (std::size_t h = 0; h < problem.plate.holes.size(); ++h)
     for (std::size_t c = 0; c <= problem.loads.size(); ++c) {
-      const HoleFindings& hole = c == 0 ? quarter.combined.holes[h] : quarter.units[c - 1].holes[h];
+      const RaiserFindings& hole = c == 0 ? quarter.combined.raisers[h] : quarter.units[c - 1].raisers[h];
       expect_same(hole.largest.stress, sequence.value(c, h, Quantity::largest_edge_stress).stress);
       expect_same(hole.smallest.stress, sequence.value(c, h, Quantity::smallest_edge_stress).stress);
       expect_same(hole.von_mises.stress, sequence.value(c, h, Quantity::von_mises).stress);
@@ -299,8 +300,8 @@ TEST(Metamorphic, EachUnitLoadIsThatLoadAlone) {
     single.loads = {problem.loads[l]};
     const Solution alone = solved(single);
     for (std::size_t h = 0; h < problem.plate.holes.size(); ++h) {
-      const Estimate& a = all.units[l].holes[h].largest.stress;
-      const Estimate& b = alone.combined.holes[h].largest.stress;
+      const Estimate& a = all.units[l].raisers[h].largest.stress;
+      const Estimate& b = alone.combined.raisers[h].largest.stress;
       EXPECT_NEAR(a.value, b.value, a.bound + b.bound);
       EXPECT_LT(a.bound, 0.01 * std::abs(b.value));
     }

@@ -25,20 +25,20 @@ Problem sheet(const HookeLaw& law, Load::Kind kind = Load::Kind::tension) {
   return problem;
 }
 
-HoleFindings solved(const Problem& problem, double tolerance = 1e-4) {
+RaiserFindings solved(const Problem& problem, double tolerance = 1e-4) {
   std::vector<Ask> asks;
   for (const Quantity q : {Quantity::largest_edge_stress, Quantity::smallest_edge_stress})
     asks.push_back({q, 0, tolerance, ""});
   const Solution solution = settle(problem, asks);
   EXPECT_EQ(solution.status, Solution::Status::settled) << solution.reason;
-  return solution.combined.holes.at(0);
+  return solution.combined.raisers.at(0);
 }
 
 void expect_same(const Estimate& a, const Estimate& b) { EXPECT_NEAR(a.value, b.value, a.bound + b.bound); }
 
 TEST(OrthotropicPlate, TurningPlateLoadAndFibresTogetherChangesNothing) {
-  const HoleFindings along = solved(sheet(carbon(0.35)));
-  const HoleFindings across = solved(sheet(carbon(0.35 + pi / 2), Load::Kind::transverse));
+  const RaiserFindings along = solved(sheet(carbon(0.35)));
+  const RaiserFindings across = solved(sheet(carbon(0.35 + pi / 2), Load::Kind::transverse));
   expect_same(along.largest.stress, across.largest.stress);
   expect_same(along.smallest.stress, across.smallest.stress);
   const Point turned(-along.largest.point.y(), along.largest.point.x());
@@ -48,8 +48,8 @@ TEST(OrthotropicPlate, TurningPlateLoadAndFibresTogetherChangesNothing) {
 }
 
 TEST(OrthotropicPlate, FibresThatLeanTheOtherWayGiveTheMirrorImage) {
-  const HoleFindings up = solved(sheet(carbon(0.5)));
-  const HoleFindings down = solved(sheet(carbon(-0.5)));
+  const RaiserFindings up = solved(sheet(carbon(0.5)));
+  const RaiserFindings down = solved(sheet(carbon(-0.5)));
   expect_same(up.largest.stress, down.largest.stress);
   expect_same(up.smallest.stress, down.smallest.stress);
   const Point a = up.largest.point, b = down.largest.point;
@@ -59,21 +59,21 @@ TEST(OrthotropicPlate, FibresThatLeanTheOtherWayGiveTheMirrorImage) {
 
 TEST(OrthotropicPlate, EqualModuliAreIsotropicAtAnyAngle) {
   HookeLaw law{70000, 0.33, PlaneState::stress};
-  const HoleFindings isotropic = solved(sheet(law));
+  const RaiserFindings isotropic = solved(sheet(law));
   law.orthotropy = Orthotropy{70000, 70000 / 2.66, 0.7};
-  const HoleFindings same = solved(sheet(law));
+  const RaiserFindings same = solved(sheet(law));
   expect_same(isotropic.largest.stress, same.largest.stress);
   expect_same(isotropic.smallest.stress, same.smallest.stress);
 }
 
 TEST(OrthotropicPlate, ThePeakLeavesTheEndOfTheDiameterAcross) {
   EXPECT_NEAR(std::abs(solved(sheet(carbon(0.0))).largest.angle), pi / 2, 1e-4);
-  const HoleFindings leaning = solved(sheet(carbon(pi / 6)));
+  const RaiserFindings leaning = solved(sheet(carbon(pi / 6)));
   const double off = std::abs(std::abs(leaning.largest.angle) - pi / 2);
   EXPECT_GT(off, 0.2);
   EXPECT_LT(off, 0.6);
   // Loaded across its fibres the sheet has its peak where the fibres touch the edge, or near it.
-  const HoleFindings across = solved(sheet(carbon(pi / 2)));
+  const RaiserFindings across = solved(sheet(carbon(pi / 2)));
   EXPECT_LT(across.largest.stress.value, 300.0);
 }
 

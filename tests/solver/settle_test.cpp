@@ -42,14 +42,14 @@ std::vector<Ask> all_at(double tolerance, std::size_t holes) {
   return asks;
 }
 
-double peak(const HoleFindings& hole) {
+double peak(const RaiserFindings& hole) {
   return std::max(std::abs(hole.largest.stress.value), std::abs(hole.smallest.stress.value));
 }
 
 void expect_met(const Solution& solution, double tolerance) {
   EXPECT_EQ(solution.status, Solution::Status::settled) << solution.reason;
   EXPECT_TRUE(solution.reason.empty());
-  for (const HoleFindings& hole : solution.combined.holes)
+  for (const RaiserFindings& hole : solution.combined.raisers)
     for (const EdgeValue* value : {&hole.largest, &hole.smallest, &hole.von_mises}) {
       EXPECT_LE(value->stress.bound, tolerance * peak(hole));
       EXPECT_GT(value->stress.bound, 0.0);
@@ -65,8 +65,8 @@ TEST(Settle, MeetsTolerancesOfThreeFiveAndEightDigits) {
     expect_met(rough, tolerance);
     EXPECT_LT(rough.unknowns, best.unknowns);
     for (std::size_t h = 0; h < 2; ++h) {
-      const HoleFindings& a = rough.combined.holes[h];
-      const HoleFindings& b = best.combined.holes[h];
+      const RaiserFindings& a = rough.combined.raisers[h];
+      const RaiserFindings& b = best.combined.raisers[h];
       EXPECT_NEAR(a.largest.stress.value, b.largest.stress.value, a.largest.stress.bound);
       EXPECT_NEAR(a.smallest.stress.value, b.smallest.stress.value, a.smallest.stress.bound);
       EXPECT_NEAR(a.von_mises.stress.value, b.von_mises.stress.value, a.von_mises.stress.bound);
@@ -78,7 +78,7 @@ TEST(Settle, AsksOnlyWhatIsAsked) {
   const Problem problem = hanger();
   const Solution bolt = settle(problem, {{Quantity::largest_edge_stress, 1, 1e-6, ""}});
   EXPECT_EQ(bolt.status, Solution::Status::settled);
-  const HoleFindings& hole = bolt.combined.holes[1];
+  const RaiserFindings& hole = bolt.combined.raisers[1];
   EXPECT_LE(hole.largest.stress.bound, 1e-6 * peak(hole));
 }
 
@@ -92,7 +92,7 @@ TEST(Settle, SaysWhyAToleranceIsNotMet) {
   EXPECT_NE(solution.reason.find("3 of 3 asked numbers"), std::string::npos) << solution.reason;
   EXPECT_NE(solution.reason.find("bolt"), std::string::npos) << solution.reason;
   // The numbers are there all the same, with honest bounds.
-  const Estimate largest = solution.combined.holes[0].largest.stress;
+  const Estimate largest = solution.combined.raisers[0].largest.stress;
   EXPECT_GT(largest.bound, 1e-12 * largest.value);
   EXPECT_LT(largest.bound, 1e-8 * largest.value);
 }
@@ -117,7 +117,7 @@ TEST(Settle, KeepsTheSequenceThatTheBoundsStandOn) {
   EXPECT_EQ(last.unknowns, solution.unknowns);
   EXPECT_EQ(last.triangles, solution.triangles);
   EXPECT_LE(last.worst, 1.0);
-  const auto& holes = solution.combined.holes;
+  const auto& holes = solution.combined.raisers;
   EXPECT_DOUBLE_EQ(last.peak, std::max(peak(holes[0]), peak(holes[1])));
 }
 
@@ -145,14 +145,14 @@ TEST(Settle, RefusesWhatIsNotLegalInWords) {
   EXPECT_TRUE(says(refusal(bare, asks), "no load"));
   Problem pulled = hanger();
   Load pull = of(Kind::edge, 10);
-  pull.edge = Owner::Kind::right;
+  pull.edge = mesh::rectangle::right;
   pulled.loads.push_back(pull);
   EXPECT_TRUE(says(refusal(pulled, asks), "balance"));
   const double nan = std::numeric_limits<double>::quiet_NaN();
   Problem endless = hanger();
   endless.loads[0].stress = nan;
   EXPECT_NE(refusal(endless, asks), "accepted");
-  EXPECT_TRUE(says(refusal(hanger(), {{Quantity::von_mises, 2, 1e-3, ""}}), "names no hole"));
+  EXPECT_TRUE(says(refusal(hanger(), {{Quantity::von_mises, 2, 1e-3, ""}}), "names no raiser"));
   for (const double tolerance : {0.0, -1e-3, nan})
     EXPECT_TRUE(says(refusal(hanger(), {{Quantity::von_mises, 0, tolerance, ""}}), "no tolerance"));
 }
@@ -217,14 +217,14 @@ TEST(Settle, SaysWhatTheOuterEdgeCarriesBesideAHoleNearAnEnd) {
   problem.loads = {of(Kind::tension, 100)};
   const Solution solution = settle(problem, all_at(1e-3, 1));
   const PlateChecks& checks = solution.checks;
-  EXPECT_GT(checks.outer_von_mises, solution.combined.holes[0].von_mises.stress.value);
+  EXPECT_GT(checks.outer_von_mises, solution.combined.raisers[0].von_mises.stress.value);
   EXPECT_NEAR(checks.outer_point.x(), 100.0, 1e-9);
   const auto there = solution.field.at(checks.outer_point - Point(1e-9, 0));
   ASSERT_TRUE(there);
   EXPECT_NEAR(von_mises(there->stress), checks.outer_von_mises, 0.01 * checks.outer_von_mises);
   problem.plate.holes[0].centre.x() = 0.0;
   const Solution middle = settle(problem, all_at(1e-3, 1));
-  EXPECT_LT(middle.checks.outer_von_mises, middle.combined.holes[0].von_mises.stress.value);
+  EXPECT_LT(middle.checks.outer_von_mises, middle.combined.raisers[0].von_mises.stress.value);
   EXPECT_GT(middle.checks.outer_von_mises, 100.0);
 }
 

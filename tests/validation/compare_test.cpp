@@ -38,11 +38,11 @@ solver::LoadFindings findings(const solver::Problem& p, double largest, double s
   solver::LoadFindings f;
   f.name = "load";
   for (std::size_t i = 0; i < p.plate.holes.size(); ++i) {
-    solver::HoleFindings h;
-    h.hole = i;
+    solver::RaiserFindings h;
+    h.raiser = i;
     h.largest.stress = {largest, 0.5};
     h.smallest.stress = {smallest, 0.5};
-    f.holes.push_back(h);
+    f.raisers.push_back(h);
   }
   return f;
 }
@@ -331,7 +331,7 @@ TEST(Compare, PressureInAHole) {
 
 TEST(Compare, EdgeLoadsThatMakeATension) {
   Load right = load(Load::Kind::edge, 100), left = right;
-  left.edge = mesh::Owner::Kind::left;
+  left.edge = mesh::rectangle::left;
   const auto rows = run({.holes = {circle(20)}, .loads = {right, left}, .largest = 315.26});
   ASSERT_TRUE(find(rows, Reference::howland));
   EXPECT_NEAR(find(rows, Reference::howland)->ours, 3.1526 * 0.8, 1e-9);

@@ -10,11 +10,11 @@
 namespace raiser::validation {
 namespace {
 
-solver::HoleFindings solve(const Independent& c, double tolerance) {
+solver::RaiserFindings solve(const Independent& c, double tolerance) {
   const auto solution =
       solver::settle(c.problem, {{solver::Quantity::largest_edge_stress, c.hole, tolerance, ""}});
   EXPECT_EQ(solution.status, solver::Solution::Status::settled) << c.name << ": " << solution.reason;
-  return solution.combined.holes.at(c.hole);
+  return solution.combined.raisers.at(c.hole);
 }
 
 TEST(Independent, CasesAreLegal) {

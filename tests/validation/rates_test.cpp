@@ -71,7 +71,7 @@ double edge_error(const Model& model, const Displacements& solved) {
   const solver::EdgeProbe probe(model, solved.degree, s, tables);
   double miss = 0.0;
   for (const mesh::BoundarySide& side : model.mesh().boundary()) {
-    if (side.curve.owner.kind != solver::Owner::Kind::hole) continue;
+    if (side.curve.owner.kind != solver::Owner::Kind::raiser) continue;
     const Eigen::MatrixXd seen = probe.at(side, solved).tangential;
     for (std::size_t q = 0; q < s.size(); ++q) {
       const Point x = side.curve.at(side.parameter(s[q]));

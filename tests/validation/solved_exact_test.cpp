@@ -53,7 +53,7 @@ Model model_of(const Case& c, double turn) {
   const solver::Traction outer = traction_of(c.field);
   UnitLoad load{"exact",
                 [outer, pressure](const Owner& owner, const Point& x, const Point& n) -> Point {
-                  if (owner.kind == Owner::Kind::hole) return -pressure * n;
+                  if (owner.kind == Owner::Kind::raiser) return -pressure * n;
                   return outer(owner, x, n);
                 },
                 c.parity, c.parity};
@@ -74,7 +74,7 @@ double edge_miss(const Model& model, const Case& c, const Displacements& solved)
   const solver::EdgeProbe probe(model, solved.degree, s, tables);
   double miss = 0.0;
   for (const mesh::BoundarySide& side : model.mesh().boundary()) {
-    if (side.curve.owner.kind != Owner::Kind::hole) continue;
+    if (side.curve.owner.kind != Owner::Kind::raiser) continue;
     const Eigen::MatrixXd seen = probe.at(side, solved).tangential;
     for (std::size_t q = 0; q < s.size(); ++q) {
       const double t = side.parameter(s[q]);

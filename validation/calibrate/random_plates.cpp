@@ -60,21 +60,21 @@ std::vector<std::string> kinds(const Problem& problem) {
 
 void hold_peaks(const Problem& problem, const solver::LoadFindings& findings, std::size_t load_case,
                 const std::string& load, const FinerSolution& truth, std::vector<Trial>& out) {
-  for (const solver::HoleFindings& hole : findings.holes) {
+  for (const solver::RaiserFindings& hole : findings.raisers) {
     const std::array estimates{hole.largest.stress, hole.smallest.stress, hole.von_mises.stress};
     for (std::size_t q = 0; q < solver::quantity_count; ++q) {
-      Trial trial = trial_at(problem.plate, hole.hole, static_cast<Trial::What>(q));
+      Trial trial = trial_at(problem.plate, hole.raiser, static_cast<Trial::What>(q));
       trial.load = load;
       trial.is_asked = load_case == 0;
       trial.scale = std::max(std::abs(estimates[0].value), std::abs(estimates[1].value));
-      hold(trial, estimates[q], truth.extreme(load_case, hole.hole, static_cast<Quantity>(q)));
+      hold(trial, estimates[q], truth.extreme(load_case, hole.raiser, static_cast<Quantity>(q)));
       out.push_back(std::move(trial));
     }
   }
 }
 
 double edge_scale(const Solution& solution, std::size_t hole) {
-  const solver::HoleFindings& found = solution.combined.holes[hole];
+  const solver::RaiserFindings& found = solution.combined.raisers[hole];
   return std::max(std::abs(found.largest.stress.value), std::abs(found.smallest.stress.value));
 }
 
@@ -104,12 +104,12 @@ void hold_ligaments(const Problem& problem, const Solution& solution, const std:
       const std::array values{point.stress.xx, point.stress.yy, point.stress.xy};
       Trial worst;
       for (std::size_t c = 0; c < 3; ++c) {
-        Trial trial = trial_at(problem.plate, ligament.hole, Trial::What::ligament_point);
+        Trial trial = trial_at(problem.plate, ligament.raiser, Trial::What::ligament_point);
         hold(trial, {values[c], point.bound}, (*known)[c]);
         if (c == 0 || trial.error > worst.error) worst = trial;
       }
       worst.load = load;
-      worst.scale = edge_scale(solution, ligament.hole);
+      worst.scale = edge_scale(solution, ligament.raiser);
       out.push_back(std::move(worst));
     }
 }

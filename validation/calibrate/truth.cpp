@@ -90,7 +90,7 @@ Known FinerSolution::extreme(std::size_t load_case, std::size_t hole, solver::Qu
 
 std::optional<Known> FinerSolution::tangential(std::size_t hole, const mesh::Point& x) const {
   for (const mesh::BoundarySide& side : sequence_.scanner().sides()) {
-    if (side.curve.owner.hole != hole) continue;
+    if (side.curve.owner.index != hole) continue;
     const auto s = position_on(side, x);
     if (!s) continue;
     std::array<double, 2> values{};

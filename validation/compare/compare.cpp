@@ -1,6 +1,6 @@
 #include <algorithm>
+#include <array>
 #include <cmath>
-#include <map>
 #include <optional>
 #include <utility>
 
@@ -36,21 +36,20 @@ void add(Situation& s, const Load& load) {
 
 /// The uniform remote stress that all edge loads make together, if they do.
 std::optional<RemoteStress> of_edges(const std::vector<Load>& loads) {
-  using Edge = mesh::Owner::Kind;
-  std::map<Edge, std::pair<double, double>> sum;
-  for (const Edge edge : {Edge::right, Edge::top, Edge::left, Edge::bottom}) sum[edge];
+  namespace edge = mesh::rectangle;
+  std::array<std::pair<double, double>, 4> sum = {};
   double size = 0.0;
   for (const Load& load : loads) {
     if (load.kind != Load::Kind::edge) continue;
-    sum[load.edge].first += load.stress;
-    sum[load.edge].second += load.along;
+    sum.at(load.edge).first += load.stress;
+    sum.at(load.edge).second += load.along;
     size = std::max({size, std::abs(load.stress), std::abs(load.along)});
   }
   const auto same = [size](double a, double b) { return std::abs(a - b) <= 1e-9 * size; };
-  const auto& [xx, xy] = sum[Edge::right];
-  const auto& [yy, yx] = sum[Edge::top];
-  const bool normal = same(xx, sum[Edge::left].first) && same(yy, sum[Edge::bottom].first);
-  const bool shear = same(xy, sum[Edge::left].second) && same(xy, -yx) && same(xy, -sum[Edge::bottom].second);
+  const auto& [xx, xy] = sum[edge::right];
+  const auto& [yy, yx] = sum[edge::top];
+  const bool normal = same(xx, sum[edge::left].first) && same(yy, sum[edge::bottom].first);
+  const bool shear = same(xy, sum[edge::left].second) && same(xy, -yx) && same(xy, -sum[edge::bottom].second);
   if (!normal || !shear) return std::nullopt;
   return RemoteStress{xx, yy, xy};
 }
@@ -78,13 +77,14 @@ std::vector<Comparison> solutions(const Situation& s) {
 
 void append(std::vector<Comparison>& all, const mesh::Plate& plate, const solver::LoadFindings& findings,
             const std::vector<Load>& loads) {
+  if (plate.outline) return;  // the published solutions here know rectangles only
   const auto from_edges = of_edges(loads);
   if (!from_edges) return;
-  for (const auto& found : findings.holes) {
-    Situation s{plate, found.hole, found, findings.name, *from_edges, 0.0, 0.0};
+  for (const auto& found : findings.raisers) {
+    Situation s{plate, found.raiser, found, findings.name, *from_edges, 0.0, 0.0};
     bool known = true;
     for (const Load& load : loads) {
-      known = known && covered(load, found.hole);
+      known = known && covered(load, found.raiser);
       add(s, load);
     }
     const bool loaded =

@@ -16,7 +16,7 @@ namespace raiser::validation {
 struct Situation {
   const mesh::Plate& plate;
   std::size_t hole = 0;
-  const solver::HoleFindings& found;
+  const solver::RaiserFindings& found;
   std::string load;
   RemoteStress remote;    ///< MPa, in plate axes
   double bending = 0.0;   ///< MPa, outer fibre

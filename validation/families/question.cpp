@@ -72,7 +72,7 @@ Question settled(solver::Problem problem, Measure measure, double model, std::si
 
 Measure largest_over(double nominal, std::size_t hole) {
   return [nominal, hole](const solver::Solution& solution) -> std::optional<solver::Estimate> {
-    return solution.combined.holes.at(hole).largest.stress.scaled(1 / nominal);
+    return solution.combined.raisers.at(hole).largest.stress.scaled(1 / nominal);
   };
 }
 
@@ -83,11 +83,11 @@ Measure stress_at(const Point& point, double nominal, std::size_t hole) {
       return solver::Estimate{sample.tangential, sample.bound}.scaled(1 / nominal);
     }
     for (const solver::Ligament& ligament : solution.ligaments) {
-      const bool is_there = ligament.hole == hole && !ligament.points.empty() &&
+      const bool is_there = ligament.raiser == hole && !ligament.points.empty() &&
                             (ligament.points.front().point - point).norm() <= 1e-9 * point.norm();
       if (!is_there) continue;
       const solver::LigamentPoint& end = ligament.points.front();
-      const auto direction = solution.combined.holes.at(hole).section.direction;
+      const auto direction = solution.combined.raisers.at(hole).section.direction;
       const double stress = direction == mesh::Direction::across ? end.stress.xx : end.stress.yy;
       return solver::Estimate{stress, end.bound}.scaled(1 / nominal);
     }

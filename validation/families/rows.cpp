@@ -20,7 +20,8 @@ mesh::Region quarter_cell(const mesh::Plate& plate) {
   mesh::Region region = mesh::cut(mesh::trace(plate), {true, true});
   for (mesh::Loop& loop : region.loops)
     for (mesh::Curve& curve : loop)
-      if (curve.owner.kind == mesh::Owner::Kind::right) curve.owner.kind = mesh::Owner::Kind::mirror_x;
+      if (curve.owner == mesh::Owner{mesh::Owner::Kind::edge, mesh::rectangle::right})
+        curve.owner = {mesh::Owner::Kind::mirror_x, 0};
   return region;
 }
 
@@ -43,7 +44,7 @@ Question in_cell(double x, const solver::Traction& traction, double add, double 
   };
 }
 
-bool is_hole(const mesh::Owner& owner) { return owner.kind == mesh::Owner::Kind::hole; }
+bool is_hole(const mesh::Owner& owner) { return owner.kind == mesh::Owner::Kind::raiser; }
 
 }  // namespace
 

@@ -92,7 +92,7 @@ json exported(const mesh::Mesh& mesh, int geometry_degree, int degree) {
   }
   json sides;
   for (const mesh::BoundarySide& side : mesh.boundary())
-    if (side.curve.owner.kind != Owner::Kind::hole) sides.push_back({side.triangle, side.side});
+    if (side.curve.owner.kind != Owner::Kind::raiser) sides.push_back({side.triangle, side.side});
   out["tractions"] = {{{"stress", {along, across, shear}}, {"sides", sides}}};
   out["pins"] = pins(mesh);
   return out;
