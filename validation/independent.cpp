@@ -1,5 +1,8 @@
 #include "validation/independent.hpp"
 
+#include "mesh/plate/build.hpp"
+#include "mesh/plate/shoulder.hpp"
+
 namespace raiser::validation {
 
 namespace {
@@ -28,6 +31,28 @@ Load load(Load::Kind kind) {
 
 solver::Problem plate(double length, std::vector<Hole> holes, Load::Kind kind) {
   return {{length, width, 1.0, std::move(holes)}, {200e3, 0.3, solver::PlaneState::stress}, {load(kind)}};
+}
+
+/// Strip with U notches of depth 10 mm and root radius 3 mm on the given edges.
+solver::Problem notched(const std::vector<std::size_t>& edges, Load::Kind kind) {
+  solver::Problem problem = plate(4 * width, {}, kind);
+  std::vector<mesh::Notch> notches;
+  for (const std::size_t edge : edges)
+    notches.push_back({edge == mesh::rectangle::top ? "upper" : "lower", mesh::NotchShape::u, edge, 0.0, 10.0,
+                       3.0, 0.0, 0.0});
+  problem.plate.outline = mesh::with_notches(mesh::rectangular(4 * width, width), notches).outline;
+  return problem;
+}
+
+/// Bar that steps at x = 0 from 100 mm to 50 mm with fillets of 5 mm.
+solver::Problem stepped() {
+  solver::Problem problem = plate(6 * width, {}, Load::Kind::tension);
+  mesh::Shoulder shoulder;
+  shoulder.name = "step";
+  shoulder.width = 50.0;
+  shoulder.fillet.radius = 5.0;
+  problem.plate.outline = mesh::stepped_bar(6 * width, width, {shoulder}).outline;
+  return problem;
 }
 
 }  // namespace
@@ -108,6 +133,30 @@ std::vector<Independent> independent_values() {
        7e-9,
        nominal,
        {14.142135622, -14.142135622},
+       integral},
+      {"opposite U notches, t/W 0.1, r/t 0.3, tension",
+       notched({mesh::rectangle::top, mesh::rectangle::bottom}, Load::Kind::tension),
+       0,
+       4.893650590325094,
+       2.4e-8,
+       nominal,
+       {0, 40},
+       integral},
+      {"one U notch, t/W 0.1, r/t 0.3, bending",
+       notched({mesh::rectangle::top}, Load::Kind::bending),
+       0,
+       4.545338836215904,
+       1.8e-7,
+       nominal,
+       {0, 40},
+       integral},
+      {"stepped bar, D/d 2, r/d 0.1, tension",
+       stepped(),
+       0,
+       2.505669868509453,
+       1.3e-8,
+       nominal,
+       {3.333894531, 25.285756416},
        integral},
   };
 }

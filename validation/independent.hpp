@@ -12,7 +12,7 @@ namespace raiser::validation {
 struct Independent {
   std::string name;
   solver::Problem problem;
-  std::size_t hole = 0;      ///< whose largest edge stress is meant
+  std::size_t raiser = 0;    ///< whose largest edge stress is meant
   double factor = 0.0;       ///< largest edge stress over the nominal stress
   double uncertainty = 0.0;  ///< half-width on the factor
   double nominal = 0.0;      ///< MPa
@@ -20,8 +20,9 @@ struct Independent {
   std::string method;
 };
 
-/// Eight plates with holes: tension, shear, bending and pressure. Width 100 mm,
-/// nominal stress 100 MPa, E 200 GPa, nu 0.3, plane stress.
+/// Eight plates with holes under tension, shear, bending and pressure, two with U
+/// notches and a stepped bar. Width 100 mm, nominal stress 100 MPa (of the bar: in
+/// its narrow part), E 200 GPa, nu 0.3, plane stress.
 std::vector<Independent> independent_values();
 
 }  // namespace raiser::validation

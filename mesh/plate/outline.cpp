@@ -1,8 +1,10 @@
 #include "mesh/plate/outline.hpp"
 
 #include <array>
+#include <cmath>
 #include <stdexcept>
 
+#include "mesh/legendre.hpp"
 #include "mesh/plate/plate.hpp"
 
 namespace raiser::mesh {
@@ -17,6 +19,19 @@ std::string_view word(Raiser::Kind kind) {
       return "fillet";
   }
   return "";
+}
+
+double edge_length(const Outline& outline, std::size_t edge) {
+  static const GaussRule rule = gauss_legendre(24);
+  double sum = 0.0;
+  for (const Curve& curve : outline.curves) {
+    if (curve.owner != Owner{Owner::Kind::edge, edge}) continue;
+    const double half = (curve.end - curve.begin) / 2;
+    for (std::size_t q = 0; q < rule.points.size(); ++q)
+      sum += rule.weights[q] * std::abs(half) *
+             curve.derivative((curve.begin + curve.end) / 2 + half * rule.points[q]).norm();
+  }
+  return sum;
 }
 
 Outline rectangular(double length, double width) {

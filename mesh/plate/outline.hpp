@@ -1,10 +1,13 @@
 #pragma once
 
+#include <optional>
 #include <string>
 #include <string_view>
 #include <vector>
 
 #include "mesh/plate/curve.hpp"
+#include "mesh/plate/fillet.hpp"
+#include "mesh/plate/notch.hpp"
 
 namespace raiser::mesh {
 
@@ -21,8 +24,10 @@ struct Raiser {
   /// The gross section goes through this place: as `root`, but the end of a
   /// fillet in the wide part.
   Point mouth = Point::Zero();
-  double radius = 0.0;  ///< mm, smallest radius of curvature of its edge; 0 for a hole
-  std::string shape;    ///< in words with its sizes, for people; empty for a hole
+  double radius = 0.0;                        ///< mm, smallest radius of curvature of its edge; 0 for a hole
+  std::string shape;                          ///< in words with its sizes, for people; empty for a hole
+  std::optional<Notch> notch = std::nullopt;  ///< what it was cut as, where it was
+  std::optional<Fillet> fillet = std::nullopt;  ///< the shoulder's or corner's, where it is one
 };
 
 /// "hole", "notch", "fillet".
@@ -46,6 +51,9 @@ struct Outline {
 namespace rectangle {
 inline constexpr std::size_t right = 0, top = 1, left = 2, bottom = 3;
 }
+
+/// Length of all curves of an edge, mm.
+double edge_length(const Outline& outline, std::size_t edge);
 
 /// A rectangle centred at the origin, starting at its lower left corner.
 Outline rectangular(double length, double width);

@@ -10,6 +10,7 @@
 #include <numbers>
 
 #include "mesh/plate/distance.hpp"
+#include "mesh/plate/outline_faults.hpp"
 
 namespace raiser::mesh {
 
@@ -285,12 +286,17 @@ std::vector<PlateFault> faults(const Plate& plate) {
   check_plate_sizes(plate, result);
   check_slenderness(plate, result);
   const bool outline = positive(plate.length) && positive(plate.width);
+  const std::vector<PlateFault> of_outline =
+      plate.outline && outline ? outline_faults(plate) : std::vector<PlateFault>{};
+  result.insert(result.end(), of_outline.begin(), of_outline.end());
   std::vector<std::size_t> sound;
   for (std::size_t i = 0; i < plate.holes.size(); ++i) {
     if (!check_hole(plate, i, result)) continue;
     sound.push_back(i);
     check_resolution(plate, i, result);
-    if (outline) check_edges(plate, i, result);
+    if (outline && !plate.outline) check_edges(plate, i, result);
+    if (outline && plate.outline && of_outline.empty())
+      for (PlateFault& fault : faults_at_outline(plate, i)) result.push_back(std::move(fault));
   }
   check_names(plate, result);
   check_pairs(plate, sound, result);

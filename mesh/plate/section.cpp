@@ -133,12 +133,23 @@ std::vector<Crossing> passages(const Loop& loop, int axis, double station, doubl
   return result;
 }
 
-// The pieces of the line inside a chain of the plate's outline.
-std::vector<Interval> inside(const Loop& loop, const Plate& plate, Direction direction, double station) {
+double length_of(const std::vector<Crossing>& crossings) {
+  double sum = 0.0;
+  for (std::size_t i = 0; i + 1 < crossings.size(); i += 2)
+    sum += crossings[i + 1].position - crossings[i].position;
+  return sum;
+}
+
+// The pieces of the line inside a chain of the plate's outline; where the chain
+// jumps at the line, of its wider or its narrower side.
+std::vector<Interval> inside(const Loop& loop, const Plate& plate, Direction direction, double station,
+                             bool wider) {
   const int axis = direction == Direction::across ? 0 : 1;
   const double tolerance = rounding * (plate.length + plate.width);
   auto found = passages(loop, axis, station, tolerance, false);
-  if (found.empty()) found = passages(loop, axis, station, tolerance, true);
+  auto other = passages(loop, axis, station, tolerance, true);
+  const bool is_wider = length_of(other) > length_of(found);
+  if (found.empty() || (!other.empty() && is_wider == wider)) std::swap(found, other);
   std::vector<Interval> result;
   for (std::size_t i = 0; i + 1 < found.size(); i += 2) {
     for (const std::size_t k : {i, i + 1})
@@ -173,7 +184,7 @@ std::optional<Chord> chord(const Hole& hole, Direction direction, double station
 std::vector<Interval> gross_along(const Plate& plate, Direction direction, double station) {
   const bool across = direction == Direction::across;
   if (!(std::abs(station) <= 0.5 * (across ? plate.length : plate.width) * (1.0 + rounding))) return {};
-  if (plate.outline) return inside(plate.outline->gross(), plate, direction, station);
+  if (plate.outline) return inside(plate.outline->gross(), plate, direction, station, true);
   return whole(plate, across);
 }
 
@@ -181,7 +192,7 @@ std::vector<Interval> material_along(const Plate& plate, Direction direction, do
   const bool across = direction == Direction::across;
   if (!(std::abs(station) <= 0.5 * (across ? plate.length : plate.width) * (1.0 + rounding))) return {};
   const auto pieces =
-      plate.outline ? inside(plate.outline->curves, plate, direction, station) : whole(plate, across);
+      plate.outline ? inside(plate.outline->curves, plate, direction, station, false) : whole(plate, across);
 
   struct Gap {
     Chord chord;

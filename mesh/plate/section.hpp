@@ -40,11 +40,11 @@ struct Interval {
 
 /// The pieces of material along a section of a legal plate, in rising order.
 /// Empty when the station lies outside the plate. Where the outline jumps at
-/// the station, the side of smaller x (or y) counts.
+/// the station, the narrower side counts.
 std::vector<Interval> material_along(const Plate& plate, Direction direction, double station);
 
 /// The same for the plate without its holes and notches, on which gross
-/// sections stand.
+/// sections stand. Where the outline jumps, the wider side counts.
 std::vector<Interval> gross_along(const Plate& plate, Direction direction, double station);
 
 /// Figures of a section, for a thickness of 1 mm.

@@ -65,6 +65,16 @@ mesh::SizeRule first_rule(const Plate& plate, double tolerance) {
   return rule;
 }
 
+/// What each mirror that is used maps the raisers to: only one of the images is in the mesh.
+std::vector<std::vector<std::size_t>> images_of(const Plate& plate, mesh::Mirrors mirrors) {
+  std::vector<std::vector<std::size_t>> result;
+  for (const mesh::Mirrors mirror :
+       {mesh::Mirrors{true, false}, mesh::Mirrors{false, true}, mesh::Mirrors{true, true}})
+    if ((mirrors.x || !mirror.x) && (mirrors.y || !mirror.y))
+      result.push_back(mesh::mirror_image(plate, mirror).value().raisers);
+  return result;
+}
+
 /// Low degrees tell little where many digits are asked for, and degrees beyond
 /// 8 pay only there.
 int first_degree(double tolerance) { return tolerance < 5e-4 ? 4 : 3; }
@@ -130,8 +140,13 @@ Solution settle(const Problem& problem, const std::vector<Ask>& asks) {
       solution.seconds = seconds_since(start);
       return solution;
     }
-    for (const Ask& ask : asks)
-      if (sequence.excess(ask) > 1.0) rule.refine[ask.raiser] = std::pow(0.6, refinement + 1);
+    const double finer = std::pow(0.6, refinement + 1);
+    const auto images = images_of(problem.plate, mirrors);
+    for (const Ask& ask : asks) {
+      if (sequence.excess(ask) <= 1.0) continue;
+      rule.refine[ask.raiser] = finer;
+      for (const auto& image : images) rule.refine[image[ask.raiser]] = finer;
+    }
   }
 }
 

@@ -12,15 +12,16 @@ namespace {
 
 solver::RaiserFindings solve(const Independent& c, double tolerance) {
   const auto solution =
-      solver::settle(c.problem, {{solver::Quantity::largest_edge_stress, c.hole, tolerance, ""}});
+      solver::settle(c.problem, {{solver::Quantity::largest_edge_stress, c.raiser, tolerance, ""}});
   EXPECT_EQ(solution.status, solver::Solution::Status::settled) << c.name << ": " << solution.reason;
-  return solution.combined.raisers.at(c.hole);
+  return solution.combined.raisers.at(c.raiser);
 }
 
 TEST(Independent, CasesAreLegal) {
   for (const auto& c : independent_values()) {
     EXPECT_TRUE(mesh::faults(c.problem.plate).empty()) << c.name;
-    const auto& hole = c.problem.plate.holes.at(c.hole);
+    if (c.raiser >= c.problem.plate.holes.size()) continue;
+    const auto& hole = c.problem.plate.holes.at(c.raiser);
     const mesh::Point out = c.where - hole.centre;
     // The place given lies on the hole's edge or, at a rounded corner, inside its box.
     EXPECT_LE(std::abs(out.x()), mesh::half_extent(hole, mesh::Point::UnitX()) + 1e-6) << c.name;
@@ -47,7 +48,7 @@ TEST(Independent, EightDigitsOnRequest) {
               found.largest.stress.bound + c.uncertainty * c.nominal)
         << c.name;
     // The plates are symmetric: the peak lies there or at a mirror image.
-    const mesh::Point centre = c.problem.plate.holes[c.hole].centre;
+    const mesh::Point centre = mesh::raiser(c.problem.plate, c.raiser).centre;
     const mesh::Point ours = found.largest.point - centre, theirs = c.where - centre;
     EXPECT_NEAR(std::abs(ours.x()), std::abs(theirs.x()), 0.01) << c.name;
     EXPECT_NEAR(std::abs(ours.y()), std::abs(theirs.y()), 0.01) << c.name;
