@@ -193,6 +193,8 @@ Phrases meaning(const Plate& plate, const Load& load) {
               fmt::format("moment {}", derived(load.stress * across * plate.width / 6e3, "N m"))};
     case Load::Kind::pressure:
       return {fmt::format("pressure: {} in {}", stress, plate.holes[load.hole].name)};
+    case Load::Kind::face_pressure:
+      return {fmt::format("pressure: {} on the faces of {}", stress, label(plate.cracks, load.crack))};
     case Load::Kind::edge:
       break;
   }

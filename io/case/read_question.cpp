@@ -83,6 +83,10 @@ std::string_view word(Quantity quantity) {
       return "smallest edge stress";
     case Quantity::von_mises:
       return "von Mises";
+    case Quantity::stress_intensity:
+      return "stress intensity";
+    case Quantity::t_stress:
+      return "T-stress";
   }
   return "";
 }

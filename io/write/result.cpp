@@ -14,6 +14,8 @@ const solver::EdgeValue& value_of(const solver::RaiserFindings& found, solver::Q
     case solver::Quantity::von_mises:
       return found.von_mises;
     case solver::Quantity::largest_edge_stress:
+    case solver::Quantity::stress_intensity:
+    case solver::Quantity::t_stress:
       break;
   }
   return found.largest;
@@ -45,6 +47,10 @@ std::string_view words(solver::Quantity quantity) {
       return "smallest edge stress";
     case solver::Quantity::von_mises:
       return "largest von Mises stress";
+    case solver::Quantity::stress_intensity:
+      return "stress intensity";
+    case solver::Quantity::t_stress:
+      return "T-stress";
     case solver::Quantity::largest_edge_stress:
       break;
   }

@@ -29,6 +29,8 @@ void add(Situation& s, const Load& load) {
     case Load::Kind::pressure:
       if (load.hole == s.hole) s.pressure += load.stress;
       break;
+    case Load::Kind::face_pressure:
+      break;  // of no solution for a hole
     case Load::Kind::edge:
       break;  // in of_edges()
   }
