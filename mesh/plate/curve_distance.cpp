@@ -29,12 +29,12 @@ struct Span {
 
 double cross(const Point& a, const Point& b) { return a.x() * b.y() - a.y() * b.x(); }
 
-struct Nearest {
+struct Closest {
   double length;
   double on_a, on_b;  ///< shares of the chords
 };
 
-Nearest between_chords(const Span& a, const Span& b) {
+Closest between_chords(const Span& a, const Span& b) {
   const Point p = a.to - a.from;
   const Point q = b.to - b.from;
   const Point offset = b.from - a.from;
@@ -52,7 +52,7 @@ Nearest between_chords(const Span& a, const Span& b) {
                                                        {1.0, share(a.to, b.from, q)},
                                                        {share(b.from, a.from, p), 0.0},
                                                        {share(b.to, a.from, p), 1.0}}};
-  Nearest best{std::numeric_limits<double>::infinity(), 0.0, 0.0};
+  Closest best{std::numeric_limits<double>::infinity(), 0.0, 0.0};
   for (const auto& [s, t] : pairs) {
     const double length = (a.from + s * p - b.from - t * q).norm();
     if (length < best.length) best = {length, s, t};
@@ -72,7 +72,7 @@ double distance(const Curve& a, const Curve& b, double enough) {
   for (int step = 0; !open.empty() && step < most_steps; ++step) {
     const auto [one, other] = open.back();
     open.pop_back();
-    const Nearest near = between_chords(one, other);
+    const Closest near = between_chords(one, other);
     best = std::min(best, (one.at(near.on_a) - other.at(near.on_b)).norm());
     const double least = near.length - one.bulge - other.bulge;
     if (least >= enough || least >= best * (1 - 1e-6) - 1e-14 * (one.size() + other.size())) continue;

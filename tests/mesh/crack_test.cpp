@@ -94,6 +94,7 @@ TEST(Crack, FansShrinkGeometricallyIntoTheTip) {
   SizeRule rule;
   rule.tip_rings = 7;
   rule.tip_ratio = 0.2;
+  rule.tip_sectors = 8;
   const Mesh mesh = triangulate(trace(plate_with({chain({{0, -50}, {0, -20}}, true)})), rule);
   ASSERT_EQ(mesh.fans().size(), 1u);
   const TipFan& fan = mesh.fans()[0];

@@ -394,8 +394,9 @@ TEST(FreeOutline, OfABracketHasItsAreaEitherWayRound) {
       EXPECT_EQ(std::count(result.outline->edges.begin(), result.outline->edges.end(), name), 1) << name;
     for (const Curve& curve : result.outline->curves)
       if (curve.owner.kind == Owner::Kind::edge && result.outline->edges[curve.owner.index] == "end" &&
-          curve.kind == Curve::Kind::line)
+          curve.kind == Curve::Kind::line) {
         EXPECT_NEAR(curve.start().x(), 50, 1e-12);
+      }
   }
 }
 
