@@ -42,6 +42,11 @@ struct Case {
   /// "hole.2.diameter" (tables count from 1), "load.1.stress". A key that is
   /// absent was left to its default.
   std::map<std::string, std::string, std::less<>> written;
+  /// By hole: which table [[hole]] it comes from, from 1; a row has one table.
+  std::vector<std::size_t> hole_tables;
+  /// Where the origin of a drawn outline came to lie, mm; all positions count
+  /// from the middle of the bounding box.
+  std::optional<mesh::Point> drawing_origin;
 };
 
 /// One fault of a case file: where, which value, what is wrong, what to do.

@@ -3,6 +3,7 @@
 #include <fmt/format.h>
 
 #include <algorithm>
+#include <cmath>
 #include <map>
 #include <numbers>
 
@@ -11,6 +12,7 @@
 #include "io/case/parts.hpp"
 #include "io/case/words.hpp"
 #include "mesh/plate/section.hpp"
+#include "solver/elasticity/outer_edge.hpp"
 
 namespace raiser::io {
 
@@ -51,6 +53,12 @@ std::string percent(double ratio) { return fmt::format("{:.10g} %", ratio * 100.
 
 std::string describe_plate(const Case& input) {
   const Plate& plate = input.problem.plate;
+  if (input.drawing_origin)
+    return row("Plate", {fmt::format("drawn outline, {} long and {} wide", derived(plate.length, "mm"), derived(plate.width, "mm")),
+                         item(input, "thickness", "plate.thickness", plate.thickness, "mm")}) +
+           row("", {"positions count from the middle of its bounding box",
+                    fmt::format("the drawing's origin lies at ({:.6g}, {:.6g}) mm", input.drawing_origin->x() + 0.0,
+                                input.drawing_origin->y() + 0.0)});
   return row("Plate", {item(input, "length", "plate.length", plate.length, "mm"),
                        item(input, "width", "plate.width", plate.width, "mm"),
                        item(input, "thickness", "plate.thickness", plate.thickness, "mm")}) +
@@ -139,7 +147,8 @@ std::string net_section(const Plate& plate, const Hole& hole) {
 
 std::string describe_hole(const Case& input, std::size_t index) {
   const Hole& hole = input.problem.plate.holes[index];
-  const std::string path = fmt::format("hole.{}.", index + 1);
+  const std::size_t written_as = index < input.hole_tables.size() ? input.hole_tables[index] : index + 1;
+  const std::string path = fmt::format("hole.{}.", written_as);
   Phrases phrases{article_free_word(hole)};
   for (std::string& phrase : sizes(input, hole, path)) phrases.push_back(std::move(phrase));
   const std::string x = amount(hole.centre.x(), "mm");
@@ -160,8 +169,29 @@ std::string count_of_shapes(const Plate& plate, std::size_t first) {
   return fmt::format("{}", fmt::join(phrases, ", "));
 }
 
+/// What the outline is and what it raises the stress with.
+std::string describe_outline(const Case& input) {
+  const Plate& plate = input.problem.plate;
+  if (!plate.outline) return "";
+  const auto& raisers = plate.outline->raisers;
+  std::string result = row("Outline", {fmt::format("edges {}", fmt::join(plate.outline->edges, ", ")),
+                                       fmt::format("{} notches and fillets", raisers.size())});
+  const std::size_t listed = raisers.size() > most_listed ? most_listed / 2 : raisers.size();
+  for (std::size_t i = 0; i < listed; ++i) {
+    const mesh::Raiser& at = raisers[i];
+    const auto net = mesh::shape_of(mesh::material_along(plate, mesh::Direction::across, at.root.x()));
+    const auto gross = mesh::shape_of(mesh::gross_along(plate, mesh::Direction::across, at.mouth.x()));
+    result += row("  " + at.name, {at.shape, fmt::format("root at x = {:.6g} mm, y = {:.6g} mm", at.root.x() + 0.0, at.root.y() + 0.0)}) +
+              row("", {fmt::format("net section {}", derived(net.length * plate.thickness, "mm^2")),
+                       fmt::format("{:.1f} % of gross", 100.0 * net.length / gross.length)});
+  }
+  if (listed < raisers.size()) result += row("  and more", {fmt::format("{} not listed here", raisers.size() - listed)});
+  return result + "\n";
+}
+
 std::string describe_holes(const Case& input) {
   const Plate& plate = input.problem.plate;
+  if (plate.holes.empty() && plate.outline) return "";
   const std::size_t listed = plate.holes.size() > most_listed ? most_listed / 2 : plate.holes.size();
   std::string result = row("Holes", {fmt::format("{}", plate.holes.size())});
   for (std::size_t i = 0; i < listed; ++i) result += describe_hole(input, i);
@@ -176,12 +206,16 @@ std::string kilonewtons(double newtons) { return derived(newtons / 1e3, "kN"); }
 
 /// What a load is and the force or moment that it stands for.
 Phrases meaning(const Plate& plate, const Load& load) {
-  const double across = plate.width * plate.thickness;
-  const double along = plate.length * plate.thickness;
+  const auto ends = plate.outline ? solver::loaded_ends(plate, 0) : std::nullopt;
+  const auto sides = plate.outline ? solver::loaded_ends(plate, 1) : std::nullopt;
+  const double across = ends ? ends->reference().area : plate.width * plate.thickness;
+  const double along = sides ? sides->reference().area : plate.length * plate.thickness;
   const std::string stress = derived(load.stress, "MPa");
+  const bool unequal = ends && std::abs(ends->low.area - ends->high.area) > 1e-9 * ends->high.area;
   switch (load.kind) {
     case Load::Kind::tension:
-      return {fmt::format("tension along x: {} on the ends", stress), kilonewtons(load.stress * across)};
+      return {fmt::format("tension along x: {} on the {}", stress, unequal ? "smaller end" : "ends"),
+              kilonewtons(load.stress * across)};
     case Load::Kind::transverse:
       return {fmt::format("tension across, along y: {} on the sides", stress),
               kilonewtons(load.stress * along)};
@@ -189,6 +223,9 @@ Phrases meaning(const Plate& plate, const Load& load) {
       return {fmt::format("shear: {} on all four edges", stress),
               fmt::format("{} on each end", kilonewtons(load.stress * across))};
     case Load::Kind::bending:
+      if (ends)
+        return {fmt::format("bending: {} at the edge of the {}", stress, unequal ? "smaller end" : "ends"),
+                fmt::format("moment {}", derived(load.stress * ends->reference().modulus() / 1e3, "N m"))};
       return {fmt::format("bending: {} at y = {}", stress, amount(plate.width / 2.0, "mm")),
               fmt::format("moment {}", derived(load.stress * across * plate.width / 6e3, "N m"))};
     case Load::Kind::pressure:
@@ -199,7 +236,8 @@ Phrases meaning(const Plate& plate, const Load& load) {
       break;
   }
   const bool end = load.edge == mesh::rectangle::right || load.edge == mesh::rectangle::left;
-  const double area = end ? across : along;
+  double area = plate.thickness * (end ? plate.width : plate.length);
+  if (plate.outline) area = plate.thickness * mesh::edge_length(*plate.outline, load.edge);
   return {fmt::format("normal {} = {}", stress, kilonewtons(load.stress * area)),
           fmt::format("shear {} = {} (positive anticlockwise)", derived(load.along, "MPa"),
                       kilonewtons(load.along * area))};
@@ -257,7 +295,7 @@ std::string describe_question(const Case& input) {
       std::any_of(input.asks.begin(), input.asks.end(), [](const auto& ask) { return ask.name.empty(); });
   if (all) {
     result += row("  results", {chosen("ask.results", "largest and smallest edge stress, von Mises")});
-    result += row("  at", {chosen("ask.holes", "every hole")});
+    result += row("  at", {chosen(input.written.contains("ask.at") ? "ask.at" : "ask.holes", input.problem.plate.outline ? "every hole, notch and fillet" : "every hole")});
   }
   for (const solver::Ask& ask : input.asks) {
     if (ask.name.empty()) continue;
@@ -274,7 +312,8 @@ std::string describe_question(const Case& input) {
 std::string describe(const Case& input) {
   const std::string title = input.title + (input.written.contains("title") ? "" : std::string(default_mark));
   return title + '\n' + row("File", {input.file.string(), fmt::format("format {}", case_format)}) + '\n' +
-         describe_plate(input) + describe_material(input) + '\n' + describe_holes(input) + '\n' +
+         describe_plate(input) + describe_material(input) + '\n' + describe_outline(input) +
+         describe_holes(input) + '\n' +
          describe_loads(input) + '\n' + describe_question(input);
 }
 

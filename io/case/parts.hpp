@@ -16,7 +16,8 @@ struct PlateSizes {
   std::optional<double> width;
   std::optional<double> thickness;
 };
-PlateSizes read_plate(const Table& table);
+/// A drawn outline gives length and width itself: then neither is read.
+PlateSizes read_plate(const Table& table, bool is_drawn);
 
 /// What [material] says; the law is empty when it is incomplete or faulty.
 struct Material {
@@ -33,8 +34,10 @@ struct HoleReading {
   std::string name;
   std::optional<mesh::Hole> hole;
   Position at;
+  std::size_t table = 0;  ///< which [[hole]] it comes from, from 1
 };
-std::vector<HoleReading> read_holes(const Table& document);
+/// A row or grid becomes one hole for each place. Adds their names to `names`.
+std::vector<HoleReading> read_holes(const Table& document, Names& names);
 
 /// A load as far as it could be read, and its place.
 struct LoadReading {
@@ -44,6 +47,7 @@ struct LoadReading {
 /// Forces and moments become stresses on the plate's own sections; without the
 /// sizes they need such loads stay empty.
 std::vector<LoadReading> read_loads(const Table& document, const PlateSizes& plate,
+                                    const std::optional<mesh::Outline>& outline,
                                     const std::vector<std::string_view>& holes);
 
 /// What is asked for, in the order of [ask], then of [[ask.result]].
@@ -51,7 +55,9 @@ struct Question {
   double tolerance = 1e-3;
   std::vector<solver::Ask> asks;
 };
-Question read_question(const Table& document, const std::vector<std::string_view>& holes);
+/// `raisers` are the names of the holes, then of what the outline has.
+Question read_question(const Table& document, const std::vector<std::string_view>& holes,
+                       const std::vector<std::string_view>& raisers);
 
 /// How to write the name of a hole, for messages: the first one's, if any.
 std::string sample_of(const std::vector<std::string_view>& holes);

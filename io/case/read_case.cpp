@@ -8,6 +8,7 @@
 
 #include "io/case/case.hpp"
 #include "io/case/document.hpp"
+#include "io/case/outline.hpp"
 #include "io/case/parts.hpp"
 #include "io/case/screen.hpp"
 #include "io/case/table.hpp"
@@ -24,6 +25,7 @@ struct Parts {
   Table plate_table;
   PlateSizes plate;
   Material material;
+  OutlineReading outline;
   std::vector<HoleReading> holes;
   std::vector<LoadReading> loads;
   bool loads_are_sound = false;  ///< no fault was found in any
@@ -50,12 +52,12 @@ void complain_of_missing(const Table& document, std::string_view key, std::strin
 }
 
 Parts read_parts(const Table& document, const std::string& default_title) {
-  constexpr std::array<std::string_view, 7> keys{"raiser", "title", "plate", "material",
-                                                 "hole",   "load",  "ask"};
+  constexpr std::array<std::string_view, 10> keys{"raiser",  "title", "plate",    "material", "hole",
+                                                  "outline", "notch", "shoulder", "load",     "ask"};
   refuse_unknown(document, keys);
   read_version(document);
   const Entry* title = find(document, "title");
-  Parts parts{text(document, title).value_or(default_title), document, {}, {}, {}, {}, false, {}};
+  Parts parts{text(document, title).value_or(default_title), document, {}, {}, {}, {}, {}, false, {}};
   const auto need = [&](std::string_view key, std::string_view contents) {
     const auto table = table_at(*document.node, key, *document.report);
     if (!table && find(document, key) == nullptr) {
@@ -65,22 +67,35 @@ Parts read_parts(const Table& document, const std::string& default_title) {
     return table;
   };
   if (const auto table = need("plate", "length, width and thickness")) {
-    parts.plate = read_plate(*table);
+    parts.plate = read_plate(*table, draws_outline(document));
     parts.plate_table = *table;
   }
   if (const auto table = need("material", "youngs_modulus and poissons_ratio, or an alloy"))
     parts.material = read_material(*table, parts.plate);
-  parts.holes = read_holes(document);
+  Names taken;
+  parts.holes = read_holes(document, taken);
+  parts.outline = read_outline(document, parts.plate, taken);
+  if (parts.outline.sizes.length) {
+    parts.plate.length = parts.outline.sizes.length;
+    parts.plate.width = parts.outline.sizes.width;
+  }
   std::vector<std::string_view> names;
   for (const HoleReading& hole : parts.holes) names.push_back(hole.name);
+  std::vector<std::string_view> raisers = names;
+  if (parts.outline.outline)
+    for (const mesh::Raiser& raiser : parts.outline.outline->raisers) raisers.push_back(raiser.name);
   const std::size_t faults_before = document.report->faults.size();
-  parts.loads = read_loads(document, parts.plate, names);
+  // Edges of an outline that could not be drawn have no names to speak of.
+  const bool known_edges = find(document, "outline") == nullptr && find(document, "shoulder") == nullptr;
+  if (parts.outline.is_sound || known_edges)
+    parts.loads = read_loads(document, parts.plate, parts.outline.outline, names);
+  if (parts.outline.is_sound) parts.question = read_question(document, names, raisers);
   parts.loads_are_sound = document.report->faults.size() == faults_before;
-  parts.question = read_question(document, names);
-  if (parts.holes.empty() && find(document, "hole") == nullptr) {
-    complain_of_missing(document, "hole", "the plate has no hole", "add [[hole]] with a shape and its sizes");
+  if (raisers.empty() && parts.outline.is_sound && find(document, "hole") == nullptr) {
+    complain_of_missing(document, "hole", "nothing on the plate raises its stress",
+                        "add [[hole]], [[notch]] or [[shoulder]] with its sizes");
   }
-  if (parts.loads.empty() && find(document, "load") == nullptr) {
+  if (find(document, "load") == nullptr) {
     complain_of_missing(document, "load", "nothing loads the plate",
                         "add [[load]] with a kind and its stress or force");
   }
@@ -101,7 +116,8 @@ struct PartialPlate {
 std::optional<PartialPlate> readable_plate(const Parts& parts) {
   const PlateSizes& sizes = parts.plate;
   if (!sizes.length || !sizes.width || !sizes.thickness) return std::nullopt;
-  PartialPlate result{{*sizes.length, *sizes.width, *sizes.thickness, {}}, {}};
+  if (!parts.outline.is_sound) return std::nullopt;
+  PartialPlate result{{*sizes.length, *sizes.width, *sizes.thickness, {}, parts.outline.outline}, {}};
   Names names;
   for (std::size_t i = 0; i < parts.holes.size(); ++i) {
     if (!parts.holes[i].hole) continue;
@@ -109,6 +125,7 @@ std::optional<PartialPlate> readable_plate(const Parts& parts) {
     // A name that is taken has its fault already; here it must only be told apart.
     if (!names.insert(hole.name).second) hole.name = fmt::format("{} (number {})", hole.name, i + 1);
     names.insert(hole.name);
+    hole.centre += parts.outline.origin;
     result.plate.holes.push_back(std::move(hole));
     result.index.push_back(i);
   }
@@ -159,6 +176,8 @@ Case assemble(const Parts& parts, mesh::Plate plate, Report& report, const std::
   result.yield_strength = parts.material.yield_strength;
   result.alloy = parts.material.alloy;
   result.written = std::move(report.written);
+  for (const HoleReading& hole : parts.holes) result.hole_tables.push_back(hole.table);
+  if (parts.outline.sizes.length) result.drawing_origin = parts.outline.origin;
   return result;
 }
 

@@ -4,6 +4,7 @@
 #include <cmath>
 
 #include "io/case/parts.hpp"
+#include "solver/elasticity/outer_edge.hpp"
 
 namespace raiser::io {
 
@@ -12,22 +13,23 @@ namespace {
 using solver::Load;
 using Keys = std::span<const std::string_view>;
 
-constexpr std::array<std::string_view, 13> load_keys{
-    "name",     "kind", "direction", "stress",       "force", "moment",     "hole",
+constexpr std::array<std::string_view, 14> load_keys{
+    "name",     "kind", "direction", "stress",       "force", "moment",      "on", "hole",
     "pressure", "edge", "normal",    "normal_force", "shear", "shear_force"};
-constexpr std::array<std::string_view, 5> tension_keys{"name", "kind", "direction", "stress", "force"};
+constexpr std::array<std::string_view, 6> tension_keys{"name", "kind", "direction", "stress", "force", "on"};
 constexpr std::array<std::string_view, 4> shear_keys{"name", "kind", "stress", "force"};
-constexpr std::array<std::string_view, 4> bending_keys{"name", "kind", "stress", "moment"};
+constexpr std::array<std::string_view, 5> bending_keys{"name", "kind", "stress", "moment", "on"};
 constexpr std::array<std::string_view, 4> pressure_keys{"name", "kind", "hole", "pressure"};
 constexpr std::array<std::string_view, 7> edge_keys{"name",         "kind",  "edge",       "normal",
                                                     "normal_force", "shear", "shear_force"};
 constexpr std::array kinds{Load::Kind::tension, Load::Kind::shear, Load::Kind::bending, Load::Kind::pressure,
                            Load::Kind::edge};
-constexpr std::array<std::string_view, 4> edge_words{"right", "top", "left", "bottom"};
 
 /// Where and for what the loads are read.
 struct Context {
   PlateSizes plate;
+  std::optional<mesh::Plate> drawn;  ///< the plate without its holes, when its outline is no rectangle
+  std::vector<std::string> edges;
   const std::vector<std::string_view>& holes;
 };
 
@@ -54,15 +56,53 @@ std::optional<double> stress_from(const Table& table, Keys keys, Dimension other
 
 constexpr std::array<std::string_view, 2> stress_or_force{"stress", "force"};
 
+/// The ends (axis 0) or sides (1) that a tension or bending acts on.
+std::optional<solver::LoadedEnds> ends_of(const Table& table, const Context& context, int axis) {
+  if (!context.drawn) return std::nullopt;
+  auto ends = solver::loaded_ends(*context.drawn, axis);
+  if (!ends)
+    complain(table, fmt::format("the outline has no straight edge at both of its {}", axis == 0 ? "ends" : "sides"),
+             "load edges by name with kind = \"edge\"");
+  return ends;
+}
+
+/// The factor from a stress on the end named in `on` to that on the smaller one.
+/// Unequal ends must name one where a stress is given.
+std::optional<double> on_smaller(const Table& table, const solver::LoadedEnds& ends, int axis,
+                                 double (*size)(const solver::LoadedEnd&)) {
+  constexpr std::array<std::string_view, 4> words{"right", "left", "top", "bottom"};
+  const auto own = std::span(words).subspan(axis == 0 ? 0 : 2, 2);
+  const Entry* entry = find(table, "on");
+  const bool equal = std::abs(size(ends.low) - size(ends.high)) <= 1e-9 * size(ends.high);
+  if (entry == nullptr) {
+    if (equal || find(table, "stress") == nullptr) return 1.0;
+    complain(table, fmt::format("the ends differ: {:.6g} and {:.6g} mm^2", ends.low.area, ends.high.area),
+             fmt::format("say which one the stress stands on, e.g. on = \"{}\", or give a force or moment", own.front()));
+    return std::nullopt;
+  }
+  const auto index = choice(table, entry, own);
+  if (!index) return std::nullopt;
+  if (find(table, "stress") == nullptr) return 1.0;
+  return size(*index == 0 ? ends.high : ends.low) / size(ends.reference());
+}
+
+double area_of(const solver::LoadedEnd& end) { return end.area; }
+double modulus_of(const solver::LoadedEnd& end) { return end.modulus(); }
+
 std::optional<Load> read_tension(const Table& table, const Context& context) {
   constexpr std::array<std::string_view, 2> directions{"along", "across"};
   refuse_unfitting(table, "tension", load_keys, tension_keys);
   const Entry* entry = find(table, "direction");
   const auto direction = entry == nullptr ? std::optional<std::size_t>(0) : choice(table, entry, directions);
   const bool across = direction.value_or(0) == 1;
-  const auto area = section(context.plate, across ? context.plate.length : context.plate.width);
-  const auto stress = stress_from(table, stress_or_force, Dimension::force, area, "\"100 MPa\"");
-  if (!direction || !stress) return std::nullopt;
+  const auto ends = ends_of(table, context, across ? 1 : 0);
+  if (context.drawn && !ends) return std::nullopt;
+  const auto factor = ends ? on_smaller(table, *ends, across ? 1 : 0, area_of) : std::optional(1.0);
+  const auto area = ends ? std::optional(ends->reference().area)
+                         : section(context.plate, across ? context.plate.length : context.plate.width);
+  auto stress = stress_from(table, stress_or_force, Dimension::force, area, "\"100 MPa\"");
+  if (!direction || !stress || !factor) return std::nullopt;
+  *stress *= *factor;
   Load load;
   load.kind = across ? Load::Kind::transverse : Load::Kind::tension;
   load.stress = *stress;
@@ -85,8 +125,13 @@ std::optional<Load> read_bending(const Table& table, const Context& context) {
   refuse_unfitting(table, "bending", load_keys, bending_keys);
   auto modulus = section(context.plate, context.plate.width);
   if (modulus) *modulus *= *context.plate.width / 6.0;
-  const auto stress = stress_from(table, keys, Dimension::moment, modulus, "\"50 MPa\"");
-  if (!stress) return std::nullopt;
+  const auto ends = ends_of(table, context, 0);
+  if (context.drawn && !ends) return std::nullopt;
+  if (ends) modulus = ends->reference().modulus();
+  const auto factor = ends ? on_smaller(table, *ends, 0, modulus_of) : std::optional(1.0);
+  auto stress = stress_from(table, keys, Dimension::moment, modulus, "\"50 MPa\"");
+  if (!stress || !factor) return std::nullopt;
+  *stress *= *factor;
   Load load;
   load.kind = Load::Kind::bending;
   load.stress = *stress;
@@ -116,9 +161,12 @@ std::optional<Load> read_edge(const Table& table, const Context& context) {
   constexpr std::array<std::string_view, 2> normal_keys{"normal", "normal_force"};
   constexpr std::array<std::string_view, 2> shear_keys_of_edge{"shear", "shear_force"};
   refuse_unfitting(table, "an edge load", load_keys, edge_keys);
-  const auto edge = choice(table, require(table, "edge", "\"right\""), edge_words);
+  const std::vector<std::string_view> words(context.edges.begin(), context.edges.end());
+  const auto edge = choice(table, require(table, "edge", fmt::format("\"{}\"", words.front())), words);
   const bool end = edge.value_or(0) % 2 == 0;
-  const auto area = section(context.plate, end ? context.plate.width : context.plate.length);
+  auto area = section(context.plate, end ? context.plate.width : context.plate.length);
+  if (context.drawn && edge)
+    area = mesh::edge_length(*context.drawn->outline, *edge) * context.drawn->thickness;
   const auto normal = read_component(table, normal_keys, area);
   const auto along = read_component(table, shear_keys_of_edge, area);
   if (normal == 0.0 && along == 0.0) {
@@ -178,7 +226,7 @@ std::string default_name(const std::optional<Load>& load, const Context& context
     case Load::Kind::pressure:
       return fmt::format("pressure in {}", context.holes[load->hole]);
     case Load::Kind::edge:
-      return fmt::format("{} edge", edge_words[load->edge]);
+      return fmt::format("{} edge", context.edges[load->edge]);
   }
   return std::string(solver::word(load->kind));
 }
@@ -214,6 +262,7 @@ std::optional<Load> read_load(const Table& table, const Context& context) {
 }  // namespace
 
 std::vector<LoadReading> read_loads(const Table& document, const PlateSizes& plate,
+                                    const std::optional<mesh::Outline>& outline,
                                     const std::vector<std::string_view>& holes) {
   std::vector<LoadReading> loads;
   std::vector<Table> tables = tables_at(document, "load");
@@ -222,7 +271,11 @@ std::vector<LoadReading> read_loads(const Table& document, const PlateSizes& pla
              fmt::format("a case has at most {}; put loads of one kind together", most_loads));
     tables.erase(tables.begin() + most_loads, tables.end());
   }
-  const Context context{plate, holes};
+  Context context{plate, std::nullopt, {"right", "top", "left", "bottom"}, holes};
+  if (outline && plate.length && plate.width && plate.thickness) {
+    context.drawn = mesh::Plate{*plate.length, *plate.width, *plate.thickness, {}, outline};
+    context.edges = outline->edges;
+  }
   const Names written = written_names(tables);
   Names names{"all loads", "edges"};  // the program's own names for sums of loads
   for (const Table& table : tables) {

@@ -2,6 +2,7 @@
 
 #include <array>
 
+#include "io/case/outline.hpp"
 #include "io/case/parts.hpp"
 
 namespace raiser::io {
@@ -10,13 +11,12 @@ namespace {
 
 using Keys = std::span<const std::string_view>;
 
-constexpr std::array<std::string_view, 9> hole_keys{"name",  "shape",         "diameter", "radius", "length",
-                                                    "width", "corner_radius", "at",       "angle"};
+constexpr std::array<std::string_view, 11> hole_keys{"name",  "shape",         "diameter", "radius", "length",
+                                                    "width", "corner_radius", "at",       "angle",  "repeat", "pitch"};
 constexpr std::array<std::string_view, 2> circle_sizes{"diameter", "radius"};
-constexpr std::array<std::string_view, 5> circle_keys{"name", "shape", "diameter", "radius", "at"};
-constexpr std::array<std::string_view, 6> long_hole_keys{"name", "shape", "length", "width", "at", "angle"};
-constexpr std::array<std::string_view, 7> rectangle_keys{"name",          "shape", "length", "width",
-                                                         "corner_radius", "at",    "angle"};
+constexpr std::array<std::string_view, 7> circle_keys{"name", "shape", "diameter", "radius", "at", "repeat", "pitch"};
+constexpr std::array<std::string_view, 8> long_hole_keys{"name", "shape", "length", "width", "at", "angle", "repeat", "pitch"};
+constexpr std::array<std::string_view, 9> rectangle_keys{"name", "shape", "length", "width", "corner_radius", "at", "angle", "repeat", "pitch"};
 constexpr std::array shapes{mesh::HoleShape::circle, mesh::HoleShape::ellipse, mesh::HoleShape::slot,
                             mesh::HoleShape::rounded_rectangle};
 
@@ -122,26 +122,60 @@ std::string sample_of(const std::vector<std::string_view>& holes) {
   return fmt::format("\"{}\"", holes.empty() ? "hole 1" : holes.front());
 }
 
-PlateSizes read_plate(const Table& table) {
+PlateSizes read_plate(const Table& table, bool is_drawn) {
   constexpr std::array<std::string_view, 3> keys{"length", "width", "thickness"};
+  constexpr std::array<std::string_view, 1> drawn_keys{"thickness"};
   refuse_unknown(table, keys);
+  if (is_drawn) {
+    refuse_unfitting(table, "a plate with a drawn outline", keys, drawn_keys);
+    return {std::nullopt, std::nullopt, size(table, "thickness", "\"6 mm\"")};
+  }
   return {size(table, "length", "\"240 mm\""), size(table, "width", "\"60 mm\""),
           size(table, "thickness", "\"6 mm\"")};
 }
 
-std::vector<HoleReading> read_holes(const Table& document) {
-  std::vector<HoleReading> holes;
-  std::vector<Table> tables = tables_at(document, "hole");
-  if (tables.size() > most_holes) {
-    complain(tables[most_holes], fmt::format("there are {} holes", tables.size()),
-             fmt::format("a case has at most {}; leave the others out", most_holes));
-    tables.erase(tables.begin() + most_holes, tables.end());
+namespace {
+
+/// The holes that one table stands for.
+void expand(const Table& table, HoleReading one, Names& names, std::vector<HoleReading>& holes) {
+  const auto repeat = read_repeat(table, 2);
+  if (!repeat) one.hole.reset();
+  if (!repeat || !repeat->is_written) {
+    holes.push_back(std::move(one));
+    return;
   }
-  Names names;
-  for (const Table& table : tables) {
-    std::string name = unique_name(table, fmt::format("hole {}", holes.size() + 1), names);
+  const std::vector<mesh::Point> grid = places(*repeat);
+  for (std::size_t i = 0; i < grid.size() && holes.size() <= most_holes; ++i) {
+    HoleReading copy = one;
+    copy.name += fmt::format(" {}", i + 1);
+    if (!names.insert(copy.name).second)
+      complain(table, fmt::format("the name \"{}\" that follows from this one is taken", copy.name),
+               "choose another name");
+    if (copy.hole) {
+      copy.hole->name = copy.name;
+      copy.hole->centre += grid[i];
+    }
+    holes.push_back(std::move(copy));
+  }
+}
+
+}  // namespace
+
+std::vector<HoleReading> read_holes(const Table& document, Names& names) {
+  std::vector<HoleReading> holes;
+  const std::vector<Table> tables = tables_at(document, "hole");
+  for (std::size_t k = 0; k < tables.size(); ++k) {
+    const Table& table = tables[k];
+    if (holes.size() >= most_holes) {
+      complain(table,
+               tables.size() > most_holes ? fmt::format("there are {} holes", tables.size())
+                                          : fmt::format("there are more than {} holes", most_holes),
+               fmt::format("a case has at most {}; leave the others out", most_holes));
+      break;
+    }
+    std::string name = unique_name(table, fmt::format("hole {}", k + 1), names);
     auto hole = read_hole(table, name);
-    holes.push_back({std::move(name), std::move(hole), table.node->at});
+    expand(table, {std::move(name), std::move(hole), table.node->at, k + 1}, names, holes);
   }
   return holes;
 }

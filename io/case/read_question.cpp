@@ -61,16 +61,19 @@ std::vector<std::size_t> read_selection(const Table& table, std::string_view key
   return picked;
 }
 
-std::optional<Ask> read_result(const Table& table, const Words& holes, double tolerance, Names& names) {
-  constexpr std::array<std::string_view, 4> keys{"name", "of", "hole", "tolerance"};
+std::optional<Ask> read_result(const Table& table, const Words& holes, const Words& raisers, double tolerance,
+                               Names& names) {
+  constexpr std::array<std::string_view, 5> keys{"name", "of", "at", "hole", "tolerance"};
+  constexpr std::array<std::string_view, 2> places{"at", "hole"};
   refuse_unknown(table, keys);
   const auto of = choice(table, require(table, "of", "\"largest edge stress\""), quantity_words());
-  const auto hole = choice(table, require(table, "hole", sample_of(holes)), holes);
+  const Entry* place = require_one(table, places, sample_of(raisers));
+  const auto at = choice(table, place, place != nullptr && place->key == "hole" ? holes : raisers);
   const auto own_tolerance = read_tolerance(table, tolerance);
   require(table, "name", "\"peak at the bolt\"");
   const std::string name = unique_name(table, fmt::format("result {}", names.size() + 1), names);
-  if (!of || !hole || !own_tolerance) return std::nullopt;
-  return Ask{quantities[*of], *hole, *own_tolerance, name};
+  if (!of || !at || !own_tolerance) return std::nullopt;
+  return Ask{quantities[*of], *at, *own_tolerance, name};
 }
 
 }  // namespace
@@ -91,28 +94,31 @@ std::string_view word(Quantity quantity) {
   return "";
 }
 
-Question read_question(const Table& document, const Words& holes) {
-  constexpr std::array<std::string_view, 4> keys{"tolerance", "holes", "results", "result"};
+Question read_question(const Table& document, const Words& holes, const Words& raisers) {
+  constexpr std::array<std::string_view, 5> keys{"tolerance", "at", "holes", "results", "result"};
   static const Node nothing;
   const auto written = table_at(*document.node, "ask", *document.report);
   const Table table = written.value_or(Table{&nothing, "ask", "ask", document.report});
   refuse_unknown(table, keys);
   Question question;
   question.tolerance = read_tolerance(table, question.tolerance).value_or(question.tolerance);
-  const auto at = read_selection(table, "holes", holes);
+  const Entry* both = find(table, "at") == nullptr ? nullptr : find(table, "holes");
+  if (both != nullptr) complain(table, *both, "at and holes say the same", "keep at");
+  const bool by_holes = find(table, "holes") != nullptr && both == nullptr;
+  const auto at = by_holes ? read_selection(table, "holes", holes) : read_selection(table, "at", raisers);
   const auto of = read_selection(table, "results", quantity_words());
-  for (const std::size_t hole : at) {
+  for (const std::size_t raiser : at) {
     for (const std::size_t quantity : of) {
-      question.asks.push_back({quantities[quantity], hole, question.tolerance, ""});
+      question.asks.push_back({quantities[quantity], raiser, question.tolerance, ""});
     }
   }
   Names names;
   const auto singles = tables_at(table, "result");
   for (const Table& single : singles) {
-    const auto ask = read_result(single, holes, question.tolerance, names);
+    const auto ask = read_result(single, holes, raisers, question.tolerance, names);
     if (ask) question.asks.push_back(*ask);
   }
-  const bool nothing_asked = written && singles.empty() && (at.empty() || of.empty()) && !holes.empty();
+  const bool nothing_asked = written && singles.empty() && (at.empty() || of.empty()) && !raisers.empty();
   if (nothing_asked && document.report->faults.empty()) {
     complain(table, "nothing is asked for", "remove the empty list, or add an [[ask.result]]");
   }

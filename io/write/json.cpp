@@ -138,19 +138,33 @@ Json material(const Case& c) {
   return object;
 }
 
+Json outline(const mesh::Outline& o) {
+  Json raisers = Json::array();
+  for (const mesh::Raiser& raiser : o.raisers)
+    raisers.push_back({{"name", raiser.name},
+                       {"kind", mesh::word(raiser.kind)},
+                       {"shape", raiser.shape},
+                       {"root", position(raiser.root)},
+                       {"radius", quantity(raiser.radius, "mm")}});
+  return {{"edges", o.edges}, {"raisers", raisers}};
+}
+
 Json input(const Case& c) {
   const mesh::Plate& plate = c.problem.plate;
   Json holes = Json::array(), loads = Json::array();
   for (const mesh::Hole& h : plate.holes) holes.push_back(hole(h));
   for (const solver::Load& l : c.problem.loads) loads.push_back(load(l, plate));
-  return {{"plate",
-           {{"length", quantity(plate.length, "mm")},
-            {"width", quantity(plate.width, "mm")},
-            {"thickness", quantity(plate.thickness, "mm")}}},
-          {"material", material(c)},
-          {"holes", holes},
-          {"loads", loads},
-          {"written", c.written}};
+  Json object{{"plate",
+               {{"length", quantity(plate.length, "mm")},
+                {"width", quantity(plate.width, "mm")},
+                {"thickness", quantity(plate.thickness, "mm")}}}};
+  if (plate.outline) object["outline"] = outline(*plate.outline);
+  if (c.drawing_origin) object["drawing_origin"] = position(*c.drawing_origin);
+  object["material"] = material(c);
+  object["holes"] = holes;
+  object["loads"] = loads;
+  object["written"] = c.written;
+  return object;
 }
 
 Json asked(const Result& result) {
