@@ -46,6 +46,7 @@ enum class Reference {
   neuber_deep_tension,
   neuber_deep_bending,
   v_pair,
+  v_pair_deep,
   fillet_tension,
   fillet_bending,
   fillet_bending_power,
@@ -90,7 +91,8 @@ enum class Reference {
   williams,
   point_forces,
   gere_bars,
-  bhandari_bars
+  bhandari_bars,
+  elliptic_membrane
 };
 
 /// The range of one parameter that a solution is good for, ends included.

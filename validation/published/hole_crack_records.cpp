@@ -249,6 +249,17 @@ std::vector<Published> hole_crack_records() {
        "holes within 0.7 %, fillets 8 to 10 % low",
        1e-1,
        false},
+      {Reference::elliptic_membrane,
+       "NAFEMS LE1",
+       "NAFEMS, Standard Benchmark Tests for Linear Elastic Analysis, R0015 (1990), test LE1",
+       "elliptic membrane under outward pressure; sigma_yy at the end of the hole's long axis, MPa",
+       Basis::nominal,
+       {},
+       "three digits",
+       "to its digits",
+       6e-4,
+       true,
+       6e-4},
   };
 }
 
