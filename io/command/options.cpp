@@ -45,7 +45,8 @@ exit codes:
 )";
 
 constexpr const char* solve_help =
-    R"(usage: raiser solve CASE... [--out DIR] [--json] [--quiet] [--no-files] [--charts]
+    R"(usage: raiser solve CASE... [--out DIR] [--json] [--quiet] [--no-files]
+                    [--charts]
 
 Solves each case file. One case prints its table; several print one line each
 and end in one summary. A faulty case stops no other.
