@@ -84,11 +84,20 @@ Sizes read_circle(const Table& table) {
   return {diameter, diameter};
 }
 
+std::optional<double> read_corner_radius(const Table& table) {
+  const Entry* entry = require(table, "corner_radius", "\"4 mm\"");
+  const auto radius = quantity(table, entry, Dimension::length, Sign::any);
+  if (!radius || *radius > 0.0) return radius;
+  complain(
+      table, *entry, "this must be greater than zero",
+      "give the radius that the corner has, e.g. \"4 mm\": at a sharp corner the stress has no finite peak");
+  return std::nullopt;
+}
+
 Sizes read_sizes(const Table& table, mesh::HoleShape shape) {
   if (shape == mesh::HoleShape::circle) return read_circle(table);
   Sizes sizes{size(table, "length", "\"30 mm\""), size(table, "width", "\"12 mm\"")};
-  if (shape == mesh::HoleShape::rounded_rectangle)
-    sizes.corner_radius = size(table, "corner_radius", "\"4 mm\"");
+  if (shape == mesh::HoleShape::rounded_rectangle) sizes.corner_radius = read_corner_radius(table);
   return sizes;
 }
 
@@ -100,8 +109,8 @@ void check_sizes(const Table& table) {
 }
 
 std::optional<mesh::Hole> read_hole(const Table& table, const std::string& name) {
-  refuse_unknown(table, hole_keys);
   const auto shape = read_shape(table);
+  refuse_unknown(table, hole_keys, shape ? keys_of(*shape) : Keys(hole_keys));
   const auto centre = read_centre(table);
   if (!shape) {
     check_sizes(table);

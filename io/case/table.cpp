@@ -130,12 +130,17 @@ void complain(const Table& table, std::string what, std::string cure) {
 }
 
 void refuse_unknown(const Table& table, std::span<const std::string_view> known) {
+  refuse_unknown(table, known, known);
+}
+
+void refuse_unknown(const Table& table, std::span<const std::string_view> known,
+                    std::span<const std::string_view> offered) {
   for (const Entry& entry : table.node->entries) {
     if (std::find(known.begin(), known.end(), entry.key) != known.end()) continue;
-    const std::string_view close = nearest(entry.key, known);
+    const std::string_view close = nearest(entry.key, offered);
     const std::string hint = close.empty() ? "" : fmt::format("; the nearest known key is \"{}\"", close);
     add_fault(*table.report, entry.at, joined(table.label, shown(entry.key)), shown_value(entry.value),
-              fmt::format("unknown key{}", hint), fmt::format("the keys here are {}", list(known)));
+              fmt::format("unknown key{}", hint), fmt::format("the keys here are {}", list(offered)));
   }
 }
 

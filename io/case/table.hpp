@@ -38,6 +38,9 @@ void complain(const Table& table, std::string what, std::string cure);
 
 /// Faults for every key of the table that is not among the known ones.
 void refuse_unknown(const Table& table, std::span<const std::string_view> known);
+/// The same, naming as keys to use only those that are offered.
+void refuse_unknown(const Table& table, std::span<const std::string_view> known,
+                    std::span<const std::string_view> offered);
 
 /// Faults for keys that are known in this table but not for a `subject` such
 /// as "a slot", which takes the keys in `fitting`.

@@ -2,6 +2,7 @@
 
 #include <fmt/format.h>
 
+#include <algorithm>
 #include <map>
 #include <set>
 
@@ -19,6 +20,19 @@ std::string place(const std::filesystem::path& path) {
   std::filesystem::path found = std::filesystem::absolute(path, error);
   if (!error) found = std::filesystem::weakly_canonical(found, error);
   return error ? path.lexically_normal().string() : found.string();
+}
+
+void add_charts(const Result& result, const std::string& stem, Staging& staging) {
+  constexpr std::size_t most = 20;
+  const auto add = [&](const std::string& kind, std::size_t count, auto chart_of) {
+    for (std::size_t i = 0; i < std::min(count, most); ++i)
+      staging.add(fmt::format("{}-{}-{}.svg", stem, kind, i + 1),
+                  [&result, chart_of, i](const std::filesystem::path& file) {
+                    draw_chart_svg(chart_of(result, i), file);
+                  });
+  };
+  add("edge", result.solution.edges.size(), edge_chart);
+  add("ligament", result.solution.ligaments.size(), ligament_chart);
 }
 
 }  // namespace
@@ -69,7 +83,7 @@ std::vector<std::string> clashes(const std::vector<std::filesystem::path>& cases
 }
 
 std::vector<std::filesystem::path> write_results(const Result& result, const std::string& json_text,
-                                                 const Target& target) {
+                                                 const Target& target, bool charts) {
   Staging staging(target.folder);
   const std::string& stem = target.stem;
   staging.add(stem + ".vtu", vtu(cells_of(result.solution.field), result.provenance));
@@ -79,6 +93,7 @@ std::vector<std::filesystem::path> write_results(const Result& result, const std
   staging.add(stem + ".svg", [&](const std::filesystem::path& file) { draw_svg(picture, file); });
   staging.add(stem + "-edge.csv", edge_csv(result.input, result.solution));
   staging.add(stem + "-ligament.csv", ligament_csv(result.input, result.solution));
+  if (charts) add_charts(result, stem, staging);
   return staging.publish();
 }
 

@@ -32,8 +32,9 @@ std::vector<std::string> clashes(const std::vector<std::filesystem::path>& cases
                                  const std::filesystem::path& folder);
 
 /// Writes every result file of one case, all of them or none; `json_text` is
-/// json(result). Returns their paths. Throws WriteError.
+/// json(result); with `charts` also those of edges and ligaments. Returns their
+/// paths. Throws WriteError.
 std::vector<std::filesystem::path> write_results(const Result& result, const std::string& json_text,
-                                                 const Target& target);
+                                                 const Target& target, bool charts);
 
 }  // namespace raiser::io

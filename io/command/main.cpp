@@ -39,6 +39,9 @@ int main(int count, char** arguments) {
   raiser::solver::use_one_thread();
   const raiser::io::Terminal terminal{takes_colour(STDOUT_FILENO), ::isatty(STDERR_FILENO) == 1};
   const auto code = raiser::io::run({arguments + 1, arguments + count}, std::cout, std::cerr, terminal);
-  if (code == raiser::io::Exit::interrupted) std::_Exit(static_cast<int>(code));
+  if (code == raiser::io::Exit::interrupted || !raiser::solver::has_workspace()) {
+    std::cout.flush();
+    std::_Exit(static_cast<int>(code));
+  }
   return static_cast<int>(code);
 }

@@ -44,7 +44,9 @@ exit codes:
   130  interrupted
 )";
 
-constexpr const char* solve_help = R"(usage: raiser solve CASE... [--out DIR] [--json] [--quiet] [--no-files]
+constexpr const char* solve_help =
+    R"(usage: raiser solve CASE... [--out DIR] [--json] [--quiet] [--no-files]
+                    [--charts]
 
 Solves each case file. One case prints its table; several print one line each
 and end in one summary. A faulty case stops no other.
@@ -55,6 +57,9 @@ and end in one summary. A faulty case stops no other.
   --json       print one JSON document instead of the table
   --quiet      print no table and no remarks, only faults
   --no-files   write no result files
+  --charts     also draw the stress along the edge of each hole and along each
+               ligament: STEM-edge-1.svg, STEM-ligament-1.svg and so on, in the
+               order of the CSV files, of the first 20 holes and ligaments
 
 Results of STEM.toml: STEM.vtu (field), STEM.json (every number), STEM.png and
 STEM.svg (picture), STEM-edge.csv (stress along the holes), STEM-ligament.csv
@@ -157,6 +162,8 @@ std::variant<Options, Reply> parse(const std::vector<std::string>& arguments) {
   add_validate(validate, options);
   bool no_files = false;
   solve.add_flag("--no-files", no_files);
+  bool charts = false;
+  solve.add_flag("--charts", charts);
   for (CLI::App* command : {&solve, &validate}) {
     command->add_option("-o,--out", folder);
     command->add_flag("--json", options.json);
@@ -184,6 +191,8 @@ std::variant<Options, Reply> parse(const std::vector<std::string>& arguments) {
   if (validate.parsed()) options.command = Options::Command::validate;
   options.cases.assign(cases.begin(), cases.end());
   options.files = !no_files;
+  if (solve.parsed()) options.charts = charts;
+  if (charts && no_files) return usage_fault("--charts writes files and --no-files forbids them", app);
   if (has_folder) options.folder = folder;
   return options;
 }

@@ -21,8 +21,8 @@ struct Options {
   bool files = true;                  ///< write result files
   std::vector<std::string> families;  ///< of validate: their ids; empty for all
   bool quick = false;                 ///< of validate: the short run
-  bool charts = true;                 ///< of validate: draw a chart for each family
-  bool list = false;                  ///< of validate: name the families only
+  bool charts = true;  ///< of validate: a chart for each family; of solve: of edges and ligaments
+  bool list = false;   ///< of validate: name the families only
 };
 
 /// The command line is answered by a text: help, version, or what is wrong.

@@ -20,6 +20,7 @@
 #include "io/write/layout.hpp"
 #include "io/write/summary.hpp"
 #include "io/write/table.hpp"
+#include "solver/linear/threads.hpp"
 
 namespace raiser::io {
 namespace {
@@ -70,6 +71,7 @@ std::optional<solver::Solution> solve(const Case& input, const std::function<voi
   std::future<solver::Solution> future = promise.get_future();
   std::thread([problem = input.problem, asks = input.asks, promise = std::move(promise)]() mutable {
     try {
+      if (!solver::has_workspace()) throw std::bad_alloc();
       promise.set_value(solver::settle(problem, asks));
     } catch (...) {
       promise.set_exception(std::current_exception());
@@ -116,7 +118,7 @@ void finish(const Session& session, Run& run, Case input, solver::Solution solut
         table(result, {session.terminal.colour, session.options.files ? target.stem + ".json" : "--json"});
   }
   if (!session.options.files) return;
-  const auto written = write_results(result, run.json, target);
+  const auto written = write_results(result, run.json, target, session.options.charts);
   if (!several) tell_written(session, written);
 }
 

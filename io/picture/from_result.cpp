@@ -78,8 +78,7 @@ std::string loads_line(const Result& result) {
 void add_concentration(std::vector<std::string>& lines, const char* name,
                        const solver::Concentration& found) {
   if (found.kt)
-    lines.push_back(
-        fmt::format("{} {} on {}", name, amount(*found.kt, ""), together(brief(found.nominal, 5) + " MPa")));
+    lines.push_back(fmt::format("{} {} on {}", name, amount(*found.kt, ""), amount(found.nominal, "MPa")));
 }
 
 std::string constants_line(const solver::HookeLaw& law) {

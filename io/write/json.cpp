@@ -276,6 +276,20 @@ std::string text(const Json& object) { return object.dump(1, ' ', false, Json::e
 
 std::string json(const Result& result) { return text(document(result)) + "\n"; }
 
+namespace {
+
+/// Each line but the first moved to the right.
+std::string indented(std::string_view text, std::size_t blanks) {
+  std::string result;
+  for (const char c : text) {
+    result += c;
+    if (c == '\n') result.append(blanks, ' ');
+  }
+  return result;
+}
+
+}  // namespace
+
 std::string json_entry(const Outcome& outcome, const std::vector<std::string>& faults,
                        std::string_view result) {
   const Json head{{"case_file", outcome.case_file},
@@ -287,8 +301,8 @@ std::string json_entry(const Outcome& outcome, const std::vector<std::string>& f
   while (entry.back() == '\n') entry.pop_back();
   while (!result.empty() && result.back() == '\n') result.remove_suffix(1);
   entry += ",\n \"result\": ";
-  entry += result.empty() ? std::string_view("null") : result;
-  return entry + "\n}";
+  entry += result.empty() ? "null" : indented(result, 1);
+  return "  " + indented(entry + "\n}", 2);
 }
 
 std::string json_begin() {
@@ -301,6 +315,6 @@ std::string json_begin() {
 
 std::string_view json_between() { return ",\n"; }
 
-std::string_view json_end() { return "\n]}\n"; }
+std::string_view json_end() { return "\n ]\n}\n"; }
 
 }  // namespace raiser::io

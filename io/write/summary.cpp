@@ -13,7 +13,7 @@
 namespace raiser::io {
 namespace {
 
-constexpr std::size_t case_width = 22;
+constexpr std::size_t case_width = 16;
 constexpr std::size_t status_width = 12;
 
 // The end of a path tells cases apart better than its beginning.
@@ -33,7 +33,7 @@ const solver::RaiserFindings& worst(const Outcome& outcome) {
                            [](const auto& a, const auto& b) { return peak(a) < peak(b); });
 }
 
-std::string kt_text(const solver::Concentration& kt) { return kt.kt ? fitted_value(*kt.kt, 8) : "-"; }
+std::string kt_text(const solver::Concentration& kt) { return kt.kt ? fitted(*kt.kt, 15) : "-"; }
 
 // The names of the files, or their paths where two have the same name.
 std::vector<std::string> case_names(const std::vector<Outcome>& outcomes) {
@@ -55,9 +55,9 @@ std::string line(const Outcome& outcome, const std::string& name) {
   const solver::RaiserFindings& found = worst(outcome);
   const std::size_t index = static_cast<std::size_t>(&found - outcome.raisers.data());
   const bool upper = std::abs(found.largest.stress.value) >= std::abs(found.smallest.stress.value);
-  return fmt::format("{}{}{}{}{}\n", head, left(shortened(plain(outcome.raiser_names[index]), 11), 12),
-                     right(fitted(upper ? found.largest.stress : found.smallest.stress, 17), 17),
-                     right(kt_text(found.gross), 9), right(kt_text(found.net), 8));
+  return fmt::format("{}{}{}{}{}\n", head, left(shortened(plain(outcome.raiser_names[index]), 7), 8),
+                     right(fitted(upper ? found.largest.stress : found.smallest.stress, 14), 14),
+                     right(kt_text(found.gross), 15), right(kt_text(found.net), 15));
 }
 
 }  // namespace
@@ -77,7 +77,7 @@ std::string tally(const std::vector<Outcome>& outcomes) {
 std::string summary_table(const std::vector<Outcome>& outcomes) {
   std::string text =
       fmt::format("{}{}{}{}{}{}\n", left("case", case_width), left("status", status_width),
-                  left("worst at", 12), right("peak, MPa", 17), right("Kt gross", 9), right("net", 8));
+                  left("worst at", 8), right("peak, MPa", 14), right("Kt gross", 15), right("Kt net", 15));
   const std::vector<std::string> names = case_names(outcomes);
   for (std::size_t i = 0; i < outcomes.size(); ++i) text += line(outcomes[i], names[i]);
   return text + "\n" + wrapped(tally(outcomes));

@@ -59,15 +59,30 @@ double edge_radius(const mesh::Plate& plate, std::size_t raiser, const mesh::Poi
   return std::pow(a * a * sine * sine + b * b * cosine * cosine, 1.5) / (a * b);
 }
 
+// A place in less than `width` columns, with fewer decimals where it must be.
+std::string place_column(double value, double uncertainty, std::size_t width) {
+  std::string text = place_text(value, uncertainty);
+  while (columns(text) >= width && uncertainty < 1.0) text = place_text(value, uncertainty *= 10.0);
+  return right(columns(text) < width ? text : brief(value, 3), width);
+}
+
+// A bound in less than `width` columns, rounded up where it must be.
+std::string bound_column(const solver::Estimate& estimate, std::size_t width) {
+  const std::string text = bound_text(estimate);
+  if (columns(text) < width) return right(text, width);
+  const double scale = std::pow(10.0, std::floor(std::log10(estimate.bound)));
+  return right(fmt::format("{:.0e}", std::ceil(estimate.bound / scale) * scale), width);
+}
+
 std::string edge_line(std::string_view name, const solver::EdgeValue& value, const mesh::Plate& plate,
                       std::size_t raiser) {
   const double uncertain = place_uncertainty(value.stress) * edge_radius(plate, raiser, value.point);
   const double degree = 180.0 / std::numbers::pi;
   const double turn = uncertain / (value.point - mesh::raiser(plate, raiser).centre).norm();
-  return fmt::format("  {}{}{}{}{}{}\n", left(name, 22), right(value_text(value.stress), 12),
-                     right(bound_text(value.stress), 9), right(place_text(value.point.x(), uncertain), 11),
-                     right(place_text(value.point.y(), uncertain), 11),
-                     right(place_text(value.angle * degree, turn * degree), 11));
+  return fmt::format("  {}{}{}{}{}{}\n", left(name, 22), right(fitted_value(value.stress, 12), 12),
+                     bound_column(value.stress, 9), place_column(value.point.x(), uncertain, 11),
+                     place_column(value.point.y(), uncertain, 11),
+                     place_column(value.angle * degree, turn * degree, 11));
 }
 
 std::string concentration_line(std::string_view name, const solver::Concentration& kt) {
@@ -85,7 +100,39 @@ std::string section_line(const solver::Section& section) {
       fmt::format("  section {} = {} mm: ", across ? "x" : "y", brief(section.station)), 13);
 }
 
-std::string raiser_in_full(const mesh::Plate& plate, const solver::RaiserFindings& found) {
+// How many other places on the same edge the used mirror lines make of one.
+std::size_t images_on_edge(const Result& result, const solver::RaiserFindings& found,
+                           const solver::EdgeValue& value) {
+  const mesh::Point& at = value.point;
+  const solver::Problem& problem = result.input.problem;
+  mesh::Mirrors even = result.solution.mirrors_used;
+  for (const solver::UnitLoad& load : solver::unit_loads(problem.plate, problem.loads)) {
+    even.x = even.x && load.under_x == solver::UnitLoad::Parity::even;
+    even.y = even.y && load.under_y == solver::UnitLoad::Parity::even;
+  }
+  std::vector<mesh::Point> places{at};
+  const double apart = 2.0 * place_uncertainty(value.stress) * edge_radius(problem.plate, found.raiser, at);
+  for (const mesh::Mirrors mirror : {mesh::Mirrors{true, false}, {false, true}, {true, true}}) {
+    if ((mirror.x && !even.x) || (mirror.y && !even.y)) continue;
+    if (mesh::mirror_image(problem.plate, found.raiser, mirror) != found.raiser) continue;
+    const mesh::Point image(mirror.x ? -at.x() : at.x(), mirror.y ? -at.y() : at.y());
+    const auto same = [&](const mesh::Point& known) { return (known - image).norm() < apart; };
+    if (std::none_of(places.begin(), places.end(), same)) places.push_back(image);
+  }
+  return places.size() - 1;
+}
+
+std::string images_line(const Result& result, const solver::RaiserFindings& found) {
+  const bool upper = std::abs(found.largest.stress.value) >= std::abs(found.smallest.stress.value);
+  const std::size_t images = images_on_edge(result, found, upper ? found.largest : found.smallest);
+  if (images == 0) return "";
+  return fmt::format("  {}the same at {} mirror image{} of this place\n",
+                     left(upper ? "largest edge stress:" : "smallest edge stress:", 22), images,
+                     images == 1 ? "" : "s");
+}
+
+std::string raiser_in_full(const Result& result, const solver::RaiserFindings& found) {
+  const mesh::Plate& plate = result.input.problem.plate;
   const std::string name = phrase(mesh::raiser(plate, found.raiser));
   std::string text(1, '\n');
   text += wrapped(shape_text(plate, found.raiser),
@@ -95,25 +142,25 @@ std::string raiser_in_full(const mesh::Plate& plate, const solver::RaiserFinding
   text += edge_line("largest edge stress", found.largest, plate, found.raiser);
   text += edge_line("smallest edge stress", found.smallest, plate, found.raiser);
   text += edge_line("largest von Mises", found.von_mises, plate, found.raiser);
+  text += images_line(result, found);
   text += concentration_line("Kt gross", found.gross);
   text += concentration_line("Kt net  ", found.net);
   return text + section_line(found.section);
 }
 
-std::string kt_text(const solver::Concentration& kt) { return kt.kt ? fitted_value(*kt.kt, 8) : "-"; }
+std::string kt_text(const solver::Concentration& kt) { return kt.kt ? fitted(*kt.kt, 16) : "-"; }
 
 std::string raiser_line(const std::string& name, const solver::RaiserFindings& found) {
-  return fmt::format(
-      "  {}{}{}{}{}{}\n", left(shortened(plain(name), 12), 12), right(fitted(found.largest.stress, 17), 17),
-      right(fitted(found.smallest.stress, 17), 17), right(fitted(found.von_mises.stress, 16), 16),
-      right(kt_text(found.gross), 8), right(kt_text(found.net), 8));
+  return fmt::format("  {}{}{}{}{}\n", left(shortened(plain(name), 11), 12),
+                     right(fitted(found.largest.stress, 17), 17),
+                     right(fitted(found.smallest.stress, 17), 17), right(kt_text(found.gross), 16),
+                     right(kt_text(found.net), 16));
 }
 
 std::string raiser_lines_head(std::string_view title) {
-  return fmt::format("\n{}\n  {}{}{}{}{}{}\n", title, left("", 12), right("largest edge", 17),
-                     right("smallest edge", 17), right("von Mises", 16), right("Kt", 8), right("Kt", 8)) +
-         fmt::format("  {}{}{}{}{}{}\n", left("", 12), right("MPa", 17), right("MPa", 17), right("MPa", 16),
-                     right("gross", 8), right("net", 8));
+  return fmt::format("\n{}\n  {}{}{}{}{}\n", title, left("", 12), right("largest edge", 17),
+                     right("smallest edge", 17), right("Kt gross", 16), right("Kt net", 16)) +
+         fmt::format("  {}{}{}\n", left("", 12), right("MPa", 17), right("MPa", 17));
 }
 
 std::string comparison_lines(const validation::Comparison& line, const mesh::Plate& plate, bool name_load) {
@@ -140,7 +187,7 @@ std::string raisers_part(const Result& result, const std::string& rest) {
   const std::vector<std::size_t> order = worst_first(result.solution.combined);
   const std::size_t full = raisers.size() <= raisers_in_full ? raisers.size() : 1;
   std::string text;
-  for (std::size_t i = 0; i < full; ++i) text += raiser_in_full(plate, raisers[order[i]]);
+  for (std::size_t i = 0; i < full; ++i) text += raiser_in_full(result, raisers[order[i]]);
   if (full == raisers.size()) return text;
   const std::size_t shown = std::min(raisers.size(), table_holes);
   text += raiser_lines_head(fmt::format("The other {}, worst first", others));

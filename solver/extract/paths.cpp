@@ -90,7 +90,11 @@ double largest_bound(const std::vector<Eigen::VectorXd>& degrees, double size) {
   return largest;
 }
 
-std::string name_of(const mesh::Raiser& raiser) { return std::string(word(raiser.kind)) + " " + raiser.name; }
+/// "hole bolt", but "hole 1" for a hole of that name.
+std::string name_of(const mesh::Raiser& raiser) {
+  const std::string kind = std::string(word(raiser.kind)) + " ";
+  return raiser.name.starts_with(kind) ? raiser.name : kind + raiser.name;
+}
 
 std::string end_name(const Plate& plate, const Owner& owner) {
   if (owner.kind == Owner::Kind::raiser) return name_of(mesh::raiser(plate, owner.index));

@@ -166,6 +166,22 @@ class ExitCodes(Program):
         self.assertEqual(len(document["families"][0]["points"]), 5)
         self.assertIn("slot-infinite", self.run_it("validate", "--list").stdout)
 
+    def test_draws_charts_when_asked(self):
+        case = self.case("strap.toml", GOOD)
+        self.assertEqual(self.run_it("solve", "--charts", case).returncode, 0)
+        for name in ("edge-1", "ligament-1", "ligament-2"):
+            text = (self.folder / f"strap-{name}.svg").read_text()
+            self.assertIn("<svg", text)
+        self.assertEqual(self.run_it("solve", "--charts", "--no-files", case).returncode, 2)
+
+    @unittest.skipIf("sanitize" in str(PROGRAM), "sanitizers need more address space than that")
+    def test_ends_with_an_error_where_memory_is_short(self):
+        case = self.case("strap.toml", GOOD)
+        result = subprocess.run(["sh", "-c", 'ulimit -v 262144; exec "$0" solve "$1"', PROGRAM, case],
+                                cwd=self.folder, capture_output=True, text=True, timeout=60)
+        self.assertEqual(result.returncode, 5, result.stderr)
+        self.assertIn("not enough memory", result.stderr)
+
     def test_validate_names_every_unknown_family(self):
         result = self.run_it("validate", "slot-infinit", "nonsense", "--quick")
         self.expect(2, result)

@@ -179,7 +179,11 @@ TEST(Compare, ShearAndTheInfinitePlate) {
   large.holes = {circle(400)};
   rows = run(large);
   EXPECT_FALSE(rows[0].in_range);
-  EXPECT_NE(rows[0].range_note.find("about 64 %"), std::string::npos) << rows[0].range_note;  // 62 % in truth
+  EXPECT_NE(rows[0].range_note.find("far outside"), std::string::npos)
+      << rows[0].range_note;  // 62 % in truth
+  large.holes = {circle(200)};
+  rows = run(large);
+  EXPECT_NE(rows[0].range_note.find("about 16 %"), std::string::npos) << rows[0].range_note;
 }
 
 TEST(Compare, EllipseAlignedAndTurned) {
