@@ -22,4 +22,7 @@ inline Region polygon(const std::vector<Point>& points) {
   return region;
 }
 
+/// Which line of a polygon an owner is.
+inline std::size_t side_of(const Owner& owner) { return owner.hole; }
+
 }  // namespace raiser::mesh
