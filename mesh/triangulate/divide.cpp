@@ -109,7 +109,7 @@ bool share_corner(const Piece& piece, const Piece& other) {
 bool is_too_long(const Piece& piece, const Piece& other, const SizeRule& rule) {
   const Way between = way(piece, other);
   const bool at_corner = share_corner(piece, other);
-  if (between.length == 0.0) {
+  if (between.length <= 1e-9 * std::max(piece.length, other.length)) {  // they meet
     if (at_corner && !share_corner(other, piece)) return false;
     return piece.length > (piece.on_mirror() ? 2.0 : rule.neighbour) * other.length;
   }
