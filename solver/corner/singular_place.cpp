@@ -41,6 +41,22 @@ Fit fit(const mesh::Vertex& vertex, const Point& one, const Point& other) {
 
 }  // namespace
 
+Traction sum_of(const std::vector<UnitLoad>& loads) {
+  return [loads](const mesh::Owner& owner, const Point& x, const Point& n) -> Point {
+    Point sum = Point::Zero();
+    for (const UnitLoad& load : loads) sum += load.traction(owner, x, n);
+    return sum;
+  };
+}
+
+bool is_near_growth(const std::vector<SingularPlace>& places, const Point& x) {
+  constexpr double share = 0.2;
+  return std::any_of(places.begin(), places.end(), [&](const SingularPlace& place) {
+    const mesh::Vertex& vertex = place.site.vertex;
+    return place.kind != SingularPlace::Kind::jump && (x - vertex.at).norm() < share * vertex.reach;
+  });
+}
+
 std::vector<SingularPlace> singular_places(const mesh::Region& region, const Hold& hold,
                                            const Traction& traction, const HookeLaw& material) {
   std::vector<SingularPlace> places;

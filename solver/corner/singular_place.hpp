@@ -25,6 +25,13 @@ struct SingularPlace {
 /// How each edge is held.
 using Hold = std::function<WedgeEdge(const mesh::Owner&)>;
 
+/// The sum of all loads.
+Traction sum_of(const std::vector<UnitLoad>& loads);
+
+/// Whether x lies so near to a corner or a held edge's end that the stress there
+/// is that place's growth more than anything else.
+bool is_near_growth(const std::vector<SingularPlace>& places, const Point& x);
+
 /// Every place of a region's boundary where the stress has no single value, from
 /// geometry, supports and the sum of all tractions: corners whose wedge has a
 /// singular field (those within mesh::least_corner of straight do not count),
