@@ -200,12 +200,12 @@ Json owner(const mesh::Owner& o, const mesh::Plate& plate) {
   return {{std::string(mesh::word(at.kind)), at.name}};
 }
 
-std::string_view words(solver::WedgeMode::Symmetry symmetry) {
+std::string_view name_of(solver::WedgeMode::Symmetry symmetry) {
   if (symmetry == solver::WedgeMode::Symmetry::none) return "none";
   return symmetry == solver::WedgeMode::Symmetry::symmetric ? "symmetric" : "antisymmetric";
 }
 
-std::string_view words(solver::SingularPlace::Kind kind) {
+std::string_view name_of(solver::SingularPlace::Kind kind) {
   if (kind == solver::SingularPlace::Kind::jump) return "jump of traction";
   return kind == solver::SingularPlace::Kind::corner ? "corner" : "end of a held edge";
 }
@@ -217,14 +217,14 @@ Json places(const Result& result) {
     for (const solver::SingularField& field : place.fields) {
       const double e = field.exponent.real();
       fields.push_back(
-          {{"symmetry", words(field.symmetry)},
+          {{"symmetry", name_of(field.symmetry)},
            {"exponent", quantity(e, "1")},
            {"exponent_imaginary", quantity(field.exponent.imag(), "1")},
            {"exponent_measured", field.measured ? quantity(*field.measured, "1") : Json(nullptr)},
            {"intensity", quantity(field.intensity, fmt::format("MPa mm^{:.6g}", 1 - e))},
            {"phase", quantity(field.phase, "rad")}});
     }
-    list.push_back({{"kind", words(place.kind)},
+    list.push_back({{"kind", name_of(place.kind)},
                     {"at", position(place.point)},
                     {"angle", quantity(place.angle * degrees_per_radian, "deg")},
                     {"before", owner(place.arrives, result.input.problem.plate)},
