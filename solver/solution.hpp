@@ -8,6 +8,7 @@
 #include "mesh/plate/plate.hpp"
 #include "mesh/plate/section.hpp"
 #include "solver/crack/tip_scan.hpp"
+#include "solver/corner/place_findings.hpp"
 #include "solver/elasticity/hooke_law.hpp"
 #include "solver/elasticity/load.hpp"
 #include "solver/extract/estimate.hpp"
@@ -122,7 +123,8 @@ struct PlateChecks {
   double far_recovered = 0.0;         ///< MPa, mean sigma_xx there, integrated from the solution
   double far_scatter = 0.0;  ///< largest departure of sigma_xx from the linear nominal distribution there,
                              ///< over the largest nominal stress
-  double outer_von_mises = 0.0;       ///< MPa, the largest on the plate's own edges under all loads; no bound
+  double outer_von_mises = 0.0;  ///< MPa, the largest on the plate's own edges under all loads, away from
+                                 ///< places without a peak; no bound
   Point outer_point = Point::Zero();  ///< mm, where
   double strain_energy = 0.0;         ///< N mm
   double external_work = 0.0;         ///< N mm, half the work of the loads
@@ -174,6 +176,7 @@ struct Solution {
   std::vector<std::vector<EdgeSample>> edges;  ///< by raiser, under all loads
   std::vector<Ligament> ligaments;             ///< under all loads
   std::vector<CrackOpening> openings;          ///< by crack, under all loads
+  std::vector<PlaceFindings> places;           ///< where no peak stress exists, under all loads
   Field field;                                 ///< under all loads, over the whole plate
 };
 

@@ -1,5 +1,7 @@
 #include "io/write/json.hpp"
 
+#include <fmt/format.h>
+
 #include <cmath>
 #include <nlohmann/json.hpp>
 #include <numbers>
@@ -206,6 +208,49 @@ Json published(const Result& result) {
   return list;
 }
 
+Json owner(const mesh::Owner& o, const mesh::Plate& plate) {
+  if (o.kind == mesh::Owner::Kind::edge) return {{"edge", mesh::edge_names(plate).at(o.index)}};
+  const mesh::Raiser at = mesh::raiser(plate, o.index);
+  return {{std::string(mesh::word(at.kind)), at.name}};
+}
+
+std::string_view name_of(solver::WedgeMode::Symmetry symmetry) {
+  if (symmetry == solver::WedgeMode::Symmetry::none) return "none";
+  return symmetry == solver::WedgeMode::Symmetry::symmetric ? "symmetric" : "antisymmetric";
+}
+
+std::string_view name_of(solver::SingularPlace::Kind kind) {
+  if (kind == solver::SingularPlace::Kind::jump) return "jump of traction";
+  return kind == solver::SingularPlace::Kind::corner ? "corner" : "end of a held edge";
+}
+
+Json places(const Result& result) {
+  Json list = Json::array();
+  for (const solver::PlaceFindings& place : result.solution.places) {
+    Json fields = Json::array();
+    for (const solver::SingularField& field : place.fields) {
+      const double e = field.exponent.real();
+      fields.push_back(
+          {{"symmetry", name_of(field.symmetry)},
+           {"exponent", quantity(e, "1")},
+           {"exponent_imaginary", quantity(field.exponent.imag(), "1")},
+           {"exponent_measured", field.measured ? quantity(*field.measured, "1") : Json(nullptr)},
+           {"intensity", quantity(field.intensity, fmt::format("MPa mm^{:.6g}", 1 - e))},
+           {"phase", quantity(field.phase, "rad")}});
+    }
+    list.push_back({{"kind", name_of(place.kind)},
+                    {"at", position(place.point)},
+                    {"angle", quantity(place.angle * degrees_per_radian, "deg")},
+                    {"before", owner(place.arrives, result.input.problem.plate)},
+                    {"after", owner(place.leaves, result.input.problem.plate)},
+                    {"fields", fields},
+                    {"what", place.what},
+                    {"why", place.why},
+                    {"what_to_do", place.cure}});
+  }
+  return list;
+}
+
 Json checks(const solver::PlateChecks& c) {
   return {{"equilibrium_residual", quantity(c.equilibrium_residual, "1")},
           {"reaction", quantity(c.reaction, "1")},
@@ -257,6 +302,7 @@ Json document(const Result& result) {
           {"asked", asked(result)},
           {"results", loads},
           {"published", published(result)},
+          {"places_without_peak", places(result)},
           {"checks", checks(solution.checks)},
           {"discretisation",
            {{"degree", solution.degree},

@@ -142,6 +142,7 @@ std::string table(const Result& result, const TableStyle& style) {
   text += asked_lines(result);
   text += raisers_part(result, style.rest);
   text += loads_part(result);
+  text += places_part(result);
   text += published_part(result, style.rest);
   text += checks_part(result);
   text += "\n";

@@ -18,6 +18,9 @@ std::string loads_part(const Result& result);
 /// Published values beside the answers.
 std::string published_part(const Result& result, const std::string& rest);
 
+/// The places where no peak stress exists: what is reported instead, and why.
+std::string places_part(const Result& result);
+
 /// Checks on the whole plate and how it was computed.
 std::string checks_part(const Result& result);
 

@@ -125,8 +125,10 @@ double far_station(const Plate& plate) {
 }
 
 /// The largest von Mises stress on the plate's own edges, so that a stress
-/// above those on the raisers does not go unsaid.
-void check_outer_edges(const Model& model, const Displacements& displacements, PlateChecks& checks) {
+/// above those on the raisers does not go unsaid. Where it grows without limit,
+/// there is none.
+void check_outer_edges(const Model& model, const Displacements& displacements,
+                       const std::vector<SingularPlace>& places, PlateChecks& checks) {
   const EdgeProbe probe(model, displacements.degree, search_points(),
                         sides_at_search_points(displacements.degree));
   for (const mesh::BoundarySide& side : model.mesh().boundary()) {
@@ -141,8 +143,10 @@ void check_outer_edges(const Model& model, const Displacements& displacements, P
         const double size = von_mises({tangential, normal, stress.shear.row(q).dot(weight),
                                        model.material().through_thickness(tangential, normal)});
         if (size <= checks.outer_von_mises) continue;
+        const Point at = image.apply(side.curve.at(side.parameter(search_points()[q])));
+        if (is_near_growth(places, at)) continue;
         checks.outer_von_mises = size;
-        checks.outer_point = image.apply(side.curve.at(side.parameter(search_points()[q])));
+        checks.outer_point = at;
       }
     }
   }
@@ -170,7 +174,8 @@ void check_far_field(const Problem& problem, Solution& solution) {
 
 }  // namespace
 
-Solution report(const Problem& problem, const DegreeSequence& sequence) {
+Solution report(const Problem& problem, const DegreeSequence& sequence,
+                const std::vector<SingularPlace>& places) {
   const Model& model = sequence.model();
   const Displacements& last = sequence.displacements().back();
   Solution solution;
@@ -189,6 +194,7 @@ Solution report(const Problem& problem, const DegreeSequence& sequence) {
   std::vector<Section> sections;
   for (const RaiserFindings& found : solution.combined.raisers) sections.push_back(found.section);
   solution.ligaments = ligaments(problem.plate, sections, fields);
+  solution.places = place_findings(places, fields, problem.material);
   solution.field = std::move(fields.back());
   solution.openings = crack_openings(model, problem.plate, last);
 
@@ -197,7 +203,7 @@ Solution report(const Problem& problem, const DegreeSequence& sequence) {
   solution.checks.reaction = balance.reaction;
   solution.checks.strain_energy = balance.strain_energy;
   solution.checks.external_work = balance.external_work;
-  check_outer_edges(model, last, solution.checks);
+  check_outer_edges(model, last, places, solution.checks);
   check_far_field(problem, solution);
   return solution;
 }

@@ -5,8 +5,10 @@
 
 namespace raiser::solver {
 
-/// Everything a solution says, from a sequence of at least one degree. Status,
+/// Everything a solution says, from a sequence of at least one degree and the
+/// plate's singular places. Status,
 /// reason, levels and seconds are left to the caller.
-Solution report(const Problem& problem, const DegreeSequence& sequence);
+Solution report(const Problem& problem, const DegreeSequence& sequence,
+                const std::vector<SingularPlace>& places);
 
 }  // namespace raiser::solver

@@ -55,9 +55,18 @@ double least_tolerance(const std::vector<Ask>& asks) {
   return least;
 }
 
-/// The first mesh for a tolerance, before anything is solved.
-mesh::SizeRule first_rule(const Plate& plate, double tolerance) {
+/// Every place of the plate where no peak stress exists.
+std::vector<SingularPlace> singular_places(const Problem& problem, const std::vector<UnitLoad>& loads) {
+  const auto free = [](const mesh::Owner&) { return WedgeEdge::free; };
+  return singular_places(mesh::trace(problem.plate), free, sum_of(loads), problem.material);
+}
+
+/// The first mesh for a tolerance, before anything is solved. Singular places
+/// that geometry alone does not show are handed on, those of mirror images too.
+mesh::SizeRule first_rule(const Plate& plate, double tolerance, const std::vector<SingularPlace>& places) {
   mesh::SizeRule rule;
+  for (const SingularPlace& place : places)
+    if (place.kind != SingularPlace::Kind::corner) rule.singular.push_back(place.site.vertex.at);
   if (tolerance < 5e-5) rule.turn *= 0.8;
   if (tolerance < 1e-5) {
     rule.growth = 0.7;
@@ -144,7 +153,8 @@ Solution settle(const Problem& problem, const std::vector<Ask>& asks) {
   const mesh::Mirrors mirrors = usable_mirrors(problem, loads);
   const mesh::Region region = mesh::cut(mesh::trace(problem.plate), mirrors);
   const double tolerance = least_tolerance(asks);
-  mesh::SizeRule rule = first_rule(problem.plate, tolerance);
+  const std::vector<SingularPlace> places = singular_places(problem, loads);
+  mesh::SizeRule rule = first_rule(problem.plate, tolerance, places);
   std::vector<Level> levels;
   for (int refinement = 0;; ++refinement) {
     const Model model(mesh::triangulate(region, rule), mirrors, problem.material, problem.plate.thickness,
@@ -153,7 +163,7 @@ Solution settle(const Problem& problem, const std::vector<Ask>& asks) {
     const double worst = raise_degree(sequence, asks, tolerance, refinement, start, levels);
     const bool is_settled = worst <= 1.0;
     if (is_settled || refinement == most_refinements) {
-      Solution solution = report(problem, sequence);
+      Solution solution = report(problem, sequence, places);
       solution.status = is_settled ? Solution::Status::settled : Solution::Status::not_met;
       if (!is_settled) solution.reason = reason_for(sequence, problem.plate, asks);
       solution.levels = std::move(levels);

@@ -25,8 +25,8 @@ class Polar {
     double r, theta;
     Point e_r, e_t;
   };
-  Place place(const Point& x) const {
-    const Point arm = x - at_;
+  Place place(const Point& x) const { return place_of_arm(x - at_); }
+  Place place_of_arm(const Point& arm) const {
     const double r = arm.norm();
     const Point e_r = arm / r;
     const double theta = std::remainder(std::atan2(arm.y(), arm.x()) - bisector_, 2 * std::numbers::pi);
@@ -111,6 +111,13 @@ double leaving(const mesh::Curve& curve, bool starts, const Point& at, double ra
   return inside;
 }
 
+/// The way from one parameter of a curve to another, exact to rounding however short.
+Point arm(const mesh::Curve& curve, double from, double change) {
+  if (curve.kind == mesh::Curve::Kind::line) return change * curve.u;
+  const double chord = 2 * std::sin(change / 2);
+  return chord * (std::cos(from + change / 2) * curve.v - std::sin(from + change / 2) * curve.u);
+}
+
 /// The integral of weight (t u* - t* u) along one edge within the disc; t* is
 /// zero on a straight one.
 void add_edge(const Field& field, const CornerSite& site, int edge, const Polar& polar, const Weight& weight,
@@ -125,9 +132,10 @@ void add_edge(const Field& field, const CornerSite& site, int edge, const Polar&
   const mesh::GaussRule rule = mesh::gauss_legendre(40);
   for (std::size_t q = 0; q < rule.points.size(); ++q) {
     const double s = (1 + rule.points[q]) / 2;
-    const double parameter = from + (to - from) * std::pow(s, power);
+    const double change = (to - from) * std::pow(s, power);
+    const double parameter = from + change;
     const Point x = curve.at(parameter);
-    const Polar::Place p = polar.place(x);
+    const Polar::Place p = polar.place_of_arm(arm(curve, from, change));
     if (!(p.r > 0)) continue;
     const Point along = (curve.derivative(parameter) * (curve.end > curve.begin ? 1.0 : -1.0)).normalized();
     const Point outward(along.y(), -along.x());
