@@ -31,8 +31,11 @@ std::vector<Point> lattice(int n) {
 }  // namespace
 
 Mesh::Mesh(std::vector<Point> points, std::vector<Triangle> triangles, std::vector<BoundarySide> boundary,
-           int geometry_degree)
-    : points_(std::move(points)), triangles_(std::move(triangles)), boundary_(std::move(boundary)) {
+           int geometry_degree, std::vector<TipFan> fans)
+    : points_(std::move(points)),
+      triangles_(std::move(triangles)),
+      boundary_(std::move(boundary)),
+      fans_(std::move(fans)) {
   if (geometry_degree < 0) throw std::invalid_argument("Mesh: the geometry degree must not be negative");
   number_edges();
   std::vector<std::vector<const BoundarySide*>> curved(triangles_.size());

@@ -20,6 +20,17 @@ struct BoundarySide {
   double parameter(double s) const { return (curve.begin * (1 - s) + curve.end * (1 + s)) / 2; }
 };
 
+/// Rings of straight triangles about a crack tip, graded geometrically into it;
+/// half a disc where the crack lies on a mirror line.
+struct TipFan {
+  std::size_t tip = 0;  ///< index into tips(Plate::cracks)
+  Point at = Point::Zero();
+  Point direction = Point::UnitX();  ///< unit vector out of the crack
+  bool is_half = false;
+  std::vector<double> radii;            ///< mm, of the rings' outer corners; falling
+  std::vector<std::vector<int>> rings;  ///< triangles of each ring; the last holds those at the tip
+};
+
 /// Position and Jacobian of the map from the reference triangle
 /// (r, s >= 0, r + s <= 1) to the plate at one point.
 struct MapPoint {
@@ -48,11 +59,13 @@ class Mesh {
   /// 1, straight), or `exact`. Throws std::invalid_argument when the
   /// triangles are not a conforming mesh bounded by the given sides.
   Mesh(std::vector<Point> points, std::vector<Triangle> triangles, std::vector<BoundarySide> boundary,
-       int geometry_degree = exact);
+       int geometry_degree = exact, std::vector<TipFan> fans = {});
 
   const std::vector<Point>& points() const { return points_; }
   const std::vector<Triangle>& triangles() const { return triangles_; }
   const std::vector<BoundarySide>& boundary() const { return boundary_; }
+  /// One for each crack tip in the meshed part of the plate.
+  const std::vector<TipFan>& fans() const { return fans_; }
 
   /// Edges as pairs of vertices, the smaller first.
   const std::vector<std::array<int, 2>>& edges() const { return edges_; }
@@ -64,7 +77,7 @@ class Mesh {
   MapPoint map(int triangle, const Point& reference) const;
 
   /// The same mesh with other boundary curves' degree.
-  Mesh with_geometry_degree(int degree) const { return {points_, triangles_, boundary_, degree}; }
+  Mesh with_geometry_degree(int degree) const { return {points_, triangles_, boundary_, degree, fans_}; }
 
  private:
   friend class MapTable;
@@ -82,6 +95,7 @@ class Mesh {
   std::vector<Point> points_;
   std::vector<Triangle> triangles_;
   std::vector<BoundarySide> boundary_;
+  std::vector<TipFan> fans_;
   std::vector<std::array<int, 2>> edges_;
   std::vector<std::array<int, 3>> triangle_edges_;
   std::vector<int> first_bubble_;  ///< by triangle, into bubbles_; one more at the end

@@ -7,6 +7,7 @@
 
 #include "mesh/plate/plate.hpp"
 #include "mesh/plate/section.hpp"
+#include "solver/crack/tip_scan.hpp"
 #include "solver/elasticity/hooke_law.hpp"
 #include "solver/elasticity/load.hpp"
 #include "solver/extract/estimate.hpp"
@@ -22,12 +23,15 @@ struct Problem {
   std::vector<Load> loads;
 };
 
-/// One asked number and its tolerance, relative to the largest magnitude of
-/// edge stress on that raiser under all loads together. `raiser` is an index
-/// into mesh::raisers(plate), the holes first.
+/// One asked number and its tolerance. At a raiser it is relative to the largest
+/// magnitude of edge stress there under all loads together. At a crack tip,
+/// `stress_intensity` means both K_I and K_II, relative to sqrt(K_I^2 + K_II^2),
+/// and T is relative to that over sqrt(pi a), a being the crack's length, or half
+/// of it when both its ends are tips; no less than 1 % of what T and the other
+/// tips' K would give there, so that a tip without stress has a tolerance, too.
 struct Ask {
   Quantity quantity = Quantity::largest_edge_stress;
-  std::size_t raiser = 0;
+  std::size_t raiser = 0;  ///< index into mesh::raisers(plate), the holes first; of a tip into mesh::tips()
   double tolerance = 1e-3;
   std::string name;  ///< the user's, may be empty
 };
@@ -76,10 +80,26 @@ struct RaiserFindings {
   Concentration net;
 };
 
+/// What was found at one crack tip under one load (or all together). Signs as
+/// in TipValues.
+struct TipFindings {
+  std::size_t tip = 0;      ///< index into mesh::tips()
+  Estimate k_one;           ///< K_I, MPa sqrt(mm)
+  Estimate k_two;           ///< K_II, MPa sqrt(mm)
+  Estimate t_stress;        ///< MPa
+  Estimate energy_release;  ///< N/mm, from K_I and K_II
+  double j_integral = 0.0;  ///< N/mm, by the domain J integral
+  double extension = 0.0;   ///< N/mm, by a virtual extension of the crack
+  std::vector<Eigen::Vector3d>
+      domains;                       ///< K_I, K_II and T from each domain; the first is the one given above
+  std::optional<double> kink_angle;  ///< rad, as kink_angle() gives it
+};
+
 /// One load by itself, or all together.
 struct LoadFindings {
   std::string name;  ///< the load's name, "all loads" for the combination
   std::vector<RaiserFindings> raisers;
+  std::vector<TipFindings> tips = {};
 };
 
 /// One step of the sequence that the bounds stand on.
@@ -153,6 +173,7 @@ struct Solution {
 
   std::vector<std::vector<EdgeSample>> edges;  ///< by raiser, under all loads
   std::vector<Ligament> ligaments;             ///< under all loads
+  std::vector<CrackOpening> openings;          ///< by crack, under all loads
   Field field;                                 ///< under all loads, over the whole plate
 };
 

@@ -95,4 +95,27 @@ std::vector<double> extremes(const Curve& curve, int axis) {
   return inside(curve, {phase, phase + std::numbers::pi}, true);
 }
 
+Nearest nearest(const Curve& curve, const Point& x) {
+  const double low = std::min(curve.begin, curve.end);
+  const double high = std::max(curve.begin, curve.end);
+  if (curve.kind == Curve::Kind::line) {
+    const double t = std::clamp((x - curve.centre).dot(curve.u) / curve.u.squaredNorm(), low, high);
+    return {t, (curve.at(t) - x).norm()};
+  }
+  const int samples = 8 + static_cast<int>(16 * (high - low));
+  double best = low;
+  for (int k = 1; k <= samples; ++k) {
+    const double t = low + k * (high - low) / samples;
+    if ((curve.at(t) - x).squaredNorm() < (curve.at(best) - x).squaredNorm()) best = t;
+  }
+  for (int step = 0; step < 8; ++step) {  // Newton on half the squared distance
+    const Point away = curve.at(best) - x;
+    const Point slope = curve.derivative(best);
+    const double curvature = slope.squaredNorm() + away.dot(curve.centre - curve.at(best));
+    if (curvature <= 0.0) break;
+    best = std::clamp(best - away.dot(slope) / curvature, low, high);
+  }
+  return {best, (curve.at(best) - x).norm()};
+}
+
 }  // namespace raiser::mesh

@@ -13,8 +13,9 @@ using Point = Eigen::Vector2d;
 /// Which part of the plate a curve, and later an element edge, belongs to.
 struct Owner {
   /// edge: one of edge_names(). raiser: one of raisers(). crack: a crack's
-  /// face. mirror_x, mirror_y: no boundary, the line of a mirror.
-  enum class Kind { edge, raiser, crack, mirror_x, mirror_y };
+  /// face. mirror_x, mirror_y: no boundary, the line of a mirror. inner: no
+  /// boundary, a line through the material.
+  enum class Kind { edge, raiser, crack, mirror_x, mirror_y, inner };
   Kind kind = Kind::edge;
   std::size_t index = 0;  ///< into the list of that kind
   bool operator==(const Owner&) const = default;
@@ -59,6 +60,13 @@ Curve part(const Curve& curve, double begin, double end);
 /// The curve reflected about x = 0 (flip_x) and y = 0 (flip_y) and, where that
 /// turns the material to its right, run the other way.
 Curve reflected(const Curve& curve, bool flip_x, bool flip_y);
+
+/// Where a curve comes closest to a point.
+struct Nearest {
+  double parameter = 0.0;
+  double distance = 0.0;  ///< mm
+};
+Nearest nearest(const Curve& curve, const Point& x);
 
 /// The parameters strictly inside the curve where its coordinate `axis`
 /// (0: x, 1: y) is `value`, in the curve's direction.

@@ -9,6 +9,7 @@
 #include <map>
 #include <numbers>
 
+#include "mesh/plate/crack_faults.hpp"
 #include "mesh/plate/distance.hpp"
 #include "mesh/plate/outline_faults.hpp"
 
@@ -300,6 +301,7 @@ std::vector<PlateFault> faults(const Plate& plate) {
   }
   check_names(plate, result);
   check_pairs(plate, sound, result);
+  if (result.empty()) result = crack_faults(plate);
   return result;
 }
 

@@ -6,6 +6,7 @@
 #include <string_view>
 #include <vector>
 
+#include "mesh/plate/crack.hpp"
 #include "mesh/plate/outline.hpp"
 
 namespace raiser::mesh {
@@ -26,8 +27,8 @@ struct Hole {
   double angle = 0.0;  ///< rad, from the plate's x axis to the hole's first axis
 };
 
-/// A plate of one thickness with holes: a rectangle, or what `outline` says.
-/// Lengths in mm.
+/// A plate of one thickness with holes and cracks: a rectangle, or what `outline`
+/// says. Lengths in mm.
 struct Plate {
   double length = 0.0;  ///< of the bounding box, along x
   double width = 0.0;   ///< of the bounding box, along y
@@ -35,6 +36,7 @@ struct Plate {
   std::vector<Hole> holes;
   /// The outline, its bounding box centred at the origin; none for the rectangle.
   std::optional<Outline> outline = std::nullopt;
+  std::vector<Crack> cracks = {};
 };
 
 /// The plate's outline, also where it is the rectangle.
@@ -55,19 +57,22 @@ Raiser raiser(const Plate& plate, std::size_t index);
 std::string_view word(HoleShape shape);
 
 /// Something that makes a plate illegal. `hole` and `other` are indices into
-/// Plate::holes, or `none`.
+/// Plate::holes, `crack` one into Plate::cracks, or `none`.
 struct PlateFault {
   static constexpr std::size_t none = static_cast<std::size_t>(-1);
   std::size_t hole = none;
   std::size_t other = none;
-  std::string what;  ///< what is wrong, with the figures
-  std::string cure;  ///< what to do about it
+  std::string what;          ///< what is wrong, with the figures
+  std::string cure;          ///< what to do about it
+  std::size_t crack = none;  ///< index into Plate::cracks
 };
 
 /// Every reason why the plate cannot be analysed: sizes that are not positive
 /// or not finite, a hole outside, touching or crossing the outline, holes that
 /// overlap, touch or lie inside one another, ligaments, corners and roots too
-/// small beside the rest to resolve, a plate longer than 2,000 times its width.
+/// small beside the rest to resolve, a plate longer than 2,000 times its width,
+/// a crack that leaves the plate, meets a hole, another crack or itself, or
+/// whose mouth lies on no edge.
 /// Empty for a legal plate.
 std::vector<PlateFault> faults(const Plate& plate);
 

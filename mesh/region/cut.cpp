@@ -43,9 +43,45 @@ void split(const Loop& loop, int axis, std::vector<Loop>& whole, std::vector<Cha
   }
 }
 
+/// A crack that lies along the mirror line, from `low` to `high` on it.
+struct OnAxis {
+  std::size_t crack;
+  double low, high;
+};
+
+/// Appends the straight line along the axis between two points, divided where
+/// cracks begin and end on it.
+void append_line(const Point& from, const Point& to, int axis, Owner owner, const std::vector<OnAxis>& cracks,
+                 Loop& loop) {
+  const double a = from[1 - axis];
+  const double b = to[1 - axis];
+  std::vector<double> stops = {a, b};
+  const double margin = 1e-9 * std::abs(b - a);
+  for (const OnAxis& crack : cracks)
+    for (const double end : {crack.low, crack.high})
+      if (end > std::min(a, b) + margin && end < std::max(a, b) - margin) stops.push_back(end);
+  std::sort(stops.begin(), stops.end());
+  if (b < a) std::reverse(stops.begin(), stops.end());
+  Point begin = from;
+  for (std::size_t k = 1; k < stops.size(); ++k) {
+    Point end = to;
+    if (k + 1 < stops.size()) {
+      end[axis] = 0.0;
+      end[1 - axis] = stops[k];
+    }
+    const double middle = (stops[k - 1] + stops[k]) / 2;
+    Owner own = owner;
+    for (const OnAxis& crack : cracks)
+      if (middle > crack.low && middle < crack.high) own = {Owner::Kind::crack, crack.crack};
+    loop.push_back({Curve::Kind::line, begin, end - begin, Point::Zero(), 0.0, 1.0, own});
+    begin = end;
+  }
+}
+
 /// Joins chains into loops by straight lines along the axis: between the
 /// sorted ends, every other interval is material.
-std::vector<Loop> join(const std::vector<Chain>& chains, int axis, Owner owner) {
+std::vector<Loop> join(const std::vector<Chain>& chains, int axis, Owner owner,
+                       const std::vector<OnAxis>& cracks) {
   struct End {
     double position;
     std::size_t chain;
@@ -72,11 +108,61 @@ std::vector<Loop> join(const std::vector<Chain>& chains, int axis, Owner owner) 
     for (std::size_t i = first; !used[i]; i = next[i]) {
       used[i] = true;
       loop.insert(loop.end(), chains[i].curves.begin(), chains[i].curves.end());
-      loop.push_back(line(chains[i].finish(), chains[next[i]].start(), owner));
+      append_line(chains[i].finish(), chains[next[i]].start(), axis, owner, cracks, loop);
     }
     loops.push_back(std::move(loop));
   }
   return loops;
+}
+
+/// The part of a slit on the positive side: chains whose cut ends lie on the axis.
+void clip(const Slit& slit, int axis, double touch, std::vector<Slit>& out) {
+  Slit part{slit.crack, {}};
+  const auto finish = [&] {
+    if (part.points.size() > 1) out.push_back(part);
+    part.points.clear();
+  };
+  for (std::size_t k = 0; k < slit.points.size(); ++k) {
+    const Point& p = slit.points[k];
+    if (k > 0) {
+      const Point& before = slit.points[k - 1];
+      if ((before[axis] > touch && p[axis] < -touch) || (before[axis] < -touch && p[axis] > touch)) {
+        Point crossing = before + before[axis] / (before[axis] - p[axis]) * (p - before);
+        crossing[axis] = 0.0;
+        part.points.push_back(crossing);
+        if (p[axis] < 0.0) finish();
+      }
+    }
+    if (p[axis] >= -touch) part.points.push_back(p);
+    const bool leaves = p[axis] <= touch && k > 0;
+    if (leaves) finish();
+    if (leaves && p[axis] >= -touch) part.points.push_back(p);
+  }
+  finish();
+}
+
+/// Cuts slits and tips, and gives the cracks that lie on the axis.
+std::vector<OnAxis> cut_cracks(const Region& region, int axis, double touch, Region& result) {
+  std::vector<OnAxis> on_axis;
+  for (const Slit& slit : region.slits) {
+    const auto is_on = [&](const Point& p) { return std::abs(p[axis]) <= touch; };
+    if (std::all_of(slit.points.begin(), slit.points.end(), is_on)) {
+      const auto [low, high] = std::minmax(slit.points.front()[1 - axis], slit.points.back()[1 - axis]);
+      on_axis.push_back({slit.crack, low, high});
+    } else {
+      clip(slit, axis, touch, result.slits);
+    }
+  }
+  for (RegionTip tip : region.tips) {
+    if (tip.at[axis] < -touch) continue;
+    if (std::abs(tip.at[axis]) <= touch) {
+      tip.on_mirror = true;
+      tip.at[axis] = 0.0;
+      tip.direction[axis] = 0.0;
+    }
+    result.tips.push_back(tip);
+  }
+  return on_axis;
 }
 
 Region cut_at_zero(const Region& region, int axis, Owner owner) {
@@ -85,8 +171,16 @@ Region cut_at_zero(const Region& region, int axis, Owner owner) {
   for (const Loop& loop : region.loops) split(loop, axis, whole, chains);
   // Loops wholly on the negative side leave no chain; those on the positive
   // side are holes, since the outline always crosses the mirror line.
-  Region result{join(chains, axis, owner)};
+  Region result;
+  double size = 0.0;
+  for (const Chain& chain : chains) size = std::max(size, chain.start().cwiseAbs().maxCoeff());
+  const double touch = 1e-11 * size;
+  const std::vector<OnAxis> on_axis = cut_cracks(region, axis, touch, result);
+  result.loops = join(chains, axis, owner, on_axis);
   result.loops.insert(result.loops.end(), whole.begin(), whole.end());
+  for (Slit& slit : result.slits)
+    for (Point* end : {&slit.points.front(), &slit.points.back()})
+      if (std::abs((*end)[axis]) <= touch) divide_at(result.loops, *end);
   return result;
 }
 

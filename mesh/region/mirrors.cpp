@@ -10,6 +10,8 @@ namespace {
 
 constexpr auto unmapped = static_cast<std::size_t>(-1);
 
+double coincidence(const Plate& plate) { return 1e-12 * std::max(plate.length, plate.width); }
+
 Point reflect(Point p, Mirrors mirror) {
   if (mirror.x) p.x() = -p.x();
   if (mirror.y) p.y() = -p.y();
@@ -30,7 +32,7 @@ bool same_shape(const Hole& a, const Hole& b, double angle_of_a, double toleranc
 }
 
 std::optional<std::size_t> find_image(const Plate& plate, std::size_t hole, Mirrors mirror) {
-  const double tolerance = 1e-12 * std::max(plate.length, plate.width);
+  const double tolerance = coincidence(plate);
   const Hole& original = plate.holes[hole];
   const Point centre = reflect(original.centre, mirror);
   const double angle = mirror.x != mirror.y ? -original.angle : original.angle;
@@ -91,11 +93,40 @@ bool map_outline(const Outline& outline, std::size_t holes, Mirrors mirror, doub
   return true;
 }
 
+/// Whether the chains are the same, both run from their first point or, for
+/// cracks without a mouth, one of them backwards.
+std::optional<bool> is_image(const Plate& plate, const Crack& a, const Crack& b, Mirrors mirror) {
+  if (a.points.size() != b.points.size() || a.has_mouth != b.has_mouth) return std::nullopt;
+  const std::size_t n = a.points.size();
+  bool same = true;
+  bool reversed = !a.has_mouth;
+  for (std::size_t k = 0; k < n; ++k) {
+    const Point image = reflect(a.points[k], mirror);
+    const auto fits = [&](const Point& p) { return (p - image).norm() <= coincidence(plate); };
+    same = same && fits(b.points[k]);
+    reversed = reversed && fits(b.points[n - 1 - k]);
+  }
+  if (!same && !reversed) return std::nullopt;
+  return !same;
+}
+
+struct CrackImage {
+  std::size_t crack;
+  bool is_reversed;
+};
+std::optional<CrackImage> find_crack_image(const Plate& plate, std::size_t crack, Mirrors mirror) {
+  for (std::size_t i = 0; i < plate.cracks.size(); ++i)
+    if (const auto reversed = is_image(plate, plate.cracks[crack], plate.cracks[i], mirror))
+      return CrackImage{i, *reversed};
+  return std::nullopt;
+}
+
 }  // namespace
 
 Owner MirrorImage::of(const Owner& owner) const {
   if (owner.kind == Owner::Kind::raiser) return {owner.kind, raisers.at(owner.index)};
   if (owner.kind == Owner::Kind::edge) return {owner.kind, edges.at(owner.index)};
+  if (owner.kind == Owner::Kind::crack) return {owner.kind, cracks.at(owner.index)};
   return owner;
 }
 
@@ -105,6 +136,11 @@ std::optional<MirrorImage> mirror_image(const Plate& plate, Mirrors mirror) {
     const auto hole = find_image(plate, i, mirror);
     if (!hole) return std::nullopt;
     image.raisers.push_back(*hole);
+  }
+  for (std::size_t i = 0; i < plate.cracks.size(); ++i) {
+    const auto crack = find_crack_image(plate, i, mirror);
+    if (!crack) return std::nullopt;
+    image.cracks.push_back(crack->crack);
   }
   const double tolerance = 1e-11 * std::max(plate.length, plate.width);
   if (!map_outline(outline_of(plate), plate.holes.size(), mirror, tolerance, image)) return std::nullopt;
@@ -119,6 +155,20 @@ Mirrors mirrors(const Plate& plate) {
 std::size_t mirror_image(const Plate& plate, std::size_t raiser, Mirrors mirror) {
   if (const auto image = mirror_image(plate, mirror)) return image->raisers.at(raiser);
   throw std::invalid_argument("mirror_image: the plate does not have that mirror line");
+}
+
+std::size_t mirror_image_of_crack(const Plate& plate, std::size_t crack, Mirrors mirror) {
+  if (const auto image = find_crack_image(plate, crack, mirror)) return image->crack;
+  throw std::invalid_argument("mirror_image_of_crack: the plate does not have that mirror line");
+}
+
+std::size_t mirror_image_of_tip(const Plate& plate, std::size_t tip, Mirrors mirror) {
+  const std::vector<CrackTip> all = tips(plate.cracks);
+  const auto image = find_crack_image(plate, all.at(tip).crack, mirror);
+  if (!image) throw std::invalid_argument("mirror_image_of_tip: the plate does not have that mirror line");
+  for (std::size_t t = 0; t < all.size(); ++t)
+    if (all[t].crack == image->crack && all[t].at_end == (all[tip].at_end != image->is_reversed)) return t;
+  throw std::logic_error("mirror_image_of_tip: the image crack lacks that tip");
 }
 
 }  // namespace raiser::mesh

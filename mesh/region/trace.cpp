@@ -1,4 +1,6 @@
+#include <algorithm>
 #include <cmath>
+#include <limits>
 #include <numbers>
 
 #include "mesh/region/region.hpp"
@@ -63,12 +65,71 @@ Loop trace_outline(const Plate& plate) {
   return loop;
 }
 
+/// Nothing but the tip's own end segment lies nearer to it than this.
+double reach(const Region& region, const std::vector<Crack>& cracks, const CrackTip& tip) {
+  const auto& own = cracks[tip.crack].points;
+  const std::size_t segment = tip.at_end ? own.size() - 2 : 0;
+  const bool is_whole = own.size() == 2 && !cracks[tip.crack].has_mouth;
+  double least = (own[segment + 1] - own[segment]).norm() * (is_whole ? 0.5 : 1.0);
+  for (const Loop& loop : region.loops)
+    for (const Curve& curve : loop) least = std::min(least, nearest(curve, tip.at).distance);
+  for (std::size_t c = 0; c < cracks.size(); ++c)
+    for (std::size_t k = 0; k + 1 < cracks[c].points.size(); ++k) {
+      if (c == tip.crack && k == segment) continue;
+      const Point from = cracks[c].points[k];
+      const Curve line{Curve::Kind::line, from, cracks[c].points[k + 1] - from, Point::Zero(), 0.0, 1.0, {}};
+      // A facing tip needs as much room as this one.
+      const bool has_tip = (k == 0 && !cracks[c].has_mouth) || k + 2 == cracks[c].points.size();
+      least = std::min(least, nearest(line, tip.at).distance * (has_tip && c != tip.crack ? 0.5 : 1.0));
+    }
+  return least;
+}
+
+void insert_cracks(Region& region, std::vector<Crack> cracks) {
+  for (std::size_t c = 0; c < cracks.size(); ++c) {
+    if (cracks[c].has_mouth) divide_at(region.loops, cracks[c].points.front());
+    region.slits.push_back({c, cracks[c].points});
+  }
+  const std::vector<CrackTip> all = tips(cracks);
+  for (std::size_t t = 0; t < all.size(); ++t)
+    region.tips.push_back({t, all[t].at, all[t].direction, false, reach(region, cracks, all[t])});
+}
+
 }  // namespace
+
+void divide_at(std::vector<Loop>& loops, Point& end) {
+  std::size_t best_loop = 0;
+  std::size_t best_curve = 0;
+  Nearest best{0.0, std::numeric_limits<double>::infinity()};
+  for (std::size_t l = 0; l < loops.size(); ++l)
+    for (std::size_t k = 0; k < loops[l].size(); ++k)
+      if (const Nearest found = nearest(loops[l][k], end); found.distance < best.distance) {
+        best = found;
+        best_loop = l;
+        best_curve = k;
+      }
+  Loop& loop = loops[best_loop];
+  Curve& curve = loop[best_curve];
+  const double share = (best.parameter - curve.begin) / (curve.end - curve.begin);
+  constexpr double joint = 1e-9;
+  if (share < joint) {
+    end = curve.at(curve.begin);
+  } else if (share > 1 - joint) {
+    const Curve& next = loop[(best_curve + 1) % loop.size()];
+    end = next.at(next.begin);
+  } else {
+    end = curve.at(best.parameter);
+    Curve rest = curve;
+    curve.end = rest.begin = best.parameter;
+    loop.insert(loop.begin() + static_cast<std::ptrdiff_t>(best_curve) + 1, rest);
+  }
+}
 
 Region trace(const Plate& plate) {
   Region region;
   region.loops.push_back(trace_outline(plate));
   for (std::size_t i = 0; i < plate.holes.size(); ++i) region.loops.push_back(trace_hole(plate.holes[i], i));
+  insert_cracks(region, plate.cracks);
   return region;
 }
 

@@ -3,6 +3,7 @@
 #include <numbers>
 
 #include "mesh/region/vertex.hpp"
+#include "mesh/triangulate/fan.hpp"
 #include "mesh/triangulate/size_rule.hpp"
 
 namespace raiser::mesh {
@@ -31,15 +32,23 @@ struct Piece {
   double length;
   std::size_t loop;
   Sharp sharp;
+  bool is_slit;  ///< material on both sides
 
-  Piece(const Curve& c, std::size_t l, const Sharp& corners = {})
-      : curve(c), from(c.at(c.begin)), to(c.at(c.end)), loop(l), sharp(corners) {
+  Piece(const Curve& c, std::size_t l, const Sharp& corners = {}, bool slit = false)
+      : curve(c), from(c.at(c.begin)), to(c.at(c.end)), loop(l), sharp(corners), is_slit(slit) {
     const Point chord = to - from;
     length = chord.norm();
     inward = Point(-chord.y(), chord.x()) / length;
   }
   bool on_mirror() const {
     return curve.owner.kind == Owner::Kind::mirror_x || curve.owner.kind == Owner::Kind::mirror_y;
+  }
+  /// Sides of fans are given.
+  bool is_fixed() const { return curve.owner.kind == Owner::Kind::inner; }
+  bool faces(const Point& direction) const {
+    constexpr double facing = 0.1;
+    const double share = direction.dot(inward);
+    return is_slit ? std::abs(share) >= facing : share >= facing;
   }
 };
 
@@ -103,28 +112,55 @@ bool share_corner(const Piece& piece, const Piece& other) {
   return shared(piece.sharp.begin) || shared(piece.sharp.end);
 }
 
+/// Mouths of slits. Pieces there face each other across a wedge, not across a
+/// ligament.
+std::vector<Point> mouths(const Region& region, const std::vector<Fan>& fans) {
+  std::vector<Point> result;
+  for (const Slit& slit : region.slits)
+    for (const Point& end : {slit.points.front(), slit.points.back()})
+      if (std::none_of(fans.begin(), fans.end(), [&](const Fan& fan) { return fan.outer.front() == end; }))
+        result.push_back(end);
+  return result;
+}
+
+double distance(const Piece& piece, const Point& x) { return (nearest_on(piece, x) - x).norm(); }
+
+/// Whether the gap between two pieces is the opening of a wedge, on the scale of
+/// their distance from its corner: there a triangle's side may be as long as
+/// that distance.
+bool spans_wedge(const Piece& piece, const Piece& other, double gap, const std::vector<Point>& corners) {
+  return std::any_of(corners.begin(), corners.end(), [&](const Point& corner) {
+    const double near = distance(piece, corner);
+    if (near > 6 * gap || distance(other, corner) > 6 * gap) return false;
+    return near < 1e-9 * piece.length || piece.length <= 2 * near;
+  });
+}
+
 /// Whether `piece` is too long beside `other`. Pieces of boundary limit each
 /// other across the material between them. A mirror line lies inside the
-/// material: it limits as half a ligament and is graded like the triangles.
-bool is_too_long(const Piece& piece, const Piece& other, const SizeRule& rule) {
+/// material: it limits as half a ligament and is graded like the triangles. So
+/// is a slit.
+bool is_too_long(const Piece& piece, const Piece& other, const SizeRule& rule,
+                 const std::vector<Point>& corners) {
+  if (piece.is_fixed()) return false;
   const Way between = way(piece, other);
   const bool at_corner = share_corner(piece, other);
-  if (between.length == 0.0) {
+  if (between.length <= 1e-9 * std::max(piece.length, other.length)) {  // they meet
     if (at_corner && !share_corner(other, piece)) return false;
     return piece.length > (piece.on_mirror() ? 2.0 : rule.neighbour) * other.length;
   }
   if (at_corner) return false;
-  if (piece.on_mirror() && piece.length > 2.0 * other.length + rule.growth * between.length) return true;
-  constexpr double facing = 0.1;
-  if (between.direction.dot(piece.inward) < facing || -between.direction.dot(other.inward) < facing)
-    return false;
+  if ((piece.on_mirror() || piece.is_slit) &&
+      piece.length > 2.0 * other.length + rule.growth * between.length)
+    return true;
+  if (!piece.faces(between.direction) || !other.faces(-between.direction)) return false;
   if (piece.on_mirror() && other.on_mirror()) return false;
   const double gap = (piece.on_mirror() || other.on_mirror() ? 2.0 : 1.0) * between.length;
-  return piece.length > rule.ligament * gap;
+  return piece.length > rule.ligament * gap && !spans_wedge(piece, other, between.length, corners);
 }
 
 /// Splits in halves every piece that is too long, once. Returns whether any was.
-bool split_pass(std::vector<Piece>& pieces, const SizeRule& rule) {
+bool split_pass(std::vector<Piece>& pieces, const SizeRule& rule, const std::vector<Point>& corners) {
   std::vector<std::size_t> order(pieces.size());
   std::vector<double> low(pieces.size());
   double longest = 0.0;
@@ -148,7 +184,7 @@ bool split_pass(std::vector<Piece>& pieces, const SizeRule& rule) {
       if (*at == i || std::max(other.from.y(), other.to.y()) < y_low ||
           std::min(other.from.y(), other.to.y()) > y_high)
         continue;
-      split[i] = is_too_long(pieces[i], other, rule);
+      split[i] = is_too_long(pieces[i], other, rule, corners);
     }
   }
   std::vector<Piece> result;
@@ -159,9 +195,9 @@ bool split_pass(std::vector<Piece>& pieces, const SizeRule& rule) {
       continue;
     }
     const auto [first, second] = split_at(pieces[i].curve, 0.5);
-    result.emplace_back(first, pieces[i].loop, pieces[i].sharp);
+    result.emplace_back(first, pieces[i].loop, pieces[i].sharp, pieces[i].is_slit);
     result.back().sharp.touches_end = false;
-    result.emplace_back(second, pieces[i].loop, pieces[i].sharp);
+    result.emplace_back(second, pieces[i].loop, pieces[i].sharp, pieces[i].is_slit);
     result.back().sharp.touches_begin = false;
   }
   const bool any = result.size() != pieces.size();
@@ -172,7 +208,7 @@ bool split_pass(std::vector<Piece>& pieces, const SizeRule& rule) {
 /// The smaller radius of curvature where two curves meet smoothly, if it jumps
 /// there. Across a mirror line the curve meets its own image: no jump.
 double radius_at_jump(const Piece& a, const Piece& b) {
-  if (a.on_mirror() || b.on_mirror()) return 0.0;
+  if (a.on_mirror() || b.on_mirror() || a.is_fixed() || b.is_fixed()) return 0.0;
   const double ra = a.curve.radius_of_curvature(a.curve.end);
   const double rb = b.curve.radius_of_curvature(b.curve.begin);
   const double smaller = std::min(ra, rb);
@@ -181,6 +217,7 @@ double radius_at_jump(const Piece& a, const Piece& b) {
 
 /// Whether stress is singular, or asked to be taken as such, where two pieces meet.
 bool is_singular(const Piece& a, const Piece& b, const SizeRule& rule) {
+  if (a.is_fixed() || b.is_fixed()) return false;
   double angle = angle_between(a.curve, b.curve);
   if (a.on_mirror() || b.on_mirror()) angle *= 2;  // with its mirror image
   if (angle > std::numbers::pi + least_corner && !(a.on_mirror() && b.on_mirror())) return true;
@@ -203,8 +240,8 @@ void grade(const Piece& piece, double before, double after, const SizeRule& rule
   const double enough = std::sqrt(rule.joint_growth);
   if (before > 0 && after > 0 && piece.length > std::min(before, after) * enough) {
     const auto [first, second] = split_at(piece.curve, 0.5);
-    grade(Piece(first, piece.loop), before, 0, rule, out);
-    grade(Piece(second, piece.loop), 0, after, rule, out);
+    grade(Piece(first, piece.loop, {}, piece.is_slit), before, 0, rule, out);
+    grade(Piece(second, piece.loop, {}, piece.is_slit), 0, after, rule, out);
     return;
   }
   const double near = std::max(before, after);
@@ -214,8 +251,8 @@ void grade(const Piece& piece, double before, double after, const SizeRule& rule
   }
   const double fraction = 1.0 / rule.joint_growth;
   const auto [first, second] = split_at(piece.curve, before > 0 ? fraction : 1 - fraction);
-  grade(Piece(first, piece.loop), before, 0, rule, out);
-  grade(Piece(second, piece.loop), 0, after, rule, out);
+  grade(Piece(first, piece.loop, {}, piece.is_slit), before, 0, rule, out);
+  grade(Piece(second, piece.loop, {}, piece.is_slit), 0, after, rule, out);
 }
 
 DividedLoop grade_joints(const std::vector<Piece>& loop, const SizeRule& rule) {
@@ -243,20 +280,55 @@ void divide_loop(const Loop& loop, std::size_t index, const SizeRule& rule, int&
   }
 }
 
+/// A kink in a crack is a re-entrant corner on one face: sides shrink towards it.
+DividedLoop grade_kinks(const std::vector<Piece>& slit, const SizeRule& rule) {
+  constexpr double share = 0.01;  // of the shorter side beside the kink
+  DividedLoop result;
+  const auto size_at = [&](std::size_t i) {
+    if (i == 0 || i == slit.size()) return 0.0;
+    const Point a = slit[i - 1].to - slit[i - 1].from;
+    const Point b = slit[i].to - slit[i].from;
+    const bool is_kink = std::abs(a.x() * b.y() - a.y() * b.x()) > 1e-6 * a.norm() * b.norm();
+    return is_kink ? share * std::min(slit[i - 1].length, slit[i].length) : 0.0;
+  };
+  for (std::size_t i = 0; i < slit.size(); ++i) grade(slit[i], size_at(i), size_at(i + 1), rule, result);
+  return result;
+}
+
 }  // namespace
 
-std::vector<DividedLoop> divide(const Region& region, const SizeRule& rule) {
+Division divide(const Region& whole, const SizeRule& rule) {
+  Division result;
+  Region region = whole;
+  result.fans = take_out_fans(region, rule);
   std::vector<Piece> pieces;
   int corners = 0;
   for (std::size_t l = 0; l < region.loops.size(); ++l)
     divide_loop(region.loops[l], l, rule, corners, pieces);
-  while (split_pass(pieces, rule)) {
+  const std::size_t loops = region.loops.size();
+  for (std::size_t i = 0; i < region.slits.size(); ++i) {
+    const Slit& slit = region.slits[i];
+    for (std::size_t k = 1; k < slit.points.size(); ++k)
+      pieces.emplace_back(Curve{Curve::Kind::line,
+                                slit.points[k - 1],
+                                slit.points[k] - slit.points[k - 1],
+                                Point::Zero(),
+                                0.0,
+                                1.0,
+                                {Owner::Kind::crack, slit.crack}},
+                          loops + i, Sharp{}, true);
   }
-  std::vector<std::vector<Piece>> loops(region.loops.size());
-  for (const Piece& piece : pieces) loops[piece.loop].push_back(piece);
-  std::vector<DividedLoop> divided;
-  for (const auto& loop : loops) divided.push_back(grade_joints(loop, rule));
-  return divided;
+  const std::vector<Point> wedges = mouths(region, result.fans);
+  while (split_pass(pieces, rule, wedges)) {
+  }
+  std::vector<std::vector<Piece>> chains(loops + region.slits.size());
+  for (const Piece& piece : pieces) chains[piece.loop].push_back(piece);
+  for (std::size_t i = 0; i < chains.size(); ++i)
+    if (i < loops)
+      result.loops.push_back(grade_joints(chains[i], rule));
+    else
+      result.slits.push_back(grade_kinks(chains[i], rule));
+  return result;
 }
 
 }  // namespace raiser::mesh

@@ -7,15 +7,19 @@
 
 namespace raiser::mesh {
 
-SizeField::SizeField(const std::vector<DividedLoop>& loops, double growth) : growth_(growth) {
+SizeField::SizeField(const Division& division, double growth, double crack_growth)
+    : growth_(std::max(growth, crack_growth)) {
   Eigen::AlignedBox2d box;
-  for (const DividedLoop& loop : loops)
-    for (const Curve& piece : loop) {
-      const Point from = piece.at(piece.begin);
-      const Point to = piece.at(piece.end);
-      sources_.push_back({(from + to) / 2, (to - from).norm()});
-      box.extend(from);
-    }
+  for (const auto* chains : {&division.loops, &division.slits})
+    for (const DividedLoop& chain : *chains)
+      for (const Curve& piece : chain) {
+        const Point from = piece.at(piece.begin);
+        const Point to = piece.at(piece.end);
+        const bool at_crack =
+            piece.owner.kind == Owner::Kind::inner || piece.owner.kind == Owner::Kind::crack;
+        sources_.push_back({(from + to) / 2, (to - from).norm(), at_crack ? crack_growth : growth});
+        box.extend(from);
+      }
   origin_ = box.min();
   const Point extent = box.sizes();
   const double cells = std::clamp(static_cast<double>(sources_.size()) / 4, 1.0, 4000.0);
@@ -25,7 +29,7 @@ SizeField::SizeField(const std::vector<DividedLoop>& loops, double growth) : gro
 }
 
 double SizeField::size_from(const Source& source, const Point& x) const {
-  return source.length + growth_ * std::max(0.0, (x - source.middle).norm() - source.length / 2);
+  return source.length + source.growth * std::max(0.0, (x - source.middle).norm() - source.length / 2);
 }
 
 const std::vector<int>& SizeField::relevant(std::size_t cell) {

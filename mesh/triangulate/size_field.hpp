@@ -10,18 +10,19 @@ namespace raiser::mesh {
 /// pieces, of the piece's length plus growth times the distance to it.
 class SizeField {
  public:
-  SizeField(const std::vector<DividedLoop>& loops, double growth);
+  SizeField(const Division& division, double growth, double crack_growth);
   double at(const Point& x);
 
  private:
   struct Source {
     Point middle;
     double length;
+    double growth;
   };
   double size_from(const Source& source, const Point& x) const;
   const std::vector<int>& relevant(std::size_t cell);
 
-  double growth_;
+  double growth_;  ///< the largest
   std::vector<Source> sources_;
   Point origin_;
   double cell_size_ = 1.0;

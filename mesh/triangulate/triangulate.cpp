@@ -9,6 +9,7 @@
 #include <stdexcept>
 #include <string>
 
+#include "mesh/triangulate/fan.hpp"
 #include "mesh/triangulate/size_field.hpp"
 
 namespace raiser::mesh {
@@ -23,37 +24,77 @@ void start_gmsh() {
     gmsh::option::setNumber("General.NumThreads", 1);
     gmsh::option::setNumber("Mesh.MeshSizeExtendFromBoundary", 0);
     gmsh::option::setNumber("Mesh.MeshSizeFromPoints", 0);
-    gmsh::option::setNumber("Mesh.Algorithm", 6);
     gmsh::option::setNumber("Mesh.LcIntegrationPrecision", 1e-4);
     return true;
   }();
   static_cast<void>(started);
 }
 
-/// The polygon through the divided boundary as a Gmsh model, one line a piece.
-/// Returns the points; point i has the tag i + 1.
-std::vector<Point> build_model(const std::vector<DividedLoop>& loops) {
-  gmsh::model::add("plate");
+/// The divided boundary as Gmsh is given it: a straight line a piece. Point i
+/// of the model has the tag i + 1; the loops' points come first, in order.
+struct Polygon {
   std::vector<Point> points;
+  std::vector<std::vector<int>> slits;  ///< points along each slit
+  std::vector<std::vector<int>> fans;   ///< points at each fan's outer corners
+
+  explicit Polygon(const Division& division) {
+    std::map<std::pair<double, double>, int> known;
+    const auto number = [&](const Point& p) {
+      const auto [at, is_new] = known.try_emplace({p.x(), p.y()}, static_cast<int>(points.size()));
+      if (is_new) points.push_back(p);
+      return at->second;
+    };
+    for (const DividedLoop& loop : division.loops)
+      for (const Curve& piece : loop) {
+        const Point from = piece.at(piece.begin);
+        known[{from.x(), from.y()}] = static_cast<int>(points.size());
+        points.push_back(from);
+      }
+    const std::size_t on_loops = points.size();
+    const auto place = [&](const Point& p) {  // rounding apart, an end lies on a loop's point
+      int best = 0;
+      for (std::size_t i = 0; i < on_loops; ++i)
+        if ((points[i] - p).squaredNorm() < (points[best] - p).squaredNorm()) best = static_cast<int>(i);
+      return best;
+    };
+    for (const auto& slit : division.slits) {
+      std::vector<int> along = {place(slit.front().at(slit.front().begin))};
+      for (std::size_t k = 1; k < slit.size(); ++k) along.push_back(number(slit[k].at(slit[k].begin)));
+      along.push_back(place(slit.back().at(slit.back().end)));
+      slits.push_back(std::move(along));
+    }
+    for (const Fan& fan : division.fans) {
+      fans.emplace_back();
+      for (const Point& corner : fan.outer) fans.back().push_back(place(corner));
+    }
+  }
+};
+
+void build_model(const Division& division, const Polygon& polygon) {
+  gmsh::model::add("plate");
+  for (std::size_t i = 0; i < polygon.points.size(); ++i)
+    gmsh::model::geo::addPoint(polygon.points[i].x(), polygon.points[i].y(), 0.0, 0.0,
+                               static_cast<int>(i) + 1);
+  const auto add_line = [](int from, int to) {
+    const int line = gmsh::model::geo::addLine(from + 1, to + 1);
+    gmsh::model::geo::mesh::setTransfiniteCurve(line, 2);
+    return line;
+  };
   std::vector<int> loop_tags;
-  for (const DividedLoop& loop : loops) {
-    const int first = static_cast<int>(points.size()) + 1;
+  int first = 0;
+  for (const DividedLoop& loop : division.loops) {
     const int count = static_cast<int>(loop.size());
     std::vector<int> lines;
-    for (const Curve& piece : loop) {
-      points.push_back(piece.at(piece.begin));
-      gmsh::model::geo::addPoint(points.back().x(), points.back().y(), 0.0, 0.0,
-                                 static_cast<int>(points.size()));
-    }
-    for (int k = 0; k < count; ++k) {
-      lines.push_back(gmsh::model::geo::addLine(first + k, first + (k + 1) % count, first + k));
-      gmsh::model::geo::mesh::setTransfiniteCurve(lines.back(), 2);
-    }
+    for (int k = 0; k < count; ++k) lines.push_back(add_line(first + k, first + (k + 1) % count));
     loop_tags.push_back(gmsh::model::geo::addCurveLoop(lines));
+    first += count;
   }
   gmsh::model::geo::addPlaneSurface(loop_tags, 1);
+  std::vector<int> inside;
+  for (const auto& slit : polygon.slits)
+    for (std::size_t k = 1; k < slit.size(); ++k) inside.push_back(add_line(slit[k - 1], slit[k]));
   gmsh::model::geo::synchronize();
-  return points;
+  if (!inside.empty()) gmsh::model::mesh::embed(1, inside, 2, 1);
 }
 
 struct Triangles {
@@ -97,16 +138,20 @@ Triangles read_triangles(const std::vector<Point>& boundary) {
   return result;
 }
 
-Triangles run_gmsh(const std::vector<DividedLoop>& loops, double growth) {
+Triangles run_gmsh(const Division& division, const Polygon& polygon, double growth, double crack_growth) {
   start_gmsh();
-  SizeField sizes(loops, growth);
+  SizeField sizes(division, growth, crack_growth);
   try {
-    const std::vector<Point> boundary = build_model(loops);
+    // The frontal algorithm finds no place for points in front of a fan's few sides.
+    constexpr int delaunay = 5;
+    constexpr int frontal = 6;
+    gmsh::option::setNumber("Mesh.Algorithm", division.fans.empty() ? frontal : delaunay);
+    build_model(division, polygon);
     gmsh::model::mesh::setSizeCallback(
         [&sizes](int, int, double x, double y, double) { return sizes.at(Point(x, y)); });
     gmsh::model::mesh::generate(2);
     gmsh::model::mesh::removeSizeCallback();
-    Triangles result = read_triangles(boundary);
+    Triangles result = read_triangles(polygon.points);
     gmsh::clear();
     return result;
   } catch (const std::string& message) {
@@ -164,24 +209,47 @@ void flip_flat_triangles(const std::vector<DividedLoop>& loops, Triangles& raw) 
   }
 }
 
-/// Finds each boundary piece's triangle side. Nothing when some piece has none:
-/// Gmsh sometimes puts a triangle of no area on a straight run of boundary.
-std::optional<std::vector<BoundarySide>> attach(const std::vector<DividedLoop>& loops,
-                                                const std::vector<Mesh::Triangle>& triangles) {
+/// Finds each boundary piece's triangle side and each slit piece's edge.
+/// Returns false when some piece has none: Gmsh sometimes puts a triangle of no
+/// area on a straight run of boundary.
+bool attach(const Division& division, const Polygon& polygon, Draft& draft) {
   std::map<std::pair<int, int>, const Curve*> pieces;
+  std::map<std::pair<int, int>, const Curve*> slits;
+  std::size_t missing = 0;
   int first = 0;
-  for (const DividedLoop& loop : loops) {
+  for (const DividedLoop& loop : division.loops) {
     const int count = static_cast<int>(loop.size());
-    for (int k = 0; k < count; ++k) pieces[{first + k, first + (k + 1) % count}] = &loop[k];
+    for (int k = 0; k < count; ++k)
+      if (loop[k].owner.kind != Owner::Kind::inner) pieces[{first + k, first + (k + 1) % count}] = &loop[k];
     first += count;
   }
-  std::vector<BoundarySide> sides;
-  for (int t = 0; t < static_cast<int>(triangles.size()); ++t)
-    for (int k = 0; k < 3; ++k)
-      if (const auto found = pieces.find({triangles[t][k], triangles[t][(k + 1) % 3]}); found != pieces.end())
-        sides.push_back({t, k, *found->second});
-  if (sides.size() != pieces.size()) return std::nullopt;
-  return sides;
+  for (std::size_t s = 0; s < polygon.slits.size(); ++s)
+    for (std::size_t k = 1; k < polygon.slits[s].size(); ++k)
+      slits[{polygon.slits[s][k - 1], polygon.slits[s][k]}] = &division.slits[s][k - 1];
+  missing = pieces.size() + slits.size();
+  for (int t = 0; t < static_cast<int>(draft.triangles.size()); ++t)
+    for (int k = 0; k < 3; ++k) {
+      const std::pair<int, int> edge{draft.triangles[t][k], draft.triangles[t][(k + 1) % 3]};
+      if (const auto found = pieces.find(edge); found != pieces.end()) {
+        draft.sides.push_back({t, k, *found->second});
+        --missing;
+      } else if (const auto slit = slits.find(edge); slit != slits.end()) {
+        draft.seams.push_back({edge.first, edge.second, *slit->second});
+        --missing;
+      }
+    }
+  return missing == 0;
+}
+
+/// The mesh of a triangulated polygon with its fans filled and its slits open;
+/// nothing when some boundary piece has no triangle.
+std::optional<Mesh> assemble(const Division& division, const Polygon& polygon, Triangles raw) {
+  Draft draft{std::move(raw.points), std::move(raw.triangles), {}, {}, {}};
+  if (!attach(division, polygon, draft)) return std::nullopt;
+  for (std::size_t i = 0; i < division.fans.size(); ++i) fill(division.fans[i], polygon.fans[i], draft);
+  open_seams(draft);
+  return Mesh(std::move(draft.points), std::move(draft.triangles), std::move(draft.sides), Mesh::exact,
+              std::move(draft.fans));
 }
 
 /// Splits in halves the pieces of boundary of the given triangles.
@@ -198,7 +266,8 @@ std::vector<DividedLoop> split_sides(const std::vector<DividedLoop>& loops, cons
     const int first = vertex;
     const int count = static_cast<int>(loop.size());
     for (int k = 0; k < count; ++k, ++vertex) {
-      const bool split = near[vertex] && near[first + (vertex - first + 1) % count];
+      const bool split = near[vertex] && near[first + (vertex - first + 1) % count] &&
+                         loop[k].owner.kind != Owner::Kind::inner;
       if (!split) {
         refined.push_back(loop[k]);
         continue;
@@ -236,22 +305,22 @@ bool is_folded(const Mesh& mesh, int triangle) {
 Mesh triangulate(const Region& region, const SizeRule& rule) {
   constexpr int most_attempts = 10;
   constexpr int attempts_against_thin = 5;
-  std::vector<DividedLoop> loops = divide(region, rule);
+  Division division = divide(region, rule);
   double growth = rule.growth;
   std::optional<Mesh> thin;  // sound, but for triangles that shorter sides only make thinner
   for (int attempt = 0; attempt < most_attempts; ++attempt) {
     if (thin && attempt >= attempts_against_thin) break;
-    Triangles raw = run_gmsh(loops, growth);
-    flip_flat_triangles(loops, raw);
-    if (auto boundary = attach(loops, raw.triangles)) {
-      Mesh mesh(std::move(raw.points), std::move(raw.triangles), std::move(*boundary));
-      std::vector<int> bad = inverted_triangles(mesh);
-      if (bad.empty()) return mesh;
-      const auto folded = [&mesh](int t) { return is_folded(mesh, t); };
+    const Polygon polygon(division);
+    Triangles raw = run_gmsh(division, polygon, growth, rule.crack_growth * growth / rule.growth);
+    flip_flat_triangles(division.loops, raw);
+    if (std::optional<Mesh> mesh = assemble(division, polygon, std::move(raw))) {
+      std::vector<int> bad = inverted_triangles(*mesh);
+      if (bad.empty()) return *std::move(mesh);
+      const auto folded = [&mesh](int t) { return is_folded(*mesh, t); };
       if (!thin && std::none_of(bad.begin(), bad.end(), folded)) thin = mesh;
       // A curved triangle needs shorter sides; a flat one a different mesh.
-      std::erase_if(bad, [&](int t) { return !mesh.is_curved(t); });
-      loops = split_sides(loops, mesh, bad);
+      std::erase_if(bad, [&](int t) { return !mesh->is_curved(t); });
+      division.loops = split_sides(division.loops, *mesh, bad);
     }
     growth *= 0.85;
   }

@@ -35,6 +35,32 @@ std::vector<std::vector<Load>> loads_of_units(const std::vector<Load>& loads,
   return result;
 }
 
+TipFindings tip_findings(const DegreeSequence& sequence, std::size_t load_case, std::size_t tip) {
+  const TipScanner& scanner = sequence.tip_scanner();
+  const Displacements& last = sequence.displacements().back();
+  TipFindings result;
+  result.tip = tip;
+  const std::array<Estimate, 3> k = sequence.tip_value(load_case, tip);
+  result.k_one = k[0];
+  result.k_two = k[1];
+  result.t_stress = k[2];
+  const NearFields& fields = scanner.fields(tip);
+  const double g = fields.energy_release(k[0].value, k[1].value);
+  double off = 0.0;  // largest change of G within the bounds of K
+  for (const double one : {-1.0, 1.0})
+    for (const double two : {-1.0, 1.0})
+      off = std::max(
+          off,
+          std::abs(fields.energy_release(k[0].value + one * k[0].bound, k[1].value + two * k[1].bound) - g));
+  result.energy_release = {g, off};
+  result.j_integral = scanner.j_integral(last, load_case, tip, 0);
+  result.extension = scanner.virtual_extension(last, load_case, tip);
+  for (std::size_t d = 0; d < scanner.domains(); ++d)
+    result.domains.push_back(scanner.value(sequence.tip_scans().back(), load_case, tip, d));
+  if (!sequence.model().material().orthotropy) result.kink_angle = kink_angle(k[0].value, k[1].value);
+  return result;
+}
+
 LoadFindings findings(const Problem& problem, const DegreeSequence& sequence, std::size_t load_case,
                       const std::string& name, const std::vector<Load>& loads) {
   LoadFindings result{name, {}};
@@ -52,6 +78,8 @@ LoadFindings findings(const Problem& problem, const DegreeSequence& sequence, st
     found.net = concentration(peak, basis.net);
     result.raisers.push_back(std::move(found));
   }
+  for (std::size_t t = 0; t < sequence.tip_scanner().tips(); ++t)
+    result.tips.push_back(tip_findings(sequence, load_case, t));
   return result;
 }
 
@@ -162,6 +190,7 @@ Solution report(const Problem& problem, const DegreeSequence& sequence) {
   for (const RaiserFindings& found : solution.combined.raisers) sections.push_back(found.section);
   solution.ligaments = ligaments(problem.plate, sections, fields);
   solution.field = std::move(fields.back());
+  solution.openings = crack_openings(model, problem.plate, last);
 
   const Balance balance = model.balance(last);
   solution.checks.equilibrium_residual = balance.residual;

@@ -2,6 +2,7 @@
 
 #include <vector>
 
+#include "solver/crack/tip_scan.hpp"
 #include "solver/extract/edge_scan.hpp"
 #include "solver/solution.hpp"
 
@@ -20,9 +21,15 @@ class DegreeSequence {
   const EdgeScanner& scanner() const { return scanner_; }
   const std::vector<Displacements>& displacements() const { return displacements_; }
   const std::vector<EdgeScan>& scans() const { return scans_; }
+  const TipScanner& tip_scanner() const { return tip_scanner_; }
+  const std::vector<TipScan>& tip_scans() const { return tip_scans_; }
 
   /// The value of the last degree with its bound from all of them.
   EdgeValue value(std::size_t load_case, std::size_t raiser, Quantity quantity) const;
+
+  /// K_I, K_II and T of a crack tip from the last degree, with bounds from all
+  /// degrees that are no less than the spread of the domains.
+  std::array<Estimate, 3> tip_value(std::size_t load_case, std::size_t tip) const;
 
   /// Largest magnitude of edge stress on the raiser under all loads, MPa.
   double peak(std::size_t raiser) const;
@@ -32,11 +39,16 @@ class DegreeSequence {
 
  private:
   const Model* model_;
+  const Plate* plate_;
   std::vector<Point> centres_;  ///< of the raisers
   EdgeScanner scanner_;
   Room room_;
   std::vector<Displacements> displacements_;
   std::vector<EdgeScan> scans_;
+  TipScanner tip_scanner_;
+  std::vector<TipScan> tip_scans_;
+
+  double tip_excess(const Ask& ask) const;
 };
 
 }  // namespace raiser::solver

@@ -31,9 +31,11 @@ void require_legal(const Problem& problem, const std::vector<Ask>& asks) {
   if (problem.loads.empty()) throw std::invalid_argument("settle: there is no load");
   if (const auto fault = imbalance(problem.plate, problem.loads))
     throw std::invalid_argument("settle: " + fault->what);
+  const std::size_t tips = mesh::tips(problem.plate.cracks).size();
   for (const Ask& ask : asks)
-    if (ask.raiser >= mesh::raiser_count(problem.plate) || !(ask.tolerance > 0))
-      throw std::invalid_argument("settle: an asked number names no raiser or has no tolerance");
+    if (ask.raiser >= (is_at_tip(ask.quantity) ? tips : mesh::raiser_count(problem.plate)) ||
+        !(ask.tolerance > 0))
+      throw std::invalid_argument("settle: an asked number names no raiser or tip, or has no tolerance");
 }
 
 /// The mirror lines that the plate, its material and all loads share.
@@ -61,7 +63,17 @@ mesh::SizeRule first_rule(const Plate& plate, double tolerance) {
     rule.growth = 0.7;
     rule.joint = tolerance < 1e-7 ? 0.002 : 0.01;
   }
+  if (tolerance < 3e-4) {
+    rule.tip_sectors = 8;
+    rule.tip_rings = 6;
+    rule.crack_growth = 0.7;
+  }
+  if (tolerance < 1e-5) {
+    rule.tip_ratio = 0.15;
+    rule.tip_rings = tolerance < 1e-7 ? 9 : 7;
+  }
   rule.refine.assign(mesh::raiser_count(plate), 1.0);
+  rule.refine_tip.assign(mesh::tips(plate.cracks).size(), 1.0);
   return rule;
 }
 
@@ -101,18 +113,32 @@ double raise_degree(DegreeSequence& sequence, const std::vector<Ask>& asks, doub
   return worst;
 }
 
+std::string place_of(const Ask& ask, const Plate& plate) {
+  if (is_at_tip(ask.quantity)) return "tip " + mesh::tips(plate.cracks)[ask.raiser].name;
+  const mesh::Raiser at = mesh::raiser(plate, ask.raiser);
+  return fmt::format("{} {}", word(at.kind), at.name);
+}
+
 /// Why the sequence does not do, for at least one asked number.
 std::string reason_for(const DegreeSequence& sequence, const Plate& plate, const std::vector<Ask>& asks) {
   std::vector<double> excess;
   for (const Ask& ask : asks) excess.push_back(sequence.excess(ask));
   const auto missed = std::count_if(excess.begin(), excess.end(), [](double e) { return e > 1.0; });
   const auto worst = std::max_element(excess.begin(), excess.end());
-  const mesh::Raiser at = mesh::raiser(plate, asks[worst - excess.begin()].raiser);
   return fmt::format(
-      "{} of {} asked numbers miss their tolerance after {} refinements and degree {}; the worst, at {} {}, "
+      "{} of {} asked numbers miss their tolerance after {} refinements and degree {}; the worst, at {}, "
       "has a bound {:.2g} times the tolerance",
-      missed, asks.size(), most_refinements, sequence.displacements().back().degree, word(at.kind), at.name,
-      *worst);
+      missed, asks.size(), most_refinements, sequence.displacements().back().degree,
+      place_of(asks[worst - excess.begin()], plate), *worst);
+}
+
+/// A tip and its images in the mirrors.
+std::vector<std::size_t> tips_like(const Plate& plate, std::size_t tip, mesh::Mirrors mirrors) {
+  std::vector<std::size_t> result{tip};
+  if (mirrors.x) result.push_back(mesh::mirror_image_of_tip(plate, tip, {true, false}));
+  if (mirrors.y) result.push_back(mesh::mirror_image_of_tip(plate, tip, {false, true}));
+  if (mirrors.x && mirrors.y) result.push_back(mesh::mirror_image_of_tip(plate, tip, {true, true}));
+  return result;
 }
 
 }  // namespace
@@ -144,6 +170,11 @@ Solution settle(const Problem& problem, const std::vector<Ask>& asks) {
     const auto images = images_of(problem.plate, mirrors);
     for (const Ask& ask : asks) {
       if (sequence.excess(ask) <= 1.0) continue;
+      if (is_at_tip(ask.quantity)) {
+        for (const std::size_t tip : tips_like(problem.plate, ask.raiser, mirrors))
+          rule.refine_tip[tip] = finer;
+        continue;
+      }
       rule.refine[ask.raiser] = finer;
       for (const auto& image : images) rule.refine[image[ask.raiser]] = finer;
     }

@@ -128,6 +128,8 @@ std::string_view word(Load::Kind kind) {
       return "bending";
     case Load::Kind::pressure:
       return "pressure";
+    case Load::Kind::face_pressure:
+      return "face pressure";
     case Load::Kind::edge:
       return "edge";
   }
@@ -135,7 +137,9 @@ std::string_view word(Load::Kind kind) {
 }
 
 Resultant resultant(const Plate& plate, const Load& load) {
-  if (load.kind == Load::Kind::pressure || (!plate.outline && load.kind != Load::Kind::edge)) return {};
+  if (load.kind == Load::Kind::pressure || load.kind == Load::Kind::face_pressure ||
+      (!plate.outline && load.kind != Load::Kind::edge))
+    return {};
   return integrate(mesh::outline_of(plate).curves, plate.thickness, traction(plate, load), Point::Zero());
 }
 

@@ -26,15 +26,18 @@ using mesh::Point;
 ///   largest value on the smaller end (positive: larger y in tension).
 /// `pressure`: uniform pressure on the edge of hole `hole`, positive when it
 ///   pushes on the material.
+/// `face_pressure`: uniform pressure on both faces of crack `crack`, positive when
+///   it opens the crack.
 /// `edge`: uniform traction on edge `edge` of mesh::edge_names(): `stress` along
 ///   its outward normal, `along` along its direction (anticlockwise round the plate).
 struct Load {
-  enum class Kind { tension, transverse, shear, bending, pressure, edge };
+  enum class Kind { tension, transverse, shear, bending, pressure, face_pressure, edge };
   Kind kind = Kind::tension;
   std::string name;
   double stress = 0.0;
   double along = 0.0;                         ///< kind edge only
   std::size_t hole = 0;                       ///< kind pressure only
+  std::size_t crack = 0;                      ///< kind face_pressure only
   std::size_t edge = mesh::rectangle::right;  ///< kind edge only
 };
 

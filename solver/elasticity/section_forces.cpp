@@ -45,7 +45,7 @@ SectionForces section_forces(const Plate& plate, const std::vector<Load>& loads,
   middle[1 - axis] = mesh::shape_of(mesh::gross_along(plate, direction, station)).centroid;
   SectionForces sum;
   for (const Load& load : loads) {
-    if (load.kind == Load::Kind::pressure) continue;
+    if (load.kind == Load::Kind::pressure || load.kind == Load::Kind::face_pressure) continue;
     const bool integrated = load.kind == Load::Kind::edge || plate.outline;
     const SectionForces own =
         integrated ? of_traction(plate, load, outside, middle, across) : of_uniform(plate, load, across);

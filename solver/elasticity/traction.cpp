@@ -85,6 +85,13 @@ Traction traction(const Plate& plate, const Load& load) {
                                                                const Point& n) -> Point {
         return (owner == hole ? -s : 0.0) * n;
       };
+    case Load::Kind::face_pressure:
+      if (load.crack >= plate.cracks.size())
+        throw std::invalid_argument("a face pressure must name a crack of the plate");
+      return [s, crack = Owner{Owner::Kind::crack, load.crack}](const Owner& owner, const Point&,
+                                                                const Point& n) -> Point {
+        return (owner == crack ? -s : 0.0) * n;
+      };
     case Load::Kind::edge:
       break;
   }

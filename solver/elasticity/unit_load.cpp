@@ -28,7 +28,11 @@ Parity parity(const Reflection& reflection, const Traction& traction) {
   double size = 0.0;
   double off_even = 0.0;
   double off_odd = 0.0;
-  for (const mesh::Loop& loop : reflection.region.loops)
+  std::vector<mesh::Loop> boundary = reflection.region.loops;
+  for (const mesh::Slit& slit : reflection.region.slits)
+    for (std::size_t k = 1; k < slit.points.size(); ++k)
+      boundary.push_back({mesh::line(slit.points[k - 1], slit.points[k], {Owner::Kind::crack, slit.crack})});
+  for (const mesh::Loop& loop : boundary)
     for (const mesh::Curve& curve : loop) {
       const Owner image = reflection.image->of(curve.owner);
       for (const double share : shares) {

@@ -46,6 +46,13 @@ double Model::parity(std::size_t load, const Image& image) const {
   return sign;
 }
 
+Eigen::VectorXd Model::factors(std::size_t load_case, const Image& image) const {
+  Eigen::VectorXd result = Eigen::VectorXd::Zero(static_cast<Eigen::Index>(loads_.size()));
+  for (std::size_t l = 0; l < loads_.size(); ++l)
+    if (load_case == 0 || load_case == l + 1) result[static_cast<Eigen::Index>(l)] = parity(l, image);
+  return result;
+}
+
 std::vector<bool> Model::held_on_mirrors(const Discretisation& space, const Class& cls) const {
   std::vector<bool> held(space.unknowns(), false);
   for (const BoundarySide& side : mesh_.boundary()) {

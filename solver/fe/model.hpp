@@ -56,6 +56,10 @@ class Model {
   /// +1 or -1: the factor of a load's mirrored solution in an image.
   double parity(std::size_t load, const Image& image) const;
 
+  /// Factor of each load's solution in an image for a load case: 0 is all loads
+  /// together, 1 + l load l alone.
+  Eigen::VectorXd factors(std::size_t load_case, const Image& image) const;
+
   /// Solves for all loads. Throws std::runtime_error when the factorisation fails.
   Displacements solve(int degree) const;
   /// The same with memory that is used again from call to call.

@@ -193,7 +193,7 @@ TEST(Divide, GradesTowardsAJumpOfCurvature) {
   rule.joint = 0.02;
   double at_joint = std::numeric_limits<double>::infinity();
   double turn = 0.0;
-  const auto loops = divide(trace(plate), rule);
+  const auto loops = divide(trace(plate), rule).loops;
   for (const Curve& piece : loops[1]) {
     at_joint = std::min(at_joint, (piece.at(piece.begin) - piece.at(piece.end)).norm());
     if (piece.kind == Curve::Kind::arc) turn += std::abs(piece.end - piece.begin);
