@@ -7,6 +7,7 @@
 #include <numbers>
 
 #include "io/case/alloys.hpp"
+#include "io/case/describe_cracks.hpp"
 #include "io/case/layout.hpp"
 #include "io/case/parts.hpp"
 #include "io/case/words.hpp"
@@ -163,6 +164,7 @@ std::string count_of_shapes(const Plate& plate, std::size_t first) {
 std::string describe_holes(const Case& input) {
   const Plate& plate = input.problem.plate;
   const std::size_t listed = plate.holes.size() > most_listed ? most_listed / 2 : plate.holes.size();
+  if (plate.holes.empty()) return row("Holes", {"none"});
   std::string result = row("Holes", {fmt::format("{}", plate.holes.size())});
   for (std::size_t i = 0; i < listed; ++i) result += describe_hole(input, i);
   if (listed < plate.holes.size()) {
@@ -193,6 +195,8 @@ Phrases meaning(const Plate& plate, const Load& load) {
               fmt::format("moment {}", derived(load.stress * across * plate.width / 6e3, "N m"))};
     case Load::Kind::pressure:
       return {fmt::format("pressure: {} in {}", stress, plate.holes[load.hole].name)};
+    case Load::Kind::face_pressure:
+      return {fmt::format("pressure: {} on both faces of {}", stress, plate.cracks[load.crack].name)};
     case Load::Kind::edge:
       break;
   }
@@ -241,10 +245,21 @@ std::string describe_loads(const Case& input) {
   return result;
 }
 
+bool has_raisers(const Plate& plate) { return mesh::raiser_count(plate) > 0; }
+
+std::string usual_results(const Plate& plate) {
+  if (!has_raisers(plate)) return "stress intensity";
+  return std::string("largest and smallest edge stress, von Mises") + (plate.cracks.empty() ? "" : ", K");
+}
+
 std::string describe_question(const Case& input) {
+  const mesh::Plate& plate = input.problem.plate;
+  const std::vector<mesh::CrackTip> tips = mesh::tips(plate.cracks);
+  std::string of = has_raisers(plate) ? "the largest stress at the hole" : "K";
+  if (has_raisers(plate) && !tips.empty()) of = "the largest edge stress or K";
   std::string result =
       row("Asked", {fmt::format("{} results", input.asks.size()),
-                    fmt::format("tolerance {} of the largest stress at the hole{}", percent(input.tolerance),
+                    fmt::format("tolerance {} of {}{}", percent(input.tolerance), of,
                                 input.written.contains("ask.tolerance") ? "" : default_mark)});
   const auto chosen = [&](const std::string& key, const std::string& otherwise) {
     const auto written = input.written.find(key);
@@ -254,15 +269,16 @@ std::string describe_question(const Case& input) {
   const bool all =
       std::any_of(input.asks.begin(), input.asks.end(), [](const auto& ask) { return ask.name.empty(); });
   if (all) {
-    result += row("  results", {chosen("ask.results", "largest and smallest edge stress, von Mises")});
-    result += row("  at", {chosen("ask.holes", "every hole")});
+    result += row("  results", {chosen("ask.results", usual_results(plate))});
+    if (has_raisers(plate)) result += row("  at", {chosen("ask.holes", "every hole")});
+    if (!tips.empty()) result += row("  at tips", {chosen("ask.tips", "every crack tip")});
   }
   for (const solver::Ask& ask : input.asks) {
     if (ask.name.empty()) continue;
-    result +=
-        row("  " + ask.name,
-            {fmt::format("{} at {}", word(ask.quantity), mesh::raiser(input.problem.plate, ask.raiser).name),
-             fmt::format("tolerance {}", percent(ask.tolerance))});
+    const std::string place = solver::is_at_tip(ask.quantity) ? "tip " + tips[ask.raiser].name
+                                                              : mesh::raiser(plate, ask.raiser).name;
+    result += row("  " + ask.name, {fmt::format("{} at {}", word(ask.quantity), place),
+                                    fmt::format("tolerance {}", percent(ask.tolerance))});
   }
   return result;
 }
@@ -272,8 +288,8 @@ std::string describe_question(const Case& input) {
 std::string describe(const Case& input) {
   const std::string title = input.title + (input.written.contains("title") ? "" : std::string(default_mark));
   return title + '\n' + row("File", {input.file.string(), fmt::format("format {}", case_format)}) + '\n' +
-         describe_plate(input) + describe_material(input) + '\n' + describe_holes(input) + '\n' +
-         describe_loads(input) + '\n' + describe_question(input);
+         describe_plate(input) + describe_material(input) + '\n' + describe_holes(input) +
+         describe_cracks(input) + '\n' + describe_loads(input) + '\n' + describe_question(input);
 }
 
 }  // namespace raiser::io

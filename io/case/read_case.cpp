@@ -25,6 +25,7 @@ struct Parts {
   PlateSizes plate;
   Material material;
   std::vector<HoleReading> holes;
+  std::vector<CrackReading> cracks;
   std::vector<LoadReading> loads;
   bool loads_are_sound = false;  ///< no fault was found in any
   Question question;
@@ -50,12 +51,14 @@ void complain_of_missing(const Table& document, std::string_view key, std::strin
 }
 
 Parts read_parts(const Table& document, const std::string& default_title) {
-  constexpr std::array<std::string_view, 7> keys{"raiser", "title", "plate", "material",
-                                                 "hole",   "load",  "ask"};
+  constexpr std::array<std::string_view, 8> keys{"raiser", "title", "plate", "material",
+                                                 "hole",   "crack", "load",  "ask"};
   refuse_unknown(document, keys);
   read_version(document);
   const Entry* title = find(document, "title");
-  Parts parts{text(document, title).value_or(default_title), document, {}, {}, {}, {}, false, {}};
+  Parts parts;
+  parts.title = text(document, title).value_or(default_title);
+  parts.plate_table = document;
   const auto need = [&](std::string_view key, std::string_view contents) {
     const auto table = table_at(*document.node, key, *document.report);
     if (!table && find(document, key) == nullptr) {
@@ -73,12 +76,21 @@ Parts read_parts(const Table& document, const std::string& default_title) {
   parts.holes = read_holes(document);
   std::vector<std::string_view> names;
   for (const HoleReading& hole : parts.holes) names.push_back(hole.name);
+  parts.cracks = read_cracks(document, parts.plate, parts.holes);
+  std::vector<std::string_view> cracks;
+  std::vector<std::string_view> tips;
+  for (const CrackReading& crack : parts.cracks) {
+    cracks.push_back(crack.name);
+    tips.insert(tips.end(), crack.tips.begin(), crack.tips.end());
+  }
   const std::size_t faults_before = document.report->faults.size();
-  parts.loads = read_loads(document, parts.plate, names);
+  parts.loads = read_loads(document, parts.plate, names, cracks);
   parts.loads_are_sound = document.report->faults.size() == faults_before;
-  parts.question = read_question(document, names);
-  if (parts.holes.empty() && find(document, "hole") == nullptr) {
-    complain_of_missing(document, "hole", "the plate has no hole", "add [[hole]] with a shape and its sizes");
+  parts.question = read_question(document, names, tips);
+  const bool is_whole = find(document, "hole") == nullptr && find(document, "crack") == nullptr;
+  if (is_whole) {
+    complain_of_missing(document, "hole", "the plate has neither a hole nor a crack",
+                        "add [[hole]] with a shape and its sizes, or [[crack]]");
   }
   if (parts.loads.empty() && find(document, "load") == nullptr) {
     complain_of_missing(document, "load", "nothing loads the plate",
@@ -97,11 +109,12 @@ void add_fault(Report& report, Kind kind, const Position& at, std::string key, s
 struct PartialPlate {
   mesh::Plate plate;
   std::vector<std::size_t> index;
+  std::vector<std::size_t> crack_index;
 };
 std::optional<PartialPlate> readable_plate(const Parts& parts) {
   const PlateSizes& sizes = parts.plate;
   if (!sizes.length || !sizes.width || !sizes.thickness) return std::nullopt;
-  PartialPlate result{{*sizes.length, *sizes.width, *sizes.thickness, {}}, {}};
+  PartialPlate result{{*sizes.length, *sizes.width, *sizes.thickness, {}}, {}, {}};
   Names names;
   for (std::size_t i = 0; i < parts.holes.size(); ++i) {
     if (!parts.holes[i].hole) continue;
@@ -112,6 +125,14 @@ std::optional<PartialPlate> readable_plate(const Parts& parts) {
     result.plate.holes.push_back(std::move(hole));
     result.index.push_back(i);
   }
+  Names crack_names;
+  for (std::size_t i = 0; i < parts.cracks.size(); ++i) {
+    if (!parts.cracks[i].crack) continue;
+    mesh::Crack crack = *parts.cracks[i].crack;
+    if (!crack_names.insert(crack.name).second) crack.name = fmt::format("{} (number {})", crack.name, i + 1);
+    result.plate.cracks.push_back(std::move(crack));
+    result.crack_index.push_back(i);
+  }
   return result;
 }
 
@@ -119,6 +140,11 @@ void check_geometry(const Parts& parts, const PartialPlate& partial, Report& rep
   constexpr std::size_t told_in_full = 3;  // conflicts of one hole with others
   std::vector<std::size_t> conflicts(partial.plate.holes.size(), 0);
   for (const mesh::PlateFault& fault : mesh::faults(partial.plate)) {
+    if (fault.crack != mesh::PlateFault::none) {
+      add_fault(report, Kind::geometry, parts.cracks[partial.crack_index[fault.crack]].at, "crack",
+                fault.what, fault.cure);
+      continue;
+    }
     const bool of_hole = fault.hole != mesh::PlateFault::none;
     const bool of_pair = of_hole && fault.other != mesh::PlateFault::none;
     if (of_pair && ++conflicts[fault.hole] > told_in_full) continue;
@@ -156,6 +182,7 @@ Case assemble(const Parts& parts, mesh::Plate plate, Report& report, const std::
   for (const LoadReading& load : parts.loads) result.problem.loads.push_back(*load.load);
   result.asks = parts.question.asks;
   result.tolerance = parts.question.tolerance;
+  result.t_stress_tolerance = parts.question.t_stress_tolerance;
   result.yield_strength = parts.material.yield_strength;
   result.alloy = parts.material.alloy;
   result.written = std::move(report.written);
@@ -221,9 +248,10 @@ CaseReading read_case_text(std::string_view content, const std::string& name) {
   const Table document{&std::get<Node>(parsed), "", "", &report};
   const Parts parts = read_parts(document, std::filesystem::path(name).stem().string());
   const auto partial = readable_plate(parts);
-  const bool all_holes = partial && partial->index.size() == parts.holes.size();
+  const bool is_complete = partial && partial->index.size() == parts.holes.size() &&
+                           partial->crack_index.size() == parts.cracks.size();
   if (partial) check_geometry(parts, *partial, report);
-  if (all_holes) check_balance(parts, partial->plate, report);
+  if (is_complete) check_balance(parts, partial->plate, report);
   if (!report.faults.empty()) return failure(std::move(report.faults));
   return {assemble(parts, partial->plate, report, name), {}};
 }

@@ -12,13 +12,13 @@ namespace {
 using solver::Load;
 using Keys = std::span<const std::string_view>;
 
-constexpr std::array<std::string_view, 13> load_keys{
-    "name",     "kind", "direction", "stress",       "force", "moment",     "hole",
-    "pressure", "edge", "normal",    "normal_force", "shear", "shear_force"};
+constexpr std::array<std::string_view, 14> load_keys{
+    "name",  "kind",     "direction", "stress", "force",        "moment", "hole",
+    "crack", "pressure", "edge",      "normal", "normal_force", "shear",  "shear_force"};
 constexpr std::array<std::string_view, 5> tension_keys{"name", "kind", "direction", "stress", "force"};
 constexpr std::array<std::string_view, 4> shear_keys{"name", "kind", "stress", "force"};
 constexpr std::array<std::string_view, 4> bending_keys{"name", "kind", "stress", "moment"};
-constexpr std::array<std::string_view, 4> pressure_keys{"name", "kind", "hole", "pressure"};
+constexpr std::array<std::string_view, 5> pressure_keys{"name", "kind", "hole", "crack", "pressure"};
 constexpr std::array<std::string_view, 7> edge_keys{"name",         "kind",  "edge",       "normal",
                                                     "normal_force", "shear", "shear_force"};
 constexpr std::array kinds{Load::Kind::tension, Load::Kind::shear, Load::Kind::bending, Load::Kind::pressure,
@@ -29,6 +29,7 @@ constexpr std::array<std::string_view, 4> edge_words{"right", "top", "left", "bo
 struct Context {
   PlateSizes plate;
   const std::vector<std::string_view>& holes;
+  const std::vector<std::string_view>& cracks;
 };
 
 /// Area of the section of the given length, mm^2; empty without the sizes.
@@ -95,13 +96,16 @@ std::optional<Load> read_bending(const Table& table, const Context& context) {
 
 std::optional<Load> read_pressure(const Table& table, const Context& context) {
   refuse_unfitting(table, "pressure", load_keys, pressure_keys);
-  const auto hole = choice(table, require(table, "hole", sample_of(context.holes)), context.holes);
+  constexpr std::array<std::string_view, 2> places{"hole", "crack"};
+  const Entry* place = require_one(table, places, sample_of(context.holes));
+  const bool on_crack = place != nullptr && place->key == "crack";
+  const auto index = choice(table, place, on_crack ? context.cracks : context.holes);
   const auto pressure =
       quantity(table, require(table, "pressure", "\"10 MPa\""), Dimension::stress, Sign::nonzero);
-  if (!hole || !pressure) return std::nullopt;
+  if (!index || !pressure) return std::nullopt;
   Load load;
-  load.kind = Load::Kind::pressure;
-  load.hole = *hole;
+  load.kind = on_crack ? Load::Kind::face_pressure : Load::Kind::pressure;
+  (on_crack ? load.crack : load.hole) = *index;
   load.stress = *pressure;
   return load;
 }
@@ -142,6 +146,7 @@ std::optional<Load> read_kind(const Table& table, const Context& context, Load::
     case Load::Kind::bending:
       return read_bending(table, context);
     case Load::Kind::pressure:
+    case Load::Kind::face_pressure:
       return read_pressure(table, context);
     case Load::Kind::edge:
       return read_edge(table, context);
@@ -175,6 +180,8 @@ std::string default_name(const std::optional<Load>& load, const Context& context
       return "tension across";
     case Load::Kind::pressure:
       return fmt::format("pressure in {}", context.holes[load->hole]);
+    case Load::Kind::face_pressure:
+      return fmt::format("pressure in {}", context.cracks[load->crack]);
     case Load::Kind::edge:
       return fmt::format("{} edge", edge_words[load->edge]);
   }
@@ -212,7 +219,8 @@ std::optional<Load> read_load(const Table& table, const Context& context) {
 }  // namespace
 
 std::vector<LoadReading> read_loads(const Table& document, const PlateSizes& plate,
-                                    const std::vector<std::string_view>& holes) {
+                                    const std::vector<std::string_view>& holes,
+                                    const std::vector<std::string_view>& cracks) {
   std::vector<LoadReading> loads;
   std::vector<Table> tables = tables_at(document, "load");
   if (tables.size() > most_loads) {
@@ -220,7 +228,7 @@ std::vector<LoadReading> read_loads(const Table& document, const PlateSizes& pla
              fmt::format("a case has at most {}; put loads of one kind together", most_loads));
     tables.erase(tables.begin() + most_loads, tables.end());
   }
-  const Context context{plate, holes};
+  const Context context{plate, holes, cracks};
   const Names written = written_names(tables);
   Names names{"all loads", "edges"};  // the program's own names for sums of loads
   for (const Table& table : tables) {

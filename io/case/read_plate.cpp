@@ -118,8 +118,8 @@ std::optional<mesh::Hole> read_hole(const Table& table, const std::string& name)
 
 }  // namespace
 
-std::string sample_of(const std::vector<std::string_view>& holes) {
-  return fmt::format("\"{}\"", holes.empty() ? "hole 1" : holes.front());
+std::string sample_of(const std::vector<std::string_view>& names, std::string_view otherwise) {
+  return fmt::format("\"{}\"", names.empty() ? otherwise : names.front());
 }
 
 PlateSizes read_plate(const Table& table) {

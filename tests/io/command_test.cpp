@@ -48,7 +48,8 @@ TEST(CommandLine, SaysWhatIsWrongAndWhereHelpIs) {
   EXPECT_EQ(reply({"solve"}).text, "raiser solve: no case file is named; see raiser solve --help\n");
   EXPECT_NE(reply({"solve", "a", "--fast"}).text.find("--fast"), std::string::npos);
   EXPECT_EQ(reply({"solve", "a", "--out", ""}).code, Exit::usage);
-  const std::string cure = "; write raiser solve CASE... or raiser check CASE...; see raiser --help\n";
+  const std::string cure =
+      "; write raiser solve CASE..., raiser check CASE... or raiser validate; see raiser --help\n";
   EXPECT_EQ(reply({"slove", "a.toml"}).text, "raiser: \"slove\" is no command" + cure);
   EXPECT_EQ(reply({"--"}).text, "raiser: no command is given" + cure);
   EXPECT_EQ(reply({"--help"}).code, Exit::settled);
@@ -85,6 +86,7 @@ TEST(Run, SolvesACaseToTheStreamsItIsGiven) {
   EXPECT_NE(out.str().find("Kt gross"), std::string::npos);
   EXPECT_LE(test::widest(out.str()), 80U) << out.str();
   for (const std::string& suffix : result_suffixes()) {
+    if (suffix == "-tips.csv") continue;  // of cracks only
     EXPECT_GT(fs::file_size(folder / ("strap" + suffix)), 100U) << suffix;
   }
   fs::remove_all(folder);
