@@ -17,6 +17,8 @@ inline constexpr int case_format = 1;
 
 /// Limits of the format, checked on reading.
 inline constexpr std::size_t most_holes = 1000;
+inline constexpr std::size_t most_cracks = 100;
+inline constexpr std::size_t most_crack_points = 50;  ///< of one crack
 inline constexpr std::size_t most_loads = 2000;
 inline constexpr std::size_t most_bytes = 4 * 1024 * 1024;
 inline constexpr double finest_tolerance = 1e-9;  ///< what double precision can give
@@ -36,6 +38,7 @@ struct Case {
   solver::Problem problem;
   std::vector<solver::Ask> asks;
   double tolerance = 1e-3;               ///< relative; of the asks that give none of their own
+  double t_stress_tolerance = 1e-2;      ///< the same of those for a T-stress
   std::optional<double> yield_strength;  ///< MPa
   std::optional<std::string> alloy;      ///< find_alloy() has where its values come from
   /// What the author wrote for each value, by key path: "plate.width",

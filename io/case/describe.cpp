@@ -8,6 +8,7 @@
 #include <numbers>
 
 #include "io/case/alloys.hpp"
+#include "io/case/describe_cracks.hpp"
 #include "io/case/layout.hpp"
 #include "io/case/parts.hpp"
 #include "io/case/words.hpp"
@@ -54,11 +55,12 @@ std::string percent(double ratio) { return fmt::format("{:.10g} %", ratio * 100.
 std::string describe_plate(const Case& input) {
   const Plate& plate = input.problem.plate;
   if (input.drawing_origin)
-    return row("Plate", {fmt::format("drawn outline, {} long and {} wide", derived(plate.length, "mm"), derived(plate.width, "mm")),
+    return row("Plate", {fmt::format("drawn outline, {} long and {} wide", derived(plate.length, "mm"),
+                                     derived(plate.width, "mm")),
                          item(input, "thickness", "plate.thickness", plate.thickness, "mm")}) +
            row("", {"positions count from the middle of its bounding box",
-                    fmt::format("the drawing's origin lies at ({:.6g}, {:.6g}) mm", input.drawing_origin->x() + 0.0,
-                                input.drawing_origin->y() + 0.0)});
+                    fmt::format("the drawing's origin lies at ({:.6g}, {:.6g}) mm",
+                                input.drawing_origin->x() + 0.0, input.drawing_origin->y() + 0.0)});
   return row("Plate", {item(input, "length", "plate.length", plate.length, "mm"),
                        item(input, "width", "plate.width", plate.width, "mm"),
                        item(input, "thickness", "plate.thickness", plate.thickness, "mm")}) +
@@ -181,11 +183,13 @@ std::string describe_outline(const Case& input) {
     const mesh::Raiser& at = raisers[i];
     const auto net = mesh::shape_of(mesh::material_along(plate, mesh::Direction::across, at.root.x()));
     const auto gross = mesh::shape_of(mesh::gross_along(plate, mesh::Direction::across, at.mouth.x()));
-    result += row("  " + at.name, {at.shape, fmt::format("root at x = {:.6g} mm, y = {:.6g} mm", at.root.x() + 0.0, at.root.y() + 0.0)}) +
+    result += row("  " + at.name, {at.shape, fmt::format("root at x = {:.6g} mm, y = {:.6g} mm",
+                                                         at.root.x() + 0.0, at.root.y() + 0.0)}) +
               row("", {fmt::format("net section {}", derived(net.length * plate.thickness, "mm^2")),
                        fmt::format("{:.1f} % of gross", 100.0 * net.length / gross.length)});
   }
-  if (listed < raisers.size()) result += row("  and more", {fmt::format("{} not listed here", raisers.size() - listed)});
+  if (listed < raisers.size())
+    result += row("  and more", {fmt::format("{} not listed here", raisers.size() - listed)});
   return result + "\n";
 }
 
@@ -193,6 +197,7 @@ std::string describe_holes(const Case& input) {
   const Plate& plate = input.problem.plate;
   if (plate.holes.empty() && plate.outline) return "";
   const std::size_t listed = plate.holes.size() > most_listed ? most_listed / 2 : plate.holes.size();
+  if (plate.holes.empty()) return row("Holes", {"none"});
   std::string result = row("Holes", {fmt::format("{}", plate.holes.size())});
   for (std::size_t i = 0; i < listed; ++i) result += describe_hole(input, i);
   if (listed < plate.holes.size()) {
@@ -231,7 +236,7 @@ Phrases meaning(const Plate& plate, const Load& load) {
     case Load::Kind::pressure:
       return {fmt::format("pressure: {} in {}", stress, plate.holes[load.hole].name)};
     case Load::Kind::face_pressure:
-      return {fmt::format("pressure: {} on the faces of {}", stress, label(plate.cracks, load.crack))};
+      return {fmt::format("pressure: {} on both faces of {}", stress, plate.cracks[load.crack].name)};
     case Load::Kind::edge:
       break;
   }
@@ -281,10 +286,21 @@ std::string describe_loads(const Case& input) {
   return result;
 }
 
+bool has_raisers(const Plate& plate) { return mesh::raiser_count(plate) > 0; }
+
+std::string usual_results(const Plate& plate) {
+  if (!has_raisers(plate)) return "stress intensity";
+  return std::string("largest and smallest edge stress, von Mises") + (plate.cracks.empty() ? "" : ", K");
+}
+
 std::string describe_question(const Case& input) {
+  const mesh::Plate& plate = input.problem.plate;
+  const std::vector<mesh::CrackTip> tips = mesh::tips(plate.cracks);
+  std::string of = has_raisers(plate) ? "the largest stress at the hole" : "K";
+  if (has_raisers(plate) && !tips.empty()) of = "the largest edge stress or K";
   std::string result =
       row("Asked", {fmt::format("{} results", input.asks.size()),
-                    fmt::format("tolerance {} of the largest stress at the hole{}", percent(input.tolerance),
+                    fmt::format("tolerance {} of {}{}", percent(input.tolerance), of,
                                 input.written.contains("ask.tolerance") ? "" : default_mark)});
   const auto chosen = [&](const std::string& key, const std::string& otherwise) {
     const auto written = input.written.find(key);
@@ -294,15 +310,18 @@ std::string describe_question(const Case& input) {
   const bool all =
       std::any_of(input.asks.begin(), input.asks.end(), [](const auto& ask) { return ask.name.empty(); });
   if (all) {
-    result += row("  results", {chosen("ask.results", "largest and smallest edge stress, von Mises")});
-    result += row("  at", {chosen(input.written.contains("ask.at") ? "ask.at" : "ask.holes", input.problem.plate.outline ? "every hole, notch and fillet" : "every hole")});
+    result += row("  results", {chosen("ask.results", usual_results(plate))});
+    if (has_raisers(plate))
+      result += row("  at", {chosen(input.written.contains("ask.at") ? "ask.at" : "ask.holes",
+                                    plate.outline ? "every hole, notch and fillet" : "every hole")});
+    if (!tips.empty()) result += row("  at tips", {chosen("ask.tips", "every crack tip")});
   }
   for (const solver::Ask& ask : input.asks) {
     if (ask.name.empty()) continue;
-    result +=
-        row("  " + ask.name,
-            {fmt::format("{} at {}", word(ask.quantity), mesh::raiser(input.problem.plate, ask.raiser).name),
-             fmt::format("tolerance {}", percent(ask.tolerance))});
+    const std::string place = solver::is_at_tip(ask.quantity) ? "tip " + tips[ask.raiser].name
+                                                              : mesh::raiser(plate, ask.raiser).name;
+    result += row("  " + ask.name, {fmt::format("{} at {}", word(ask.quantity), place),
+                                    fmt::format("tolerance {}", percent(ask.tolerance))});
   }
   return result;
 }
@@ -313,8 +332,8 @@ std::string describe(const Case& input) {
   const std::string title = input.title + (input.written.contains("title") ? "" : std::string(default_mark));
   return title + '\n' + row("File", {input.file.string(), fmt::format("format {}", case_format)}) + '\n' +
          describe_plate(input) + describe_material(input) + '\n' + describe_outline(input) +
-         describe_holes(input) + '\n' +
-         describe_loads(input) + '\n' + describe_question(input);
+         describe_holes(input) + describe_cracks(input) + '\n' + describe_loads(input) + '\n' +
+         describe_question(input);
 }
 
 }  // namespace raiser::io

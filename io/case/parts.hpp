@@ -39,6 +39,20 @@ struct HoleReading {
 /// A row or grid becomes one hole for each place. Adds their names to `names`.
 std::vector<HoleReading> read_holes(const Table& document, Names& names);
 
+/// A crack as far as it could be read. Its name and those of its tips are always
+/// there; they are also those of the crack itself.
+struct CrackReading {
+  std::string name;
+  std::vector<std::string> tips;  ///< one for a crack that opens at an edge, else two
+  std::optional<mesh::Crack> crack;
+  Position at;
+};
+/// Without the plate's sizes, cracks that open at an edge or a hole stay empty.
+/// They may open at the outline's notches and fillets, too. Their points are
+/// those of the plate, not of the drawing.
+std::vector<CrackReading> read_cracks(const Table& document, const PlateSizes& plate,
+                                      const OutlineReading& outline, const std::vector<HoleReading>& holes);
+
 /// A load as far as it could be read, and its place.
 struct LoadReading {
   std::optional<solver::Load> load;
@@ -48,19 +62,22 @@ struct LoadReading {
 /// sizes they need such loads stay empty.
 std::vector<LoadReading> read_loads(const Table& document, const PlateSizes& plate,
                                     const std::optional<mesh::Outline>& outline,
-                                    const std::vector<std::string_view>& holes);
+                                    const std::vector<std::string_view>& holes,
+                                    const std::vector<std::string_view>& cracks);
 
 /// What is asked for, in the order of [ask], then of [[ask.result]].
 struct Question {
   double tolerance = 1e-3;
+  double t_stress_tolerance = 1e-2;
   std::vector<solver::Ask> asks;
 };
 /// `raisers` are the names of the holes, then of what the outline has.
 Question read_question(const Table& document, const std::vector<std::string_view>& holes,
-                       const std::vector<std::string_view>& raisers);
+                       const std::vector<std::string_view>& raisers,
+                       const std::vector<std::string_view>& tips);
 
-/// How to write the name of a hole, for messages: the first one's, if any.
-std::string sample_of(const std::vector<std::string_view>& holes);
+/// How to write a name, for messages: the first one's, if any.
+std::string sample_of(const std::vector<std::string_view>& names, std::string_view otherwise = "hole 1");
 
 /// The word for a quantity in case files: "largest edge stress", ...
 std::string_view word(solver::Quantity quantity);

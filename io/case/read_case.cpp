@@ -27,6 +27,7 @@ struct Parts {
   Material material;
   OutlineReading outline;
   std::vector<HoleReading> holes;
+  std::vector<CrackReading> cracks;
   std::vector<LoadReading> loads;
   bool loads_are_sound = false;  ///< no fault was found in any
   Question question;
@@ -52,12 +53,14 @@ void complain_of_missing(const Table& document, std::string_view key, std::strin
 }
 
 Parts read_parts(const Table& document, const std::string& default_title) {
-  constexpr std::array<std::string_view, 10> keys{"raiser",  "title", "plate",    "material", "hole",
-                                                  "outline", "notch", "shoulder", "load",     "ask"};
+  constexpr std::array<std::string_view, 11> keys{
+      "raiser", "title", "plate", "material", "hole", "outline", "notch", "shoulder", "crack", "load", "ask"};
   refuse_unknown(document, keys);
   read_version(document);
   const Entry* title = find(document, "title");
-  Parts parts{text(document, title).value_or(default_title), document, {}, {}, {}, {}, {}, false, {}};
+  Parts parts;
+  parts.title = text(document, title).value_or(default_title);
+  parts.plate_table = document;
   const auto need = [&](std::string_view key, std::string_view contents) {
     const auto table = table_at(*document.node, key, *document.report);
     if (!table && find(document, key) == nullptr) {
@@ -84,16 +87,24 @@ Parts read_parts(const Table& document, const std::string& default_title) {
   std::vector<std::string_view> raisers = names;
   if (parts.outline.outline)
     for (const mesh::Raiser& raiser : parts.outline.outline->raisers) raisers.push_back(raiser.name);
+  parts.cracks = read_cracks(document, parts.plate, parts.outline, parts.holes);
+  std::vector<std::string_view> cracks;
+  std::vector<std::string_view> tips;
+  for (const CrackReading& crack : parts.cracks) {
+    cracks.push_back(crack.name);
+    tips.insert(tips.end(), crack.tips.begin(), crack.tips.end());
+  }
   const std::size_t faults_before = document.report->faults.size();
   // Edges of an outline that could not be drawn have no names to speak of.
   const bool known_edges = find(document, "outline") == nullptr && find(document, "shoulder") == nullptr;
   if (parts.outline.is_sound || known_edges)
-    parts.loads = read_loads(document, parts.plate, parts.outline.outline, names);
-  if (parts.outline.is_sound) parts.question = read_question(document, names, raisers);
+    parts.loads = read_loads(document, parts.plate, parts.outline.outline, names, cracks);
+  if (parts.outline.is_sound) parts.question = read_question(document, names, raisers, tips);
   parts.loads_are_sound = document.report->faults.size() == faults_before;
-  if (raisers.empty() && parts.outline.is_sound && find(document, "hole") == nullptr) {
+  const bool is_whole = find(document, "hole") == nullptr && find(document, "crack") == nullptr;
+  if (raisers.empty() && parts.outline.is_sound && is_whole) {
     complain_of_missing(document, "hole", "nothing on the plate raises its stress",
-                        "add [[hole]], [[notch]] or [[shoulder]] with its sizes");
+                        "add [[hole]], [[notch]], [[shoulder]] or [[crack]] with its sizes");
   }
   if (find(document, "load") == nullptr) {
     complain_of_missing(document, "load", "nothing loads the plate",
@@ -112,12 +123,13 @@ void add_fault(Report& report, Kind kind, const Position& at, std::string key, s
 struct PartialPlate {
   mesh::Plate plate;
   std::vector<std::size_t> index;
+  std::vector<std::size_t> crack_index;
 };
 std::optional<PartialPlate> readable_plate(const Parts& parts) {
   const PlateSizes& sizes = parts.plate;
   if (!sizes.length || !sizes.width || !sizes.thickness) return std::nullopt;
   if (!parts.outline.is_sound) return std::nullopt;
-  PartialPlate result{{*sizes.length, *sizes.width, *sizes.thickness, {}, parts.outline.outline}, {}};
+  PartialPlate result{{*sizes.length, *sizes.width, *sizes.thickness, {}, parts.outline.outline}, {}, {}};
   Names names;
   for (std::size_t i = 0; i < parts.holes.size(); ++i) {
     if (!parts.holes[i].hole) continue;
@@ -129,6 +141,14 @@ std::optional<PartialPlate> readable_plate(const Parts& parts) {
     result.plate.holes.push_back(std::move(hole));
     result.index.push_back(i);
   }
+  Names crack_names;
+  for (std::size_t i = 0; i < parts.cracks.size(); ++i) {
+    if (!parts.cracks[i].crack) continue;
+    mesh::Crack crack = *parts.cracks[i].crack;
+    if (!crack_names.insert(crack.name).second) crack.name = fmt::format("{} (number {})", crack.name, i + 1);
+    result.plate.cracks.push_back(std::move(crack));
+    result.crack_index.push_back(i);
+  }
   return result;
 }
 
@@ -136,6 +156,11 @@ void check_geometry(const Parts& parts, const PartialPlate& partial, Report& rep
   constexpr std::size_t told_in_full = 3;  // conflicts of one hole with others
   std::vector<std::size_t> conflicts(partial.plate.holes.size(), 0);
   for (const mesh::PlateFault& fault : mesh::faults(partial.plate)) {
+    if (fault.crack != mesh::PlateFault::none) {
+      add_fault(report, Kind::geometry, parts.cracks[partial.crack_index[fault.crack]].at, "crack",
+                fault.what, fault.cure);
+      continue;
+    }
     const bool of_hole = fault.hole != mesh::PlateFault::none;
     const bool of_pair = of_hole && fault.other != mesh::PlateFault::none;
     if (of_pair && ++conflicts[fault.hole] > told_in_full) continue;
@@ -173,6 +198,7 @@ Case assemble(const Parts& parts, mesh::Plate plate, Report& report, const std::
   for (const LoadReading& load : parts.loads) result.problem.loads.push_back(*load.load);
   result.asks = parts.question.asks;
   result.tolerance = parts.question.tolerance;
+  result.t_stress_tolerance = parts.question.t_stress_tolerance;
   result.yield_strength = parts.material.yield_strength;
   result.alloy = parts.material.alloy;
   result.written = std::move(report.written);
@@ -240,9 +266,10 @@ CaseReading read_case_text(std::string_view content, const std::string& name) {
   const Table document{&std::get<Node>(parsed), "", "", &report};
   const Parts parts = read_parts(document, std::filesystem::path(name).stem().string());
   const auto partial = readable_plate(parts);
-  const bool all_holes = partial && partial->index.size() == parts.holes.size();
+  const bool is_complete = partial && partial->index.size() == parts.holes.size() &&
+                           partial->crack_index.size() == parts.cracks.size();
   if (partial) check_geometry(parts, *partial, report);
-  if (all_holes) check_balance(parts, partial->plate, report);
+  if (is_complete) check_balance(parts, partial->plate, report);
   if (!report.faults.empty()) return failure(std::move(report.faults));
   return {assemble(parts, partial->plate, report, name), {}};
 }

@@ -13,13 +13,13 @@ namespace {
 using solver::Load;
 using Keys = std::span<const std::string_view>;
 
-constexpr std::array<std::string_view, 14> load_keys{
-    "name",     "kind", "direction", "stress",       "force", "moment",      "on", "hole",
-    "pressure", "edge", "normal",    "normal_force", "shear", "shear_force"};
+constexpr std::array<std::string_view, 15> load_keys{
+    "name",  "kind",     "direction", "stress", "force",        "moment", "on",         "hole",
+    "crack", "pressure", "edge",      "normal", "normal_force", "shear",  "shear_force"};
 constexpr std::array<std::string_view, 6> tension_keys{"name", "kind", "direction", "stress", "force", "on"};
 constexpr std::array<std::string_view, 4> shear_keys{"name", "kind", "stress", "force"};
 constexpr std::array<std::string_view, 5> bending_keys{"name", "kind", "stress", "moment", "on"};
-constexpr std::array<std::string_view, 4> pressure_keys{"name", "kind", "hole", "pressure"};
+constexpr std::array<std::string_view, 5> pressure_keys{"name", "kind", "hole", "crack", "pressure"};
 constexpr std::array<std::string_view, 7> edge_keys{"name",         "kind",  "edge",       "normal",
                                                     "normal_force", "shear", "shear_force"};
 constexpr std::array kinds{Load::Kind::tension, Load::Kind::shear, Load::Kind::bending, Load::Kind::pressure,
@@ -31,6 +31,7 @@ struct Context {
   std::optional<mesh::Plate> drawn;  ///< the plate without its holes, when its outline is no rectangle
   std::vector<std::string> edges;
   const std::vector<std::string_view>& holes;
+  const std::vector<std::string_view>& cracks;
 };
 
 /// Area of the section of the given length, mm^2; empty without the sizes.
@@ -61,7 +62,8 @@ std::optional<solver::LoadedEnds> ends_of(const Table& table, const Context& con
   if (!context.drawn) return std::nullopt;
   auto ends = solver::loaded_ends(*context.drawn, axis);
   if (!ends)
-    complain(table, fmt::format("the outline has no straight edge at both of its {}", axis == 0 ? "ends" : "sides"),
+    complain(table,
+             fmt::format("the outline has no straight edge at both of its {}", axis == 0 ? "ends" : "sides"),
              "load edges by name with kind = \"edge\"");
   return ends;
 }
@@ -77,7 +79,8 @@ std::optional<double> on_smaller(const Table& table, const solver::LoadedEnds& e
   if (entry == nullptr) {
     if (equal || find(table, "stress") == nullptr) return 1.0;
     complain(table, fmt::format("the ends differ: {:.6g} and {:.6g} mm^2", ends.low.area, ends.high.area),
-             fmt::format("say which one the stress stands on, e.g. on = \"{}\", or give a force or moment", own.front()));
+             fmt::format("say which one the stress stands on, e.g. on = \"{}\", or give a force or moment",
+                         own.front()));
     return std::nullopt;
   }
   const auto index = choice(table, entry, own);
@@ -140,13 +143,16 @@ std::optional<Load> read_bending(const Table& table, const Context& context) {
 
 std::optional<Load> read_pressure(const Table& table, const Context& context) {
   refuse_unfitting(table, "pressure", load_keys, pressure_keys);
-  const auto hole = choice(table, require(table, "hole", sample_of(context.holes)), context.holes);
+  constexpr std::array<std::string_view, 2> places{"hole", "crack"};
+  const Entry* place = require_one(table, places, sample_of(context.holes));
+  const bool on_crack = place != nullptr && place->key == "crack";
+  const auto index = choice(table, place, on_crack ? context.cracks : context.holes);
   const auto pressure =
       quantity(table, require(table, "pressure", "\"10 MPa\""), Dimension::stress, Sign::nonzero);
-  if (!hole || !pressure) return std::nullopt;
+  if (!index || !pressure) return std::nullopt;
   Load load;
-  load.kind = Load::Kind::pressure;
-  load.hole = *hole;
+  load.kind = on_crack ? Load::Kind::face_pressure : Load::Kind::pressure;
+  (on_crack ? load.crack : load.hole) = *index;
   load.stress = *pressure;
   return load;
 }
@@ -190,6 +196,7 @@ std::optional<Load> read_kind(const Table& table, const Context& context, Load::
     case Load::Kind::bending:
       return read_bending(table, context);
     case Load::Kind::pressure:
+    case Load::Kind::face_pressure:
       return read_pressure(table, context);
     case Load::Kind::edge:
       return read_edge(table, context);
@@ -225,6 +232,8 @@ std::string default_name(const std::optional<Load>& load, const Context& context
       return "tension across";
     case Load::Kind::pressure:
       return fmt::format("pressure in {}", context.holes[load->hole]);
+    case Load::Kind::face_pressure:
+      return fmt::format("pressure in {}", context.cracks[load->crack]);
     case Load::Kind::edge:
       return fmt::format("{} edge", context.edges[load->edge]);
   }
@@ -263,7 +272,8 @@ std::optional<Load> read_load(const Table& table, const Context& context) {
 
 std::vector<LoadReading> read_loads(const Table& document, const PlateSizes& plate,
                                     const std::optional<mesh::Outline>& outline,
-                                    const std::vector<std::string_view>& holes) {
+                                    const std::vector<std::string_view>& holes,
+                                    const std::vector<std::string_view>& cracks) {
   std::vector<LoadReading> loads;
   std::vector<Table> tables = tables_at(document, "load");
   if (tables.size() > most_loads) {
@@ -271,7 +281,7 @@ std::vector<LoadReading> read_loads(const Table& document, const PlateSizes& pla
              fmt::format("a case has at most {}; put loads of one kind together", most_loads));
     tables.erase(tables.begin() + most_loads, tables.end());
   }
-  Context context{plate, std::nullopt, {"right", "top", "left", "bottom"}, holes};
+  Context context{plate, std::nullopt, {"right", "top", "left", "bottom"}, holes, cracks};
   if (outline && plate.length && plate.width && plate.thickness) {
     context.drawn = mesh::Plate{*plate.length, *plate.width, *plate.thickness, {}, outline};
     context.edges = outline->edges;

@@ -11,12 +11,16 @@ namespace {
 
 using Keys = std::span<const std::string_view>;
 
-constexpr std::array<std::string_view, 11> hole_keys{"name",  "shape",         "diameter", "radius", "length",
-                                                    "width", "corner_radius", "at",       "angle",  "repeat", "pitch"};
+constexpr std::array<std::string_view, 11> hole_keys{"name",   "shape",  "diameter",      "radius",
+                                                     "length", "width",  "corner_radius", "at",
+                                                     "angle",  "repeat", "pitch"};
 constexpr std::array<std::string_view, 2> circle_sizes{"diameter", "radius"};
-constexpr std::array<std::string_view, 7> circle_keys{"name", "shape", "diameter", "radius", "at", "repeat", "pitch"};
-constexpr std::array<std::string_view, 8> long_hole_keys{"name", "shape", "length", "width", "at", "angle", "repeat", "pitch"};
-constexpr std::array<std::string_view, 9> rectangle_keys{"name", "shape", "length", "width", "corner_radius", "at", "angle", "repeat", "pitch"};
+constexpr std::array<std::string_view, 7> circle_keys{"name", "shape",  "diameter", "radius",
+                                                      "at",   "repeat", "pitch"};
+constexpr std::array<std::string_view, 8> long_hole_keys{"name", "shape", "length", "width",
+                                                         "at",   "angle", "repeat", "pitch"};
+constexpr std::array<std::string_view, 9> rectangle_keys{"name", "shape", "length", "width", "corner_radius",
+                                                         "at",   "angle", "repeat", "pitch"};
 constexpr std::array shapes{mesh::HoleShape::circle, mesh::HoleShape::ellipse, mesh::HoleShape::slot,
                             mesh::HoleShape::rounded_rectangle};
 
@@ -127,8 +131,8 @@ std::optional<mesh::Hole> read_hole(const Table& table, const std::string& name)
 
 }  // namespace
 
-std::string sample_of(const std::vector<std::string_view>& holes) {
-  return fmt::format("\"{}\"", holes.empty() ? "hole 1" : holes.front());
+std::string sample_of(const std::vector<std::string_view>& names, std::string_view otherwise) {
+  return fmt::format("\"{}\"", names.empty() ? otherwise : names.front());
 }
 
 PlateSizes read_plate(const Table& table, bool is_drawn) {

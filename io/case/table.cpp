@@ -52,7 +52,8 @@ void complain_of_kind(const Table& table, const Entry& entry, const Node& value,
 std::string as_written(const Node& value) {
   if (value.kind != Node::Kind::array) return value.text;
   std::vector<std::string> parts;
-  for (const Node& item : value.items) parts.push_back(item.text);
+  for (const Node& item : value.items)
+    parts.push_back(item.kind == Node::Kind::array ? fmt::format("({})", as_written(item)) : item.text);
   return fmt::format("{}", fmt::join(parts, ", "));
 }
 
@@ -123,6 +124,10 @@ bool is_control(char c) { return static_cast<unsigned char>(c) < 0x20 || c == '\
 
 void complain(const Table& table, const Entry& entry, std::string what, std::string cure) {
   complain_of(table, entry, entry.value, std::move(what), std::move(cure));
+}
+
+void complain(const Table& table, const Entry& entry, const Node& item, std::string what, std::string cure) {
+  complain_of(table, entry, item, std::move(what), std::move(cure));
 }
 
 void complain(const Table& table, std::string what, std::string cure) {

@@ -33,6 +33,9 @@ struct Table {
 /// Adds a fault at the place of a value of the table.
 void complain(const Table& table, const Entry& entry, std::string what, std::string cure);
 
+/// Adds a fault at the place of one item of such a value.
+void complain(const Table& table, const Entry& entry, const Node& item, std::string what, std::string cure);
+
 /// Adds a fault of the table as a whole.
 void complain(const Table& table, std::string what, std::string cure);
 

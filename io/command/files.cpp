@@ -42,8 +42,8 @@ Target target_of(const std::filesystem::path& case_file, const std::filesystem::
 }
 
 const std::vector<std::string>& result_suffixes() {
-  static const std::vector<std::string> suffixes{".vtu", ".json",     ".png",
-                                                 ".svg", "-edge.csv", "-ligament.csv"};
+  static const std::vector<std::string> suffixes{".vtu",      ".json",         ".png",     ".svg",
+                                                 "-edge.csv", "-ligament.csv", "-tips.csv"};
   return suffixes;
 }
 
@@ -94,6 +94,7 @@ std::vector<std::filesystem::path> write_results(const Result& result, const std
   staging.add(stem + "-edge.csv", edge_csv(result.input, result.solution));
   staging.add(stem + "-ligament.csv", ligament_csv(result.input, result.solution));
   if (charts) add_charts(result, stem, staging);
+  if (!result.input.problem.plate.cracks.empty()) staging.add(stem + "-tips.csv", tips_csv(result));
   return staging.publish();
 }
 

@@ -95,6 +95,9 @@ void keep_findings(Outcome& outcome, const Result& result) {
   for (const solver::RaiserFindings& found : outcome.raisers) {
     outcome.raiser_names.push_back(mesh::raiser(result.input.problem.plate, found.raiser).name);
   }
+  outcome.tips = result.solution.combined.tips;
+  const std::vector<mesh::CrackTip> tips = mesh::tips(result.input.problem.plate.cracks);
+  for (const solver::TipFindings& found : outcome.tips) outcome.tip_names.push_back(tips.at(found.tip).name);
 }
 
 void tell_written(const Session& session, const std::vector<std::filesystem::path>& files) {

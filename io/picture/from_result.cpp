@@ -4,9 +4,12 @@
 
 #include <algorithm>
 #include <cmath>
+#include <functional>
 #include <numbers>
+#include <utility>
 
 #include "io/picture/sampling.hpp"
+#include "io/write/crack_words.hpp"
 #include "io/write/layout.hpp"
 
 namespace raiser::io {
@@ -61,6 +64,8 @@ std::string load_words(const Result& result, const solver::Load& load) {
   words += fmt::format(" {}", amount(load.stress, "MPa"));
   if (load.kind == solver::Load::Kind::edge && load.along != 0.0)
     words += fmt::format(" and {} along it", amount(load.along, "MPa"));
+  if (load.kind == solver::Load::Kind::face_pressure)
+    words += fmt::format(" in {}", plain(mesh::label(result.input.problem.plate.cracks, load.crack)));
   if (load.kind == solver::Load::Kind::pressure) words += fmt::format(" in {}", name_of(result, load.hole));
   return words;
 }
@@ -89,14 +94,51 @@ std::string constants_line(const solver::HookeLaw& law) {
                      amount(law.orthotropy->shear_modulus, "MPa"), brief(law.poissons_ratio));
 }
 
-std::vector<std::string> caption(const Result& result, const RaiserFindings& found) {
+std::string intensity_words(const solver::TipFindings& found) {
+  return fmt::format("K_I {}, K_II {}", amount(found.k_one, ""), amount(found.k_two, "MPa √mm"));
+}
+
+std::string tip_name(const Result& result, std::size_t tip) {
+  return tip_phrase(mesh::tips(result.input.problem.plate.cracks).at(tip).name);
+}
+
+const RaiserFindings* worst_raiser(const Result& result) {
+  const auto& all = result.solution.combined;
+  return all.raisers.empty() ? nullptr : &all.raisers[worst_first(all).front()];
+}
+
+void add_crack_lines(std::vector<std::string>& lines, const Result& result, std::optional<double> top) {
+  const auto& all = result.solution.combined;
+  if (all.tips.empty()) return;
+  const solver::TipFindings& worst = all.tips[worst_tips_first(all).front()];
+  lines.push_back(fmt::format("{} at {}", intensity_words(worst), tip_name(result, worst.tip)));
+  if (top)
+    lines.push_back(fmt::format(
+        "The stress at a crack tip grows without limit and there is no Kt of it: the colours end near {}, {}",
+        together(brief(*top, 4) + " MPa"),
+        all.raisers.empty() ? "exceeded on a hundredth of the area"
+                            : "the largest stress on edges or on all but a hundredth of the area"));
+  for (const solver::CrackOpening& opening : result.solution.openings)
+    if (opening.is_closed())
+      lines.push_back(
+          fmt::format("The faces of {} press on each other and were solved as free: K does not hold",
+                      plain(mesh::label(result.input.problem.plate.cracks, opening.crack))));
+}
+
+void add_peak_lines(std::vector<std::string>& lines, const Result& result, const RaiserFindings& found) {
+  lines.push_back(fmt::format("Peak edge stress {} at {}", amount(peak_place(found).stress, "MPa"),
+                              name_of(result, found.raiser)));
+  add_concentration(lines, "Kt gross", found.gross);
+  add_concentration(lines, "Kt net", found.net);
+}
+
+std::vector<std::string> caption(const Result& result, std::optional<double> top) {
   const auto& problem = result.input.problem;
   const auto& plate = problem.plate;
   const auto& solution = result.solution;
-  std::vector<std::string> lines{fmt::format(
-      "Peak edge stress {} at {}", amount(peak_place(found).stress, "MPa"), name_of(result, found.raiser))};
-  add_concentration(lines, "Kt gross", found.gross);
-  add_concentration(lines, "Kt net", found.net);
+  std::vector<std::string> lines;
+  add_crack_lines(lines, result, top);
+  if (const RaiserFindings* found = worst_raiser(result)) add_peak_lines(lines, result, *found);
   lines.push_back(fmt::format("Plate {} × {} × {}", brief(plate.length), brief(plate.width),
                               amount(plate.thickness, "mm")));
   lines.push_back(
@@ -197,24 +239,62 @@ CellSource source_of(const solver::Field& field) {
           }};
 }
 
+/// Where colours end in a plate with cracks: at the largest stress on the edges
+/// of holes and notches, or at what only a hundredth of the area exceeds.
+double colour_top(const Result& result) {
+  double top = 0.0;
+  for (const RaiserFindings& found : result.solution.combined.raisers)
+    top = std::max(top, found.von_mises.stress.value);
+  const std::vector<Point> inside = {{1.0 / 6, 1.0 / 6}, {2.0 / 3, 1.0 / 6}, {1.0 / 6, 2.0 / 3}};
+  const solver::Field& field = result.solution.field;
+  std::vector<std::pair<double, double>> values;  // with the area that has it
+  double area = 0.0;
+  for (std::size_t cell = 0; cell < field.cells(); ++cell) {
+    const auto at = field.sample(cell, inside);
+    const Point a = at[1].point - at[0].point, b = at[2].point - at[0].point;
+    const double own = std::abs(a.x() * b.y() - a.y() * b.x());
+    for (const solver::FieldValue& value : at) values.emplace_back(solver::von_mises(value.stress), own);
+    area += own * static_cast<double>(at.size());
+  }
+  std::sort(values.begin(), values.end(), std::greater<>());
+  double above = 0.0;
+  for (const auto& [value, own] : values)
+    if ((above += own) > 0.01 * area) return std::max(top, value);
+  return top;
+}
+
+void add_tips(Picture& picture, const Result& result) {
+  const auto& found = result.solution.combined;
+  if (found.tips.empty()) return;
+  picture.top = colour_top(result);
+  const std::vector<mesh::CrackTip> tips = mesh::tips(picture.plate.cracks);
+  for (const std::size_t i : worst_tips_first(found)) {
+    const solver::TipFindings& own = found.tips[i];
+    picture.tips.push_back({own.tip, tips.at(own.tip).at,
+                            fmt::format("{}: {}", tip_name(result, own.tip), intensity_words(own))});
+  }
+}
+
 }  // namespace
 
 Picture picture_of(const Result& result) {
   const auto& solution = result.solution;
-  const RaiserFindings& worst = findings(result, worst_first(solution.combined).front());
-  const EdgeValue& peak = peak_place(worst);
   Picture picture;
   picture.title = title_of(result);
   picture.plate = result.input.problem.plate;
   for (mesh::Hole& hole : picture.plate.holes) hole.name = plain(hole.name);
   picture.quantity = "von Mises stress";
   picture.unit = "MPa";
-  picture.focus = worst.raiser;
-  std::string label = "peak edge stress " + amount(peak.stress, "MPa");
-  if (worst.gross.kt) label += ", " + together("Kt gross ") + amount(*worst.gross.kt, "");
-  picture.peaks.push_back({peak.point, von_mises_near(result, worst.raiser, peak.point), label});
+  if (const RaiserFindings* worst = worst_raiser(result)) {
+    const EdgeValue& peak = peak_place(*worst);
+    picture.focus = worst->raiser;
+    std::string label = "peak edge stress " + amount(peak.stress, "MPa");
+    if (worst->gross.kt) label += ", " + together("Kt gross ") + amount(*worst->gross.kt, "");
+    picture.peaks.push_back({peak.point, von_mises_near(result, worst->raiser, peak.point), label});
+  }
+  add_tips(picture, result);
   picture.arrows = arrows(result.input.problem);
-  picture.caption = caption(result, worst);
+  picture.caption = caption(result, picture.top);
   picture.caution = "Linear elastic, 2D, nominal geometry; not a substitute for an independent check.";
   picture.cells = sampled(source_of(solution.field), picture);
   return picture;

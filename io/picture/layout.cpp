@@ -29,11 +29,12 @@ double fit(const mesh::Plate& plate, Room room) {
 // at (x, y): the hole's neighbourhood, or that of the peak where the hole is
 // too large for the page to show it much larger.
 bool place_detail(Layout& page, const Picture& picture, double x, double y, double side) {
-  if (!picture.focus) return false;
-  const Window window = neighbourhood(picture.plate, *picture.focus);
+  if (!picture.focus && picture.tips.empty()) return false;
+  const Window window = picture.tips.empty() ? neighbourhood(picture.plate, *picture.focus)
+                                             : neighbourhood_of_tip(picture.plate, picture.tips.front().tip);
   const double scale = side / (2 * window.half);
   const Box box{x + page::axis_left, y, side, side};
-  page.at_peak = scale < 1.8 * page.whole.scale && !picture.peaks.empty();
+  page.at_peak = scale < 1.8 * page.whole.scale && !picture.peaks.empty() && picture.tips.empty();
   if (page.at_peak)
     page.detail = View{box, picture.peaks.front().point, 3 * page.whole.scale};
   else if (scale > 1.3 * page.whole.scale)
@@ -104,6 +105,12 @@ Window around(const mesh::Outline& outline, std::size_t raiser) {
 }
 
 }  // namespace
+
+Window neighbourhood_of_tip(const mesh::Plate& plate, std::size_t index) {
+  const mesh::CrackTip tip = mesh::tips(plate.cracks).at(index);
+  const mesh::Crack& crack = plate.cracks[tip.crack];
+  return {tip.at, (crack.has_mouth ? 1.2 : 0.8) * crack.length()};
+}
 
 Window neighbourhood(const mesh::Plate& plate, std::size_t index) {
   if (index >= plate.holes.size() && plate.outline) return around(*plate.outline, index - plate.holes.size());

@@ -4,12 +4,14 @@
 
 #include <algorithm>
 #include <cmath>
+#include <limits>
 #include <stdexcept>
 
 #include "io/picture/colours.hpp"
 #include "io/picture/layout.hpp"
 #include "io/picture/levels.hpp"
 #include "io/picture/paint.hpp"
+#include "io/write/crack_words.hpp"
 #include "io/write/file.hpp"
 #include "io/write/layout.hpp"
 
@@ -105,6 +107,14 @@ void draw_loads(Canvas& canvas, const Picture& picture, const View& view, Labels
   }
 }
 
+void draw_cracks(Canvas& canvas, const Picture& picture, const View& view) {
+  for (const mesh::Crack& crack : picture.plate.cracks) {
+    canvas.move_to(view.on_paper(crack.points.front()));
+    for (std::size_t i = 1; i < crack.points.size(); ++i) canvas.line_to(view.on_paper(crack.points[i]));
+  }
+  canvas.stroke(ink::outline, 1.6);
+}
+
 // The bands reach a little into the holes, whose edges the triangles follow by
 // chords: the holes are painted over afterwards, which costs less than a clip.
 void draw_view(Canvas& canvas, const Picture& picture, const mesh::Region& region, const View& view,
@@ -113,13 +123,14 @@ void draw_view(Canvas& canvas, const Picture& picture, const mesh::Region& regio
   canvas.save();
   canvas.rectangle(view.box.grown(0.6));
   canvas.clip();
-  add_outline(canvas, {{*outer}}, view);
+  add_outline(canvas, {{*outer}, {}, {}}, view);
   canvas.fill(band_colour(0, limits.size() - 1));
   draw_bands(canvas, picture, view, limits);
-  add_outline(canvas, {{outer + 1, region.loops.end()}}, view);
+  add_outline(canvas, {{outer + 1, region.loops.end()}, {}, {}}, view);
   canvas.fill({1, 1, 1});
   add_outline(canvas, region, view);
   canvas.stroke(ink::outline, 1.0);
+  if (!picture.plate.cracks.empty()) draw_cracks(canvas, picture, view);
   canvas.restore();
 }
 
@@ -135,7 +146,9 @@ void draw_bar(Canvas& canvas, const Picture& picture, const Box& bar, const std:
     canvas.move_to({bar.x, y});
     canvas.line_to({bar.right() + 3, y});
     canvas.stroke(ink::iso_line, 0.45);
-    canvas.text(tick_text(limits[i]), {bar.right() + 6, y + 3}, page::small, ink::text);
+    const bool is_open = picture.top && i == bands;
+    canvas.text(tick_text(limits[i]) + (is_open ? " and above" : ""), {bar.right() + 6, y + 3}, page::small,
+                ink::text);
   }
   canvas.rectangle(bar);
   canvas.stroke(ink::outline, 0.7);
@@ -186,6 +199,20 @@ void draw_peaks(Canvas& canvas, const Picture& picture, const View& view, const 
                     picture.peaks[i].label, bounds);
 }
 
+void draw_tips(Canvas& canvas, const Picture& picture, const View& view, const Box& bounds, Labels& labels) {
+  constexpr double radius = 3.0;
+  std::vector<const TipMark*> seen;
+  for (const TipMark& tip : picture.tips) {
+    const Spot at = view.on_paper(tip.point);
+    if (!view.box.grown(0.5).holds({at.x(), at.y(), 0, 0})) continue;
+    draw_mark(canvas, at, radius);
+    labels.take({at.x() - 5, at.y() - 5, 10, 10});
+    seen.push_back(&tip);
+  }
+  for (const TipMark* tip : seen)
+    draw_call_out(canvas, labels, view.on_paper(tip->point), radius, tip->label, bounds);
+}
+
 void draw_axes(Canvas& canvas, const View& view, const Spot& away) {
   const Point half = Point(view.box.width, view.box.height) / (2 * view.scale);
   draw_x_axis(canvas, view.box, away.y(),
@@ -224,6 +251,16 @@ void draw_frame(Canvas& canvas, Labels& labels, const Layout& page) {
   labels.take(tag);
 }
 
+// What the enlargement shows, with a comma; empty when it has no name.
+std::string name_of_focus(const Picture& picture) {
+  if (!picture.tips.empty()) {
+    const std::string name = plain(mesh::tips(picture.plate.cracks).at(picture.tips.front().tip).name);
+    return tip_phrase(name) + ", ";
+  }
+  const mesh::Raiser focus = mesh::raiser(picture.plate, *picture.focus);
+  return focus.name.empty() ? "" : phrase(focus) + ", ";
+}
+
 void draw_detail(Canvas& canvas, const Picture& picture, const mesh::Region& region, const Layout& page,
                  const std::vector<double>& limits) {
   const View& view = *page.detail;
@@ -239,14 +276,13 @@ void draw_detail(Canvas& canvas, const Picture& picture, const mesh::Region& reg
   canvas.stroke(ink::text, 1.0);
   const Box tag{view.box.x, view.box.y - 18, tag_size, tag_size};
   draw_tag(canvas, tag);
-  const mesh::Raiser focus = mesh::raiser(picture.plate, *picture.focus);
-  const std::string heading =
-      fmt::format("{}{}enlarged {:.2g} times", focus.name.empty() ? "" : phrase(focus) + ", ",
-                  page.at_peak ? "at the peak, " : "", view.scale / page.whole.scale);
+  const std::string heading = fmt::format("{}{}enlarged {:.2g} times", name_of_focus(picture),
+                                          page.at_peak ? "at the peak, " : "", view.scale / page.whole.scale);
   canvas.text(wrapped(heading, page::small, view.box.width - 18).front(), {tag.right() + 5, tag.y + 9.5},
               page::small, ink::text);
   draw_axes(canvas, view, {4.0, 4.0});
   draw_peaks(canvas, picture, view, view.box.grown(-5), labels, true);
+  draw_tips(canvas, picture, view, view.box.grown(-5), labels);
 }
 
 void draw_words(Canvas& canvas, const Layout& page) {
@@ -288,6 +324,7 @@ std::string drawn(const Picture& picture, PaperKind kind) {
   const Box bounds{plate.x - page.rim_x + 2, plate.y - page.rim_y + 2, plate.width + 2 * page.rim_x - 4,
                    plate.height + 2 * page.rim_y - 4};
   draw_peaks(canvas, picture, page.whole, bounds, labels, !page.detail);
+  if (!page.detail) draw_tips(canvas, picture, page.whole, bounds, labels);
   if (page.detail) draw_detail(canvas, picture, region, page, limits);
   draw_bar(canvas, picture, page.bar, limits);
   return canvas.finish();
@@ -296,16 +333,17 @@ std::string drawn(const Picture& picture, PaperKind kind) {
 }  // namespace
 
 std::vector<double> limits_of(const Picture& picture) {
+  const double top = picture.top.value_or(std::numeric_limits<double>::infinity());
   std::vector<Spread> values;
   for (const PictureCell& cell : picture.cells) {
     const auto n = static_cast<std::size_t>(cell.subdivisions);
     const Point a = cell.points[n] - cell.points[0], b = cell.points.back() - cell.points[0];
     const double area = std::abs(a.x() * b.y() - a.y() * b.x()) / 2;
     for (const double value : cell.values)
-      values.push_back({value, area / static_cast<double>(cell.values.size())});
+      values.push_back({std::min(value, top), area / static_cast<double>(cell.values.size())});
   }
   double largest = values.front().value;
-  for (const PeakMark& peak : picture.peaks) largest = std::max(largest, peak.value);
+  for (const PeakMark& peak : picture.peaks) largest = std::max(largest, std::min(peak.value, top));
   return band_limits(values, largest);
 }
 

@@ -17,6 +17,13 @@ struct PeakMark {
   std::string label;            ///< e.g. "peak 313.4 ± 0.3 MPa"; may be empty
 };
 
+/// A crack tip, where the stress has no limit.
+struct TipMark {
+  std::size_t tip = 0;  ///< index into mesh::tips(plate.cracks)
+  Point point = Point::Zero();
+  std::string label;  ///< e.g. "tip A: K_I 511.3 ± 0.2 MPa √mm"
+};
+
 /// A traction to be drawn as an arrow on the boundary.
 struct LoadArrow {
   Point at = Point::Zero();        ///< mm, on the boundary
@@ -34,6 +41,8 @@ struct Picture {
   std::vector<PictureCell> cells;
   std::vector<PeakMark> peaks;
   std::optional<std::size_t> focus;  ///< the raiser to show enlarged, if any
+  std::vector<TipMark> tips;         ///< the worst first; it is shown enlarged in place of a raiser
+  std::optional<double> top;         ///< all that is above has the highest colour; no end when empty
   std::vector<LoadArrow> arrows;
   std::vector<std::string> caption;  ///< lines, the first one stressed
   std::string caution;               ///< the line at the foot
@@ -47,6 +56,9 @@ struct Window {
   double half = 0.0;
 };
 Window neighbourhood(const mesh::Plate& plate, std::size_t raiser);
+
+/// The same around a crack tip: as much of the plate as the crack is long.
+Window neighbourhood_of_tip(const mesh::Plate& plate, std::size_t tip);
 
 /// The limits of the bands that the picture is drawn with.
 std::vector<double> limits_of(const Picture& picture);

@@ -8,6 +8,9 @@
 #include <optional>
 #include <string_view>
 
+#include "io/write/crack_words.hpp"
+#include "solver/crack/factors.hpp"
+
 namespace raiser::io {
 namespace {
 
@@ -51,6 +54,37 @@ std::string kt_cells(const solver::Concentration& kt) {
   return numbers + "," + cell(kt.nominal) + "," + cell(kt.definition);
 }
 
+std::string estimate_cells(const solver::Estimate& estimate) {
+  return cell(estimate.value) + "," + cell(estimate.bound);
+}
+
+std::string factor_cells(const std::optional<solver::Estimate>& factor) {
+  return factor ? estimate_cells(*factor) : ",";
+}
+
+constexpr std::string_view tip_columns =
+    "K_I_MPa_sqrt_mm,K_I_bound_MPa_sqrt_mm,K_II_MPa_sqrt_mm,K_II_bound_MPa_sqrt_mm,T_MPa,T_bound_MPa,"
+    "G_N_per_mm,G_bound_N_per_mm";
+constexpr std::size_t tip_column_count = 8;
+
+std::string tip_cells(const solver::TipFindings& found) {
+  return estimate_cells(found.k_one) + "," + estimate_cells(found.k_two) + "," +
+         estimate_cells(found.t_stress) + "," + estimate_cells(found.energy_release);
+}
+
+std::string tip_line(const Result& result, const solver::LoadFindings& load,
+                     const solver::TipFindings& found) {
+  const mesh::Plate& plate = result.input.problem.plate;
+  const mesh::CrackTip tip = mesh::tips(plate.cracks).at(found.tip);
+  const Kink turn = kink(result.input, found);
+  const solver::CrackFactors factors = solver::crack_factors(plate, loads_of(result.input, load), found);
+  return line({cell(load.name), cell(tip.name), cell(plate.cracks[tip.crack].name), cell(tip.at.x()),
+               cell(tip.at.y()), cell(degrees(std::atan2(tip.direction.y(), tip.direction.x()))),
+               tip_cells(found), cell(found.j_integral), cell(found.extension), factor_cells(turn.angle),
+               factor_cells(factors.mode_one), factor_cells(factors.mode_two), cell(factors.nominal),
+               cell(factors.definition), cell(factors.size)});
+}
+
 std::string case_cells(const Outcome& outcome) {
   return cell(outcome.case_file) + "," + cell(outcome.title) + "," + cell(outcome.status) + "," +
          std::to_string(outcome.exit_code) + "," + cell(outcome.message) + "," + cell(outcome.seconds);
@@ -87,6 +121,20 @@ std::string ligament_csv(const Case& input, const solver::Solution& solution) {
   return text;
 }
 
+std::string tips_csv(const Result& result) {
+  std::string text = fmt::format(
+      "load,tip,crack,x_mm,y_mm,direction_deg,{},J_N_per_mm,virtual_extension_N_per_mm,kink_deg,kink_bound_"
+      "deg,"
+      "Y_I,Y_I_bound,Y_II,Y_II_bound,nominal_stress_MPa,nominal_stress_definition,a_mm\n",
+      tip_columns);
+  const auto add = [&](const solver::LoadFindings& load) {
+    for (const solver::TipFindings& found : load.tips) text += tip_line(result, load, found);
+  };
+  add(result.solution.combined);
+  for (const solver::LoadFindings& unit : result.solution.units) add(unit);
+  return text;
+}
+
 std::string summary_csv(const std::vector<Outcome>& outcomes) {
   std::string text = "case,title,status,exit_code,message,seconds,raiser";
   for (const std::string_view name :
@@ -96,17 +144,21 @@ std::string summary_csv(const std::vector<Outcome>& outcomes) {
   for (const std::string_view name : {"kt_gross", "kt_net"}) {
     text += fmt::format(",{0},{0}_bound,{0}_nominal_stress_MPa,{0}_definition", name);
   }
-  text += "\n";
+  text += fmt::format(",tip,{}\n", tip_columns);
   constexpr std::size_t raiser_columns = 1 + 3 * 5 + 2 * 4;
   for (const Outcome& outcome : outcomes) {
     const std::string head = case_cells(outcome);
-    if (outcome.raisers.empty()) text += head + std::string(raiser_columns, ',') + "\n";
+    if (outcome.raisers.empty() && outcome.tips.empty())
+      text += head + std::string(raiser_columns + 1 + tip_column_count, ',') + "\n";
     for (std::size_t i = 0; i < outcome.raisers.size(); ++i) {
       const solver::RaiserFindings& found = outcome.raisers[i];
       text += line({head, cell(outcome.raiser_names[i]), stress_cells(found.largest),
                     stress_cells(found.smallest), stress_cells(found.von_mises), kt_cells(found.gross),
-                    kt_cells(found.net)});
+                    kt_cells(found.net), std::string(tip_column_count, ',')});
     }
+    for (std::size_t i = 0; i < outcome.tips.size(); ++i)
+      text += head + std::string(raiser_columns, ',') + "," + cell(outcome.tip_names[i]) + "," +
+              tip_cells(outcome.tips[i]) + "\n";
   }
   return text;
 }

@@ -18,7 +18,12 @@ std::string edge_csv(const Case& input, const solver::Solution& solution);
 /// Stress along every ligament.
 std::string ligament_csv(const Case& input, const solver::Solution& solution);
 
-/// A line for each hole of each case, and one for each case without results.
+/// Stress intensity, T and what goes with them at every crack tip, under all
+/// loads together and under each.
+std::string tips_csv(const Result& result);
+
+/// A line for each raiser and each crack tip of each case, and one for each case
+/// without results.
 std::string summary_csv(const std::vector<Outcome>& outcomes);
 
 }  // namespace raiser::io

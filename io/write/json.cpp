@@ -7,7 +7,9 @@
 #include <numbers>
 
 #include "io/case/alloys.hpp"
+#include "io/write/crack_words.hpp"
 #include "io/write/layout.hpp"
+#include "solver/crack/factors.hpp"
 
 namespace raiser::io {
 namespace {
@@ -77,8 +79,85 @@ Json concentration(const solver::Concentration& kt) {
   return object;
 }
 
+Json without_value(std::string_view unit, std::string_view why) {
+  return {{"value", nullptr}, {"bound", nullptr}, {"unit", unit}, {"why", why}};
+}
+
+Json energies(const solver::TipFindings& found) {
+  const double g = found.energy_release.value;
+  const auto beside = [&](double value) {
+    Json object = quantity(value, "N/mm");
+    const auto off = relative_difference(value, g);
+    object["relative_difference"] = off ? Json(*off) : Json(nullptr);
+    return object;
+  };
+  Json domains = Json::array();
+  for (const Eigen::Vector3d& domain : found.domains)
+    domains.push_back({{"K_I", domain[0]}, {"K_II", domain[1]}, {"T", domain[2]}});
+  return {{"j_integral", beside(found.j_integral)},
+          {"virtual_extension", beside(found.extension)},
+          {"domains", domains}};
+}
+
+Json factors(const solver::CrackFactors& own) {
+  const auto factor = [&](const std::optional<solver::Estimate>& y) {
+    return y ? quantity(*y, "1") : without_value("1", own.why);
+  };
+  return {{"Y_I", factor(own.mode_one)},
+          {"Y_II", factor(own.mode_two)},
+          {"nominal_stress", quantity(own.nominal, "MPa")},
+          {"definition", own.definition},
+          {"a", quantity(own.size, "mm")},
+          {"a_definition", own.size_definition}};
+}
+
+Json tip(const Case& input, const std::vector<solver::Load>& loads, const solver::TipFindings& found) {
+  const mesh::Plate& plate = input.problem.plate;
+  const mesh::CrackTip at = mesh::tips(plate.cracks).at(found.tip);
+  const Kink turn = kink(input, found);
+  Json angle = turn.angle ? quantity(*turn.angle, "deg") : without_value("deg", turn.why);
+  angle["criterion"] = kink_criterion();
+  angle["sign"] = kink_sign();
+  return {{"tip", at.name},
+          {"crack", plate.cracks[at.crack].name},
+          {"at", position(at.at)},
+          {"direction", quantity(std::atan2(at.direction.y(), at.direction.x()) * degrees_per_radian, "deg")},
+          {"K_I", quantity(found.k_one, "MPa sqrt(mm)")},
+          {"K_II", quantity(found.k_two, "MPa sqrt(mm)")},
+          {"K_I_per_metre", quantity(found.k_one.scaled(1 / root_metre), "MPa sqrt(m)")},
+          {"K_II_per_metre", quantity(found.k_two.scaled(1 / root_metre), "MPa sqrt(m)")},
+          {"T_stress", quantity(found.t_stress, "MPa")},
+          {"energy_release_rate", quantity(found.energy_release, "N/mm")},
+          {"beside_it", energies(found)},
+          {"kink_angle", angle},
+          {"factors", factors(solver::crack_factors(plate, loads, found))},
+          {"kt", without_value("1", no_kt())}};
+}
+
+Json faces(const Case& input, const std::vector<solver::CrackOpening>& openings) {
+  Json list = Json::array();
+  for (const solver::CrackOpening& own : openings) {
+    const std::string warning = closed_warning(input, own);
+    list.push_back({{"crack", input.problem.plate.cracks.at(own.crack).name},
+                    {"least_opening", quantity(own.least, "mm")},
+                    {"at", position(own.where)},
+                    {"largest_distance", quantity(own.largest, "mm")},
+                    {"closed", own.is_closed()},
+                    {"warning", warning.empty() ? Json(nullptr) : Json(warning)}});
+  }
+  return list;
+}
+
+Json crack(const mesh::Crack& own) {
+  Json points = Json::array(), names = Json::array();
+  for (const mesh::Point& point : own.points) points.push_back(position(point));
+  for (const mesh::CrackTip& tip : mesh::tips({own})) names.push_back(tip.name);
+  return {{"name", own.name}, {"points", points}, {"has_mouth", own.has_mouth}, {"tips", names}};
+}
+
 // One list for each kind of raiser; that of the holes is always there.
-Json findings(const solver::LoadFindings& load, const mesh::Plate& plate) {
+Json findings(const solver::LoadFindings& load, const Case& input) {
+  const mesh::Plate& plate = input.problem.plate;
   Json object{{"load", load.name}, {"holes", Json::array()}};
   for (const solver::RaiserFindings& found : load.raisers) {
     const mesh::Raiser at = mesh::raiser(plate, found.raiser);
@@ -90,6 +169,8 @@ Json findings(const solver::LoadFindings& load, const mesh::Plate& plate) {
                                        {"kt_net", concentration(found.net)},
                                        {"section", section(found.section)}});
   }
+  for (const solver::TipFindings& found : load.tips)
+    object["tips"].push_back(tip(input, loads_of(input, load), found));
   return object;
 }
 
@@ -106,6 +187,7 @@ Json hole(const mesh::Hole& h) {
 Json load(const solver::Load& l, const mesh::Plate& plate) {
   Json object{{"name", l.name}, {"kind", solver::word(l.kind)}, {"stress", quantity(l.stress, "MPa")}};
   if (l.kind == solver::Load::Kind::pressure) object["hole"] = plate.holes.at(l.hole).name;
+  if (l.kind == solver::Load::Kind::face_pressure) object["crack"] = plate.cracks.at(l.crack).name;
   if (l.kind == solver::Load::Kind::edge) {
     object["edge"] = mesh::edge_names(plate).at(l.edge);
     object["along"] = quantity(l.along, "MPa");
@@ -153,7 +235,8 @@ Json outline(const mesh::Outline& o) {
 
 Json input(const Case& c) {
   const mesh::Plate& plate = c.problem.plate;
-  Json holes = Json::array(), loads = Json::array();
+  Json holes = Json::array(), cracks = Json::array(), loads = Json::array();
+  for (const mesh::Crack& own : plate.cracks) cracks.push_back(crack(own));
   for (const mesh::Hole& h : plate.holes) holes.push_back(hole(h));
   for (const solver::Load& l : c.problem.loads) loads.push_back(load(l, plate));
   Json object{{"plate",
@@ -164,6 +247,7 @@ Json input(const Case& c) {
   if (c.drawing_origin) object["drawing_origin"] = position(*c.drawing_origin);
   object["material"] = material(c);
   object["holes"] = holes;
+  object["cracks"] = cracks;
   object["loads"] = loads;
   object["written"] = c.written;
   return object;
@@ -180,6 +264,20 @@ Json asked(const Result& result) {
                     {"result", edge_value(answer.value)},
                     {"tolerance", quantity(answer.ask.tolerance, "1")},
                     {"largest_bound_allowed", quantity(answer.allowed, "MPa")},
+                    {"met", answer.met}});
+  }
+  const std::vector<mesh::CrackTip> tips = mesh::tips(result.input.problem.plate.cracks);
+  for (const TipAnswer& answer : tip_answers(result.input, result.solution)) {
+    const std::string& name = answer.ask.name;
+    const std::string_view unit = answer.values.size() > 1 ? "MPa sqrt(mm)" : "MPa";
+    Json values = Json::array();
+    for (const solver::Estimate& value : answer.values) values.push_back(quantity(value, unit));
+    list.push_back({{"name", name.empty() ? Json(nullptr) : Json(name)},
+                    {"quantity", words(answer.ask.quantity)},
+                    {"tip", tips.at(answer.ask.raiser).name},
+                    {"results", values},
+                    {"tolerance", quantity(answer.ask.tolerance, "1")},
+                    {"largest_bound_allowed", quantity(answer.allowed, unit)},
                     {"met", answer.met}});
   }
   return list;
@@ -284,9 +382,9 @@ Json document(const Result& result) {
   const Provenance& from = result.provenance;
   const bool settled = solution.status == solver::Solution::Status::settled;
   Json loads = Json::array();
-  loads.push_back(findings(solution.combined, result.input.problem.plate));
+  loads.push_back(findings(solution.combined, result.input));
   for (const solver::LoadFindings& unit : solution.units) {
-    loads.push_back(findings(unit, result.input.problem.plate));
+    loads.push_back(findings(unit, result.input));
   }
   return {{"format", "raiser result"},
           {"format_version", json_format},
@@ -301,6 +399,7 @@ Json document(const Result& result) {
           {"reason", settled ? Json(nullptr) : Json(solution.reason)},
           {"asked", asked(result)},
           {"results", loads},
+          {"crack_faces", faces(result.input, solution.openings)},
           {"published", published(result)},
           {"places_without_peak", places(result)},
           {"checks", checks(solution.checks)},

@@ -31,6 +31,18 @@ struct Answer {
 /// The answers in the order of the asks.
 std::vector<Answer> answers(const Case& input, const solver::Solution& solution);
 
+/// What one ask at a crack tip came to: K_I and K_II, or T.
+struct TipAnswer {
+  solver::Ask ask;
+  std::vector<solver::Estimate> values;
+  double allowed = 0.0;  ///< MPa sqrt(mm) or MPa: the largest bound that meets the ask's tolerance
+  bool met = false;
+};
+std::vector<TipAnswer> tip_answers(const Case& input, const solver::Solution& solution);
+
+/// The loads that findings are of.
+std::vector<solver::Load> loads_of(const Case& input, const solver::LoadFindings& findings);
+
 /// The words for a quantity, e.g. "largest edge stress".
 std::string_view words(solver::Quantity quantity);
 
@@ -43,6 +55,9 @@ std::vector<std::size_t> worst_first(const solver::LoadFindings& findings);
 
 /// The largest magnitude of edge stress at a raiser, MPa.
 double peak(const solver::RaiserFindings& findings);
+
+/// Positions in findings.tips, the largest sqrt(K_I^2 + K_II^2) first.
+std::vector<std::size_t> worst_tips_first(const solver::LoadFindings& findings);
 
 /// The part of the plate that was solved: "whole plate", "half of the plate"…
 std::string_view solved_part(const mesh::Mirrors& mirrors);
@@ -57,6 +72,8 @@ struct Outcome {
   double seconds = 0.0;
   std::vector<std::string> raiser_names;        ///< of `raisers`, in the same order
   std::vector<solver::RaiserFindings> raisers;  ///< under all loads; empty when not solved
+  std::vector<std::string> tip_names = {};      ///< of `tips`, in the same order
+  std::vector<solver::TipFindings> tips = {};   ///< under all loads; empty when not solved
 };
 
 }  // namespace raiser::io

@@ -8,6 +8,7 @@
 #include <vector>
 
 #include "io/case/alloys.hpp"
+#include "io/write/crack_words.hpp"
 #include "io/write/layout.hpp"
 #include "io/write/table_parts.hpp"
 
@@ -43,6 +44,8 @@ std::string count_of_raisers(const mesh::Plate& plate) {
   std::vector<std::string> parts;
   for (const auto& [kind, number] : counts)
     parts.push_back(fmt::format("{} {}", number, number == 1 ? std::string(mesh::word(kind)) : plural(kind)));
+  if (!plate.cracks.empty())
+    parts.push_back(fmt::format("{} crack{}", plate.cracks.size(), plate.cracks.size() == 1 ? "" : "s"));
   return fmt::format("{}", fmt::join(parts, ", "));
 }
 
@@ -88,6 +91,20 @@ std::string asked_lines(const Result& result) {
     text += wrapped(fmt::format("{}{} at {} {} MPa, tolerance {} {}", name, words(answer.ask.quantity),
                                 plain(place), with_bound(answer.value.stress), percent(answer.ask.tolerance),
                                 answer.met ? "met" : "NOT MET"),
+                    "  ", 4);
+  }
+  const std::vector<mesh::CrackTip> tips = mesh::tips(result.input.problem.plate.cracks);
+  for (const TipAnswer& answer : tip_answers(result.input, result.solution)) {
+    if (answer.ask.name.empty() && answer.met) continue;
+    if (++lines > shown && ++left_out > 0) continue;
+    const bool is_k = answer.values.size() > 1;
+    const std::string values = is_k ? fmt::format("K_I {}, K_II {} MPa sqrt(mm)",
+                                                  with_bound(answer.values[0]), with_bound(answer.values[1]))
+                                    : with_bound(answer.values[0]) + " MPa";
+    const std::string name = answer.ask.name.empty() ? "" : plain(answer.ask.name) + ": ";
+    text += wrapped(fmt::format("{}{} at {}: {}, tolerance {} {}", name, words(answer.ask.quantity),
+                                tip_phrase(tips.at(answer.ask.raiser).name), values,
+                                percent(answer.ask.tolerance), answer.met ? "met" : "NOT MET"),
                     "  ", 4);
   }
   if (left_out > 0) text += fmt::format("  and {} more\n", left_out);
@@ -142,12 +159,14 @@ std::string table(const Result& result, const TableStyle& style) {
   text += asked_lines(result);
   text += raisers_part(result, style.rest);
   text += loads_part(result);
+  text += tips_part(result, style.rest);
   text += places_part(result);
   text += published_part(result, style.rest);
   text += checks_part(result);
   text += "\n";
   if (!yield.empty()) text += wrapped(yield, "Yield: ", 7);
   text += wrapped(cautions(), "Caution: ", 9);
+  if (!result.input.problem.plate.cracks.empty()) text += wrapped(crack_cautions(), "Cracks: ", 8);
   return text;
 }
 

@@ -15,6 +15,9 @@ std::string raisers_part(const Result& result, const std::string& rest);
 /// What each of several loads does by itself at the worst hole.
 std::string loads_part(const Result& result);
 
+/// The crack tips, worst first, and what each of several loads does at the worst.
+std::string tips_part(const Result& result, const std::string& rest);
+
 /// Published values beside the answers.
 std::string published_part(const Result& result, const std::string& rest);
 

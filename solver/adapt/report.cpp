@@ -105,6 +105,12 @@ std::vector<std::pair<double, double>> reaches(const Plate& plate) {
 /// The section farthest from every raiser and both ends.
 double far_station(const Plate& plate) {
   std::vector<std::pair<double, double>> taken = reaches(plate);
+  for (const mesh::Crack& crack : plate.cracks) {
+    const auto [low, high] =
+        std::minmax_element(crack.points.begin(), crack.points.end(),
+                            [](const Point& a, const Point& b) { return a.x() < b.x(); });
+    taken.emplace_back(low->x(), high->x());
+  }
   std::sort(taken.begin(), taken.end());
   double best = 0.0;
   double room = -1.0;

@@ -6,15 +6,9 @@
 #include <stdexcept>
 
 #include "solver/adapt/bound.hpp"
+#include "solver/crack/factors.hpp"
 
 namespace raiser::solver {
-namespace {
-
-/// The customary a of a crack: its length, or half of it between two tips.
-double half_length(const mesh::Crack& crack) { return crack.length() * (crack.has_mouth ? 1.0 : 0.5); }
-
-}  // namespace
-
 DegreeSequence::DegreeSequence(const Model& model, const Plate& plate)
     : model_(&model), plate_(&plate), scanner_(model, plate), tip_scanner_(model, plate) {
   for (const mesh::Raiser& raiser : mesh::raisers(plate)) centres_.push_back(raiser.centre);
@@ -53,7 +47,7 @@ std::array<Estimate, 3> DegreeSequence::tip_value(std::size_t load_case, std::si
     for (int i = 0; i < 3; ++i) values[i].push_back(k[i]);
   }
   const double k_size = std::hypot(values[0].back(), values[1].back());
-  const double length = half_length(plate_->cracks[mesh::tips(plate_->cracks)[tip].crack]);
+  const double length = crack_size(plate_->cracks[mesh::tips(plate_->cracks)[tip].crack]);
   const std::array<double, 3> size = {k_size, k_size, k_size / std::sqrt(std::numbers::pi * length)};
   std::array<Estimate, 3> result;
   for (int i = 0; i < 3; ++i) {
@@ -67,19 +61,13 @@ std::array<Estimate, 3> DegreeSequence::tip_value(std::size_t load_case, std::si
 }
 
 double DegreeSequence::tip_excess(const Ask& ask) const {
-  const std::vector<mesh::CrackTip> tips = mesh::tips(plate_->cracks);
-  const auto stress = [&](std::size_t tip) {  // K over sqrt(pi a)
-    const Eigen::Vector3d k = tip_scanner_.value(tip_scans_.back(), 0, tip, 0);
-    return std::hypot(k[0], k[1]) /
-           std::sqrt(std::numbers::pi * half_length(plate_->cracks[tips[tip].crack]));
-  };
+  std::vector<Eigen::Vector3d> k;
+  for (std::size_t tip = 0; tip < tip_scanner_.tips(); ++tip)
+    k.push_back(tip_scanner_.value(tip_scans_.back(), 0, tip, 0));
   const std::array<Estimate, 3> own = tip_value(0, ask.raiser);
-  double size = std::abs(own[2].value);
-  for (std::size_t t = 0; t < tips.size(); ++t) size = std::max(size, stress(t));
-  size = std::max(stress(ask.raiser), 0.01 * size);
-  if (ask.quantity == Quantity::t_stress) return own[2].bound / (ask.tolerance * size);
-  const double root = std::sqrt(std::numbers::pi * half_length(plate_->cracks[tips[ask.raiser].crack]));
-  return std::max(own[0].bound, own[1].bound) / (ask.tolerance * size * root);
+  const bool is_t = ask.quantity == Quantity::t_stress;
+  const double bound = is_t ? own[2].bound : std::max(own[0].bound, own[1].bound);
+  return bound / allowed_at_tip(plate_->cracks, k, ask);
 }
 
 double DegreeSequence::excess(const Ask& ask) const {

@@ -1,7 +1,7 @@
 #include <algorithm>
 #include <cmath>
 
-#include "solver/elasticity/load.hpp"
+#include "solver/elasticity/nominal_state.hpp"
 #include "solver/elasticity/outer_edge.hpp"
 
 namespace raiser::solver {
@@ -56,8 +56,7 @@ SectionForces section_forces(const Plate& plate, const std::vector<Load>& loads,
   return sum;
 }
 
-NominalState nominal_state(const Plate& plate, const std::vector<Load>& loads, std::size_t raiser) {
-  const Point at = mesh::raiser(plate, raiser).mouth;
+NominalState nominal_state_at(const Plate& plate, const std::vector<Load>& loads, const Point& at) {
   const SectionForces across = section_forces(plate, loads, mesh::Direction::across, at.x());
   const SectionForces along = section_forces(plate, loads, mesh::Direction::along, at.y());
   const auto shape = mesh::shape_of(mesh::gross_along(plate, mesh::Direction::across, at.x()));
@@ -69,6 +68,11 @@ NominalState nominal_state(const Plate& plate, const std::vector<Load>& loads, s
   state.bending = across.moment * reach / (shape.inertia * plate.thickness);
   state.yy = along.normal / (length * plate.thickness);
   state.xy = across.shear / area;
+  return state;
+}
+
+NominalState nominal_state(const Plate& plate, const std::vector<Load>& loads, std::size_t raiser) {
+  NominalState state = nominal_state_at(plate, loads, mesh::raiser(plate, raiser).mouth);
   for (const Load& load : loads)
     if (load.kind == Load::Kind::pressure && load.hole == raiser) state.pressure += load.stress;
   return state;

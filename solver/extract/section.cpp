@@ -5,6 +5,8 @@
 #include <algorithm>
 #include <cmath>
 
+#include "solver/elasticity/nominal_state.hpp"
+
 namespace raiser::solver {
 
 namespace {
@@ -162,6 +164,13 @@ Section section_at(const Plate& plate, const std::vector<Load>& loads, mesh::Dir
   section.shear_force = forces.shear;
   section.moment = forces.moment;
   return section;
+}
+
+Basis gross_nominal(const Plate& plate, const std::vector<Load>& loads, const Point& place) {
+  mesh::Raiser at;
+  at.mouth = at.root = place;
+  const NominalState state = nominal_state_at(plate, loads, place);
+  return gross_basis(plate, at, state, present(state, largest_load(loads)));
 }
 
 Nominal nominal(const Plate& plate, const std::vector<Load>& loads, std::size_t raiser) {

@@ -37,6 +37,9 @@ struct Nominal {
 Section section_at(const Plate& plate, const std::vector<Load>& loads, mesh::Direction direction,
                    double station);
 
+/// The gross nominal stress of a raiser whose mouth is at `place`.
+Basis gross_nominal(const Plate& plate, const std::vector<Load>& loads, const Point& place);
+
 /// Nominal stresses at a raiser under the loads together. Throws
 /// std::out_of_range when there is no such raiser.
 Nominal nominal(const Plate& plate, const std::vector<Load>& loads, std::size_t raiser);

@@ -86,6 +86,7 @@ TEST(Run, SolvesACaseToTheStreamsItIsGiven) {
   EXPECT_NE(out.str().find("Kt gross"), std::string::npos);
   EXPECT_LE(test::widest(out.str()), 80U) << out.str();
   for (const std::string& suffix : result_suffixes()) {
+    if (suffix == "-tips.csv") continue;  // of cracks only
     EXPECT_GT(fs::file_size(folder / ("strap" + suffix)), 100U) << suffix;
   }
   fs::remove_all(folder);

@@ -46,6 +46,17 @@ UNBALANCED = GOOD.replace('kind = "tension"\nstress', 'kind = "edge"\nedge = "ri
 TOO_FINE = GOOD + '[ask]\ntolerance = "0.0000002 %"\n'
 
 
+# Invented data.
+CRACKED = GOOD.split("[[hole]]")[0] + """[[crack]]
+name = "flaw"
+edge = "top"
+length = "6 mm"
+[[load]]
+kind = "tension"
+stress = "50 MPa"
+"""
+
+
 def many_holes(columns, rows, tolerance):
     text = GOOD.split("[[hole]]")[0]
     text = text.replace('"120 mm"', f'"{30 * columns} mm"').replace('"40 mm"', f'"{30 * rows} mm"')
@@ -214,6 +225,27 @@ class ManyCases(Program):
         self.assertEqual([row["exit_code"] for row in rows], ["0", "3", "3", "0"])
         self.assertLess(float(rows[0]["kt_gross"]), float(rows[3]["kt_gross"]), "a wider hole in the same strip")
         self.assertEqual(rows[1]["kt_gross"], "")
+
+    def test_plates_with_cracks_stand_beside_plates_with_holes(self):
+        self.case("hole.toml", GOOD)
+        self.case("crack.toml", CRACKED)
+        self.case("leaves.toml", CRACKED.replace('"6 mm"', '"41 mm"'))
+        result = self.run_it("solve", "hole.toml", "crack.toml", "leaves.toml", "--out", "x")
+        self.expect(7, result)
+        self.assertIn("worst tip", result.stdout)
+        self.assertIn("crack 'flaw' meets the bottom edge", result.stderr)
+        self.assertLessEqual(max(map(len, result.stdout.splitlines())), 80)
+        expected = ["hole" + s for s in SUFFIXES] + ["crack" + s for s in SUFFIXES + ["-tips.csv"]] + ["summary.csv"]
+        self.assertEqual(self.names("x"), sorted(expected))
+        with open(self.folder / "x/summary.csv", newline="") as file:
+            rows = list(csv.DictReader(file))
+        self.assertEqual([row["tip"] for row in rows], ["", "flaw", ""])
+        with open(self.folder / "x/crack-tips.csv", newline="") as file:
+            tips = list(csv.DictReader(file))
+        self.assertEqual([row["load"] for row in tips], ["all loads", "tension"])
+        self.assertEqual(tips[0]["K_I_MPa_sqrt_mm"], rows[1]["K_I_MPa_sqrt_mm"])
+        # 1.2648 for a/W = 0.15 within 0.5 %: W. F. Brown and J. E. Srawley, ASTM STP 410 (1966)
+        self.assertAlmostEqual(float(tips[0]["Y_I"]), 1.2648, delta=0.0063)
 
     def test_all_settled(self):
         self.case("one/a.toml", GOOD)

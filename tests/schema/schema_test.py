@@ -28,8 +28,10 @@ VALUES = [True, 5, 0.25, -3, 0, [], ["5 mm"], ["1 mm", "2 mm"], {}, [{}], "", " 
           "plane strain", "von Mises", "a\tb", "1e3 mm", ".5 mm", "5. mm", "5 m m", "5mm", "5 Nm", "5 N*m", "5 in"]
 
 # Faults that no schema can express, by a part of the reader's message.
-BEYOND = ["is taken", "magnitude is outside", "all loads", "nothing is asked for", "is too large: strain energy", "its yield strength of"]
-BEYOND_KEYS = ["load.hole = ", "ask.holes = ", "ask.result.hole = "]
+BEYOND = ["is taken", "does not lead into the material", "is beyond the end of the", "away from that edge",
+           "magnitude is outside", "all loads", "nothing is asked for", "is too large: strain energy", "its yield strength of"]
+BEYOND_KEYS = ["load.hole = ", "load.crack = ", "crack.from = ", "ask.holes = ", "ask.tips = ", "ask.result.hole = ",
+               "ask.result.tip = "]
 
 
 def is_beyond_schema(kind, message):

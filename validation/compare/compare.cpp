@@ -30,7 +30,7 @@ void add(Situation& s, const Load& load) {
       if (load.hole == s.hole) s.pressure += load.stress;
       break;
     case Load::Kind::face_pressure:
-      break;  // of no solution for a hole
+      break;  // no plate with a crack comes here
     case Load::Kind::edge:
       break;  // in of_edges()
   }
@@ -102,8 +102,9 @@ void append(std::vector<Comparison>& all, const mesh::Plate& plate, const solver
 std::vector<Comparison> compare(const solver::Problem& problem, const solver::LoadFindings& combined,
                                 const std::vector<solver::LoadFindings>& units) {
   std::vector<Comparison> all;
-  if (problem.material.orthotropy) return all;  // every family here is of isotropic plates
-  std::vector<std::vector<Load>> groups;        // one for each unit; edge loads come last, together
+  // Every family here is of isotropic plates without cracks.
+  if (problem.material.orthotropy || !problem.plate.cracks.empty()) return all;
+  std::vector<std::vector<Load>> groups;  // one for each unit; edge loads come last, together
   std::vector<Load> at_edges;
   for (const Load& load : problem.loads) {
     if (load.kind == Load::Kind::edge)
