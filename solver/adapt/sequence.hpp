@@ -28,7 +28,8 @@ class DegreeSequence {
   EdgeValue value(std::size_t load_case, std::size_t raiser, Quantity quantity) const;
 
   /// K_I, K_II and T of a crack tip from the last degree, with bounds from all
-  /// degrees that are no less than the spread of the domains.
+  /// degrees that are no less than the spread of the domains (for T, of the outer
+  /// ones), and than what the triangles at the tip are known to leave out.
   std::array<Estimate, 3> tip_value(std::size_t load_case, std::size_t tip) const;
 
   /// Largest magnitude of edge stress on the raiser under all loads, MPa.

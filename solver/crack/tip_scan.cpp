@@ -23,6 +23,11 @@ TipScanner::TipScanner(const Model& model, const Plate& plate)
 
 std::size_t TipScanner::domains() const { return probes_.empty() ? 0 : probes_.front().domains(); }
 
+double TipScanner::depth(std::size_t tip) const {
+  const std::vector<double>& radii = probes_[places_[tip].fan].fan().radii;
+  return radii.back() / radii.front();
+}
+
 TipScan TipScanner::scan(const Displacements& displacements) const {
   TipScan result;
   for (const TipProbe& probe : probes_) {

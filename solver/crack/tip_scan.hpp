@@ -33,6 +33,9 @@ class TipScanner {
                     std::size_t domain) const;
   double virtual_extension(const Displacements& displacements, std::size_t load_case, std::size_t tip) const;
 
+  /// Radius of the triangles at the tip over that of their fan.
+  double depth(std::size_t tip) const;
+
   const NearFields& fields(std::size_t tip) const { return probes_[places_[tip].fan].fields(); }
 
  private:
