@@ -180,8 +180,13 @@ struct Solution {
   Field field;                                 ///< under all loads, over the whole plate
 };
 
+/// How much of a solution is filled in. brief: the findings under all loads
+/// together and the openings of cracks, for whoever solves many plates for a
+/// number each; no unit loads, checks, edges, ligaments and field.
+enum class Report { full, brief };
+
 /// Solves until every asked number's bound meets its tolerance, or the budget
 /// is spent. Throws std::invalid_argument for a problem that is not legal.
-Solution settle(const Problem& problem, const std::vector<Ask>& asks);
+Solution settle(const Problem& problem, const std::vector<Ask>& asks, Report extent = Report::full);
 
 }  // namespace raiser::solver

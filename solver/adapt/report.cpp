@@ -181,18 +181,21 @@ void check_far_field(const Problem& problem, Solution& solution) {
 }  // namespace
 
 Solution report(const Problem& problem, const DegreeSequence& sequence,
-                const std::vector<SingularPlace>& places) {
+                const std::vector<SingularPlace>& places, Report extent) {
   const Model& model = sequence.model();
   const Displacements& last = sequence.displacements().back();
   Solution solution;
   solution.combined = findings(problem, sequence, 0, "all loads", problem.loads);
-  const auto groups = loads_of_units(problem.loads, model.loads());
-  for (std::size_t l = 0; l < model.loads().size(); ++l)
-    solution.units.push_back(findings(problem, sequence, l + 1, model.loads()[l].name, groups[l]));
   solution.degree = last.degree;
   solution.unknowns = static_cast<std::size_t>(Discretisation(model.mesh(), last.degree).unknowns());
   solution.triangles = model.mesh().triangles().size();
   solution.mirrors_used = model.mirrors();
+  solution.openings = crack_openings(model, problem.plate, last);
+  if (extent == Report::brief) return solution;
+
+  const auto groups = loads_of_units(problem.loads, model.loads());
+  for (std::size_t l = 0; l < model.loads().size(); ++l)
+    solution.units.push_back(findings(problem, sequence, l + 1, model.loads()[l].name, groups[l]));
   solution.edges = edge_samples(model, problem.plate, sequence.scanner(), last_of(sequence.scans()));
 
   std::vector<Field> fields;
@@ -202,7 +205,6 @@ Solution report(const Problem& problem, const DegreeSequence& sequence,
   solution.ligaments = ligaments(problem.plate, sections, fields);
   solution.places = place_findings(places, fields, problem.material);
   solution.field = std::move(fields.back());
-  solution.openings = crack_openings(model, problem.plate, last);
 
   const Balance balance = model.balance(last);
   solution.checks.equilibrium_residual = balance.residual;

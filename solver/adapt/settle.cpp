@@ -146,7 +146,7 @@ std::string reason_for(const DegreeSequence& sequence, const Plate& plate, const
 
 }  // namespace
 
-Solution settle(const Problem& problem, const std::vector<Ask>& asks) {
+Solution settle(const Problem& problem, const std::vector<Ask>& asks, Report extent) {
   const auto start = Clock::now();
   require_legal(problem, asks);
   const std::vector<UnitLoad> loads = unit_loads(problem.plate, problem.loads);
@@ -163,7 +163,7 @@ Solution settle(const Problem& problem, const std::vector<Ask>& asks) {
     const double worst = raise_degree(sequence, asks, tolerance, refinement, start, levels);
     const bool is_settled = worst <= 1.0;
     if (is_settled || refinement == most_refinements) {
-      Solution solution = report(problem, sequence, places);
+      Solution solution = report(problem, sequence, places, extent);
       solution.status = is_settled ? Solution::Status::settled : Solution::Status::not_met;
       if (!is_settled) solution.reason = reason_for(sequence, problem.plate, asks);
       solution.levels = std::move(levels);
