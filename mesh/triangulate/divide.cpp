@@ -125,6 +125,13 @@ std::vector<Point> mouths(const Region& region, const std::vector<Fan>& fans) {
 
 double distance(const Piece& piece, const Point& x) { return (nearest_on(piece, x) - x).norm(); }
 
+/// Whether a piece runs about towards the corner: it is a flank of its wedge.
+bool is_flank(const Piece& piece, const Point& corner) {
+  constexpr double curved = 0.3;  // an arc leaves its tangent at the corner
+  const Point arm = (piece.from + piece.to) / 2 - corner;
+  return std::abs(arm.dot(piece.inward)) <= curved * arm.norm();
+}
+
 /// Whether the gap between two pieces is the opening of a wedge, on the scale of
 /// their distance from its corner: there a triangle's side may be as long as
 /// that distance.
@@ -132,6 +139,7 @@ bool spans_wedge(const Piece& piece, const Piece& other, double gap, const std::
   return std::any_of(corners.begin(), corners.end(), [&](const Point& corner) {
     const double near = distance(piece, corner);
     if (near > 6 * gap || distance(other, corner) > 6 * gap) return false;
+    if (!is_flank(piece, corner) || !is_flank(other, corner)) return false;
     return near < 1e-9 * piece.length || piece.length <= 2 * near;
   });
 }
