@@ -9,19 +9,19 @@
 
 namespace raiser::validation {
 
-/// One number of a solution held against its truth. Stresses in MPa.
+/// One number of a solution held against its truth. Stresses in MPa, K in MPa sqrt(mm).
 struct Trial {
-  enum class What { largest, smallest, von_mises, edge_sample, ligament_point };
+  enum class What { largest, smallest, von_mises, edge_sample, ligament_point, k_one, k_two, t_stress };
   What what = What::largest;
-  std::size_t hole = 0;
+  std::size_t hole = 0;   ///< or the crack tip
   std::string load;       ///< kind of the load, "together" for several
   bool is_asked = true;   ///< false: a unit load of several, for which no tolerance is asked
   double value = 0.0;     ///< MPa
   double bound = 0.0;     ///< MPa
   double error = 0.0;     ///< MPa: magnitude of value less truth
   double doubt = 0.0;     ///< MPa: how far the truth itself may be wrong
-  double scale = 0.0;     ///< MPa: largest magnitude of edge stress on the hole
-  std::string shape;      ///< of the hole
+  double scale = 0.0;     ///< MPa: largest magnitude of edge stress on the hole; of K and T at the tip
+  std::string shape;      ///< of the hole, or the kind of crack
   double ligament = 0.0;  ///< smallest ligament of the hole over the smaller hole's diameter beside it
 };
 
@@ -31,7 +31,7 @@ Verdict verdict(const Trial& trial);
 
 /// What came of one plate.
 struct PlateTrial {
-  enum class Truth { finer_solution, closed_form };
+  enum class Truth { finer_solution, closed_form, finer_cracked };
   std::uint64_t seed = 0;
   Truth truth = Truth::finer_solution;
   bool is_settled = false;
@@ -65,6 +65,12 @@ PlateTrial try_random_plate(std::uint64_t seed);
 /// form. Axes ratio 0.1 to 10, any angle and place.
 PlateTrial try_closed_form(std::uint64_t seed);
 
+/// Solves random_cracked_plate(seed), asking K and T at every tip, and holds them,
+/// those of each unit load too, against a solution of degree 10 of the whole plate
+/// on a finer mesh with finer fans about the tips, as try_random_plate does. A
+/// K_II that is zero by symmetry to rounding is left out.
+PlateTrial try_cracked_plate(std::uint64_t seed);
+
 /// The first `count` seeds whose random plate has at most `most_holes` holes.
 std::vector<std::uint64_t> seeds_with_few_holes(std::size_t count, std::size_t most_holes);
 
@@ -81,8 +87,11 @@ struct Tally {
 };
 Tally tally(const std::vector<const Trial*>& trials);
 
-/// All trials of peaks (not edge samples, not ligament points).
+/// All trials of peaks at holes (not edge samples, not ligament points).
 std::vector<const Trial*> peaks(const std::vector<PlateTrial>& plates);
+
+/// All trials of K and T at crack tips.
+std::vector<const Trial*> tip_values(const std::vector<PlateTrial>& plates);
 
 /// The result as Markdown: coverage and ratios by group, every miss, every
 /// plate that is not settled, unknowns and CPU time.

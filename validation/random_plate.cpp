@@ -8,6 +8,7 @@
 #include <string>
 
 #include "mesh/plate/distance.hpp"
+#include "validation/random_parts.hpp"
 
 namespace raiser::validation {
 
@@ -20,31 +21,6 @@ using mesh::Point;
 using solver::Load;
 
 constexpr double least_ligament = 0.02, largest_ligament = 10.0;  // diameters
-
-/// The SplitMix64 generator: G. L. Steele, D. Lea and C. H. Flood, Fast splittable
-/// pseudorandom number generators, OOPSLA 2014. Written out so that no standard
-/// library's choice of distribution matters.
-class Dice {
- public:
-  explicit Dice(std::uint64_t seed) : state_(seed) {}
-
-  double uniform(double low, double high) { return low + (high - low) * unit(); }
-  double log_uniform(double low, double high) { return low * std::pow(high / low, unit()); }
-  std::size_t below(std::size_t n) {
-    return std::min(n - 1, static_cast<std::size_t>(unit() * static_cast<double>(n)));
-  }
-  bool chance(double p) { return unit() < p; }
-
- private:
-  double unit() {
-    std::uint64_t z = (state_ += 0x9e3779b97f4a7c15u);
-    z = (z ^ (z >> 30)) * 0xbf58476d1ce4e5b9u;
-    z = (z ^ (z >> 27)) * 0x94d049bb133111ebu;
-    return static_cast<double>((z ^ (z >> 31)) >> 11) * 0x1.0p-53;
-  }
-
-  std::uint64_t state_;
-};
 
 /// A hole of the given mean diameter at the origin.
 Hole random_hole(Dice& dice, double diameter, std::string name) {
@@ -104,7 +80,9 @@ bool fits(const Plate& plate, const Hole& hole) {
   });
 }
 
-std::optional<Hole> place(Dice& dice, const Plate& plate, double diameter, const std::string& name) {
+}  // namespace
+
+std::optional<Hole> random_hole_in(Dice& dice, const Plate& plate, double diameter, const std::string& name) {
   for (int attempt = 0; attempt < 60; ++attempt) {
     Hole hole = random_hole(dice, diameter, name);
     const double ligament = dice.log_uniform(least_ligament, largest_ligament);
@@ -124,6 +102,8 @@ std::optional<Hole> place(Dice& dice, const Plate& plate, double diameter, const
   return std::nullopt;
 }
 
+namespace {
+
 Plate random_outline_and_holes(Dice& dice) {
   Plate plate;
   plate.width = dice.log_uniform(20.0, 500.0);
@@ -133,7 +113,7 @@ Plate random_outline_and_holes(Dice& dice) {
   const double smaller = std::min(plate.length, plate.width);
   while (plate.holes.size() < count) {
     const double diameter = smaller * dice.log_uniform(0.04, 0.6) / std::sqrt(static_cast<double>(count));
-    if (auto hole = place(dice, plate, diameter, "hole " + std::to_string(plate.holes.size() + 1)))
+    if (auto hole = random_hole_in(dice, plate, diameter, "hole " + std::to_string(plate.holes.size() + 1)))
       plate.holes.push_back(std::move(*hole));
   }
   return plate;
@@ -149,7 +129,7 @@ Load random_load(Dice& dice, Load::Kind kind, std::size_t holes) {
   load.kind = kind;
   load.name = solver::word(kind);
   load.stress = random_stress(dice);
-  if (kind == Load::Kind::pressure) load.hole = dice.below(holes);
+  if (kind == Load::Kind::pressure) load.hole = dice.below(std::max<std::size_t>(1, holes));
   return load;
 }
 
@@ -180,7 +160,8 @@ std::vector<Load> balanced_edges(Dice& dice, const Plate& plate) {
           edge_load("bottom", mesh::rectangle::bottom, bottom, bottom_along)};
 }
 
-/// One kind alone, two to four kinds together, or a group of edge loads.
+}  // namespace
+
 std::vector<Load> random_loads(Dice& dice, const Plate& plate) {
   std::array<Load::Kind, 5> kinds{Load::Kind::tension, Load::Kind::transverse, Load::Kind::shear,
                                   Load::Kind::bending, Load::Kind::pressure};
@@ -193,8 +174,6 @@ std::vector<Load> random_loads(Dice& dice, const Plate& plate) {
   for (std::size_t i = 0; i < count; ++i) loads.push_back(random_load(dice, kinds[i], plate.holes.size()));
   return loads;
 }
-
-}  // namespace
 
 double mean_diameter(const mesh::Hole& hole) { return std::sqrt(hole.length * hole.width); }
 

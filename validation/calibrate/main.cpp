@@ -21,21 +21,23 @@ namespace {
 using raiser::validation::PlateTrial;
 
 constexpr const char* usage =
-    "usage: raiser_calibrate [--seeds A..B] [--closed N] [--jobs N] [--short]\n"
-    "                        [--records FILE] [--from FILE]\n"
+    "usage: raiser_calibrate [--seeds A..B] [--closed N] [--cracked A..B] [--jobs N]\n"
+    "                        [--short] [--records FILE] [--from FILE]\n"
     "\n"
     "Solves seeded random plates and plates with a closed form and prints, as\n"
     "Markdown, how often the true error lies within the bound.\n"
     "\n"
     "  --seeds A..B    random plates with the seeds A to B - 1 (default 0..320)\n"
     "  --closed N      N plates with a closed form (default 60)\n"
+    "  --cracked A..B  random plates with cracks (default 0..240)\n"
     "  --jobs N        worker processes (default 1)\n"
-    "  --short         16 plates with at most two holes and 8 closed forms\n"
+    "  --short         16 plates with at most two holes, 8 closed forms, 12 plates with cracks\n"
     "  --records FILE  also writes every number to FILE\n"
     "  --from FILE     solves nothing: reports what --records wrote\n";
 
 struct Options {
   std::uint64_t first = 0, last = 320, closed = 60, jobs = 1;
+  std::uint64_t first_cracked = 0, last_cracked = 240;
   bool is_short = false;
   std::string records, from;
 };
@@ -62,6 +64,9 @@ Options read(const std::vector<std::string>& arguments) {
     if (name == "--seeds" && dots != std::string::npos) {
       options.first = number(name, value.substr(0, dots));
       options.last = number(name, value.substr(dots + 2));
+    } else if (name == "--cracked" && dots != std::string::npos) {
+      options.first_cracked = number(name, value.substr(0, dots));
+      options.last_cracked = number(name, value.substr(dots + 2));
     } else if (name == "--closed") {
       options.closed = number(name, value);
     } else if (name == "--jobs") {
@@ -92,12 +97,22 @@ std::vector<Task> tasks(const Options& options) {
   for (const std::uint64_t seed : seeds) list.push_back({PlateTrial::Truth::finer_solution, seed});
   for (std::uint64_t seed = 0; seed < (options.is_short ? 8 : options.closed); ++seed)
     list.push_back({PlateTrial::Truth::closed_form, seed});
+  const std::uint64_t last_cracked = options.is_short ? 12 : options.last_cracked;
+  for (std::uint64_t seed = options.is_short ? 0 : options.first_cracked; seed < last_cracked; ++seed)
+    list.push_back({PlateTrial::Truth::finer_cracked, seed});
   return list;
 }
 
 PlateTrial run(const Task& task) {
-  return task.truth == PlateTrial::Truth::closed_form ? raiser::validation::try_closed_form(task.seed)
-                                                      : raiser::validation::try_random_plate(task.seed);
+  switch (task.truth) {
+    case PlateTrial::Truth::closed_form:
+      return raiser::validation::try_closed_form(task.seed);
+    case PlateTrial::Truth::finer_cracked:
+      return raiser::validation::try_cracked_plate(task.seed);
+    case PlateTrial::Truth::finer_solution:
+      break;
+  }
+  return raiser::validation::try_random_plate(task.seed);
 }
 
 using File = std::unique_ptr<std::FILE, int (*)(std::FILE*)>;

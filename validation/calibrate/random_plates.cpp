@@ -46,18 +46,6 @@ std::vector<solver::Ask> ask_everything(const mesh::Plate& plate) {
   return asks;
 }
 
-/// The kinds of the unit loads: one each, or all edge loads together.
-std::vector<std::string> kinds(const Problem& problem) {
-  std::vector<std::string> result;
-  bool has_edges = false;
-  for (const solver::Load& load : problem.loads) {
-    const bool is_edge = load.kind == solver::Load::Kind::edge;
-    if (!is_edge || !has_edges) result.emplace_back(solver::word(load.kind));
-    has_edges = has_edges || is_edge;
-  }
-  return result;
-}
-
 void hold_peaks(const Problem& problem, const solver::LoadFindings& findings, std::size_t load_case,
                 const std::string& load, const FinerSolution& truth, std::vector<Trial>& out) {
   for (const solver::RaiserFindings& hole : findings.raisers) {
@@ -161,12 +149,7 @@ PlateTrial try_random_plate(std::uint64_t seed) {
     const double start = cpu_seconds();
     const Solution solution = solver::settle(problem, ask_everything(problem.plate));
     plate.cpu_seconds = cpu_seconds() - start;
-    plate.is_settled = solution.status == Solution::Status::settled;
-    plate.reason = solution.reason;
-    plate.degree = solution.degree;
-    plate.refinements = solution.levels.back().refinement;
-    plate.triangles = solution.triangles;
-    plate.unknowns = solution.unknowns;
+    keep_cost(plate, solution);
     hold_against_truth(problem, solution, plate);
   } catch (const std::exception& e) {
     plate.is_settled = false;

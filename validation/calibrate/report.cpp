@@ -13,9 +13,9 @@ namespace {
 
 using Trials = std::vector<const Trial*>;
 
-bool is_peak(const Trial& trial) {
-  return trial.what != Trial::What::edge_sample && trial.what != Trial::What::ligament_point;
-}
+bool is_peak(const Trial& trial) { return trial.what <= Trial::What::von_mises; }
+bool is_at_tip(const Trial& trial) { return trial.what >= Trial::What::k_one; }
+bool is_on_path(const Trial& trial) { return !is_peak(trial) && !is_at_tip(trial); }
 
 /// The value below which `share` of them lie; 0 for none.
 double quantile(std::vector<double> values, double share) {
@@ -38,6 +38,12 @@ const char* words(Trial::What what) {
       return "edge samples";
     case Trial::What::ligament_point:
       return "ligament points";
+    case Trial::What::k_one:
+      return "K_I";
+    case Trial::What::k_two:
+      return "K_II";
+    case Trial::What::t_stress:
+      return "T";
   }
   return "";
 }
@@ -64,11 +70,23 @@ std::string rows_by(const Trials& trials, const std::function<std::string(const 
   return text;
 }
 
+constexpr const char* heading =
+    "| numbers | count | within | outside | undecided | median bound / error | 95 % |\n"
+    "|---|---|---|---|---|---|---|\n";
+
+std::string stop_of(const PlateTrial& plate) {
+  return fmt::format("stopped at degree {}, {} refinement{}", plate.degree, plate.refinements,
+                     plate.refinements == 1 ? "" : "s");
+}
+
+std::string asked_or_not(const Trial& t) {
+  return t.is_asked ? "asked (all loads together)" : "each unit load by itself";
+}
+
 std::string coverage_table(const std::vector<PlateTrial>& plates) {
-  std::string text =
-      "| numbers | count | within | outside | undecided | median bound / error | 95 % |\n"
-      "|---|---|---|---|---|---|---|\n";
+  std::string text = heading;
   const Trials all = peaks(plates);
+  if (all.empty()) return "";
   text += row("**all**", all);
   Trials random, closed;
   std::map<std::string, Trials> by_stop;
@@ -76,14 +94,10 @@ std::string coverage_table(const std::vector<PlateTrial>& plates) {
     for (const Trial& trial : plate.trials) {
       if (!is_peak(trial)) continue;
       (plate.truth == PlateTrial::Truth::closed_form ? closed : random).push_back(&trial);
-      by_stop[fmt::format("stopped at degree {}, {} refinement{}", plate.degree, plate.refinements,
-                          plate.refinements == 1 ? "" : "s")]
-          .push_back(&trial);
+      by_stop[stop_of(plate)].push_back(&trial);
     }
   text += row("truth: finer solution", random) + row("truth: closed form", closed);
-  text += rows_by(all, [](const Trial& t) {
-    return std::string(t.is_asked ? "asked (all loads together)" : "each unit load by itself");
-  });
+  text += rows_by(all, asked_or_not);
   text += rows_by(all, [](const Trial& t) { return std::string(words(t.what)); });
   text += rows_by(all, [](const Trial& t) { return "shape: " + t.shape; });
   text += rows_by(all, [](const Trial& t) { return "load: " + t.load; });
@@ -92,15 +106,50 @@ std::string coverage_table(const std::vector<PlateTrial>& plates) {
   return text;
 }
 
+std::string ligament_of_tip(double ligament) {
+  if (ligament < 0.1) return "next edge nearer than 0.1 a";
+  if (ligament < 0.5) return "next edge 0.1 to 0.5 a away";
+  return "next edge 0.5 a away or more";
+}
+
+/// K and T at crack tips.
+std::string tip_table(const std::vector<PlateTrial>& plates) {
+  const Trials all = tip_values(plates);
+  if (all.empty()) return "";
+  std::string text = "\nK and T at crack tips:\n\n" + std::string(heading) + row("**all**", all);
+  std::map<std::string, Trials> by_stop;
+  for (const PlateTrial& plate : plates)
+    for (const Trial& trial : plate.trials)
+      if (is_at_tip(trial)) by_stop[stop_of(plate)].push_back(&trial);
+  text += rows_by(all, asked_or_not);
+  text += rows_by(all, [](const Trial& t) { return std::string(words(t.what)); });
+  text += rows_by(all, [](const Trial& t) { return t.shape; });
+  text += rows_by(all, [](const Trial& t) { return "load: " + t.load; });
+  text += rows_by(all, [](const Trial& t) { return ligament_of_tip(t.ligament); });
+  for (const auto& [stop, members] : by_stop) text += row(stop, members);
+  return text;
+}
+
 std::string along_paths(const std::vector<PlateTrial>& plates) {
   Trials paths;
   for (const PlateTrial& plate : plates)
     for (const Trial& trial : plate.trials)
-      if (!is_peak(trial)) paths.push_back(&trial);
-  return "\nStresses along edges and ligaments, whose bounds no tolerance is asked for:\n\n"
-         "| numbers | count | within | outside | undecided | median bound / error | 95 % |\n"
-         "|---|---|---|---|---|---|---|\n" +
-         rows_by(paths, [](const Trial& t) { return std::string(words(t.what)); });
+      if (is_on_path(trial)) paths.push_back(&trial);
+  if (paths.empty()) return "";
+  return "\nStresses along edges and ligaments, whose bounds no tolerance is asked for:\n\n" +
+         std::string(heading) + rows_by(paths, [](const Trial& t) { return std::string(words(t.what)); });
+}
+
+const char* name_of(PlateTrial::Truth truth) {
+  switch (truth) {
+    case PlateTrial::Truth::finer_solution:
+      return "seed";
+    case PlateTrial::Truth::closed_form:
+      return "closed form";
+    case PlateTrial::Truth::finer_cracked:
+      return "cracked seed";
+  }
+  return "";
 }
 
 std::string misses(const std::vector<PlateTrial>& plates) {
@@ -108,14 +157,14 @@ std::string misses(const std::vector<PlateTrial>& plates) {
   for (const PlateTrial& plate : plates)
     for (const Trial& t : plate.trials) {
       const Verdict found = verdict(t);
-      if (!is_peak(t) || found == Verdict::within) continue;
+      if (is_on_path(t) || found == Verdict::within) continue;
       text += fmt::format(
-          "- {}, {} {}, hole {} ({}, ligament {:.3g}), {}, {}{}: value {:.6g}, error {:.2g}, bound {:.2g}, "
-          "truth +- {:.1g} MPa\n",
-          found == Verdict::outside ? "outside" : "undecided",
-          plate.truth == PlateTrial::Truth::closed_form ? "closed form" : "seed", plate.seed, t.hole + 1,
-          t.shape, t.ligament, words(t.what), t.load, t.is_asked ? "" : " alone", t.value, t.error, t.bound,
-          t.doubt);
+          "- {}, {} {}, {} {} ({}, ligament {:.3g}), {}, {}{}: value {:.6g}, error {:.2g}, bound {:.2g}, "
+          "truth +- {:.1g} {}\n",
+          found == Verdict::outside ? "outside" : "undecided", name_of(plate.truth), plate.seed,
+          is_at_tip(t) ? "tip" : "hole", t.hole + 1, t.shape, t.ligament, words(t.what), t.load,
+          t.is_asked ? "" : " alone", t.value, t.error, t.bound, t.doubt,
+          is_at_tip(t) && t.what != Trial::What::t_stress ? "MPa sqrt(mm)" : "MPa");
     }
   return "\nNumbers not surely within their bound:\n\n" + (text.empty() ? "none\n" : text);
 }
@@ -124,7 +173,7 @@ std::string not_settled(const std::vector<PlateTrial>& plates) {
   std::string text;
   for (const PlateTrial& plate : plates)
     if (!plate.is_settled || plate.trials.empty())
-      text += fmt::format("- seed {}: {}\n", plate.seed, plate.reason);
+      text += fmt::format("- {} {}: {}\n", name_of(plate.truth), plate.seed, plate.reason);
   return "\nPlates not settled or not compared:\n\n" + (text.empty() ? "none\n" : text);
 }
 
@@ -134,16 +183,18 @@ std::string spread_row(const char* name, const std::vector<double>& values, doub
                      at(1.0));
 }
 
-std::string costs(const std::vector<PlateTrial>& plates) {
+std::string costs(const std::vector<PlateTrial>& plates, PlateTrial::Truth kind, const char* name) {
   std::vector<double> seconds, unknowns, triangles, truth;
   for (const PlateTrial& plate : plates) {
-    if (plate.truth == PlateTrial::Truth::closed_form || plate.triangles == 0) continue;
+    if (plate.truth != kind || plate.triangles == 0) continue;
     seconds.push_back(plate.cpu_seconds);
     unknowns.push_back(static_cast<double>(plate.unknowns));
     triangles.push_back(static_cast<double>(plate.triangles));
     truth.push_back(static_cast<double>(plate.truth_unknowns));
   }
-  return "\nCost of the random plates:\n\n| | 5 % | median | 95 % | largest |\n|---|---|---|---|---|\n" +
+  if (seconds.empty()) return "";
+  return fmt::format("\nCost of the {}:\n\n", name) +
+         "| | 5 % | median | 95 % | largest |\n|---|---|---|---|---|\n" +
          spread_row("CPU time of a plate, mesh and report included, ms", seconds, 1e3) +
          spread_row("triangles", triangles, 1.0) +
          spread_row("unknowns at the stop (before condensation)", unknowns, 1.0) +
@@ -179,15 +230,30 @@ Trials peaks(const std::vector<PlateTrial>& plates) {
   return result;
 }
 
+Trials tip_values(const std::vector<PlateTrial>& plates) {
+  Trials result;
+  for (const PlateTrial& plate : plates)
+    for (const Trial& trial : plate.trials)
+      if (is_at_tip(trial)) result.push_back(&trial);
+  return result;
+}
+
 std::string calibration_report(const std::vector<PlateTrial>& plates) {
-  const auto closed = std::count_if(plates.begin(), plates.end(), [](const PlateTrial& p) {
-    return p.truth == PlateTrial::Truth::closed_form;
-  });
-  std::size_t settled = 0;
-  for (const PlateTrial& plate : plates) settled += plate.is_settled;
-  return fmt::format("{} random plates and {} plates with a closed form; {} of {} settled.\n\n",
-                     plates.size() - static_cast<std::size_t>(closed), closed, settled, plates.size()) +
-         coverage_table(plates) + along_paths(plates) + misses(plates) + not_settled(plates) + costs(plates);
+  using Truth = PlateTrial::Truth;
+  const auto count = [&](Truth truth) {
+    return std::count_if(plates.begin(), plates.end(),
+                         [truth](const PlateTrial& p) { return p.truth == truth; });
+  };
+  const auto settled =
+      std::count_if(plates.begin(), plates.end(), [](const PlateTrial& p) { return p.is_settled; });
+  return fmt::format(
+             "{} random plates, {} random plates with cracks and {} plates with a closed form; "
+             "{} of {} settled.\n\n",
+             count(Truth::finer_solution), count(Truth::finer_cracked), count(Truth::closed_form), settled,
+             plates.size()) +
+         coverage_table(plates) + tip_table(plates) + along_paths(plates) + misses(plates) +
+         not_settled(plates) + costs(plates, Truth::finer_solution, "random plates") +
+         costs(plates, Truth::finer_cracked, "random plates with cracks");
 }
 
 }  // namespace raiser::validation

@@ -40,6 +40,26 @@ void hold(Trial& trial, const solver::Estimate& estimate, const Known& truth) {
   trial.doubt = truth.doubt;
 }
 
+std::vector<std::string> kinds(const solver::Problem& problem) {
+  std::vector<std::string> result;
+  bool has_edges = false;
+  for (const solver::Load& load : problem.loads) {
+    const bool is_edge = load.kind == solver::Load::Kind::edge;
+    if (!is_edge || !has_edges) result.emplace_back(solver::word(load.kind));
+    has_edges = has_edges || is_edge;
+  }
+  return result;
+}
+
+void keep_cost(PlateTrial& plate, const solver::Solution& solution) {
+  plate.is_settled = solution.status == solver::Solution::Status::settled;
+  plate.reason = solution.reason;
+  plate.degree = solution.degree;
+  plate.refinements = solution.levels.back().refinement;
+  plate.triangles = solution.triangles;
+  plate.unknowns = solution.unknowns;
+}
+
 double cpu_seconds() {
   timespec now{};
   clock_gettime(CLOCK_PROCESS_CPUTIME_ID, &now);

@@ -1,6 +1,7 @@
 #pragma once
 
-#include <optional>
+#include <string>
+#include <vector>
 
 #include "validation/calibrate.hpp"
 #include "validation/calibrate/truth.hpp"
@@ -12,6 +13,12 @@ Trial trial_at(const mesh::Plate& plate, std::size_t hole, Trial::What what);
 
 /// Holds a value with its bound against what is known of it.
 void hold(Trial& trial, const solver::Estimate& estimate, const Known& truth);
+
+/// The kinds of the unit loads: one each, or all edge loads together.
+std::vector<std::string> kinds(const solver::Problem& problem);
+
+/// What the solution has cost, and whether it is settled.
+void keep_cost(PlateTrial& plate, const solver::Solution& solution);
 
 /// CPU seconds of this process so far.
 double cpu_seconds();

@@ -88,6 +88,15 @@ Known FinerSolution::extreme(std::size_t load_case, std::size_t hole, solver::Qu
   return {last, std::abs(last - value(sequence_.scans()[0]))};
 }
 
+Known FinerSolution::tip(std::size_t load_case, std::size_t tip, int which) const {
+  const solver::TipScanner& scanner = sequence_.tip_scanner();
+  const auto value = [&](std::size_t level, std::size_t domain) {
+    return scanner.value(sequence_.tip_scans()[level], load_case, tip, domain)[which];
+  };
+  const double last = value(1, 0);
+  return {last, std::max(std::abs(last - value(0, 0)), std::abs(last - value(1, 1)))};
+}
+
 std::optional<Known> FinerSolution::tangential(std::size_t hole, const mesh::Point& x) const {
   for (const mesh::BoundarySide& side : sequence_.scanner().sides()) {
     if (side.curve.owner.index != hole) continue;

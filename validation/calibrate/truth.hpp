@@ -28,6 +28,9 @@ class FinerSolution {
 
   /// An extreme on a hole's edge; cases as in EdgeScan.
   Known extreme(std::size_t load_case, std::size_t hole, solver::Quantity quantity) const;
+  /// K_I, K_II or T (which = 0, 1, 2) of a tip; cases as in TipScanner. The spread
+  /// of two domains counts as doubt, too.
+  Known tip(std::size_t load_case, std::size_t tip, int which) const;
   /// Tangential stress under all loads at a point of a hole's edge; nothing
   /// when the point is not on it.
   std::optional<Known> tangential(std::size_t hole, const mesh::Point& x) const;

@@ -1,0 +1,22 @@
+#pragma once
+
+#include <optional>
+#include <string>
+#include <vector>
+
+#include "solver/solution.hpp"
+#include "validation/dice.hpp"
+
+namespace raiser::validation {
+
+/// A hole of the given mean diameter, or a little less, that the plate has room
+/// for: beside another, beside an edge or anywhere; nothing after many attempts.
+std::optional<mesh::Hole> random_hole_in(Dice& dice, const mesh::Plate& plate, double diameter,
+                                         const std::string& name);
+
+/// One kind alone, two to four kinds together, or a group of edge loads that
+/// balance jointly. Pressure in a hole of a plate without holes names hole 0: the
+/// caller turns it into something else.
+std::vector<solver::Load> random_loads(Dice& dice, const mesh::Plate& plate);
+
+}  // namespace raiser::validation
