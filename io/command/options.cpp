@@ -12,6 +12,7 @@ constexpr const char* general_help = R"(raiser: how far holes raise the stress i
 
 usage: raiser solve CASE... [--out DIR] [--json] [--quiet] [--no-files]
        raiser check CASE... [--quiet]
+       raiser grow CASE [--crack NAME] --to LENGTH [--steps N] [--kinked]
        raiser validate [FAMILY...] [--out DIR] [--quick] [--json]
        raiser --help | --version
 
@@ -19,6 +20,8 @@ usage: raiser solve CASE... [--out DIR] [--json] [--quiet] [--no-files]
           bound, and write result files
   check   read and validate case files; print them as understood, with every
           default and unit
+  grow    stress intensity over the length of a growing crack, with a fitted
+          factor, in a table, CSV and a curve
   validate
           hold published solutions against this program, in a table and charts
 
@@ -114,6 +117,48 @@ examples:
   raiser validate --out validation
 )";
 
+constexpr const char* grow_help =
+    R"(usage: raiser grow CASE [--crack NAME] [--tip NAME] [--from LENGTH] --to LENGTH
+                  [--steps N] [--kinked] [--out DIR] [--json] [--no-files]
+
+Solves a case at one length of a crack after the other, each with a mesh of its
+own, and gives K_I, K_II, T and G at every length with a bound, the factor
+Y = K_I / (S sqrt(pi a)) fitted over a/W, and for a crack at a hole or notch the
+limits of a short and a long crack.
+
+  CASE            a case file (TOML) with a crack
+  --crack NAME    the crack that grows; given twice, both grow by as much
+  --tip NAME      of its tips only this one; all of them otherwise
+  --from LENGTH   first length, e.g. "0.5 mm"; otherwise that of the case
+  --to LENGTH     last length
+  --steps N       how many lengths, both ends among them (20)
+  --kinked        each step in the direction of the largest hoop stress of the
+                  step before; otherwise along the crack's own line
+  --out DIR       write results into DIR instead of beside the case
+  --json          print one JSON document instead of the table
+  --no-files      write no result files
+  --quiet         print no table and no remarks, only faults
+
+Results of STEM.toml: STEM-grow.csv, STEM-grow.json, STEM-grow.svg and
+STEM-grow.png. A length that cannot be solved says why and stops no other on a
+straight path; the exit code is then 5.
+
+examples:
+  raiser grow cracked-hanger.toml --from "0.5 mm" --to "20 mm" --steps 40
+  raiser grow vane.toml --crack flaw --tip "flaw B" --to "30 mm" --kinked
+)";
+
+void add_grow(CLI::App& command, GrowOptions& options, std::vector<std::string>& cases) {
+  command.set_help_flag("-h,--help");
+  command.add_option("CASE", cases)->required()->expected(1);
+  command.add_option("--crack", options.cracks)->expected(1)->take_all();
+  command.add_option("--tip", options.tips)->expected(1)->take_all();
+  command.add_option("--from", options.from);
+  command.add_option("--to", options.to)->required();
+  command.add_option("--steps", options.steps);
+  command.add_flag("--kinked", options.kinked);
+}
+
 void add_validate(CLI::App& command, Options& options) {
   command.set_help_flag("-h,--help");
   command.add_option("FAMILY", options.families);
@@ -133,7 +178,7 @@ std::string no_command(const std::vector<std::string>& arguments) {
                                  [](const std::string& text) { return text.rfind('-', 0) != 0; });
   const std::string what =
       word == arguments.end() ? "no command is given" : "\"" + *word + "\" is no command";
-  return what + "; write raiser solve CASE..., raiser check CASE... or raiser validate";
+  return what + "; write raiser solve CASE..., raiser check CASE..., raiser grow CASE or raiser validate";
 }
 
 Reply usage_fault(std::string what, const CLI::App& app) {
@@ -141,6 +186,7 @@ Reply usage_fault(std::string what, const CLI::App& app) {
   const std::string command = chosen.empty() ? "raiser" : "raiser " + chosen.front()->get_name();
   what.erase(std::find(what.begin(), what.end(), '\n'), what.end());
   if (what == "CASE is required") what = "no case file is named";
+  if (what == "--to is required") what = "--to is missing: how long the crack becomes, e.g. --to \"20 mm\"";
   return {command + ": " + what + "; see " + command + " --help\n", Exit::usage};
 }
 
@@ -160,15 +206,17 @@ std::variant<Options, Reply> parse(const std::vector<std::string>& arguments) {
   add_cases(check, cases);
   CLI::App& validate = *app.add_subcommand("validate");
   add_validate(validate, options);
+  CLI::App& grow = *app.add_subcommand("grow");
+  add_grow(grow, options.grow, cases);
   bool no_files = false;
-  solve.add_flag("--no-files", no_files);
+  for (CLI::App* command : {&solve, &grow}) command->add_flag("--no-files", no_files);
   bool charts = false;
   solve.add_flag("--charts", charts);
-  for (CLI::App* command : {&solve, &validate}) {
+  for (CLI::App* command : {&solve, &validate, &grow}) {
     command->add_option("-o,--out", folder);
     command->add_flag("--json", options.json);
   }
-  for (CLI::App* command : {&solve, &check, &validate}) command->add_flag("-q,--quiet", options.quiet);
+  for (CLI::App* command : {&solve, &check, &validate, &grow}) command->add_flag("-q,--quiet", options.quiet);
   if (arguments.empty()) return Reply{general_help, Exit::usage};
   try {
     app.parse(std::vector<std::string>(arguments.rbegin(), arguments.rend()));
@@ -176,19 +224,21 @@ std::variant<Options, Reply> parse(const std::vector<std::string>& arguments) {
     if (solve.parsed()) return Reply{std::string(solve_help) + exit_codes, Exit::settled};
     if (check.parsed()) return Reply{std::string(check_help) + exit_codes, Exit::settled};
     if (validate.parsed()) return Reply{std::string(validate_help) + exit_codes, Exit::settled};
+    if (grow.parsed()) return Reply{std::string(grow_help) + exit_codes, Exit::settled};
     return Reply{std::string(general_help) + exit_codes, Exit::settled};
   } catch (const CLI::CallForVersion&) {
     return Reply{"raiser " + version() + "\n", Exit::settled};
   } catch (const CLI::RequiredError& error) {
-    const bool named = solve.parsed() || check.parsed();
+    const bool named = solve.parsed() || check.parsed() || grow.parsed();
     return usage_fault(named ? error.what() : no_command(arguments), app);
   } catch (const CLI::ParseError& error) {
     return usage_fault(error.what(), app);
   }
-  const bool has_folder = solve.count("--out") + validate.count("--out") > 0;
+  const bool has_folder = solve.count("--out") + validate.count("--out") + grow.count("--out") > 0;
   if (has_folder && folder.empty()) return usage_fault("--out names no folder", app);
   if (check.parsed()) options.command = Options::Command::check;
   if (validate.parsed()) options.command = Options::Command::validate;
+  if (grow.parsed()) options.command = Options::Command::grow;
   options.cases.assign(cases.begin(), cases.end());
   options.files = !no_files;
   if (solve.parsed()) options.charts = charts;

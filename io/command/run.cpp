@@ -11,6 +11,7 @@
 
 #include "io/case/describe.hpp"
 #include "io/command/files.hpp"
+#include "io/command/grow.hpp"
 #include "io/command/options.hpp"
 #include "io/command/speech.hpp"
 #include "io/command/validate.hpp"
@@ -240,6 +241,8 @@ Exit dispatch(const Options& options, std::ostream& out, std::ostream& err, Term
   if (options.command == Options::Command::check) return check_cases(session);
   if (options.command == Options::Command::validate)
     return validate(options, session.output, err, session.progress, [] { return stop_asked.load(); });
+  if (options.command == Options::Command::grow)
+    return grow(options, session.output, err, session.progress, [] { return stop_asked.load(); });
   if (options.files) {
     const std::vector<std::string> faults = clashes(options.cases, options.folder.value_or(""));
     for (const std::string& fault : faults) err << "raiser solve: " << plain(fault) << "\n";

@@ -462,4 +462,6 @@ std::string_view json_between() { return ",\n"; }
 
 std::string_view json_end() { return "\n ]\n}\n"; }
 
+std::string json_text(std::string_view content) { return text(Json(std::string(content))); }
+
 }  // namespace raiser::io

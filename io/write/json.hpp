@@ -28,4 +28,7 @@ std::string json_begin();
 std::string_view json_between();
 std::string_view json_end();
 
+/// A text as a JSON string in its quotes; bytes that are not UTF-8 are replaced.
+std::string json_text(std::string_view text);
+
 }  // namespace raiser::io

@@ -49,7 +49,8 @@ TEST(CommandLine, SaysWhatIsWrongAndWhereHelpIs) {
   EXPECT_NE(reply({"solve", "a", "--fast"}).text.find("--fast"), std::string::npos);
   EXPECT_EQ(reply({"solve", "a", "--out", ""}).code, Exit::usage);
   const std::string cure =
-      "; write raiser solve CASE..., raiser check CASE... or raiser validate; see raiser --help\n";
+      "; write raiser solve CASE..., raiser check CASE..., raiser grow CASE or raiser validate; see raiser "
+      "--help\n";
   EXPECT_EQ(reply({"slove", "a.toml"}).text, "raiser: \"slove\" is no command" + cure);
   EXPECT_EQ(reply({"--"}).text, "raiser: no command is given" + cure);
   EXPECT_EQ(reply({"--help"}).code, Exit::settled);
