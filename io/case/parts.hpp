@@ -39,6 +39,8 @@ struct HoleReading {
 /// A row or grid becomes one hole for each place. Adds their names to `names`.
 std::vector<HoleReading> read_holes(const Table& document, Names& names);
 
+struct OutlineReading;
+
 /// A crack as far as it could be read. Its name and those of its tips are always
 /// there; they are also those of the crack itself.
 struct CrackReading {

@@ -6,6 +6,7 @@
 #include <cmath>
 #include <numbers>
 
+#include "io/case/outline.hpp"
 #include "io/case/parts.hpp"
 #include "mesh/region/mouth.hpp"
 

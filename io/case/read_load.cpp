@@ -202,7 +202,6 @@ std::optional<Load> read_kind(const Table& table, const Context& context, Load::
       return read_edge(table, context);
     case Load::Kind::tension:
     case Load::Kind::transverse:
-    case Load::Kind::face_pressure:
       break;
   }
   return read_tension(table, context);
@@ -226,7 +225,6 @@ std::string default_name(const std::optional<Load>& load, const Context& context
     case Load::Kind::tension:
     case Load::Kind::shear:
     case Load::Kind::bending:
-    case Load::Kind::face_pressure:
       break;
     case Load::Kind::transverse:
       return "tension across";

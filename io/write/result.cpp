@@ -101,10 +101,6 @@ std::string_view words(solver::Quantity quantity) {
       return "smallest edge stress";
     case solver::Quantity::von_mises:
       return "largest von Mises stress";
-    case solver::Quantity::stress_intensity:
-      return "stress intensity";
-    case solver::Quantity::t_stress:
-      return "T-stress";
     case solver::Quantity::largest_edge_stress:
       break;
   }
