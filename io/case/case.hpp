@@ -34,6 +34,7 @@ struct Case {
   std::string title;
   std::filesystem::path file;
   solver::Problem problem;
+  std::vector<std::string> load_tables;  ///< by load, the path of its table: "load.1", "pin.1"
   std::vector<solver::Ask> asks;
   double tolerance = 1e-3;               ///< relative; of the asks that give none of their own
   std::optional<double> yield_strength;  ///< MPa

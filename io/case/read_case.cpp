@@ -26,7 +26,8 @@ struct Parts {
   Material material;
   std::vector<HoleReading> holes;
   std::vector<LoadReading> loads;
-  bool loads_are_sound = false;  ///< no fault was found in any
+  std::vector<SupportReading> supports;
+  bool loads_are_sound = false;  ///< no fault was found in any load or support
   Question question;
 };
 
@@ -50,12 +51,12 @@ void complain_of_missing(const Table& document, std::string_view key, std::strin
 }
 
 Parts read_parts(const Table& document, const std::string& default_title) {
-  constexpr std::array<std::string_view, 7> keys{"raiser", "title", "plate", "material",
-                                                 "hole",   "load",  "ask"};
+  constexpr std::array<std::string_view, 9> keys{"raiser", "title", "plate",   "material", "hole",
+                                                 "load",   "pin",   "support", "ask"};
   refuse_unknown(document, keys);
   read_version(document);
   const Entry* title = find(document, "title");
-  Parts parts{text(document, title).value_or(default_title), document, {}, {}, {}, {}, false, {}};
+  Parts parts{text(document, title).value_or(default_title), document, {}, {}, {}, {}, {}, false, {}};
   const auto need = [&](std::string_view key, std::string_view contents) {
     const auto table = table_at(*document.node, key, *document.report);
     if (!table && find(document, key) == nullptr) {
@@ -75,12 +76,17 @@ Parts read_parts(const Table& document, const std::string& default_title) {
   for (const HoleReading& hole : parts.holes) names.push_back(hole.name);
   const std::size_t faults_before = document.report->faults.size();
   parts.loads = read_loads(document, parts.plate, names);
+  parts.supports = read_supports(document);
   parts.loads_are_sound = document.report->faults.size() == faults_before;
   parts.question = read_question(document, names);
   if (parts.holes.empty() && find(document, "hole") == nullptr) {
     complain_of_missing(document, "hole", "the plate has no hole", "add [[hole]] with a shape and its sizes");
   }
-  if (parts.loads.empty() && find(document, "load") == nullptr) {
+  const bool moved = std::any_of(
+      parts.supports.begin(), parts.supports.end(),
+      [](const SupportReading& reading) { return !reading.support || solver::displaces(*reading.support); });
+  if (parts.loads.empty() && find(document, "load") == nullptr && find(document, "pin") == nullptr &&
+      !moved) {
     complain_of_missing(document, "load", "nothing loads the plate",
                         "add [[load]] with a kind and its stress or force");
   }
@@ -141,10 +147,20 @@ void check_balance(const Parts& parts, const mesh::Plate& plate, Report& report)
     if (!load.load || !parts.loads_are_sound) return;
     loads.push_back(*load.load);
   }
-  const auto fault = solver::imbalance(plate, loads);
+  std::vector<solver::Support> supports;
+  for (const SupportReading& reading : parts.supports) {
+    if (!reading.support || !parts.loads_are_sound) return;
+    supports.push_back(*reading.support);
+  }
+  const auto wrong = solver::faults(plate, supports);
+  for (const solver::SupportFault& fault : wrong)
+    add_fault(report, Kind::loads, parts.supports[fault.support].at, "support", fault.what, fault.cure);
+  if (!wrong.empty()) return;
+  const auto fault = solver::imbalance(plate, loads, supports);
   if (!fault) return;
   const Position at = fault->loads.empty() ? Position{} : parts.loads[fault->loads.front()].at;
-  add_fault(report, Kind::loads, at, "load", fault->what, fault->cure);
+  const bool of_pin = !fault->loads.empty() && parts.loads[fault->loads.front()].path.starts_with("pin");
+  add_fault(report, Kind::loads, at, of_pin ? "pin" : "load", fault->what, fault->cure);
 }
 
 Case assemble(const Parts& parts, mesh::Plate plate, Report& report, const std::string& name) {
@@ -153,7 +169,11 @@ Case assemble(const Parts& parts, mesh::Plate plate, Report& report, const std::
   result.file = name;
   result.problem.plate = std::move(plate);
   result.problem.material = *parts.material.law;
-  for (const LoadReading& load : parts.loads) result.problem.loads.push_back(*load.load);
+  for (const LoadReading& load : parts.loads) {
+    result.problem.loads.push_back(*load.load);
+    result.load_tables.push_back(load.path);
+  }
+  for (const SupportReading& reading : parts.supports) result.problem.supports.push_back(*reading.support);
   result.asks = parts.question.asks;
   result.tolerance = parts.question.tolerance;
   result.yield_strength = parts.material.yield_strength;

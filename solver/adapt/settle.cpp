@@ -7,6 +7,7 @@
 #include <stdexcept>
 
 #include "mesh/triangulate/triangulate.hpp"
+#include "solver/adapt/pins.hpp"
 #include "solver/adapt/report.hpp"
 #include "solver/adapt/sequence.hpp"
 #include "solver/solution.hpp"
@@ -28,8 +29,12 @@ void require_legal(const Problem& problem, const std::vector<Ask>& asks) {
     throw std::invalid_argument("settle: the plate is not legal: " + found.front().what);
   if (const auto found = faults(problem.material); !found.empty())
     throw std::invalid_argument("settle: the material is not legal: " + found.front().what);
-  if (problem.loads.empty()) throw std::invalid_argument("settle: there is no load");
-  if (const auto fault = imbalance(problem.plate, problem.loads))
+  if (const auto found = faults(problem.plate, problem.supports); !found.empty())
+    throw std::invalid_argument("settle: a support is not legal: " + found.front().what);
+  const auto& supports = problem.supports;
+  if (problem.loads.empty() && std::none_of(supports.begin(), supports.end(), displaces))
+    throw std::invalid_argument("settle: there is no load");
+  if (const auto fault = imbalance(problem.plate, problem.loads, problem.supports))
     throw std::invalid_argument("settle: " + fault->what);
   const std::size_t tips = mesh::tips(problem.plate.cracks).size();
   for (const Ask& ask : asks)
@@ -42,6 +47,8 @@ void require_legal(const Problem& problem, const std::vector<Ask>& asks) {
 mesh::Mirrors usable_mirrors(const Problem& problem, const std::vector<UnitLoad>& loads) {
   if (!problem.material.has_mirrors()) return {};
   mesh::Mirrors shared = mesh::mirrors(problem.plate);
+  shared.x = shared.x && have_mirror(problem.plate, problem.supports, {.x = true, .y = false});
+  shared.y = shared.y && have_mirror(problem.plate, problem.supports, {.x = false, .y = true});
   for (const UnitLoad& load : loads) {
     shared.x = shared.x && load.under_x != UnitLoad::Parity::neither;
     shared.y = shared.y && load.under_y != UnitLoad::Parity::neither;
@@ -56,7 +63,7 @@ double least_tolerance(const std::vector<Ask>& asks) {
 }
 
 /// The first mesh for a tolerance, before anything is solved.
-mesh::SizeRule first_rule(const Plate& plate, double tolerance) {
+mesh::SizeRule first_rule(const Problem& problem, double tolerance) {
   mesh::SizeRule rule;
   if (tolerance < 5e-5) rule.turn *= 0.8;
   if (tolerance < 1e-5) {
@@ -72,8 +79,9 @@ mesh::SizeRule first_rule(const Plate& plate, double tolerance) {
     rule.tip_ratio = 0.15;
     rule.tip_rings = tolerance < 1e-7 ? 9 : 7;
   }
-  rule.refine.assign(mesh::raiser_count(plate), 1.0);
-  rule.refine_tip.assign(mesh::tips(plate.cracks).size(), 1.0);
+  rule.refine.assign(mesh::raiser_count(problem.plate), 1.0);
+  rule.refine_tip.assign(mesh::tips(problem.plate.cracks).size(), 1.0);
+  rule.singular = clamped_ends(problem.plate, problem.supports);
   return rule;
 }
 
@@ -135,27 +143,52 @@ std::string reason_for(const DegreeSequence& sequence, const Plate& plate, const
       place_of(asks[worst - excess.begin()], plate), *worst);
 }
 
+/// The plate's boundary, with vertices where the tractions change.
+mesh::Region divided(const Problem& problem) {
+  std::vector<mesh::Break> places;
+  for (const Load& load : problem.loads)
+    for (const mesh::Break& at : breaks(problem.plate, load)) places.push_back(at);
+  return mesh::broken(mesh::trace(problem.plate), places);
+}
+
+/// What is to be said when the contact of pins was not found.
+std::string contact_reason(const PinsInContact& contact) {
+  return "the contact of the pins was not found: " + contact.reason +
+         (contact.pins.empty() ? "; the numbers stand on a cosine pressure instead"
+                               : "; the numbers stand on the last pressure tried");
+}
+
+/// The share of a tolerance that may go into the pressure of pins in contact.
+constexpr double contact_share = 0.3;
+
 }  // namespace
 
-Solution settle(const Problem& problem, const std::vector<Ask>& asks) {
+Solution settle(const Problem& asked, const std::vector<Ask>& asks) {
   const auto start = Clock::now();
-  require_legal(problem, asks);
-  const std::vector<UnitLoad> loads = unit_loads(problem.plate, problem.loads);
-  const mesh::Mirrors mirrors = usable_mirrors(problem, loads);
-  const mesh::Region region = mesh::cut(mesh::trace(problem.plate), mirrors);
+  require_legal(asked, asks);
   const double tolerance = least_tolerance(asks);
-  mesh::SizeRule rule = first_rule(problem.plate, tolerance);
+  const PinsInContact contact = with_contact(asked, contact_share * tolerance);
+  const Problem& problem = contact.problem;
+  std::vector<UnitLoad> loads = unit_loads(problem.plate, problem.loads, problem.supports);
+  loads.insert(loads.end(), contact.doubts.begin(), contact.doubts.end());
+  const mesh::Mirrors mirrors = usable_mirrors(problem, loads);
+  const mesh::Region region = mesh::cut(divided(problem), mirrors);
+  const std::vector<HeldEdge> held = held_edges(problem.plate, problem.supports);
+  mesh::SizeRule rule = first_rule(problem, tolerance);
   std::vector<Level> levels;
   for (int refinement = 0;; ++refinement) {
     const Model model(mesh::triangulate(region, rule), mirrors, problem.material, problem.plate.thickness,
-                      loads);
+                      loads, held);
     DegreeSequence sequence(model, problem.plate);
     const double worst = raise_degree(sequence, asks, tolerance, refinement, start, levels);
     const bool is_settled = worst <= 1.0;
     if (is_settled || refinement == most_refinements) {
       Solution solution = report(problem, sequence);
-      solution.status = is_settled ? Solution::Status::settled : Solution::Status::not_met;
+      const bool is_met = is_settled && contact.reason.empty();
+      solution.status = is_met ? Solution::Status::settled : Solution::Status::not_met;
       if (!is_settled) solution.reason = reason_for(sequence, problem.plate, asks);
+      if (!contact.reason.empty()) solution.reason = contact_reason(contact);
+      solution.pins = contact.pins;
       solution.levels = std::move(levels);
       solution.seconds = seconds_since(start);
       return solution;

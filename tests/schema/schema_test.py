@@ -28,8 +28,9 @@ VALUES = [True, 5, 0.25, -3, 0, [], ["5 mm"], ["1 mm", "2 mm"], {}, [{}], "", " 
           "plane strain", "von Mises", "a\tb", "1e3 mm", ".5 mm", "5. mm", "5 m m", "5mm", "5 Nm", "5 N*m", "5 in"]
 
 # Faults that no schema can express, by a part of the reader's message.
-BEYOND = ["is taken", "magnitude is outside", "all loads", "nothing is asked for", "is too large: strain energy", "its yield strength of"]
-BEYOND_KEYS = ["load.hole = ", "ask.holes = ", "ask.result.hole = "]
+BEYOND = ["is taken", "magnitude is outside", "all loads", "nothing is asked for", "is too large: strain energy", "its yield strength of", "the edge runs from 0 to", "the loaded part ends where", "the shares add up to", "shares for",
+          "is named twice", "holds the corner", "is held by", "round hole", "small displacements cover", "must not be negative"]
+BEYOND_KEYS = ["load.hole = ", "ask.holes = ", "ask.result.hole = ", "pin.hole = ", "pin.holes = "]
 
 
 def is_beyond_schema(kind, message):

@@ -32,7 +32,8 @@ void add(Situation& s, const Load& load) {
     case Load::Kind::face_pressure:
       break;  // of no solution for a hole
     case Load::Kind::edge:
-      break;  // in of_edges()
+    case Load::Kind::pin:
+      break;  // in of_edges(); not covered
   }
 }
 
@@ -102,8 +103,14 @@ void append(std::vector<Comparison>& all, const mesh::Plate& plate, const solver
 std::vector<Comparison> compare(const solver::Problem& problem, const solver::LoadFindings& combined,
                                 const std::vector<solver::LoadFindings>& units) {
   std::vector<Comparison> all;
-  if (problem.material.orthotropy) return all;  // every family here is of isotropic plates
-  std::vector<std::vector<Load>> groups;        // one for each unit; edge loads come last, together
+  // Every family here is of isotropic plates that uniform tractions load, held nowhere.
+  const auto is_other = [](const Load& load) {
+    return load.kind == Load::Kind::pin || load.from || load.to || load.stress_to || load.along_to;
+  };
+  if (problem.material.orthotropy || !problem.supports.empty() ||
+      std::any_of(problem.loads.begin(), problem.loads.end(), is_other))
+    return all;
+  std::vector<std::vector<Load>> groups;  // one for each unit; edge loads come last, together
   std::vector<Load> at_edges;
   for (const Load& load : problem.loads) {
     if (load.kind == Load::Kind::edge)
