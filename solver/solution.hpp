@@ -22,6 +22,7 @@ struct Problem {
   Plate plate;
   HookeLaw material;
   std::vector<Load> loads;
+  std::vector<Support> supports = {};
 };
 
 /// One asked number and its tolerance. At a raiser it is relative to the largest
@@ -101,6 +102,25 @@ struct LoadFindings {
   std::string name;  ///< the load's name, "all loads" for the combination
   std::vector<RaiserFindings> raisers;
   std::vector<TipFindings> tips = {};
+  std::vector<std::size_t> loads = {};  ///< indices into Problem::loads
+};
+
+/// What a support puts on the plate under all loads.
+struct SupportReaction {
+  std::size_t support = 0;  ///< index into Problem::supports
+  Resultant reaction;       ///< about the origin
+};
+
+/// Where a rigid pin touches its hole under all loads, and how hard.
+struct PinFindings {
+  std::size_t load = 0;   ///< index into Problem::loads
+  bool all_round = false; ///< it touches everywhere
+  Estimate begin;         ///< rad, from +x: the arc of contact runs anticlockwise from here
+  Estimate end;           ///< rad
+  Estimate largest;       ///< MPa, the largest pressure
+  double largest_at = 0.0; ///< rad
+  double force_miss = 0.0; ///< how far the pressure's resultant misses the pin's force, over that force
+  BearingPressure pressure;
 };
 
 /// One step of the sequence that the bounds stand on.
@@ -116,6 +136,7 @@ struct Level {
 
 /// Checks on the whole plate.
 struct PlateChecks {
+  double support_miss = 0.0;          ///< what loads and reactions leave over / the largest of them
   double equilibrium_residual = 0.0;  ///< ||K u - f|| / ||f||, largest over the unit loads
   double reaction = 0.0;              ///< largest force in the rigid-body constraints / applied force
   double far_station = 0.0;           ///< mm, the section x = const where the nominal stress was recovered
@@ -172,6 +193,9 @@ struct Solution {
   std::size_t triangles = 0;
   mesh::Mirrors mirrors_used;
   double seconds = 0.0;
+
+  std::vector<SupportReaction> reactions;  ///< by support
+  std::vector<PinFindings> pins;           ///< of the pins in contact
 
   std::vector<std::vector<EdgeSample>> edges;  ///< by raiser, under all loads
   std::vector<Ligament> ligaments;             ///< under all loads

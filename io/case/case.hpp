@@ -36,6 +36,7 @@ struct Case {
   std::string title;
   std::filesystem::path file;
   solver::Problem problem;
+  std::vector<std::string> load_tables;  ///< by load, the path of its table: "load.1", "pin.1"
   std::vector<solver::Ask> asks;
   double tolerance = 1e-3;               ///< relative; of the asks that give none of their own
   double t_stress_tolerance = 1e-2;      ///< the same of those for a T-stress

@@ -209,6 +209,42 @@ std::string describe_holes(const Case& input) {
 
 std::string kilonewtons(double newtons) { return derived(newtons / 1e3, "kN"); }
 
+/// A pin's force and how its pressure is found.
+Phrases meaning_of_pin(const Plate& plate, const Load& load) {
+  Phrases phrases{fmt::format("pin in {}", plate.holes[load.hole].name),
+                  fmt::format("{} at {} deg", kilonewtons(load.force),
+                              fmt::format("{:.10g}", load.direction * 180.0 / std::numbers::pi))};
+  if (!load.clearance) {
+    phrases.emplace_back("cosine pressure over the half it presses on");
+    return phrases;
+  }
+  phrases.emplace_back("frictionless contact of a rigid pin");
+  const double fit = *load.clearance;
+  phrases.push_back(fit == 0.0 ? "neat fit"
+                               : fmt::format("{} {} on the diameter", fit > 0 ? "clearance" : "interference",
+                                             amount(std::abs(fit), "mm")));
+  return phrases;
+}
+
+/// A traction that changes along its edge or acts on a part of it.
+Phrases meaning_of_part(const Plate& plate, const Load& load) {
+  Phrases phrases;
+  const auto component = [&](const char* word, double begin, const std::optional<double>& end) {
+    if (begin == 0.0 && !end) return;
+    phrases.push_back(end ? fmt::format("{} from {:.6g} to {:.6g} MPa", word, begin, *end)
+                          : fmt::format("{} {:.6g} MPa", word, begin));
+  };
+  component("normal", load.stress, load.stress_to);
+  component("shear (anticlockwise)", load.along, load.along_to);
+  const double length = solver::straight_edge(plate, load.edge)->length;
+  phrases.push_back(fmt::format("from {} to {} of its {}", amount(load.from.value_or(0.0), "mm"),
+                                amount(load.to.value_or(length), "mm"), amount(length, "mm")));
+  const solver::Resultant sum = solver::resultant(plate, load);
+  phrases.push_back(
+      fmt::format("in all ({:.6g}, {:.6g}) kN", sum.force.x() / 1e3 + 0.0, sum.force.y() / 1e3 + 0.0));
+  return phrases;
+}
+
 /// What a load is and the force or moment that it stands for.
 Phrases meaning(const Plate& plate, const Load& load) {
   const auto ends = plate.outline ? solver::loaded_ends(plate, 0) : std::nullopt;
@@ -237,9 +273,12 @@ Phrases meaning(const Plate& plate, const Load& load) {
       return {fmt::format("pressure: {} in {}", stress, plate.holes[load.hole].name)};
     case Load::Kind::face_pressure:
       return {fmt::format("pressure: {} on both faces of {}", stress, plate.cracks[load.crack].name)};
+    case Load::Kind::pin:
+      return meaning_of_pin(plate, load);
     case Load::Kind::edge:
       break;
   }
+  if (load.from || load.to || load.stress_to || load.along_to) return meaning_of_part(plate, load);
   const bool end = load.edge == mesh::rectangle::right || load.edge == mesh::rectangle::left;
   double area = plate.thickness * (end ? plate.width : plate.length);
   if (plate.outline) area = plate.thickness * mesh::edge_length(*plate.outline, load.edge);
@@ -263,7 +302,7 @@ std::string written_amounts(const Case& input, const std::string& path, std::str
 
 std::string describe_load(const Case& input, std::size_t index) {
   const Load& load = input.problem.loads[index];
-  const std::string path = fmt::format("load.{}.", index + 1);
+  const std::string path = input.load_tables.at(index) + ".";
   Phrases phrases = meaning(input.problem.plate, load);
   if (load.kind == Load::Kind::edge)
     phrases.insert(phrases.begin(), mesh::edge_names(input.problem.plate).at(load.edge) + " edge");
@@ -291,6 +330,25 @@ bool has_raisers(const Plate& plate) { return mesh::raiser_count(plate) > 0; }
 std::string usual_results(const Plate& plate) {
   if (!has_raisers(plate)) return "stress intensity";
   return std::string("largest and smallest edge stress, von Mises") + (plate.cracks.empty() ? "" : ", K");
+}
+
+std::string describe_supports(const Case& input) {
+  if (input.problem.supports.empty()) return "";
+  const auto edges = mesh::edge_names(input.problem.plate);
+  std::string result = row("Supports", {fmt::format("{}", input.problem.supports.size())});
+  for (const solver::Support& support : input.problem.supports) {
+    Phrases phrases{edges.at(support.edge) + " edge"};
+    const bool still = !solver::displaces(support);
+    if (still && support.normal && support.along) phrases.emplace_back("clamped: no displacement");
+    if (still && !support.along) phrases.emplace_back("sliding: no displacement across the edge");
+    if (!still || !support.normal)
+      for (const auto& [word, value] :
+           {std::pair{"outward", support.normal}, {"along, anticlockwise", support.along}})
+        phrases.push_back(value ? fmt::format("displaced {} {}", amount(*value, "mm"), word)
+                                : fmt::format("free {}", word));
+    result += row("  " + support.name, phrases);
+  }
+  return result + '\n';
 }
 
 std::string describe_question(const Case& input) {
@@ -333,7 +391,7 @@ std::string describe(const Case& input) {
   return title + '\n' + row("File", {input.file.string(), fmt::format("format {}", case_format)}) + '\n' +
          describe_plate(input) + describe_material(input) + '\n' + describe_outline(input) +
          describe_holes(input) + describe_cracks(input) + '\n' + describe_loads(input) + '\n' +
-         describe_question(input);
+         describe_supports(input) + describe_question(input);
 }
 
 }  // namespace raiser::io

@@ -59,6 +59,7 @@ std::vector<CrackReading> read_cracks(const Table& document, const PlateSizes& p
 struct LoadReading {
   std::optional<solver::Load> load;
   Position at;
+  std::string path;  ///< of its table among what is written: "load.1", "pin.2"
 };
 /// Forces and moments become stresses on the plate's own sections; without the
 /// sizes they need such loads stay empty.
@@ -66,6 +67,18 @@ std::vector<LoadReading> read_loads(const Table& document, const PlateSizes& pla
                                     const std::optional<mesh::Outline>& outline,
                                     const std::vector<std::string_view>& holes,
                                     const std::vector<std::string_view>& cracks);
+
+/// The loads of one [[pin]]: one, or one for each hole of a row. An empty one
+/// where it could not be read.
+std::vector<std::optional<solver::Load>> read_pin(const Table& table,
+                                                  const std::vector<std::string_view>& holes);
+
+/// A support as far as it could be read, and its place.
+struct SupportReading {
+  std::optional<solver::Support> support;
+  Position at;
+};
+std::vector<SupportReading> read_supports(const Table& document);
 
 /// What is asked for, in the order of [ask], then of [[ask.result]].
 struct Question {

@@ -29,7 +29,8 @@ struct Parts {
   std::vector<HoleReading> holes;
   std::vector<CrackReading> cracks;
   std::vector<LoadReading> loads;
-  bool loads_are_sound = false;  ///< no fault was found in any
+  std::vector<SupportReading> supports;
+  bool loads_are_sound = false;  ///< no fault was found in any load or support
   Question question;
 };
 
@@ -53,8 +54,9 @@ void complain_of_missing(const Table& document, std::string_view key, std::strin
 }
 
 Parts read_parts(const Table& document, const std::string& default_title) {
-  constexpr std::array<std::string_view, 11> keys{
-      "raiser", "title", "plate", "material", "hole", "outline", "notch", "shoulder", "crack", "load", "ask"};
+  constexpr std::array<std::string_view, 13> keys{"raiser",  "title",   "plate",    "material", "hole",
+                                                  "outline", "notch",   "shoulder", "crack",    "load",
+                                                  "pin",     "support", "ask"};
   refuse_unknown(document, keys);
   read_version(document);
   const Entry* title = find(document, "title");
@@ -99,6 +101,7 @@ Parts read_parts(const Table& document, const std::string& default_title) {
   const bool known_edges = find(document, "outline") == nullptr && find(document, "shoulder") == nullptr;
   if (parts.outline.is_sound || known_edges)
     parts.loads = read_loads(document, parts.plate, parts.outline.outline, names, cracks);
+  parts.supports = read_supports(document);
   if (parts.outline.is_sound) parts.question = read_question(document, names, raisers, tips);
   parts.loads_are_sound = document.report->faults.size() == faults_before;
   const bool is_whole = find(document, "hole") == nullptr && find(document, "crack") == nullptr;
@@ -106,7 +109,10 @@ Parts read_parts(const Table& document, const std::string& default_title) {
     complain_of_missing(document, "hole", "nothing on the plate raises its stress",
                         "add [[hole]], [[notch]], [[shoulder]] or [[crack]] with its sizes");
   }
-  if (find(document, "load") == nullptr) {
+  const bool moved = std::any_of(
+      parts.supports.begin(), parts.supports.end(),
+      [](const SupportReading& reading) { return !reading.support || solver::displaces(*reading.support); });
+  if (find(document, "load") == nullptr && find(document, "pin") == nullptr && !moved) {
     complain_of_missing(document, "load", "nothing loads the plate",
                         "add [[load]] with a kind and its stress or force");
   }
@@ -183,10 +189,20 @@ void check_balance(const Parts& parts, const mesh::Plate& plate, Report& report)
     if (!load.load || !parts.loads_are_sound) return;
     loads.push_back(*load.load);
   }
-  const auto fault = solver::imbalance(plate, loads);
+  std::vector<solver::Support> supports;
+  for (const SupportReading& reading : parts.supports) {
+    if (!reading.support || !parts.loads_are_sound) return;
+    supports.push_back(*reading.support);
+  }
+  const auto wrong = solver::faults(plate, supports);
+  for (const solver::SupportFault& fault : wrong)
+    add_fault(report, Kind::loads, parts.supports[fault.support].at, "support", fault.what, fault.cure);
+  if (!wrong.empty()) return;
+  const auto fault = solver::imbalance(plate, loads, supports);
   if (!fault) return;
   const Position at = fault->loads.empty() ? Position{} : parts.loads[fault->loads.front()].at;
-  add_fault(report, Kind::loads, at, "load", fault->what, fault->cure);
+  const bool of_pin = !fault->loads.empty() && parts.loads[fault->loads.front()].path.starts_with("pin");
+  add_fault(report, Kind::loads, at, of_pin ? "pin" : "load", fault->what, fault->cure);
 }
 
 Case assemble(const Parts& parts, mesh::Plate plate, Report& report, const std::string& name) {
@@ -195,7 +211,11 @@ Case assemble(const Parts& parts, mesh::Plate plate, Report& report, const std::
   result.file = name;
   result.problem.plate = std::move(plate);
   result.problem.material = *parts.material.law;
-  for (const LoadReading& load : parts.loads) result.problem.loads.push_back(*load.load);
+  for (const LoadReading& load : parts.loads) {
+    result.problem.loads.push_back(*load.load);
+    result.load_tables.push_back(load.path);
+  }
+  for (const SupportReading& reading : parts.supports) result.problem.supports.push_back(*reading.support);
   result.asks = parts.question.asks;
   result.tolerance = parts.question.tolerance;
   result.t_stress_tolerance = parts.question.t_stress_tolerance;

@@ -13,15 +13,15 @@ namespace {
 using solver::Load;
 using Keys = std::span<const std::string_view>;
 
-constexpr std::array<std::string_view, 15> load_keys{
-    "name",  "kind",     "direction", "stress", "force",        "moment", "on",         "hole",
-    "crack", "pressure", "edge",      "normal", "normal_force", "shear",  "shear_force"};
+constexpr std::array<std::string_view, 17> load_keys{
+    "name",     "kind", "direction", "stress",       "force", "moment",      "on",   "hole", "crack",
+    "pressure", "edge", "normal",    "normal_force", "shear", "shear_force", "from", "to"};
 constexpr std::array<std::string_view, 6> tension_keys{"name", "kind", "direction", "stress", "force", "on"};
 constexpr std::array<std::string_view, 4> shear_keys{"name", "kind", "stress", "force"};
 constexpr std::array<std::string_view, 5> bending_keys{"name", "kind", "stress", "moment", "on"};
 constexpr std::array<std::string_view, 5> pressure_keys{"name", "kind", "hole", "crack", "pressure"};
-constexpr std::array<std::string_view, 7> edge_keys{"name",         "kind",  "edge",       "normal",
-                                                    "normal_force", "shear", "shear_force"};
+constexpr std::array<std::string_view, 9> edge_keys{"name",  "kind",        "edge", "normal", "normal_force",
+                                                    "shear", "shear_force", "from", "to"};
 constexpr std::array kinds{Load::Kind::tension, Load::Kind::shear, Load::Kind::bending, Load::Kind::pressure,
                            Load::Kind::edge};
 
@@ -157,10 +157,65 @@ std::optional<Load> read_pressure(const Table& table, const Context& context) {
   return load;
 }
 
-/// One component of an edge load, MPa; 0 when neither key is there.
-std::optional<double> read_component(const Table& table, Keys keys, const std::optional<double>& area) {
-  if (find(table, keys.front()) == nullptr && find(table, keys.back()) == nullptr) return 0.0;
-  return stress_from(table, keys, Dimension::force, area, "\"100 MPa\"");
+/// One component of an edge load at both ends of the loaded part, MPa; 0 when
+/// neither key is there.
+struct Component {
+  double begin = 0.0;
+  std::optional<double> end;  ///< where it differs from that at the beginning
+};
+
+/// Two stresses in a list: at the beginning and the end of the loaded part.
+std::optional<Component> read_ends(const Table& table, const Entry& entry) {
+  const std::vector<Node>& both = entry.value.items;
+  if (both.size() != 2) {
+    complain(table, entry, fmt::format("a list has the stresses at both ends and this has {}", both.size()),
+             "write e.g. [\"0 MPa\", \"40 MPa\"], or one stress for all of it");
+    return std::nullopt;
+  }
+  const auto begin = quantity(table, entry, both.front(), Dimension::stress, Sign::any);
+  const auto end = quantity(table, entry, both.back(), Dimension::stress, Sign::any);
+  if (!begin || !end) return std::nullopt;
+  if (*begin != 0.0 || *end != 0.0) return Component{*begin, *end};
+  complain(table, entry, "a load of zero does nothing", "give it a value or leave it out");
+  return std::nullopt;
+}
+
+std::optional<Component> read_component(const Table& table, Keys keys, const std::optional<double>& area) {
+  const Entry* stress = find(table, keys.front());
+  if (stress == nullptr && find(table, keys.back()) == nullptr) return Component{};
+  if (stress != nullptr && stress->value.kind == Node::Kind::array) {
+    static_cast<void>(require_one(table, keys, ""));  // complains of a force beside it
+    return read_ends(table, *stress);
+  }
+  const auto value = stress_from(table, keys, Dimension::force, area, "\"100 MPa\"");
+  if (!value) return std::nullopt;
+  return Component{*value, std::nullopt};
+}
+
+/// Where the loaded part of an edge begins and ends; empty for the edge's own ends.
+struct Part {
+  std::optional<double> from, to;
+};
+std::optional<Part> read_part(const Table& table, const std::optional<double>& length) {
+  Part part;
+  bool sound = true;
+  for (const auto& [key, place] : {std::pair{"from", &part.from}, {"to", &part.to}}) {
+    const Entry* entry = find(table, key);
+    if (entry == nullptr) continue;
+    *place = quantity(table, entry, Dimension::length, Sign::any);
+    sound = sound && place->has_value();
+    if (!*place || !length || (**place >= 0.0 && **place <= *length * (1 + 1e-12))) continue;
+    complain(table, *entry,
+             fmt::format("the edge runs from 0 to {:g} mm, anticlockwise round the plate", *length),
+             "give a place on it");
+    sound = false;
+  }
+  if (!sound) return std::nullopt;
+  if (part.from && part.from.value() >= part.to.value_or(length.value_or(1e300))) {
+    complain(table, "the loaded part ends where it begins or before", "let \"to\" be larger than \"from\"");
+    return std::nullopt;
+  }
+  return part;
 }
 
 std::optional<Load> read_edge(const Table& table, const Context& context) {
@@ -170,22 +225,29 @@ std::optional<Load> read_edge(const Table& table, const Context& context) {
   const std::vector<std::string_view> words(context.edges.begin(), context.edges.end());
   const auto edge = choice(table, require(table, "edge", fmt::format("\"{}\"", words.front())), words);
   const bool end = edge.value_or(0) % 2 == 0;
-  auto area = section(context.plate, end ? context.plate.width : context.plate.length);
-  if (context.drawn && edge)
-    area = mesh::edge_length(*context.drawn->outline, *edge) * context.drawn->thickness;
+  std::optional<double> length = end ? context.plate.width : context.plate.length;
+  if (context.drawn && edge) length = mesh::edge_length(*context.drawn->outline, *edge);
+  const auto part = read_part(table, edge ? length : std::nullopt);
+  auto loaded = length;
+  if (part && length) loaded = part->to.value_or(*length) - part->from.value_or(0.0);
+  const auto area = section(context.plate, loaded);
   const auto normal = read_component(table, normal_keys, area);
   const auto along = read_component(table, shear_keys_of_edge, area);
-  if (normal == 0.0 && along == 0.0) {
+  if (normal && along && normal->begin == 0.0 && along->begin == 0.0 && !normal->end && !along->end) {
     complain(table, "neither a normal nor a shear stress is given",
              "add normal, normal_force, shear or shear_force, e.g. normal = \"100 MPa\"");
     return std::nullopt;
   }
-  if (!edge || !normal || !along) return std::nullopt;
+  if (!edge || !part || !normal || !along) return std::nullopt;
   Load load;
   load.kind = Load::Kind::edge;
   load.edge = *edge;
-  load.stress = *normal;
-  load.along = *along;
+  load.stress = normal->begin;
+  load.along = along->begin;
+  load.stress_to = normal->end;
+  load.along_to = along->end;
+  load.from = part->from;
+  load.to = part->to;
   return load;
 }
 
@@ -202,6 +264,7 @@ std::optional<Load> read_kind(const Table& table, const Context& context, Load::
       return read_edge(table, context);
     case Load::Kind::tension:
     case Load::Kind::transverse:
+    case Load::Kind::pin:
       break;
   }
   return read_tension(table, context);
@@ -210,8 +273,13 @@ std::optional<Load> read_kind(const Table& table, const Context& context, Load::
 /// Reports what is wrong with the values of a load whose kind is not known.
 void check_values(const Table& table) {
   for (const std::string_view key : {"stress", "pressure", "normal", "shear"}) {
-    quantity(table, find(table, key), Dimension::stress, Sign::nonzero);
+    const Entry* entry = find(table, key);
+    const bool ends =
+        entry != nullptr && entry->value.kind == Node::Kind::array && key != "stress" && key != "pressure";
+    if (!ends) quantity(table, entry, Dimension::stress, Sign::nonzero);
   }
+  for (const std::string_view key : {"from", "to"})
+    quantity(table, find(table, key), Dimension::length, Sign::any);
   for (const std::string_view key : {"force", "normal_force", "shear_force"}) {
     quantity(table, find(table, key), Dimension::force, Sign::nonzero);
   }
@@ -232,6 +300,8 @@ std::string default_name(const std::optional<Load>& load, const Context& context
       return fmt::format("pressure in {}", context.holes[load->hole]);
     case Load::Kind::face_pressure:
       return fmt::format("pressure in {}", context.cracks[load->crack]);
+    case Load::Kind::pin:
+      return fmt::format("pin in {}", context.holes[load->hole]);
     case Load::Kind::edge:
       return fmt::format("{} edge", context.edges[load->edge]);
   }
@@ -284,15 +354,31 @@ std::vector<LoadReading> read_loads(const Table& document, const PlateSizes& pla
     context.drawn = mesh::Plate{*plate.length, *plate.width, *plate.thickness, {}, outline};
     context.edges = outline->edges;
   }
-  const Names written = written_names(tables);
-  Names names{"all loads", "edges"};  // the program's own names for sums of loads
+  const std::vector<Table> pins = tables_at(document, "pin");
+  Names written = written_names(tables);
+  written.merge(written_names(pins));
+  // The program's own names for sums of loads.
+  Names names{"all loads", "edges", "pins", "edges and pins", "supports", "doubt of contact"};
   for (const Table& table : tables) {
     auto load = read_load(table, context);
     const std::string name =
         unique_name(table, first_free(default_name(load, context), names, written), names);
     if (load) load->name = name;
-    loads.push_back({std::move(load), table.node->at});
+    loads.push_back({std::move(load), table.node->at, table.path});
   }
+  for (const Table& table : pins)
+    for (auto& load : read_pin(table, holes)) {
+      const std::string otherwise = first_free(default_name(load, context), names, written);
+      std::string name = otherwise;
+      if (find(table, "name") != nullptr && find(table, "holes") == nullptr)
+        name = unique_name(table, otherwise, names);
+      else if (const Entry* own = find(table, "name"); own != nullptr && load)
+        name = first_free(fmt::format("{} in {}", text(table, own).value_or("pin"), holes[load->hole]), names,
+                          written);
+      names.insert(name);
+      if (load) load->name = name;
+      loads.push_back({std::move(load), table.node->at, table.path});
+    }
   return loads;
 }
 

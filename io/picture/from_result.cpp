@@ -61,7 +61,9 @@ std::string load_words(const Result& result, const solver::Load& load) {
   const std::string kind(solver::word(load.kind));
   std::string words = load.name.empty() ? kind : plain(load.name);
   if (words.find(kind) == std::string::npos) words += fmt::format(" ({})", kind);
+  if (load.kind == solver::Load::Kind::pin) return words + fmt::format(" {}", amount(load.force, "N"));
   words += fmt::format(" {}", amount(load.stress, "MPa"));
+  if (load.stress_to) words += fmt::format(" to {}", amount(*load.stress_to, "MPa"));
   if (load.kind == solver::Load::Kind::edge && load.along != 0.0)
     words += fmt::format(" and {} along it", amount(load.along, "MPa"));
   if (load.kind == solver::Load::Kind::face_pressure)
@@ -198,10 +200,19 @@ void add_arrows(std::vector<LoadArrow>& arrows, const mesh::Loop& loop, int want
   }
 }
 
-std::vector<LoadArrow> arrows(const solver::Problem& problem) {
+/// The loads, with the pressure that was found for pins in contact.
+std::vector<solver::UnitLoad> acting(const Result& result) {
+  solver::Problem problem = result.input.problem;
+  for (const solver::PinFindings& pin : result.solution.pins)
+    problem.loads.at(pin.load).bearing = pin.pressure;
+  return solver::unit_loads(problem.plate, problem.loads, problem.supports);
+}
+
+std::vector<LoadArrow> arrows(const Result& of) {
+  const solver::Problem& problem = of.input.problem;
   const auto& plate = problem.plate;
   const mesh::Region region = mesh::trace(plate);
-  const std::vector<solver::UnitLoad> loads = solver::unit_loads(plate, problem.loads);
+  const std::vector<solver::UnitLoad> loads = acting(of);
   std::vector<LoadArrow> result;
   const double longer = std::max(plate.length, plate.width);
   for (const mesh::Curve& side : region.loops.front()) {
@@ -293,7 +304,7 @@ Picture picture_of(const Result& result) {
     picture.peaks.push_back({peak.point, von_mises_near(result, worst->raiser, peak.point), label});
   }
   add_tips(picture, result);
-  picture.arrows = arrows(result.input.problem);
+  picture.arrows = arrows(result);
   picture.caption = caption(result, picture.top);
   picture.caution = "Linear elastic, 2D, nominal geometry; not a substitute for an independent check.";
   picture.cells = sampled(source_of(solution.field), picture);

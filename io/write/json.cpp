@@ -191,6 +191,16 @@ Json load(const solver::Load& l, const mesh::Plate& plate) {
   if (l.kind == solver::Load::Kind::edge) {
     object["edge"] = mesh::edge_names(plate).at(l.edge);
     object["along"] = quantity(l.along, "MPa");
+    if (l.stress_to) object["stress_to"] = quantity(*l.stress_to, "MPa");
+    if (l.along_to) object["along_to"] = quantity(*l.along_to, "MPa");
+    if (l.from) object["from"] = quantity(*l.from, "mm");
+    if (l.to) object["to"] = quantity(*l.to, "mm");
+  }
+  if (l.kind == solver::Load::Kind::pin) {
+    object["hole"] = plate.holes.at(l.hole).name;
+    object["force"] = quantity(l.force, "N");
+    object["direction"] = quantity(l.direction * degrees_per_radian, "deg");
+    if (l.clearance) object["clearance"] = quantity(*l.clearance, "mm");
   }
   const solver::Resultant sum = solver::resultant(plate, l);
   object["resultant"] = {{"force_x", quantity(sum.force.x(), "N")},
@@ -249,6 +259,7 @@ Json input(const Case& c) {
   object["holes"] = holes;
   object["cracks"] = cracks;
   object["loads"] = loads;
+  object["supports"] = supports(c);
   object["written"] = c.written;
   return object;
 }
@@ -363,6 +374,43 @@ Json checks(const solver::PlateChecks& c) {
           {"external_work", quantity(c.external_work, "N mm")}};
 }
 
+Json pins(const Result& result) {
+  Json list = Json::array();
+  for (const solver::PinFindings& pin : result.solution.pins)
+    list.push_back({{"load", result.input.problem.loads.at(pin.load).name},
+                    {"all_round", pin.all_round},
+                    {"begin", quantity(pin.begin.scaled(degrees_per_radian), "deg")},
+                    {"end", quantity(pin.end.scaled(degrees_per_radian), "deg")},
+                    {"largest_pressure", quantity(pin.largest, "MPa")},
+                    {"at", quantity(pin.largest_at * degrees_per_radian, "deg")},
+                    {"force_miss", quantity(pin.force_miss, "1")}});
+  return list;
+}
+
+Json reactions(const Result& result) {
+  Json list = Json::array();
+  for (const solver::SupportReaction& at : result.solution.reactions)
+    list.push_back({{"support", result.input.problem.supports.at(at.support).name},
+                    {"force_x", quantity(at.reaction.force.x(), "N")},
+                    {"force_y", quantity(at.reaction.force.y(), "N")},
+                    {"moment", quantity(at.reaction.moment, "N mm")}});
+  return list;
+}
+
+Json supports(const Case& c) {
+  const auto edges = mesh::edge_names(c.problem.plate);
+  const auto length = [](const std::optional<double>& value) {
+    return value ? quantity(*value, "mm") : Json(nullptr);
+  };
+  Json list = Json::array();
+  for (const solver::Support& s : c.problem.supports)
+    list.push_back({{"name", s.name},
+                    {"edge", edges.at(s.edge)},
+                    {"normal", length(s.normal)},
+                    {"along", length(s.along)}});
+  return list;
+}
+
 Json levels(const std::vector<solver::Level>& all) {
   Json list = Json::array();
   for (const solver::Level& level : all) {
@@ -402,6 +450,8 @@ Json document(const Result& result) {
           {"crack_faces", faces(result.input, solution.openings)},
           {"published", published(result)},
           {"places_without_peak", places(result)},
+          {"pins", pins(result)},
+          {"reactions", reactions(result)},
           {"checks", checks(solution.checks)},
           {"discretisation",
            {{"degree", solution.degree},

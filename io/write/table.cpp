@@ -5,6 +5,7 @@
 #include <algorithm>
 #include <cmath>
 #include <map>
+#include <numbers>
 #include <vector>
 
 #include "io/case/alloys.hpp"
@@ -21,6 +22,10 @@ std::string coloured(std::string_view text, std::string_view code, bool colour) 
 
 std::string load_text(const solver::Load& load) {
   std::string text = fmt::format("{} {} MPa", solver::word(load.kind), brief(load.stress));
+  if (load.kind == solver::Load::Kind::pin)
+    text =
+        fmt::format("pin {} N at {} deg", brief(load.force), brief(load.direction * 180 / std::numbers::pi));
+  if (load.stress_to) text = fmt::format("edge {} to {} MPa", brief(load.stress), brief(*load.stress_to));
   if (load.kind == solver::Load::Kind::edge && load.along != 0.0) {
     text += fmt::format(" and {} MPa along", brief(load.along));
   }
@@ -162,7 +167,7 @@ std::string table(const Result& result, const TableStyle& style) {
   text += tips_part(result, style.rest);
   text += places_part(result);
   text += published_part(result, style.rest);
-  text += checks_part(result);
+  text += holding_part(result) + checks_part(result);
   text += "\n";
   if (!yield.empty()) text += wrapped(yield, "Yield: ", 7);
   text += wrapped(cautions(), "Caution: ", 9);

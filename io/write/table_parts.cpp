@@ -234,6 +234,35 @@ std::string published_part(const Result& result, const std::string& rest) {
   return text + wrapped(fmt::format("and {} more{}", count(result.published.size() - shown), where), "  ", 2);
 }
 
+std::string holding_part(const Result& result) {
+  const solver::Problem& problem = result.input.problem;
+  constexpr double degree = std::numbers::pi / 180;
+  std::string text;
+  if (!result.solution.pins.empty()) text += "\nContact of pins\n";
+  for (const solver::PinFindings& pin : result.solution.pins) {
+    const std::string where =
+        pin.all_round ? "touches all round"
+                      : fmt::format("touches from {} deg to {} deg", with_bound(pin.begin.scaled(1 / degree)),
+                                    with_bound(pin.end.scaled(1 / degree)));
+    text += wrapped(fmt::format("{}: {}; largest pressure {} MPa at {} deg; resultant within {} of the force",
+                                plain(problem.loads.at(pin.load).name), where, with_bound(pin.largest),
+                                brief(pin.largest_at / degree, 4), brief(std::max(pin.force_miss, 1e-15), 2)),
+                    "  ", 4);
+  }
+  if (!result.solution.reactions.empty()) text += "\nReactions of supports\n";
+  for (const solver::SupportReaction& at : result.solution.reactions)
+    text += wrapped(fmt::format("{}: force ({}, {}) N, moment {} N mm about the plate's centre",
+                                plain(problem.supports.at(at.support).name), brief(at.reaction.force.x(), 6),
+                                brief(at.reaction.force.y(), 6), brief(at.reaction.moment, 6)),
+                    "  ", 4);
+  if (!result.solution.reactions.empty())
+    text += wrapped(fmt::format("loads and reactions balance within {}; stress has no limit at the ends of a "
+                                "clamped edge: no peak is given there",
+                                brief(result.solution.checks.support_miss, 2)),
+                    "  ", 4);
+  return text;
+}
+
 std::string checks_part(const Result& result) {
   const solver::Solution& solution = result.solution;
   const solver::PlateChecks& checks = solution.checks;

@@ -25,6 +25,8 @@ std::string published_part(const Result& result, const std::string& rest);
 std::string places_part(const Result& result);
 
 /// Checks on the whole plate and how it was computed.
+/// Contact of pins and reactions of supports; empty without either.
+std::string holding_part(const Result& result);
 std::string checks_part(const Result& result);
 
 }  // namespace raiser::io

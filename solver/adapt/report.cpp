@@ -18,21 +18,67 @@ std::vector<T> last_of(const std::vector<T>& all) {
   return {all.end() - static_cast<std::ptrdiff_t>(std::min(path_degrees, all.size())), all.end()};
 }
 
-/// The loads behind each unit load: one each, or all edge loads together.
-std::vector<std::vector<Load>> loads_of_units(const std::vector<Load>& loads,
-                                              const std::vector<UnitLoad>& units) {
-  std::vector<Load> edges;
-  std::vector<std::vector<Load>> single;
-  for (const Load& load : loads)
-    if (load.kind == Load::Kind::edge)
-      edges.push_back(load);
-    else
-      single.push_back({load});
-  std::vector<std::vector<Load>> result;
-  std::size_t next = 0;
-  for (const UnitLoad& unit : units)
-    result.push_back(!edges.empty() && unit.name == "edges" ? edges : single[next++]);
-  return result;
+/// What the supports put on the whole plate in one load case.
+std::vector<Resultant> reactions(const Problem& problem, const Model& model,
+                                 const std::vector<std::vector<Resultant>>& meshed, std::size_t load_case) {
+  std::vector<Resultant> sum(problem.supports.size());
+  for (const Image& image : model.images()) {
+    const Eigen::VectorXd factors = model.factors(load_case, image);
+    const auto mapped = mesh::mirror_image(problem.plate, image.mirror());
+    for (std::size_t e = 0; e < meshed.size(); ++e) {
+      const std::size_t edge = mapped ? mapped->edges[problem.supports[e].edge] : problem.supports[e].edge;
+      for (std::size_t s = 0; s < sum.size(); ++s) {
+        if (problem.supports[s].edge != edge) continue;
+        for (Eigen::Index l = 0; l < factors.size(); ++l) {
+          const Resultant& own = meshed[e][static_cast<std::size_t>(l)];
+          sum[s].force += factors[l] * image.apply(own.force);
+          sum[s].moment += factors[l] * own.moment * (image.flips() ? -1.0 : 1.0);
+        }
+      }
+    }
+  }
+  return sum;
+}
+
+/// A support's reaction as a load on its edge, linear along it, with the same
+/// resultant: what sections beside it carry follows from that alone.
+Load as_load(const Plate& plate, const Support& support, const Resultant& reaction) {
+  const EdgeLine line = *straight_edge(plate, support.edge);
+  const Point middle = line.at(line.length / 2);
+  const double moment = reaction.moment - (middle.x() * reaction.force.y() - middle.y() * reaction.force.x());
+  const double area = line.length * plate.thickness;
+  const double mean = reaction.force.dot(line.normal()) / area;
+  const double outer = -6 * moment / (area * line.length);  // at the end of the edge, less the mean
+  Load load;
+  load.kind = Load::Kind::edge;
+  load.name = support.name;
+  load.edge = support.edge;
+  load.stress = mean - outer;
+  load.stress_to = mean + outer;
+  load.along = reaction.force.dot(line.direction) / area;
+  return load;
+}
+
+/// The loads of a case with the reactions to them: they balance.
+std::vector<Load> with_reactions(const Problem& problem, std::vector<Load> loads,
+                                 const std::vector<Resultant>& reaction) {
+  for (std::size_t s = 0; s < reaction.size(); ++s)
+    loads.push_back(as_load(problem.plate, problem.supports[s], reaction[s]));
+  return loads;
+}
+
+/// Why no nominal stress stands on a section that a held edge runs past, or nothing.
+std::string beside_support(const Problem& problem, const Section& section) {
+  const int axis = section.direction == Section::Direction::across ? 0 : 1;
+  for (const Support& support : problem.supports) {
+    const EdgeLine line = *straight_edge(problem.plate, support.edge);
+    const double a = line.start[axis], b = line.at(line.length)[axis];
+    if (std::min(a, b) < section.station && section.station < std::max(a, b) - 1e-9 * line.length)
+      return "the support '" + support.name +
+             "' holds the plate along both sides of this section, so that the "
+             "loads alone do not say what it carries: use the edge stress itself";
+  }
+  return "";
 }
 
 TipFindings tip_findings(const DegreeSequence& sequence, std::size_t load_case, std::size_t tip) {
@@ -76,6 +122,8 @@ LoadFindings findings(const Problem& problem, const DegreeSequence& sequence, st
     found.section = basis.section;
     found.gross = concentration(peak, basis.gross);
     found.net = concentration(peak, basis.net);
+    if (const std::string why = beside_support(problem, found.section); !why.empty())
+      found.gross = found.net = {std::nullopt, 0.0, "", why};
     result.raisers.push_back(std::move(found));
   }
   for (std::size_t t = 0; t < sequence.tip_scanner().tips(); ++t)
@@ -138,11 +186,12 @@ void check_outer_edges(const Model& model, const Displacements& displacements,
   const EdgeProbe probe(model, displacements.degree, search_points(),
                         sides_at_search_points(displacements.degree));
   for (const mesh::BoundarySide& side : model.mesh().boundary()) {
-    if (side.curve.owner.kind != Owner::Kind::edge) continue;
+    const auto holds = [&](const HeldEdge& edge) { return edge.owner == side.curve.owner; };
+    const bool is_held = std::any_of(model.held().begin(), model.held().end(), holds);
+    if (side.curve.owner.kind != Owner::Kind::edge || is_held) continue;  // no traction is known there
     const SideStress stress = probe.at(side, displacements);
     for (const Image& image : model.images()) {
-      Eigen::VectorXd weight(static_cast<Eigen::Index>(model.loads().size()));
-      for (std::size_t l = 0; l < model.loads().size(); ++l) weight[l] = model.parity(l, image);
+      const Eigen::VectorXd weight = model.factors(0, image);
       for (Eigen::Index q = 0; q < stress.tangential.rows(); ++q) {
         const double tangential = stress.tangential.row(q).dot(weight);
         const double normal = stress.normal.row(q).dot(weight);
@@ -158,11 +207,11 @@ void check_outer_edges(const Model& model, const Displacements& displacements,
   }
 }
 
-void check_far_field(const Problem& problem, Solution& solution) {
+void check_far_field(const Problem& problem, const std::vector<Load>& loads, Solution& solution) {
   PlateChecks& checks = solution.checks;
   checks.far_station = far_station(problem.plate);
   const SectionForces forces =
-      section_forces(problem.plate, problem.loads, mesh::Direction::across, checks.far_station);
+      section_forces(problem.plate, loads, mesh::Direction::across, checks.far_station);
   const auto shape =
       mesh::shape_of(mesh::gross_along(problem.plate, mesh::Direction::across, checks.far_station));
   const double thickness = problem.plate.thickness;
@@ -178,6 +227,21 @@ void check_far_field(const Problem& problem, Solution& solution) {
   checks.far_scatter = largest > 0 ? far.scatter / largest : 0.0;
 }
 
+/// What loads and reactions leave over, as a part of the largest force among them.
+double support_miss(const Problem& problem, const std::vector<Resultant>& reaction) {
+  const double arm = 0.5 * std::max(problem.plate.length, problem.plate.width);
+  Eigen::Vector3d sum = Eigen::Vector3d::Zero();
+  double size = 0.0;
+  const auto add = [&](const Resultant& part) {
+    const Eigen::Vector3d own(part.force.x(), part.force.y(), part.moment / arm);
+    sum += own;
+    size = std::max(size, own.norm());
+  };
+  for (const Load& load : problem.loads) add(resultant(problem.plate, load));
+  for (const Resultant& part : reaction) add(part);
+  return size > 0 ? sum.norm() / size : 0.0;
+}
+
 }  // namespace
 
 Solution report(const Problem& problem, const DegreeSequence& sequence,
@@ -185,7 +249,22 @@ Solution report(const Problem& problem, const DegreeSequence& sequence,
   const Model& model = sequence.model();
   const Displacements& last = sequence.displacements().back();
   Solution solution;
-  solution.combined = findings(problem, sequence, 0, "all loads", problem.loads);
+  const auto meshed = model.reactions(last);
+  const std::vector<Resultant> reaction = reactions(problem, model, meshed, 0);
+  const std::vector<Load> all = with_reactions(problem, problem.loads, reaction);
+  solution.combined = findings(problem, sequence, 0, "all loads", all);
+  for (std::size_t i = 0; i < problem.loads.size(); ++i) solution.combined.loads.push_back(i);
+  for (std::size_t l = 0; l < model.loads().size(); ++l) {
+    const UnitLoad& unit = model.loads()[l];
+    if (unit.doubt) continue;
+    std::vector<Load> own;
+    for (const std::size_t i : unit.loads) own.push_back(problem.loads[i]);
+    own = with_reactions(problem, std::move(own), reactions(problem, model, meshed, l + 1));
+    solution.units.push_back(findings(problem, sequence, l + 1, unit.name, own));
+    solution.units.back().loads = unit.loads;
+  }
+  for (std::size_t s = 0; s < reaction.size(); ++s) solution.reactions.push_back({s, reaction[s]});
+  solution.checks.support_miss = support_miss(problem, reaction);
   solution.degree = last.degree;
   solution.unknowns = static_cast<std::size_t>(Discretisation(model.mesh(), last.degree).unknowns());
   solution.triangles = model.mesh().triangles().size();
@@ -212,7 +291,7 @@ Solution report(const Problem& problem, const DegreeSequence& sequence,
   solution.checks.strain_energy = balance.strain_energy;
   solution.checks.external_work = balance.external_work;
   check_outer_edges(model, last, places, solution.checks);
-  check_far_field(problem, solution);
+  check_far_field(problem, all, solution);
   return solution;
 }
 

@@ -29,10 +29,23 @@ EdgeValue DegreeSequence::value(std::size_t load_case, std::size_t raiser, Quant
   const RaiserExtremes& last = scans_.back().extremes[load_case][raiser];
   const double size = std::max(std::abs(last[0].value), std::abs(last[1].value));
   const Point arm = last[k].point - centres_[raiser];
-  return {{values.back(), error_bound(values, size)},
+  return {{values.back(), error_bound(values, size) + doubt(load_case, raiser)},
           last[k].point,
           std::atan2(arm.y(), arm.x()),
           last[k].traction_miss};
+}
+
+double DegreeSequence::doubt(std::size_t load_case, std::size_t raiser) const {
+  const auto& loads = model_->loads();
+  const auto holds_pin = [&](const UnitLoad& load) { return !load.loads.empty(); };
+  if (load_case > 0 && !holds_pin(loads[load_case - 1])) return 0.0;
+  double sum = 0.0;
+  for (std::size_t l = 0; l < loads.size(); ++l) {
+    if (!loads[l].doubt) continue;
+    const RaiserExtremes& extremes = scans_.back().extremes[l + 1][raiser];
+    sum += std::max(std::abs(extremes[0].value), std::abs(extremes[1].value));
+  }
+  return sum;
 }
 
 double DegreeSequence::peak(std::size_t raiser) const {

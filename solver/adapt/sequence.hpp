@@ -39,6 +39,9 @@ class DegreeSequence {
   double excess(const Ask& ask) const;
 
  private:
+  /// The largest stress on the raiser that what is not known of pressures makes.
+  double doubt(std::size_t load_case, std::size_t raiser) const;
+
   const Model* model_;
   const Plate* plate_;
   std::vector<Point> centres_;  ///< of the raisers

@@ -7,6 +7,7 @@
 #include <stdexcept>
 
 #include "mesh/triangulate/triangulate.hpp"
+#include "solver/adapt/pins.hpp"
 #include "solver/adapt/report.hpp"
 #include "solver/adapt/sequence.hpp"
 #include "solver/solution.hpp"
@@ -28,8 +29,12 @@ void require_legal(const Problem& problem, const std::vector<Ask>& asks) {
     throw std::invalid_argument("settle: the plate is not legal: " + found.front().what);
   if (const auto found = faults(problem.material); !found.empty())
     throw std::invalid_argument("settle: the material is not legal: " + found.front().what);
-  if (problem.loads.empty()) throw std::invalid_argument("settle: there is no load");
-  if (const auto fault = imbalance(problem.plate, problem.loads))
+  if (const auto found = faults(problem.plate, problem.supports); !found.empty())
+    throw std::invalid_argument("settle: a support is not legal: " + found.front().what);
+  const auto& supports = problem.supports;
+  if (problem.loads.empty() && std::none_of(supports.begin(), supports.end(), displaces))
+    throw std::invalid_argument("settle: there is no load");
+  if (const auto fault = imbalance(problem.plate, problem.loads, problem.supports))
     throw std::invalid_argument("settle: " + fault->what);
   const std::size_t tips = mesh::tips(problem.plate.cracks).size();
   for (const Ask& ask : asks)
@@ -42,6 +47,8 @@ void require_legal(const Problem& problem, const std::vector<Ask>& asks) {
 mesh::Mirrors usable_mirrors(const Problem& problem, const std::vector<UnitLoad>& loads) {
   if (!problem.material.has_mirrors()) return {};
   mesh::Mirrors shared = mesh::mirrors(problem.plate);
+  shared.x = shared.x && have_mirror(problem.plate, problem.supports, {.x = true, .y = false});
+  shared.y = shared.y && have_mirror(problem.plate, problem.supports, {.x = false, .y = true});
   for (const UnitLoad& load : loads) {
     shared.x = shared.x && load.under_x != UnitLoad::Parity::neither;
     shared.y = shared.y && load.under_y != UnitLoad::Parity::neither;
@@ -55,15 +62,28 @@ double least_tolerance(const std::vector<Ask>& asks) {
   return least;
 }
 
+/// How the plate's edges are held, for the stress at their ends.
+WedgeEdge held_as(const Problem& problem, const mesh::Owner& owner) {
+  if (owner.kind != mesh::Owner::Kind::edge) return WedgeEdge::free;
+  for (const Support& support : problem.supports)
+    if (support.edge == owner.index) {
+      if (support.normal && support.along) return WedgeEdge::clamped;
+      return support.normal ? WedgeEdge::sliding : WedgeEdge::free;
+    }
+  return WedgeEdge::free;
+}
+
 /// Every place of the plate where no peak stress exists.
-std::vector<SingularPlace> singular_places(const Problem& problem, const std::vector<UnitLoad>& loads) {
-  const auto free = [](const mesh::Owner&) { return WedgeEdge::free; };
-  return singular_places(mesh::trace(problem.plate), free, sum_of(loads), problem.material);
+std::vector<SingularPlace> singular_places(const Problem& problem, const mesh::Region& boundary,
+                                           const std::vector<UnitLoad>& loads) {
+  const auto held = [&](const mesh::Owner& owner) { return held_as(problem, owner); };
+  return singular_places(boundary, held, sum_of(loads), problem.material);
 }
 
 /// The first mesh for a tolerance, before anything is solved. Singular places
 /// that geometry alone does not show are handed on, those of mirror images too.
-mesh::SizeRule first_rule(const Plate& plate, double tolerance, const std::vector<SingularPlace>& places) {
+mesh::SizeRule first_rule(const Problem& problem, double tolerance,
+                          const std::vector<SingularPlace>& places) {
   mesh::SizeRule rule;
   for (const SingularPlace& place : places)
     if (place.kind != SingularPlace::Kind::corner) rule.singular.push_back(place.site.vertex.at);
@@ -81,8 +101,9 @@ mesh::SizeRule first_rule(const Plate& plate, double tolerance, const std::vecto
     rule.tip_ratio = 0.15;
     rule.tip_rings = tolerance < 1e-7 ? 9 : 7;
   }
-  rule.refine.assign(mesh::raiser_count(plate), 1.0);
-  rule.refine_tip.assign(mesh::tips(plate.cracks).size(), 1.0);
+  rule.refine.assign(mesh::raiser_count(problem.plate), 1.0);
+  rule.refine_tip.assign(mesh::tips(problem.plate.cracks).size(), 1.0);
+  for (const Point& end : clamped_ends(problem.plate, problem.supports)) rule.singular.push_back(end);
   return rule;
 }
 
@@ -144,28 +165,54 @@ std::string reason_for(const DegreeSequence& sequence, const Plate& plate, const
       place_of(asks[worst - excess.begin()], plate), *worst);
 }
 
+/// The plate's boundary, with vertices where the tractions change.
+mesh::Region divided(const Problem& problem) {
+  std::vector<mesh::Break> places;
+  for (const Load& load : problem.loads)
+    for (const mesh::Break& at : breaks(problem.plate, load)) places.push_back(at);
+  return mesh::broken(mesh::trace(problem.plate), places);
+}
+
+/// What is to be said when the contact of pins was not found.
+std::string contact_reason(const PinsInContact& contact) {
+  return "the contact of the pins was not found: " + contact.reason +
+         (contact.pins.empty() ? "; the numbers stand on a cosine pressure instead"
+                               : "; the numbers stand on the last pressure tried");
+}
+
+/// The share of a tolerance that may go into the pressure of pins in contact.
+constexpr double contact_share = 0.3;
+
 }  // namespace
 
-Solution settle(const Problem& problem, const std::vector<Ask>& asks, Report extent) {
+Solution settle(const Problem& asked, const std::vector<Ask>& asks, Report extent) {
   const auto start = Clock::now();
-  require_legal(problem, asks);
-  const std::vector<UnitLoad> loads = unit_loads(problem.plate, problem.loads);
-  const mesh::Mirrors mirrors = usable_mirrors(problem, loads);
-  const mesh::Region region = mesh::cut(mesh::trace(problem.plate), mirrors);
+  require_legal(asked, asks);
   const double tolerance = least_tolerance(asks);
-  const std::vector<SingularPlace> places = singular_places(problem, loads);
-  mesh::SizeRule rule = first_rule(problem.plate, tolerance, places);
+  const PinsInContact contact = with_contact(asked, contact_share * tolerance);
+  const Problem& problem = contact.problem;
+  std::vector<UnitLoad> loads = unit_loads(problem.plate, problem.loads, problem.supports);
+  const mesh::Region boundary = divided(problem);
+  const std::vector<SingularPlace> places = singular_places(problem, boundary, loads);
+  loads.insert(loads.end(), contact.doubts.begin(), contact.doubts.end());
+  const mesh::Mirrors mirrors = usable_mirrors(problem, loads);
+  const mesh::Region region = mesh::cut(boundary, mirrors);
+  const std::vector<HeldEdge> held = held_edges(problem.plate, problem.supports);
+  mesh::SizeRule rule = first_rule(problem, tolerance, places);
   std::vector<Level> levels;
   for (int refinement = 0;; ++refinement) {
     const Model model(mesh::triangulate(region, rule), mirrors, problem.material, problem.plate.thickness,
-                      loads);
+                      loads, held);
     DegreeSequence sequence(model, problem.plate);
     const double worst = raise_degree(sequence, asks, tolerance, refinement, start, levels);
     const bool is_settled = worst <= 1.0;
     if (is_settled || refinement == most_refinements) {
       Solution solution = report(problem, sequence, places, extent);
-      solution.status = is_settled ? Solution::Status::settled : Solution::Status::not_met;
+      const bool is_met = is_settled && contact.reason.empty();
+      solution.status = is_met ? Solution::Status::settled : Solution::Status::not_met;
       if (!is_settled) solution.reason = reason_for(sequence, problem.plate, asks);
+      if (!contact.reason.empty()) solution.reason = contact_reason(contact);
+      solution.pins = contact.pins;
       solution.levels = std::move(levels);
       solution.seconds = seconds_since(start);
       return solution;

@@ -9,12 +9,10 @@
 
 #include "mesh/plate/section.hpp"
 #include "mesh/region/region.hpp"
+#include "solver/elasticity/bearing.hpp"
+#include "solver/elasticity/support.hpp"
 
 namespace raiser::solver {
-
-using mesh::Owner;
-using mesh::Plate;
-using mesh::Point;
 
 /// What acts on the plate. Stresses in MPa on the gross section.
 /// `tension`: normal stress on the ends x = +-length/2, uniform; on ends of
@@ -28,18 +26,49 @@ using mesh::Point;
 ///   pushes on the material.
 /// `face_pressure`: uniform pressure on both faces of crack `crack`, positive when
 ///   it opens the crack.
-/// `edge`: uniform traction on edge `edge` of mesh::edge_names(): `stress` along
-///   its outward normal, `along` along its direction (anticlockwise round the plate).
+/// `edge`: traction on edge `edge` of mesh::edge_names(): `stress` along its
+///   outward normal, `along` along its direction (anticlockwise round the plate).
+///   On a straight edge it may change linearly and act on a part only.
+/// `pin`: a round pin presses on the edge of the round hole `hole` with the
+///   force `force` in the direction `direction`; the pressure is a cosine over
+///   the half that it presses on, or what `bearing` says. With `clearance` the
+///   pin is rigid and the pressure that of contact, which has to be found.
 struct Load {
-  enum class Kind { tension, transverse, shear, bending, pressure, face_pressure, edge };
+  enum class Kind { tension, transverse, shear, bending, pressure, face_pressure, edge, pin };
   Kind kind = Kind::tension;
   std::string name;
   double stress = 0.0;
   double along = 0.0;                         ///< kind edge only
-  std::size_t hole = 0;                       ///< kind pressure only
+  std::size_t hole = 0;                       ///< kinds pressure and pin only
   std::size_t crack = 0;                      ///< kind face_pressure only
   std::size_t edge = mesh::rectangle::right;  ///< kind edge only
+
+  /// Kind edge: the loaded part, mm from the edge's start anticlockwise round the
+  /// plate (none: the whole edge), and the stresses at its far end (none: the same).
+  std::optional<double> from = std::nullopt, to = std::nullopt;
+  std::optional<double> stress_to = std::nullopt, along_to = std::nullopt;
+
+  double force = 0.0;      ///< kind pin: N
+  double direction = 0.0;  ///< kind pin: rad, of the force, from +x anticlockwise
+  /// Kind pin: mm, diameter of the hole less that of the rigid pin; negative for interference.
+  std::optional<double> clearance = std::nullopt;
+  std::optional<BearingPressure> bearing = std::nullopt;  ///< kind pin
 };
+
+/// Whether the load must be balanced by others or held by supports.
+bool needs_balance(const Load& load);
+
+/// The largest stress that a load puts on the boundary, MPa; of a pin F / (d t).
+double largest_stress(const Plate& plate, const Load& load);
+
+/// Places where a load's traction begins, ends or has a kink: they should be
+/// vertices of the mesh.
+std::vector<mesh::Break> breaks(const Plate& plate, const Load& load);
+
+/// The ends of a bearing pressure on a hole's edge, with side lengths that fit
+/// the size of its arc. None for one all round.
+std::vector<mesh::Break> breaks(const Owner& hole, const Point& centre, double radius,
+                                const BearingPressure& pressure);
 
 /// The word used for a kind of load in case files, tables and messages.
 std::string_view word(Load::Kind kind);
@@ -70,6 +99,10 @@ struct UnitLoad {
   Traction traction;
   Parity under_x = Parity::neither;  ///< under (x, y) -> (-x, y)
   Parity under_y = Parity::neither;  ///< under (x, y) -> (x, -y)
+  bool displaces = false;            ///< the held edges' values belong to it; otherwise they are 0
+  /// Not part of all loads together: what is not known of a pressure.
+  bool doubt = false;
+  std::vector<std::size_t> loads = {};  ///< indices of the loads in it
 };
 
 /// Edge loads that take up a resultant about the plate's centre: together with
@@ -86,17 +119,25 @@ struct LoadFault {
   std::string what;
   std::string cure;
 };
-/// Nothing when the loads balance within 1e-9 of their own size: all edge loads
-/// together, the others each by itself. Stresses that are not finite are a
-/// fault as well, and loads with nothing to act on.
-std::optional<LoadFault> imbalance(const Plate& plate, const std::vector<Load>& loads);
+/// Nothing when the loads balance within 1e-9 of their own size, as far as the
+/// supports cannot take up what they leave: all edge loads and pins together,
+/// the others each by itself. Stresses that are not finite are a fault as well,
+/// and loads with nothing to act on.
+std::optional<LoadFault> imbalance(const Plate& plate, const std::vector<Load>& loads,
+                                   const std::vector<Support>& supports = {});
 
 /// One unit load for each load that balances by itself, in order, and one
-/// named "edges" for all edge loads together, which balance only jointly. Each
-/// has its load's own size, so that their sum is the whole set of loads.
-/// Throws std::invalid_argument when the loads do not balance, a pressure names
-/// no hole of the plate or an edge load no outer edge.
-std::vector<UnitLoad> unit_loads(const Plate& plate, const std::vector<Load>& loads);
+/// named "edges", "pins" or "edges and pins" for all edge loads and pins
+/// together, which balance only jointly; where supports take up anything, each
+/// of these is one by itself as well. A last one, "supports", when supports
+/// displace edges. Each has its load's own size, so that their sum is the whole
+/// set of loads. Throws std::invalid_argument when the loads do not balance, a
+/// load names no hole or edge of the plate or a support is not legal.
+std::vector<UnitLoad> unit_loads(const Plate& plate, const std::vector<Load>& loads,
+                                 const std::vector<Support>& supports = {});
+
+/// The unit load of a traction that balances, with its behaviour under mirrors.
+UnitLoad unit_load(const Plate& plate, std::string name, Traction traction);
 
 /// The stress state that the loads would produce in the plate without holes and
 /// notches on the gross sections of one raiser: linear in y. MPa.

@@ -33,20 +33,42 @@ SectionForces of_traction(const Plate& plate, const Load& load, const mesh::Loop
           across ? -sum.moment : sum.moment};
 }
 
+// The plate's boundary with the holes that pins press on, divided where tractions change.
+mesh::Loop curves_of(const Plate& plate, const std::vector<Load>& loads) {
+  std::vector<mesh::Break> places;
+  std::vector<std::size_t> holes;
+  for (const Load& load : loads) {
+    for (const mesh::Break& at : breaks(plate, load)) places.push_back(at);
+    if (load.kind == Load::Kind::pin) holes.push_back(load.hole);
+  }
+  mesh::Region region{{mesh::outline_of(plate).curves}};
+  if (!holes.empty()) {
+    const mesh::Region whole = mesh::trace(plate);
+    std::sort(holes.begin(), holes.end());
+    holes.erase(std::unique(holes.begin(), holes.end()), holes.end());
+    for (const std::size_t hole : holes)
+      if (hole + 1 < whole.loops.size()) region.loops.push_back(whole.loops[hole + 1]);
+  }
+  mesh::Loop all;
+  for (const mesh::Loop& loop : mesh::broken(region, places).loops)
+    all.insert(all.end(), loop.begin(), loop.end());
+  return all;
+}
+
 }  // namespace
 
 SectionForces section_forces(const Plate& plate, const std::vector<Load>& loads, mesh::Direction direction,
                              double station) {
   const bool across = direction == mesh::Direction::across;
   const int axis = across ? 0 : 1;
-  const mesh::Loop outside = beyond(mesh::outline_of(plate).curves, axis, station);
+  const mesh::Loop outside = beyond(curves_of(plate, loads), axis, station);
   Point middle;
   middle[axis] = station;
   middle[1 - axis] = mesh::shape_of(mesh::gross_along(plate, direction, station)).centroid;
   SectionForces sum;
   for (const Load& load : loads) {
     if (load.kind == Load::Kind::pressure || load.kind == Load::Kind::face_pressure) continue;
-    const bool integrated = load.kind == Load::Kind::edge || plate.outline;
+    const bool integrated = needs_balance(load) || plate.outline;
     const SectionForces own =
         integrated ? of_traction(plate, load, outside, middle, across) : of_uniform(plate, load, across);
     sum.normal += own.normal;

@@ -1,3 +1,4 @@
+#include <algorithm>
 #include <cmath>
 #include <stdexcept>
 
@@ -54,9 +55,43 @@ Traction on_ends(const Plate& plate, int axis, double stress, bool bends) {
   };
 }
 
+/// A traction that is linear along a straight edge, on a part of it.
+Traction along_line(const Plate& plate, const Load& load) {
+  const auto line = straight_edge(plate, load.edge);
+  if (!line) throw std::invalid_argument("only a straight edge can be loaded in part or linearly");
+  const double from = load.from.value_or(0.0);
+  const double to = load.to.value_or(line->length);
+  const double slack = 1e-9 * line->length;
+  if (!(from >= -slack && to <= line->length + slack && to - from > slack))
+    throw std::invalid_argument("the loaded part of an edge must have a length and lie on it");
+  const double slope = (load.stress_to.value_or(load.stress) - load.stress) / (to - from);
+  const double along_slope = (load.along_to.value_or(load.along) - load.along) / (to - from);
+  return
+      [=, line = *line, stress = load.stress, along = load.along, edge = Owner{Owner::Kind::edge, load.edge}](
+          const Owner& owner, const Point& x, const Point& n) -> Point {
+        const double s = line.distance(x) - from;
+        if (!(owner == edge) || s < 0.0 || s > to - from) return Point::Zero();
+        return edge_traction(stress + slope * s, along + along_slope * s, n);
+      };
+}
+
+Traction of_pin(const Plate& plate, const Load& load) {
+  if (load.hole >= plate.holes.size()) throw std::invalid_argument("a pin must name a hole of the plate");
+  const mesh::Hole& hole = plate.holes[load.hole];
+  if (hole.shape != mesh::HoleShape::circle) throw std::invalid_argument("a pin sits in a round hole");
+  const BearingPressure pressure =
+      load.bearing.value_or(cosine_pressure(load.force, load.direction, hole.length / 2, plate.thickness));
+  return [pressure, centre = hole.centre, edge = Owner{Owner::Kind::raiser, load.hole}](
+             const Owner& owner, const Point& x, const Point& n) -> Point {
+    if (!(owner == edge)) return Point::Zero();
+    return -pressure.at(std::atan2(x.y() - centre.y(), x.x() - centre.x())) * n;
+  };
+}
+
 Traction on_edge(const Plate& plate, const Load& load) {
   if (load.edge >= mesh::edge_names(plate).size())
     throw std::invalid_argument("an edge load must name an edge of the plate");
+  if (load.from || load.to || load.stress_to || load.along_to) return along_line(plate, load);
   return [stress = load.stress, along = load.along, edge = Owner{Owner::Kind::edge, load.edge}](
              const Owner& owner, const Point&, const Point& n) -> Point {
     return owner == edge ? edge_traction(stress, along, n) : Point::Zero();
@@ -64,6 +99,44 @@ Traction on_edge(const Plate& plate, const Load& load) {
 }
 
 }  // namespace
+
+bool needs_balance(const Load& load) { return load.kind == Load::Kind::edge || load.kind == Load::Kind::pin; }
+
+double largest_stress(const Plate& plate, const Load& load) {
+  if (load.kind == Load::Kind::pin) return load.force / (plate.holes.at(load.hole).length * plate.thickness);
+  return std::max({std::abs(load.stress), std::abs(load.along), std::abs(load.stress_to.value_or(0.0)),
+                   std::abs(load.along_to.value_or(0.0))});
+}
+
+std::vector<mesh::Break> breaks(const Owner& hole, const Point& centre, double radius,
+                                const BearingPressure& pressure) {
+  if (pressure.form == BearingPressure::Form::ring) return {};
+  constexpr double share = 0.04;  // of half the arc: the length of the sides at its ends
+  const double size = share * 0.5 * (pressure.end - pressure.begin) * radius;
+  std::vector<mesh::Break> result;
+  for (const double angle : {pressure.begin, pressure.end})
+    result.push_back({hole, centre + radius * Point(std::cos(angle), std::sin(angle)), size});
+  return result;
+}
+
+std::vector<mesh::Break> breaks(const Plate& plate, const Load& load) {
+  if (load.kind == Load::Kind::pin) {
+    const mesh::Hole& hole = plate.holes.at(load.hole);
+    const double radius = hole.length / 2;
+    return breaks(
+        {Owner::Kind::raiser, load.hole}, hole.centre, radius,
+        load.bearing.value_or(cosine_pressure(load.force, load.direction, radius, plate.thickness)));
+  }
+  const auto line = load.kind == Load::Kind::edge ? straight_edge(plate, load.edge) : std::nullopt;
+  if (!line) return {};
+  constexpr double share = 0.02;  // of the loaded part: the length of the sides at its ends
+  const double size = share * (load.to.value_or(line->length) - load.from.value_or(0.0));
+  std::vector<mesh::Break> result;
+  for (const auto& end : {load.from, load.to})
+    if (end && *end > 0.0 && *end < line->length)
+      result.push_back({{Owner::Kind::edge, load.edge}, line->at(*end), size});
+  return result;
+}
 
 Traction traction(const Plate& plate, const Load& load) {
   const double s = load.stress;
@@ -92,6 +165,8 @@ Traction traction(const Plate& plate, const Load& load) {
                                                                 const Point& n) -> Point {
         return (owner == crack ? -s : 0.0) * n;
       };
+    case Load::Kind::pin:
+      return of_pin(plate, load);
     case Load::Kind::edge:
       break;
   }

@@ -52,10 +52,9 @@ Parity parity(const Reflection& reflection, const Traction& traction) {
   return Parity::neither;
 }
 
-Traction together(const Plate& plate, const std::vector<Load>& loads) {
+Traction together(const Plate& plate, const std::vector<Load>& loads, const std::vector<std::size_t>& which) {
   std::vector<Traction> parts;
-  for (const Load& load : loads)
-    if (load.kind == Load::Kind::edge) parts.push_back(traction(plate, load));
+  for (const std::size_t i : which) parts.push_back(traction(plate, loads[i]));
   return [parts](const Owner& owner, const Point& x, const Point& n) -> Point {
     Point sum = Point::Zero();
     for (const Traction& part : parts) sum += part(owner, x, n);
@@ -63,28 +62,65 @@ Traction together(const Plate& plate, const std::vector<Load>& loads) {
   };
 }
 
+// Compares the places where edges are held with their mirror images.
+Parity parity(const Plate& plate, const std::vector<Support>& supports, mesh::Mirrors mirror) {
+  if (!have_mirror(plate, supports, mirror)) return Parity::neither;
+  const auto image = mesh::mirror_image(plate, mirror);
+  bool even = true, odd = true;
+  for (const Support& support : supports)
+    for (const Support& other : supports) {
+      if (other.edge != image->edges[support.edge]) continue;
+      const double normal = support.normal.value_or(0.0), normal_there = other.normal.value_or(0.0);
+      const double along = support.along.value_or(0.0), along_there = other.along.value_or(0.0);
+      even = even && normal == normal_there && along == -along_there;
+      odd = odd && normal == -normal_there && along == along_there;
+    }
+  return even ? Parity::even : odd ? Parity::odd : Parity::neither;
+}
+
+std::string joint_name(const std::vector<Load>& loads, const std::vector<std::size_t>& joint) {
+  bool edges = false, pins = false;
+  for (const std::size_t i : joint) (loads[i].kind == Load::Kind::edge ? edges : pins) = true;
+  return edges && pins ? "edges and pins" : edges ? "edges" : "pins";
+}
+
 }  // namespace
 
-std::vector<UnitLoad> unit_loads(const Plate& plate, const std::vector<Load>& loads) {
-  if (const auto fault = imbalance(plate, loads)) throw std::invalid_argument(fault->what);
+UnitLoad unit_load(const Plate& plate, std::string name, Traction traction) {
   const mesh::Region region = mesh::trace(plate);
-  const mesh::Mirrors x{.x = true, .y = false};
-  const mesh::Mirrors y{.x = false, .y = true};
-  const Reflection under_x{region, x, mesh::mirror_image(plate, x)};
-  const Reflection under_y{region, y, mesh::mirror_image(plate, y)};
-  std::vector<UnitLoad> result;
-  const auto put = [&](std::string name, Traction acting) {
-    const Parity in_x = parity(under_x, acting);
-    const Parity in_y = parity(under_y, acting);
-    result.push_back({std::move(name), std::move(acting), in_x, in_y});
+  const auto behaviour = [&](mesh::Mirrors mirror) {
+    return parity({region, mirror, mesh::mirror_image(plate, mirror)}, traction);
   };
-  bool edges = false;
-  for (const Load& load : loads) {
-    edges = edges || load.kind == Load::Kind::edge;
-    if (load.kind == Load::Kind::edge) continue;
-    put(load.name.empty() ? std::string(word(load.kind)) : load.name, traction(plate, load));
+  const Parity under_x = behaviour({.x = true, .y = false});
+  const Parity under_y = behaviour({.x = false, .y = true});
+  return {std::move(name), std::move(traction), under_x, under_y};
+}
+
+std::vector<UnitLoad> unit_loads(const Plate& plate, const std::vector<Load>& loads,
+                                 const std::vector<Support>& supports) {
+  if (const auto fault = imbalance(plate, loads, supports)) throw std::invalid_argument(fault->what);
+  const double size = 0.5 * std::max(plate.length, plate.width);
+  const bool all_held = takes_up(plate, supports, size).size() == 3;
+  std::vector<UnitLoad> result;
+  std::vector<std::size_t> joint;
+  const auto put = [&](std::string name, std::vector<std::size_t> which) {
+    result.push_back(unit_load(plate, std::move(name), together(plate, loads, which)));
+    result.back().loads = std::move(which);
+  };
+  for (std::size_t i = 0; i < loads.size(); ++i)
+    if (needs_balance(loads[i]) && !all_held)
+      joint.push_back(i);
+    else
+      put(loads[i].name.empty() ? std::string(word(loads[i].kind)) : loads[i].name, {i});
+  if (!joint.empty()) put(joint_name(loads, joint), joint);
+  if (std::any_of(supports.begin(), supports.end(), displaces)) {
+    UnitLoad unit{"supports",
+                  [](const Owner&, const Point&, const Point&) -> Point { return Point::Zero(); }};
+    unit.under_x = parity(plate, supports, {.x = true, .y = false});
+    unit.under_y = parity(plate, supports, {.x = false, .y = true});
+    unit.displaces = true;
+    result.push_back(std::move(unit));
   }
-  if (edges) put("edges", together(plate, loads));
   return result;
 }
 

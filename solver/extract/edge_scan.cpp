@@ -96,10 +96,7 @@ std::size_t EdgeScanner::raiser_in(std::size_t side, std::size_t image) const {
 }
 
 Eigen::VectorXd EdgeScanner::weights(std::size_t load_case, std::size_t image) const {
-  Eigen::VectorXd weight = Eigen::VectorXd::Zero(static_cast<Eigen::Index>(model_->loads().size()));
-  for (std::size_t l = 0; l < model_->loads().size(); ++l)
-    if (load_case == 0 || load_case == l + 1) weight[l] = model_->parity(l, model_->images()[image]);
-  return weight;
+  return model_->factors(load_case, model_->images()[image]);
 }
 
 /// The search for one quantity in one case over all raisers.

@@ -20,9 +20,9 @@ double largest_principal(double xx, double yy, double xy) {
   return principal({.xx = xx, .yy = yy, .xy = xy}).cwiseAbs().maxCoeff();
 }
 
-double largest_load(const std::vector<Load>& loads) {
+double largest_load(const Plate& plate, const std::vector<Load>& loads) {
   double size = 0.0;
-  for (const Load& load : loads) size = std::max({size, std::abs(load.stress), std::abs(load.along)});
+  for (const Load& load : loads) size = std::max(size, largest_stress(plate, load));
   return size;
 }
 
@@ -176,7 +176,7 @@ Basis gross_nominal(const Plate& plate, const std::vector<Load>& loads, const Po
 Nominal nominal(const Plate& plate, const std::vector<Load>& loads, std::size_t raiser) {
   const mesh::Raiser at = mesh::raiser(plate, raiser);
   const NominalState state = nominal_state(plate, loads, raiser);
-  const Present has = present(state, largest_load(loads));
+  const Present has = present(state, largest_load(plate, loads));
   Section across = section_at(plate, loads, Direction::across, at.root.x());
   Section along = section_at(plate, loads, Direction::along, at.root.y());
   const bool only_transverse = has.yy && has.count() == 1;

@@ -28,9 +28,7 @@ Field::Field(const Model& model, const Displacements& displacements)
       images_(model.images()) {
   const Eigen::Index functions = displacements.values.rows() / 2;
   for (const Image& image : images_) {
-    Eigen::VectorXd sum = Eigen::VectorXd::Zero(2 * functions);
-    for (std::size_t l = 0; l < model.loads().size(); ++l)
-      sum += model.parity(l, image) * displacements.values.col(l);
+    Eigen::VectorXd sum = displacements.values * model.factors(0, image);
     Eigen::MatrixX2d coefficients(functions, 2);
     for (int c = 0; c < 2; ++c)
       coefficients.col(c) =

@@ -29,9 +29,12 @@ VALUES = [True, 5, 0.25, -3, 0, [], ["5 mm"], ["1 mm", "2 mm"], {}, [{}], "", " 
 
 # Faults that no schema can express, by a part of the reader's message.
 BEYOND = ["is taken", "does not lead into the material", "is beyond the end of the", "away from that edge",
-           "magnitude is outside", "all loads", "nothing is asked for", "is too large: strain energy", "its yield strength of"]
+          "magnitude is outside", "all loads", "nothing is asked for", "is too large: strain energy",
+          "its yield strength of", "the edge runs from 0 to", "the loaded part ends where", "the shares add up to",
+          "shares for", "is named twice", "holds the corner", "is held by", "round hole",
+          "small displacements cover", "must not be negative"]
 BEYOND_KEYS = ["load.hole = ", "load.crack = ", "crack.from = ", "ask.holes = ", "ask.tips = ", "ask.result.hole = ",
-               "ask.result.tip = "]
+               "ask.result.tip = ", "pin.hole = ", "pin.holes = "]
 
 
 def is_beyond_schema(kind, message):

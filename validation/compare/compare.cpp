@@ -32,7 +32,8 @@ void add(Situation& s, const Load& load) {
     case Load::Kind::face_pressure:
       break;  // no plate with a crack comes here
     case Load::Kind::edge:
-      break;  // in of_edges()
+    case Load::Kind::pin:
+      break;  // in of_edges(); not covered
   }
 }
 
@@ -102,8 +103,13 @@ void append(std::vector<Comparison>& all, const mesh::Plate& plate, const solver
 std::vector<Comparison> compare(const solver::Problem& problem, const solver::LoadFindings& combined,
                                 const std::vector<solver::LoadFindings>& units) {
   std::vector<Comparison> all;
-  // Every family here is of isotropic plates without cracks.
-  if (problem.material.orthotropy || !problem.plate.cracks.empty()) return all;
+  // Every family here is of isotropic plates without cracks that uniform tractions load, held nowhere.
+  const auto is_other = [](const Load& load) {
+    return load.kind == Load::Kind::pin || load.from || load.to || load.stress_to || load.along_to;
+  };
+  if (problem.material.orthotropy || !problem.plate.cracks.empty() || !problem.supports.empty() ||
+      std::any_of(problem.loads.begin(), problem.loads.end(), is_other))
+    return all;
   std::vector<std::vector<Load>> groups;  // one for each unit; edge loads come last, together
   std::vector<Load> at_edges;
   for (const Load& load : problem.loads) {

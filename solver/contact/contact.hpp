@@ -1,0 +1,47 @@
+#pragma once
+
+#include <string>
+#include <vector>
+
+#include "mesh/region/breaks.hpp"
+#include "solver/contact/pin_system.hpp"
+#include "solver/elasticity/bearing.hpp"
+#include "solver/extract/estimate.hpp"
+
+namespace raiser::solver {
+
+/// The contact of one pin with its hole.
+struct PinContact {
+  BearingPressure pressure;
+  BearingPressure before;  ///< of the degree before: the difference is what is not known of it
+  bool all_round = false;  ///< the pin touches everywhere, as with enough interference
+  Estimate begin;          ///< rad: the arc of contact, anticlockwise from `begin`
+  Estimate end;
+  Estimate largest;         ///< MPa, the largest pressure
+  double largest_at = 0.0;  ///< rad
+};
+
+/// The contact of all pins, found together.
+struct Contact {
+  bool settled = false;
+  std::string reason;  ///< why not; empty when settled
+  std::vector<PinContact> pins;
+  int degree = 0;
+  std::size_t unknowns = 0;
+};
+
+/// Finds where rigid, frictionless round pins touch their holes and with what
+/// pressure: the gap between them is nowhere negative, the pressure neither, and
+/// the pressure vanishes at the ends of each arc. The pins' forces and `other`
+/// (whatever else loads the plate) must balance together or be held by supports.
+/// Displacements are small beside the hole. `tolerance` is relative, of the
+/// largest pressure. `held`: edges that supports hold, displaced as they say.
+///
+/// Source of the conditions: A. Signorini, Rend. Mat. Appl. 18 (1959) 95-139;
+/// the ends are moved until the square-root singularity there vanishes, as for
+/// smooth contact in K. L. Johnson, Contact Mechanics (1985), section 5.2.
+Contact find_contact(const Plate& plate, const HookeLaw& material, const Traction& other,
+                     mesh::Mirrors mirrors, const std::vector<HeldEdge>& held, const std::vector<Pin>& pins,
+                     double tolerance);
+
+}  // namespace raiser::solver
