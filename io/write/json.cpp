@@ -243,6 +243,20 @@ Json outline(const mesh::Outline& o) {
   return {{"edges", o.edges}, {"raisers", raisers}};
 }
 
+Json supports(const Case& c) {
+  const auto edges = mesh::edge_names(c.problem.plate);
+  const auto length = [](const std::optional<double>& value) {
+    return value ? quantity(*value, "mm") : Json(nullptr);
+  };
+  Json list = Json::array();
+  for (const solver::Support& s : c.problem.supports)
+    list.push_back({{"name", s.name},
+                    {"edge", edges.at(s.edge)},
+                    {"normal", length(s.normal)},
+                    {"along", length(s.along)}});
+  return list;
+}
+
 Json input(const Case& c) {
   const mesh::Plate& plate = c.problem.plate;
   Json holes = Json::array(), cracks = Json::array(), loads = Json::array();
@@ -394,20 +408,6 @@ Json reactions(const Result& result) {
                     {"force_x", quantity(at.reaction.force.x(), "N")},
                     {"force_y", quantity(at.reaction.force.y(), "N")},
                     {"moment", quantity(at.reaction.moment, "N mm")}});
-  return list;
-}
-
-Json supports(const Case& c) {
-  const auto edges = mesh::edge_names(c.problem.plate);
-  const auto length = [](const std::optional<double>& value) {
-    return value ? quantity(*value, "mm") : Json(nullptr);
-  };
-  Json list = Json::array();
-  for (const solver::Support& s : c.problem.supports)
-    list.push_back({{"name", s.name},
-                    {"edge", edges.at(s.edge)},
-                    {"normal", length(s.normal)},
-                    {"along", length(s.along)}});
   return list;
 }
 

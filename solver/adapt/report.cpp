@@ -254,15 +254,6 @@ Solution report(const Problem& problem, const DegreeSequence& sequence,
   const std::vector<Load> all = with_reactions(problem, problem.loads, reaction);
   solution.combined = findings(problem, sequence, 0, "all loads", all);
   for (std::size_t i = 0; i < problem.loads.size(); ++i) solution.combined.loads.push_back(i);
-  for (std::size_t l = 0; l < model.loads().size(); ++l) {
-    const UnitLoad& unit = model.loads()[l];
-    if (unit.doubt) continue;
-    std::vector<Load> own;
-    for (const std::size_t i : unit.loads) own.push_back(problem.loads[i]);
-    own = with_reactions(problem, std::move(own), reactions(problem, model, meshed, l + 1));
-    solution.units.push_back(findings(problem, sequence, l + 1, unit.name, own));
-    solution.units.back().loads = unit.loads;
-  }
   for (std::size_t s = 0; s < reaction.size(); ++s) solution.reactions.push_back({s, reaction[s]});
   solution.checks.support_miss = support_miss(problem, reaction);
   solution.degree = last.degree;
@@ -272,9 +263,15 @@ Solution report(const Problem& problem, const DegreeSequence& sequence,
   solution.openings = crack_openings(model, problem.plate, last);
   if (extent == Report::brief) return solution;
 
-  const auto groups = loads_of_units(problem.loads, model.loads());
-  for (std::size_t l = 0; l < model.loads().size(); ++l)
-    solution.units.push_back(findings(problem, sequence, l + 1, model.loads()[l].name, groups[l]));
+  for (std::size_t l = 0; l < model.loads().size(); ++l) {
+    const UnitLoad& unit = model.loads()[l];
+    if (unit.doubt) continue;
+    std::vector<Load> own;
+    for (const std::size_t i : unit.loads) own.push_back(problem.loads[i]);
+    own = with_reactions(problem, std::move(own), reactions(problem, model, meshed, l + 1));
+    solution.units.push_back(findings(problem, sequence, l + 1, unit.name, own));
+    solution.units.back().loads = unit.loads;
+  }
   solution.edges = edge_samples(model, problem.plate, sequence.scanner(), last_of(sequence.scans()));
 
   std::vector<Field> fields;

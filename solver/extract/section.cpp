@@ -170,7 +170,7 @@ Basis gross_nominal(const Plate& plate, const std::vector<Load>& loads, const Po
   mesh::Raiser at;
   at.mouth = at.root = place;
   const NominalState state = nominal_state_at(plate, loads, place);
-  return gross_basis(plate, at, state, present(state, largest_load(loads)));
+  return gross_basis(plate, at, state, present(state, largest_load(plate, loads)));
 }
 
 Nominal nominal(const Plate& plate, const std::vector<Load>& loads, std::size_t raiser) {

@@ -117,6 +117,17 @@ std::vector<Published> notch_records() {
        "0.7 to 1.8 % low within Ktu 1.6 to 3.5 (2.8 at 2h/D 0.667), 5 to 8 % low outside",
        0.019,
        true},
+      {Reference::v_pair_deep,
+       "Leven and Frocht 1953, V notch",
+       "M. M. Leven and M. M. Frocht (1953); R. W. Kumagai and S. Shimada (1968); Peterson, Chart 2.7",
+       "opposite V notches: the factor of U notches of the same depth and radius corrected for the opening "
+       "angle, 2h/D 0.398 and 0.667; Kt net",
+       Basis::net,
+       {{"Ktu", 1.6, 2.8}},
+       "none given",
+       "0.7 to 1.8 % low within Ktu 1.6 to 3.5 (2.8 at 2h/D 0.667), 5 to 8 % low outside",
+       0.019,
+       true},
   };
 }
 
