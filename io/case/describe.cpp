@@ -190,7 +190,7 @@ std::string describe_outline(const Case& input) {
   }
   if (listed < raisers.size())
     result += row("  and more", {fmt::format("{} not listed here", raisers.size() - listed)});
-  return result + "\n";
+  return plate.holes.empty() ? result : result + "\n";
 }
 
 std::string describe_holes(const Case& input) {

@@ -183,8 +183,10 @@ bool holds(const Plate& plate, const Point& x) {
 Faults outline_faults(const Plate& plate) {
   Faults faults;
   if (!plate.outline || !is_chain(plate, faults)) return faults;
-  check_box(plate, faults);
   check_crossings(plate, faults);
+  const auto same = [](const PlateFault& a, const PlateFault& b) { return a.what == b.what; };
+  faults.erase(std::unique(faults.begin(), faults.end(), same), faults.end());
+  if (faults.empty()) check_box(plate, faults);
   return faults;
 }
 

@@ -324,7 +324,11 @@ void check_room(const std::vector<Part>& parts, const std::vector<const Shoulder
       continue;
     }
     const Part& narrow = sorted[k]->narrow_is_right ? right : left;
-    for (const double step : {std::abs(left.high - right.high), std::abs(left.low - right.low)}) {
+    const double upper = std::abs(left.high - right.high);
+    const double lower = std::abs(left.low - right.low);
+    // Of two equal steps one says it.
+    for (const double step :
+         upper == lower ? std::vector<double>{upper} : std::vector<double>{upper, lower}) {
       if (step == 0.0) continue;
       const Profile p = profile(sorted[k]->fillet, step);
       if (p.rise > step * (1 + rounding))

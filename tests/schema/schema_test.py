@@ -32,9 +32,11 @@ BEYOND = ["is taken", "does not lead into the material", "is beyond the end of t
           "magnitude is outside", "all loads", "nothing is asked for", "is too large: strain energy",
           "its yield strength of", "the edge runs from 0 to", "the loaded part ends where", "the shares add up to",
           "shares for", "is named twice", "holds the corner", "is held by", "round hole",
-          "small displacements cover", "must not be negative"]
-BEYOND_KEYS = ["load.hole = ", "load.crack = ", "crack.from = ", "ask.holes = ", "ask.tips = ", "ask.result.hole = ",
-               "ask.result.tip = ", "pin.hole = ", "pin.holes = "]
+          "small displacements cover", "must not be negative", "the ends differ", "have the same number of entries",
+          "no straight edge", "at and holes say the same"]
+BEYOND_KEYS = ["load.hole = ", "load.crack = ", "load.edge = ", "notch.edge = ", "crack.from = ", "crack.edge = ",
+               "ask.holes = ", "ask.at = ", "ask.tips = ", "ask.result.hole = ", "ask.result.at = ",
+               "ask.result.tip = ", "pin.hole = ", "pin.holes = ", "support.edge = "]
 
 
 def is_beyond_schema(kind, message):
