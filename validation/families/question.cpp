@@ -53,10 +53,13 @@ solver::Problem plate_under(double length, double width, std::vector<mesh::Hole>
   return problem;
 }
 
-Question settled(solver::Problem problem, Measure measure, double model, std::size_t hole) {
-  return [problem = std::move(problem), measure = std::move(measure), model, hole](double tolerance) {
-    const solver::Solution solution =
-        solver::settle(problem, {{solver::Quantity::largest_edge_stress, hole, tolerance, ""}});
+namespace {
+
+Question asking(solver::Problem problem, const solver::Ask& asked, Measure measure, double model) {
+  return [problem = std::move(problem), asked, measure = std::move(measure), model](double tolerance) {
+    solver::Ask ask = asked;
+    ask.tolerance = tolerance;
+    const solver::Solution solution = solver::settle(problem, {ask});
     Ours ours;
     ours.value = measure(solution);
     ours.model = model;
@@ -67,6 +70,37 @@ Question settled(solver::Problem problem, Measure measure, double model, std::si
     ours.seconds = solution.seconds;
     if (!ours.value) ours.reason = "the solution does not hold the place that is asked for";
     return ours;
+  };
+}
+
+}  // namespace
+
+Question settled(solver::Problem problem, Measure measure, double model, std::size_t hole) {
+  return asking(std::move(problem), {solver::Quantity::largest_edge_stress, hole, 1.0, ""},
+                std::move(measure), model);
+}
+
+Question settled_tip(solver::Problem problem, Measure measure, double model, solver::Quantity quantity,
+                     std::size_t tip) {
+  return asking(std::move(problem), {quantity, tip, 1.0, ""}, std::move(measure), model);
+}
+
+Measure k_one_over(double nominal, std::size_t tip) {
+  return [=](const solver::Solution& solution) -> std::optional<solver::Estimate> {
+    return solution.combined.tips.at(tip).k_one.scaled(1 / nominal);
+  };
+}
+
+Measure k_two_size_over(double nominal, std::size_t tip) {
+  return [=](const solver::Solution& solution) -> std::optional<solver::Estimate> {
+    const solver::Estimate k = solution.combined.tips.at(tip).k_two;
+    return k.scaled((k.value < 0 ? -1 : 1) / nominal);
+  };
+}
+
+Measure t_over(double nominal, std::size_t tip) {
+  return [=](const solver::Solution& solution) -> std::optional<solver::Estimate> {
+    return solution.combined.tips.at(tip).t_stress.scaled(1 / nominal);
   };
 }
 

@@ -35,6 +35,16 @@ solver::Problem plate_under(double length, double width, std::vector<mesh::Hole>
 /// what `measure` reads. `model` as in Ours.
 Question settled(solver::Problem problem, Measure measure, double model = 0.0, std::size_t hole = 0);
 
+/// The same for a crack tip, asking its stress intensity or its T stress.
+Question settled_tip(solver::Problem problem, Measure measure, double model = 0.0,
+                     solver::Quantity quantity = solver::Quantity::stress_intensity, std::size_t tip = 0);
+
+/// K_I and the magnitude of K_II at a tip over a nominal one, MPa sqrt(mm), and
+/// T over a nominal stress, MPa.
+Measure k_one_over(double nominal, std::size_t tip = 0);
+Measure k_two_size_over(double nominal, std::size_t tip = 0);
+Measure t_over(double nominal, std::size_t tip = 0);
+
 /// The largest edge stress at a hole over a nominal stress, MPa.
 Measure largest_over(double nominal, std::size_t hole = 0);
 /// The edge stress at the end of an axis of the hole that is free of traction

@@ -222,11 +222,6 @@ std::pair<double, double> inclined(double beta) {
   return {std::pow(std::sin(beta), 2), std::sin(beta) * std::cos(beta)};
 }
 
-double kink_angle(double k1, double k2) {
-  // tan(theta/2) = (k1 - sqrt(k1^2 + 8 k2^2)) / (4 k2), written without cancellation.
-  return -2 * std::atan(2 * k2 / (k1 + std::sqrt(k1 * k1 + 8 * k2 * k2)));
-}
-
 std::optional<double> bowie(HoleCracks cracks, Tension tension, double q) {
   const bool is_biaxial = tension == Tension::biaxial;
   if (cracks == HoleCracks::one) return interpolate(is_biaxial ? bowie_one_biaxial : bowie_one, q);

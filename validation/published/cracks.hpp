@@ -43,10 +43,6 @@ double compact_specimen(double x);
 /// Crack at the angle beta (rad) to the tension, infinite plate: K_I and K_II
 /// over sigma sqrt(pi a).
 std::pair<double, double> inclined(double beta);
-/// Angle (rad) in which a crack goes on by the largest hoop stress: F. Erdogan
-/// and G. C. Sih (1963). Negative for positive K_II. Requires k1 >= 0, not both 0.
-double kink_angle(double k1, double k2);
-
 // One or two cracks of length a from a circular hole of radius R, infinite plate, q = a/R.
 
 /// O. L. Bowie's table: F for one or two cracks, tension across them or equal
