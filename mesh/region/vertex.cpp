@@ -54,24 +54,37 @@ double angle_between(const Curve& before, const Curve& after) {
 
 std::vector<Vertex> vertices(const Region& region) {
   std::vector<Vertex> result;
-  for (const Loop& loop : region.loops)
+  for (std::size_t l = 0; l < region.loops.size(); ++l) {
+    const Loop& loop = region.loops[l];
     for (std::size_t k = 0; k < loop.size(); ++k) {
       Vertex vertex;
       vertex.before = loop[k];
       vertex.after = loop[(k + 1) % loop.size()];
+      vertex.loop = l;
+      vertex.curve = k;
       vertex.at = vertex.after.at(vertex.after.begin);
       vertex.angle = angle_between(vertex.before, vertex.after);
       const Point along = tangent(vertex.after, vertex.after.begin);
       vertex.direction = std::atan2(along.y(), along.x());
-      vertex.reach = std::min(straight_reach(vertex.after, vertex.at, true),
-                              straight_reach(vertex.before, vertex.at, false));
-      for (const Loop& other : region.loops)
-        for (std::size_t i = 0; i < other.size(); ++i) {
-          const bool is_own = &other == &loop && (i == k || i == (k + 1) % loop.size());
-          if (!is_own) vertex.reach = std::min(vertex.reach, distance(other[i], vertex.at));
-        }
       result.push_back(vertex);
     }
+  }
+  return result;
+}
+
+double reach(const Region& region, const Vertex& vertex) {
+  double result = std::min(straight_reach(vertex.after, vertex.at, true),
+                           straight_reach(vertex.before, vertex.at, false));
+  for (std::size_t l = 0; l < region.loops.size(); ++l) {
+    const Loop& loop = region.loops[l];
+    for (std::size_t k = 0; k < loop.size(); ++k) {
+      const bool is_own = l == vertex.loop && (k == vertex.curve || k == (vertex.curve + 1) % loop.size());
+      if (!is_own) result = std::min(result, distance(loop[k], vertex.at));
+    }
+  }
+  for (const Slit& slit : region.slits)
+    for (std::size_t k = 1; k < slit.points.size(); ++k)
+      result = std::min(result, distance(line(slit.points[k - 1], slit.points[k]), vertex.at));
   return result;
 }
 

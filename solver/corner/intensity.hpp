@@ -14,14 +14,15 @@ namespace raiser::solver {
 /// A corner of the plate as a wedge, and what is known on its edges near it.
 struct CornerSite {
   mesh::Vertex vertex;
-  Wedge wedge;  ///< `first` is the edge that leaves the vertex, `second` the one that arrives
+  double reach = 0.0;  ///< mm, see mesh::reach()
+  Wedge wedge;         ///< `first` is the edge that leaves the vertex, `second` the one that arrives
   /// Traction in MPa on the leaving (0) and the arriving (1) edge at x with outward normal n.
   std::function<Point(int edge, const Point& x, const Point& n)> traction;
 };
 
 /// Amplitudes of a wedge's singular fields in a solution, from Betti's
 /// reciprocal theorem with each field's dual over the disc of the given radius
-/// (mm; at most Vertex::reach), as a domain integral with the weight
+/// (mm; at most the site's reach), as a domain integral with the weight
 /// (1 - r^2/R^2)^4. Known tractions on the edges are taken into account, and so
 /// is an edge that curves away from the wedge's. MPa mm^(1 - exponent); real
 /// unless the exponent is complex, then for r in mm.

@@ -37,7 +37,7 @@ struct Span {
   double inner, outer;
 };
 std::optional<Span> growth_span(const Field& field, const SingularPlace& place) {
-  const Span span{20 * finest(field, place.site.vertex.at), 0.02 * place.site.vertex.reach};
+  const Span span{20 * finest(field, place.site.vertex.at), 0.02 * place.site.reach};
   if (!(span.outer > 3 * span.inner)) return std::nullopt;
   return Span{span.inner, std::min(span.outer, 1000 * span.inner)};
 }
@@ -50,7 +50,7 @@ double disc_radius(const SingularPlace& place) {
   };
   const bool small = is_held_arc(vertex.after, place.site.wedge.first) ||
                      is_held_arc(vertex.before, place.site.wedge.second);
-  return (small ? 0.02 : 0.9) * vertex.reach;
+  return (small ? 0.02 : 0.9) * place.site.reach;
 }
 
 std::vector<SingularField> fields_of(const SingularPlace& place, const std::vector<Field>& solutions,
@@ -149,7 +149,7 @@ std::vector<PlaceFindings> place_findings(const std::vector<SingularPlace>& plac
     findings.what = what_of(place);
     findings.why = why_of(place);
     findings.cure = cure_of(place);
-    if (!place.modes.empty()) findings.fields = fields_of(place, fields, plane_constants(material));
+    if (!place.modes.empty() && place.site.reach > 0) findings.fields = fields_of(place, fields, plane_constants(material));
     const auto span = growth_span(fields.back(), place);
     if (span && place.kind != Kind::jump)
       findings.measured =

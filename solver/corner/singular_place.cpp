@@ -39,6 +39,15 @@ Fit fit(const mesh::Vertex& vertex, const Point& one, const Point& other) {
   return loses_a || loses_b ? Fit::logarithmic : Fit::bounded;
 }
 
+/// The singular fields of a wedge; none where both edges are alike and as good as
+/// straight, or free and convex.
+std::vector<WedgeMode> modes_of(const Wedge& wedge, const HookeLaw& material) {
+  const bool is_alike = wedge.first == wedge.second;
+  if (is_alike && std::abs(wedge.angle - pi) < mesh::least_corner) return {};
+  if (is_alike && wedge.first == WedgeEdge::free && wedge.angle <= pi) return {};
+  return singular_modes(wedge, plane_constants(material));
+}
+
 }  // namespace
 
 Traction sum_of(const std::vector<UnitLoad>& loads) {
@@ -52,8 +61,8 @@ Traction sum_of(const std::vector<UnitLoad>& loads) {
 bool is_near_growth(const std::vector<SingularPlace>& places, const Point& x) {
   constexpr double share = 0.2;
   return std::any_of(places.begin(), places.end(), [&](const SingularPlace& place) {
-    const mesh::Vertex& vertex = place.site.vertex;
-    return place.kind != SingularPlace::Kind::jump && (x - vertex.at).norm() < share * vertex.reach;
+    return place.kind != SingularPlace::Kind::jump &&
+           (x - place.site.vertex.at).norm() < share * place.site.reach;
   });
 }
 
@@ -61,32 +70,27 @@ std::vector<SingularPlace> singular_places(const mesh::Region& region, const Hol
                                            const Traction& traction, const HookeLaw& material) {
   std::vector<SingularPlace> places;
   for (const mesh::Vertex& vertex : mesh::vertices(region)) {
-    const mesh::Owner leaves = vertex.after.owner;
-    const mesh::Owner arrives = vertex.before.owner;
+    const Wedge wedge{vertex.angle, hold(vertex.after.owner), hold(vertex.before.owner)};
     SingularPlace place;
-    place.site = {vertex,
-                  {vertex.angle, hold(leaves), hold(arrives)},
-                  [traction, leaves, arrives](int edge, const Point& x, const Point& n) {
+    place.modes = modes_of(wedge, material);
+    const bool is_alike = wedge.first == wedge.second;
+    place.kind = is_alike ? SingularPlace::Kind::corner : SingularPlace::Kind::held_end;
+    if (place.modes.empty()) {
+      if (!is_alike || wedge.first != WedgeEdge::free) continue;
+      const Point out = outward(vertex.direction, -1.0);
+      const Point in = outward(vertex.direction + vertex.angle, 1.0);
+      const Fit found = fit(vertex, traction(vertex.after.owner, vertex.at, out),
+                            traction(vertex.before.owner, vertex.at, in));
+      if (found == Fit::uniform) continue;
+      place.kind = SingularPlace::Kind::jump;
+      place.is_logarithmic = found == Fit::logarithmic;
+    }
+    if (material.orthotropy) place.modes.clear();
+    place.site = {vertex, mesh::reach(region, vertex), wedge,
+                  [traction, leaves = vertex.after.owner, arrives = vertex.before.owner](
+                      int edge, const Point& x, const Point& n) {
                     return traction(edge == 0 ? leaves : arrives, x, n);
                   }};
-    const Wedge& wedge = place.site.wedge;
-    const bool is_alike = wedge.first == wedge.second;
-    const bool is_straight = std::abs(vertex.angle - pi) < mesh::least_corner;
-    if (!(is_alike && is_straight)) {
-      const auto modes = singular_modes(wedge, plane_constants(material));
-      if (!modes.empty()) {
-        place.kind = is_alike ? SingularPlace::Kind::corner : SingularPlace::Kind::held_end;
-        if (!material.orthotropy) place.modes = modes;
-        places.push_back(std::move(place));
-        continue;
-      }
-    }
-    if (!is_alike || wedge.first != WedgeEdge::free) continue;
-    const Fit found = fit(vertex, place.site.traction(0, vertex.at, outward(vertex.direction, -1.0)),
-                          place.site.traction(1, vertex.at, outward(vertex.direction + vertex.angle, 1.0)));
-    if (found == Fit::uniform) continue;
-    place.kind = SingularPlace::Kind::jump;
-    place.is_logarithmic = found == Fit::logarithmic;
     places.push_back(std::move(place));
   }
   return places;

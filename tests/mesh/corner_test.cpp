@@ -37,7 +37,7 @@ TEST(Corners, OfAPolygonHaveTheirAngles) {
     EXPECT_NEAR(v.angle, 1.5 * pi, 1e-14);
     EXPECT_EQ(v.at, Point(15, 15));
     EXPECT_NEAR(v.direction, pi / 2, 1e-14);  // the edge that leaves it runs upwards, material to its left
-    EXPECT_NEAR(v.reach, 15, 1e-12);
+    EXPECT_NEAR(reach(l_shape, v), 15, 1e-12);
   }
   EXPECT_EQ(re_entrant, 1);
   EXPECT_NEAR(sum, 4 * pi, 1e-12);

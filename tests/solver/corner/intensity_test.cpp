@@ -20,7 +20,7 @@ const PlaneConstants constants = plane_constants(steel);
 /// The one re-entrant corner of a region, with free edges.
 CornerSite corner_of(const mesh::Region& region) {
   for (const mesh::Vertex& v : mesh::vertices(region))
-    if (v.angle > pi + mesh::least_corner) return {v, {v.angle}, {}};
+    if (v.angle > pi + mesh::least_corner) return {v, mesh::reach(region, v), {v.angle}, {}};
   throw std::invalid_argument("the region has no corner");
 }
 
@@ -62,14 +62,14 @@ TEST(Intensity, ComesBackFromTheWedgesOwnField) {
     const Model model(mesh::triangulate(region, rule), {}, steel, 1.0, {exact_load(site, amplitude)});
     const Field field(model, model.solve(8));
     for (const double share : {0.9, 0.4}) {
-      const auto found = amplitudes(field, site, modes, constants, share * site.vertex.reach);
+      const auto found = amplitudes(field, site, modes, constants, share * site.reach);
       for (std::size_t m = 0; m < modes.size(); ++m) {
         EXPECT_NEAR(found[m].real(), amplitude[m], 3e-5) << site.wedge.angle << " " << share;
       }
     }
     for (const WedgeMode& mode : modes) {
       const auto exponent =
-          measured_exponent(field, site, mode.symmetry, 2e-5 * site.vertex.reach, 1e-3 * site.vertex.reach);
+          measured_exponent(field, site, mode.symmetry, 2e-5 * site.reach, 1e-3 * site.reach);
       ASSERT_TRUE(exponent);
       EXPECT_NEAR(*exponent, mode.exponent.real(), 0.002) << site.wedge.angle;
     }
@@ -164,9 +164,9 @@ TEST(Intensity, AtCurvedEdgesDoesNotDependOnTheDisc) {
   ASSERT_EQ(places.size(), 2U);
   std::vector<double> values;
   for (const double share : {0.9, 0.5, 0.2, 0.05})
-    values.push_back(amplitudes(fields.back(), places[0].site, places[0].modes, constants,
-                                share * places[0].site.vertex.reach)[0]
-                         .real());
+    values.push_back(
+        amplitudes(fields.back(), places[0].site, places[0].modes, constants, share * places[0].site.reach)[0]
+            .real());
   for (const double v : values) EXPECT_NEAR(v, values[0], 1e-4 * std::abs(values[0]));
   EXPECT_GT(values[0], 10.0);
 }
