@@ -293,7 +293,6 @@ std::string default_name(const std::optional<Load>& load, const Context& context
     case Load::Kind::tension:
     case Load::Kind::shear:
     case Load::Kind::bending:
-    case Load::Kind::face_pressure:
       break;
     case Load::Kind::transverse:
       return "tension across";
