@@ -197,8 +197,10 @@ std::optional<Crack> read_chain(const Table& table, const Context& context) {
   const Entry* from = find(table, "from");
   const Start start{choice(table, edge, views(context.edges)), choice(table, from, context.raisers)};
   auto points = read_points(table);
-  if (edge != nullptr && from != nullptr)
+  if (edge != nullptr && from != nullptr) {
     complain(table, *from, "edge is given too", "give one of the two and remove the other");
+    return std::nullopt;
+  }
   if (!points) return std::nullopt;
   for (Point& point : *points) point += context.origin;
   if (edge == nullptr && from == nullptr) return Crack{"", std::move(*points), false, {}};
