@@ -106,7 +106,7 @@ std::size_t images_on_edge(const Result& result, const solver::RaiserFindings& f
   const mesh::Point& at = value.point;
   const solver::Problem& problem = result.input.problem;
   mesh::Mirrors even = result.solution.mirrors_used;
-  for (const solver::UnitLoad& load : solver::unit_loads(problem.plate, problem.loads)) {
+  for (const solver::UnitLoad& load : solver::unit_loads(problem.plate, problem.loads, problem.supports)) {
     even.x = even.x && load.under_x == solver::UnitLoad::Parity::even;
     even.y = even.y && load.under_y == solver::UnitLoad::Parity::even;
   }

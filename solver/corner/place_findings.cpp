@@ -149,7 +149,8 @@ std::vector<PlaceFindings> place_findings(const std::vector<SingularPlace>& plac
     findings.what = what_of(place);
     findings.why = why_of(place);
     findings.cure = cure_of(place);
-    if (!place.modes.empty() && place.site.reach > 0) findings.fields = fields_of(place, fields, plane_constants(material));
+    if (!place.modes.empty() && place.site.reach > 0)
+      findings.fields = fields_of(place, fields, plane_constants(material));
     const auto span = growth_span(fields.back(), place);
     if (span && place.kind != Kind::jump)
       findings.measured =
