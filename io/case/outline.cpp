@@ -25,7 +25,7 @@ void read_free(const Table& document, OutlineReading& result, Names& names) {
       if (!point->corner.empty()) point->corner = unique_name(table, point->corner, names);
       points.push_back(*point);
     }
-  if (points.size() != tables.size()) return;
+  if (tables.empty() || points.size() != tables.size()) return;
   mesh::ChainResult chain = mesh::chain_outline(points);
   for (const CutFault& fault : chain.faults)
     add(*document.report, "outline", tables[fault.index].node->at, fault);
@@ -42,7 +42,7 @@ void read_stepped(const Table& document, const PlateSizes& sizes, OutlineReading
         unique_name(table, fmt::format("shoulder {}", &table - tables.data() + 1), names);
     if (auto shoulder = read_shoulder(table, name)) shoulders.push_back(*shoulder);
   }
-  if (shoulders.size() != tables.size() || !sizes.length || !sizes.width) return;
+  if (tables.empty() || shoulders.size() != tables.size() || !sizes.length || !sizes.width) return;
   mesh::OutlineResult bar = mesh::stepped_bar(*sizes.length, *sizes.width, shoulders);
   for (const CutFault& fault : bar.faults)
     add(*document.report, "shoulder", tables[fault.index].node->at, fault);

@@ -48,7 +48,8 @@ TEST(Independent, EightDigitsOnRequest) {
               found.largest.stress.bound + c.uncertainty * c.nominal)
         << c.name;
     // The plates are symmetric: the peak lies there or at a mirror image.
-    const mesh::Point centre = mesh::raiser(c.problem.plate, c.raiser).centre;
+    const mesh::Point centre =
+        c.problem.plate.outline ? mesh::Point(0, 0) : mesh::raiser(c.problem.plate, c.raiser).centre;
     const mesh::Point ours = found.largest.point - centre, theirs = c.where - centre;
     EXPECT_NEAR(std::abs(ours.x()), std::abs(theirs.x()), 0.01) << c.name;
     EXPECT_NEAR(std::abs(ours.y()), std::abs(theirs.y()), 0.01) << c.name;
