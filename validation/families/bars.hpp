@@ -1,15 +1,11 @@
 #pragma once
 
-#include <optional>
-
 #include "mesh/plate/plate.hpp"
 
 /// Outlines of the bars that published factors of notches and fillets are for.
 namespace raiser::validation {
 
-/// A notch in an edge at x = 0: flanks at half the opening angle (rad) to the
-/// edge's normal, tangent to the root's arc; where the depth is too small for
-/// flanks, the arc alone.
+/// A notch in the middle of an edge: U, or V where it opens, or half an ellipse.
 struct NotchForm {
   double depth = 0.0;       ///< mm
   double radius = 0.0;      ///< mm, of the root
@@ -17,7 +13,8 @@ struct NotchForm {
   bool is_ellipse = false;  ///< half an ellipse of that depth and root radius instead
 };
 
-/// A bar with its notches in the upper edge and, where `both`, opposite ones below.
+/// A bar with a notch in the upper edge and, where `both`, one opposite. Throws
+/// std::invalid_argument where the sizes do not fit.
 mesh::Plate notched_bar(double length, double width, const NotchForm& notch, bool both);
 
 /// A bar `wide` for half of the length and `narrow` for the other half (x > 0),
