@@ -1,5 +1,6 @@
 #include "validation/families/bars.hpp"
 
+#include <algorithm>
 #include <cmath>
 #include <numbers>
 #include <stdexcept>
@@ -49,6 +50,12 @@ mesh::Plate stepped_bar(double length, double wide, double narrow, double radius
   shoulder.width = narrow;
   shoulder.fillet.radius = radius;
   return {length, wide, 1.0, {}, built(mesh::stepped_bar(length, wide, {shoulder}))};
+}
+
+std::size_t upper_raiser(const mesh::Plate& plate) {
+  const auto all = mesh::raisers(plate);
+  const auto lower = [](const mesh::Raiser& a, const mesh::Raiser& b) { return a.root.y() < b.root.y(); };
+  return static_cast<std::size_t>(std::max_element(all.begin(), all.end(), lower) - all.begin());
 }
 
 mesh::Plate elliptic_ring(const mesh::Point& outer, const mesh::Point& inner) {

@@ -21,6 +21,9 @@ mesh::Plate notched_bar(double length, double width, const NotchForm& notch, boo
 /// with circular fillets of the radius on both sides.
 mesh::Plate stepped_bar(double length, double wide, double narrow, double radius);
 
+/// The raiser of the plate that lies uppermost, which positive bending pulls.
+std::size_t upper_raiser(const mesh::Plate& plate);
+
 /// An ellipse with a concentric elliptical hole: full sizes along x and y, mm.
 mesh::Plate elliptic_ring(const mesh::Point& outer, const mesh::Point& inner);
 

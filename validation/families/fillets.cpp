@@ -24,7 +24,8 @@ constexpr auto reading =
 
 Question step_question(double wide, double narrow, double radius, Load::Kind load) {
   solver::Problem problem{stepped_bar(6 * wide, wide, narrow, radius), family_material, {unit_load(load)}};
-  return settled(std::move(problem), largest_over(unit_stress), std::exp(-4.2 * 3));
+  const std::size_t at = upper_raiser(problem.plate);
+  return settled(std::move(problem), largest_over(unit_stress, at), std::exp(-4.2 * 3), at);
 }
 
 void add(Family& f, Reference source, double (*formula)(double, double), Load::Kind load) {

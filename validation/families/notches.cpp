@@ -30,7 +30,8 @@ constexpr auto fit_deviation =
 
 Question bar_question(const NotchForm& notch, bool both, Load::Kind load, double nominal) {
   solver::Problem problem{notched_bar(length, D, notch, both), family_material, {unit_load(load)}};
-  return settled(std::move(problem), largest_over(nominal), std::exp(-4.2 * length / 2 / D));
+  const std::size_t at = upper_raiser(problem.plate);
+  return settled(std::move(problem), largest_over(nominal, at), std::exp(-4.2 * length / 2 / D), at);
 }
 
 /// One of the four families of U notches in a bar.

@@ -1,5 +1,6 @@
 #include "validation/families/question.hpp"
 
+#include <algorithm>
 #include <chrono>
 #include <utility>
 
@@ -83,6 +84,12 @@ Question settled(solver::Problem problem, Measure measure, double model, std::si
 Question settled_tip(solver::Problem problem, Measure measure, double model, solver::Quantity quantity,
                      std::size_t tip) {
   return asking(std::move(problem), {quantity, tip, 1.0, ""}, std::move(measure), model);
+}
+
+Question no_finer_than(double least, Question question) {
+  return [least, question = std::move(question)](double tolerance) {
+    return question(std::max(least, tolerance));
+  };
 }
 
 Measure k_one_over(double nominal, std::size_t tip) {

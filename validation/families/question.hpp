@@ -39,6 +39,9 @@ Question settled(solver::Problem problem, Measure measure, double model = 0.0, s
 Question settled_tip(solver::Problem problem, Measure measure, double model = 0.0,
                      solver::Quantity quantity = solver::Quantity::stress_intensity, std::size_t tip = 0);
 
+/// The same question at a tolerance of its own: T converges later than K.
+Question no_finer_than(double least, Question question);
+
 /// K_I and the magnitude of K_II at a tip over a nominal one, MPa sqrt(mm), and
 /// T over a nominal stress, MPa.
 Measure k_one_over(double nominal, std::size_t tip = 0);
