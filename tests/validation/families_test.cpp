@@ -122,7 +122,7 @@ TEST(Families, AFailedPlateIsAPointWithAReason) {
 
 // The short run: every plate is solved, every exact solution met to 6 digits at
 // least, and no source farther off than is known of it.
-TEST(Families, DISABLED_ShortRun) {
+TEST(Families, ShortRun) {
   for (const Family& family : families()) {
     const FamilyResult result = run(family, true);
     EXPECT_TRUE(is_sound(result)) << family.id;
