@@ -1,6 +1,7 @@
 #include <fmt/format.h>
 
 #include <algorithm>
+#include <cmath>
 #include <functional>
 #include <limits>
 #include <map>
@@ -21,7 +22,7 @@ bool is_on_path(const Trial& trial) { return !is_peak(trial) && !is_at_tip(trial
 double quantile(std::vector<double> values, double share) {
   if (values.empty()) return 0.0;
   const auto last = static_cast<double>(values.size() - 1);
-  const auto at = values.begin() + static_cast<std::ptrdiff_t>(share * last + 0.5);
+  const auto at = values.begin() + std::lround(share * last);
   std::nth_element(values.begin(), at, values.end());
   return *at;
 }
