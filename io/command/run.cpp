@@ -68,11 +68,11 @@ std::optional<Case> read(const std::filesystem::path& file, Run& run) {
 // Solves on another thread, so that an interrupt need not wait for the end; the
 // thread owns all it works on. Nothing when interrupted.
 std::optional<solver::Solution> solve(const Case& input, const std::function<void(double)>& waiting) {
+  if (!solver::has_workspace()) throw std::bad_alloc();
   std::promise<solver::Solution> promise;
   std::future<solver::Solution> future = promise.get_future();
   std::thread([problem = input.problem, asks = input.asks, promise = std::move(promise)]() mutable {
     try {
-      if (!solver::has_workspace()) throw std::bad_alloc();
       promise.set_value(solver::settle(problem, asks));
     } catch (...) {
       promise.set_exception(std::current_exception());
