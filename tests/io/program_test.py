@@ -191,7 +191,7 @@ class ExitCodes(Program):
         result = subprocess.run(["sh", "-c", 'ulimit -v 262144; exec "$0" solve "$1"', PROGRAM, case],
                                 cwd=self.folder, capture_output=True, text=True, timeout=60)
         self.assertEqual(result.returncode, 5, result.stderr)
-        self.assertRegex(result.stderr, "not enough memory|Resource temporarily unavailable")
+        self.assertIn("not enough memory", result.stderr)
 
     def test_validate_names_every_unknown_family(self):
         result = self.run_it("validate", "slot-infinit", "nonsense", "--quick")
