@@ -37,6 +37,7 @@ struct FamilyPoint {
   std::vector<Cited> cited;
   std::function<Ours(double tolerance)> solve;  ///< tolerance relative to the largest edge stress
   bool is_quick = false;                        ///< belongs to the short run
+  double scale = 0.0;  ///< of numbers that pass through zero: what "off" is relative to where ours is smaller
 };
 
 /// A published solution drawn over the chart's abscissa.
@@ -82,7 +83,8 @@ enum class Agreement {
 struct HeldValue {
   Reference reference;
   double published = 0.0;
-  double off = 0.0;              ///< (published - ours) / |ours|: below 0 where the source is low
+  double off = 0.0;              ///< (published - ours) / scale: below 0 where the source is low
+  double scale = 1.0;            ///< |ours|, or the point's scale where that is larger
   std::optional<double> digits;  ///< of agreement, for exact sources
   Agreement agreement = Agreement::as_found;
 };
@@ -100,8 +102,9 @@ struct FamilyResult {
   std::vector<PointResult> points;
 };
 
-/// Holds one published value against ours.
-HeldValue hold(const Cited& cited, const std::vector<Parameter>& parameters, const Ours& ours);
+/// Holds one published value against ours. `scale` as in FamilyPoint.
+HeldValue hold(const Cited& cited, const std::vector<Parameter>& parameters, const Ours& ours,
+               double scale = 0.0);
 
 /// Solves a family, only its short part when `quick`. `stopped` is asked
 /// before each point; what has been solved until then is returned. Holds a

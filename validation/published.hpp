@@ -21,6 +21,7 @@ enum class Reference {
   roark_circle,
   peterson_circle,
   bending_circle,
+  bending_outer_edge,
   roark_eccentric,
   sjostrom_eccentric,
   half_plane,
@@ -36,6 +37,7 @@ enum class Reference {
   pressure_infinite,
   pressure_ellipse,
   pressure_half_plane,
+  pressure_ring,
   u_pair_tension,
   u_pair_bending,
   u_single_tension,
@@ -80,18 +82,24 @@ enum class Reference {
   grandt_two,
   newman_one,
   newman_two,
+  newman_strip_one,
+  newman_strip_two,
   collinear,
   collinear_row,
   through_crack,
   half_plane_crack,
   notch_crack_lukas,
   notch_crack_limits,
+  notch_crack_table,
   pressurised_wall,
   t_stress,
   williams,
   point_forces,
   gere_bars,
   bhandari_bars,
+  shigley_crack,
+  dowling_cracks,
+  boresi_crack,
   elliptic_membrane
 };
 
@@ -146,6 +154,9 @@ double peterson_circle(double x);
 /// as a multiple of the gross outer-fibre stress 6 M / (W^2 t). Kt on it is 2.
 double bending_nominal(double x);
 inline constexpr double bending_factor = 2.0;
+/// The same at the outer edge: nominal stress 6 M W / ((W^3 - d^3) t), Kt 1.
+double bending_edge_nominal(double x);
+inline constexpr double bending_edge_factor = 1.0;
 
 // Circular hole of radius r, centre at c from the near edge and e from the far one, W = c + e.
 
@@ -195,5 +206,7 @@ std::optional<double> rounded_square_biaxial(double r_over_s);
 double pressure_rim(double q);
 /// Tangential stress on the straight edge opposite the hole over p: 4 / (q^2 - 1).
 double pressure_edge(double q);
+/// A ring of outer over inner radius b/a under inner pressure: (b^2 + a^2) / (b^2 - a^2).
+double pressure_ring(double b_over_a);
 
 }  // namespace raiser::validation

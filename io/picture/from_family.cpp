@@ -93,7 +93,7 @@ void add_off(FamilyChart& chart, const PointResult& point, const std::vector<Ref
     const auto is_same = [&](const OffTrace& t) { return t.source == source && t.label == point.series; };
     auto trace = std::find_if(chart.off.begin(), chart.off.end(), is_same);
     if (trace == chart.off.end()) trace = chart.off.insert(chart.off.end(), {source, {}, point.series});
-    const double bound = 100 * point.ours.value->bound / std::abs(point.ours.value->value);
+    const double bound = 100 * point.ours.value->bound / held.scale;
     trace->marks.push_back(
         {{point.parameters.front().value, 100 * held.off}, std::isfinite(bound) ? bound : 0.0});
   }

@@ -87,6 +87,12 @@ TEST(Families, OffIsNegativeWhereTheSourceIsLow) {
   EXPECT_NEAR(hold({Reference::heywood, -3.0}, {}, found(-2.0, 0)).off, -0.5, 1e-15);
 }
 
+TEST(Families, OffIsRelativeToAScaleOfItsOwnWhereANumberPassesThroughZero) {
+  EXPECT_NEAR(hold({Reference::through_crack, 0.0}, {}, found(1e-4, 0), 1.0).off, -1e-4, 1e-15);
+  EXPECT_NEAR(hold({Reference::through_crack, 2.0}, {}, found(4.0, 0), 1.0).off, -0.5, 1e-15);
+  EXPECT_EQ(hold({Reference::through_crack, 0.0}, {}, found(1e-4, 2e-4), 1.0).agreement, Agreement::exact);
+}
+
 TEST(Families, AFamilyIsUnsoundWithOnePlateThatIsNot) {
   FamilyResult result;
   PointResult good;

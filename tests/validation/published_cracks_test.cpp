@@ -267,6 +267,13 @@ TEST(PublishedCracks, CrackAtANotch) {
   EXPECT_NEAR(notch_crack_short(3.065) * std::sqrt(std::numbers::pi * 0.5), 4.308, 1e-3 * 4.308);
 }
 
+TEST(PublishedCracks, TheComputedTableOfNotchCracksLiesBetweenTheLimits) {
+  EXPECT_FALSE(notch_crack_table(0.3));
+  EXPECT_NEAR(*notch_crack_table(0.1), 1.6105 / std::sqrt(std::numbers::pi * 0.1), 1e-12);
+  for (const double x : {0.02, 0.05, 0.1, 0.2})
+    EXPECT_LT(*notch_crack_table(x), notch_crack_short(3.065)) << x;
+}
+
 TEST(PublishedCracks, PointForcesOnASmallCrackAreThoseOfTheInfinitePlate) {
   for (const double x : {0.01, 0.1, 0.25})
     EXPECT_NEAR(point_forces(x) * std::sqrt(std::numbers::pi * x), 1, 0.1);

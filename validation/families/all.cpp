@@ -21,6 +21,7 @@ std::vector<Family> families() {
           rounded_square_infinite(),
           pressure_infinite(),
           pressure_half_plane(),
+          pressure_ring_family(),
           notch_pair_tension(),
           notch_pair_bending(),
           notch_single_tension(),
@@ -36,20 +37,28 @@ std::vector<Family> families() {
           orthotropic_infinite(),
           orthotropic_strip_tension(),
           crack_inclined(),
+          crack_kink(),
           crack_centre_strip(),
           crack_edge_strip(),
           crack_edge_bending(),
+          specimen_bend(),
+          specimen_compact(),
           crack_two_edges(),
           crack_hole_one(),
           crack_hole_two(),
           crack_hole_one_biaxial(),
           crack_hole_two_biaxial(),
+          crack_hole_strip(),
           cracks_collinear(),
+          crack_row(),
           crack_half_plane(),
+          crack_notch(),
           crack_hole_pressure(),
           t_stress_strip(),
           corner_exponents(),
-          textbook_holes()};
+          crack_point_forces(),
+          textbook_holes(),
+          textbook_cracks()};
 }
 
 }  // namespace raiser::validation

@@ -58,6 +58,22 @@ std::size_t upper_raiser(const mesh::Plate& plate) {
   return static_cast<std::size_t>(std::max_element(all.begin(), all.end(), lower) - all.begin());
 }
 
+mesh::Plate watched(mesh::Plate plate, std::size_t edge) {
+  mesh::Outline outline = mesh::outline_of(plate);
+  mesh::Raiser raiser;
+  raiser.kind = mesh::Raiser::Kind::notch;
+  raiser.name = outline.edges.at(edge);
+  for (mesh::Curve& curve : outline.curves) {
+    if (curve.owner != mesh::Owner{mesh::Owner::Kind::edge, edge}) continue;
+    raiser.centre = raiser.root = raiser.mouth = curve.at((curve.begin + curve.end) / 2);
+    raiser.radius = (curve.finish() - curve.start()).norm();
+    curve.owner = {mesh::Owner::Kind::raiser, outline.raisers.size()};
+  }
+  outline.raisers.push_back(raiser);
+  plate.outline = std::move(outline);
+  return plate;
+}
+
 mesh::Plate elliptic_ring(const mesh::Point& outer, const mesh::Point& inner) {
   using mesh::Curve;
   mesh::Outline outline;

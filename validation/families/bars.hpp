@@ -24,6 +24,10 @@ mesh::Plate stepped_bar(double length, double wide, double narrow, double radius
 /// The raiser of the plate that lies uppermost, which positive bending pulls.
 std::size_t upper_raiser(const mesh::Plate& plate);
 
+/// The plate with one of its straight edges as a raiser behind all others, so that
+/// the largest stress on that edge can be asked for.
+mesh::Plate watched(mesh::Plate plate, std::size_t edge);
+
 /// An ellipse with a concentric elliptical hole: full sizes along x and y, mm.
 mesh::Plate elliptic_ring(const mesh::Point& outer, const mesh::Point& inner);
 

@@ -1,13 +1,12 @@
 // Stepped flat bars with circular fillets.
 #include <fmt/format.h>
 
-#include <array>
 #include <cmath>
 
 #include "mesh/triangulate/triangulate.hpp"
 #include "validation/families/bars.hpp"
 #include "validation/families/list.hpp"
-#include "validation/families/question.hpp"
+#include "validation/families/steps.hpp"
 #include "validation/published/edge_raisers.hpp"
 
 namespace raiser::validation {
@@ -17,16 +16,6 @@ namespace {
 using solver::Load;
 
 constexpr double D = 100.0;  // mm, width of the wide part
-constexpr auto reading =
-    "a bar of three wide widths either side of the step, uniform or linear traction on its ends; largest "
-    "stress on "
-    "the fillet over that of the narrow part";
-
-Question step_question(double wide, double narrow, double radius, Load::Kind load) {
-  solver::Problem problem{stepped_bar(6 * wide, wide, narrow, radius), family_material, {unit_load(load)}};
-  const std::size_t at = upper_raiser(problem.plate);
-  return settled(std::move(problem), largest_over(unit_stress, at), std::exp(-4.2 * 3), at);
-}
 
 void add(Family& f, Reference source, double (*formula)(double, double), Load::Kind load) {
   for (const double q : {0.25, 0.5, 1.0, 2.0, 4.0, 8.0, 16.0}) {
@@ -45,13 +34,19 @@ void add(Family& f, Reference source, double (*formula)(double, double), Load::K
 
 }  // namespace
 
+Question step_question(double wide, double narrow, double radius, Load::Kind load) {
+  solver::Problem problem{stepped_bar(6 * wide, wide, narrow, radius), family_material, {unit_load(load)}};
+  const std::size_t at = upper_raiser(problem.plate);
+  return settled(std::move(problem), largest_over(unit_stress, at), std::exp(-4.2 * 3), at);
+}
+
 Family fillet_step_tension() {
   Family f{"fillet-tension",
            "A25",
            "Stepped flat bar, D and d wide, h = (D-d)/2, fillet radius r, tension",
            "2h/D: both steps over the wide part's width",
            "Kt on P/(t d)",
-           reading,
+           step_reading,
            "a cubic in the step with coefficients fitted in h/r to photoelastic charts: too low for shallow "
            "steps, too "
            "high for blunt fillets at deep ones",
@@ -69,7 +64,7 @@ Family fillet_step_bending() {
       "Stepped flat bar, D and d wide, h = (D-d)/2, fillet radius r, bending",
       "2h/D: both steps over the wide part's width",
       "Kt on 6M/(t d^2)",
-      reading,
+      step_reading,
       "a cubic in the step with coefficients fitted in h/r to photoelastic charts: too low for shallow steps",
       1e-5,
       {},
@@ -84,7 +79,7 @@ Family fillet_chart() {
            "Stepped flat bar, D and d wide, fillet radius r, tension: figures off the printed chart",
            "r/d: fillet radius over narrow width",
            "Kt on P/(t d)",
-           reading,
+           step_reading,
            "photoelastic tests of 1935 and a chart read by eye: low throughout",
            1e-5,
            {},
@@ -113,7 +108,7 @@ Family fillet_power() {
            "Stepped flat bar, D/d 1.111, fillet radius r, bending",
            "r/d: fillet radius over narrow width",
            "Kt on 6M/(t d^2)",
-           reading,
+           step_reading,
            "a power law through one line of a printed chart",
            1e-5,
            {},
@@ -126,59 +121,6 @@ Family fillet_power() {
                         step_question(D, D / ratio, x * D / ratio, Load::Kind::bending),
                         x == 0.1});
   f.curves.push_back({Reference::fillet_bending_power, "", fillet_bending_power, 0.03, 0.25, false, {}});
-  return f;
-}
-
-namespace {
-
-/// A stepped bar in tension as the book gives it, in its own unit of length.
-struct Bar {
-  Reference book;
-  double radius, narrow, wide;
-  double factor;
-
-  double share() const { return radius / narrow; }
-};
-
-constexpr std::array<Bar, 6> bars{{{Reference::gere_bars, 0.25, 2.5, 4, 2.30},
-                                   {Reference::gere_bars, 6, 40, 60, 2.00},
-                                   {Reference::gere_bars, 0.5, 2.5, 4, 1.87},
-                                   {Reference::gere_bars, 10, 40, 60, 1.75},
-                                   {Reference::bhandari_bars, 5, 50, 100, 2.27},
-                                   {Reference::bhandari_bars, 5, 30, 45, 1.80}}};
-
-FamilyCurve curve_of(Reference book) {
-  FamilyCurve curve{book, "", {}, 0.1, 0.25, true, {}};
-  for (const Bar& bar : bars)
-    if (bar.book == book) curve.points.push_back(bar.share());
-  curve.at = [book](double x) -> std::optional<double> {
-    for (const Bar& bar : bars)
-      if (bar.book == book && std::abs(bar.share() - x) < 1e-9) return bar.factor;
-    return std::nullopt;
-  };
-  return curve;
-}
-
-}  // namespace
-
-Family textbook_fillets() {
-  Family f{"textbook-fillets",
-           "D07, D08, D10, D12",
-           "Stepped flat bars in tension, as worked in textbooks",
-           "r/d: fillet radius over narrow width",
-           "Kt on P/(t d)",
-           reading,
-           "the books read their factors off printed charts, which are low",
-           1e-5,
-           {},
-           {}};
-  for (const Bar& bar : bars)
-    f.points.push_back({"",
-                        {{"r/d", bar.share()}, {"D/d", bar.wide / bar.narrow}},
-                        {{bar.book, bar.factor}},
-                        step_question(bar.wide, bar.narrow, bar.radius, Load::Kind::tension),
-                        bar.wide == 100});
-  f.curves = {curve_of(Reference::gere_bars), curve_of(Reference::bhandari_bars)};
   return f;
 }
 
@@ -207,7 +149,7 @@ Family elliptic_membrane() {
     const solver::Model model(mesh::triangulate(mesh::cut(mesh::trace(plate), both), {}), both,
                               {210e3, 0.3, solver::PlaneState::stress}, plate.thickness,
                               {{"outward", outward, Parity::even, Parity::even}});
-    return with_rising_degree(model, plate, solver::Quantity::largest_edge_stress, tolerance, 1.0);
+    return with_rising_degree(model, plate, {solver::Quantity::largest_edge_stress, 0, tolerance, ""}, 1.0);
   };
   f.points.push_back({"", {{"x", 2.0}}, {{Reference::elliptic_membrane, 92.7}}, solve, true});
   f.curves.push_back(

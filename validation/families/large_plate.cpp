@@ -4,8 +4,9 @@
 
 #include <cmath>
 
+#include "validation/families/bars.hpp"
 #include "validation/families/list.hpp"
-#include "validation/families/question.hpp"
+#include "validation/families/series.hpp"
 
 namespace raiser::validation {
 
@@ -41,6 +42,15 @@ Question in_half_plane(double c, Load::Kind load, bool at_far_side) {
   const Measure far_side = stress_at(centre - Point(0.0, r), unit_stress);
   return in_large_plate(c, {circle(2 * r, centre)}, {load},
                         at_far_side ? far_side : largest_over(unit_stress));
+}
+
+/// A hole under pressure at q radii from the side y = +half width, and the stress on that side.
+Question pressed_near_edge(double q) { return in_half_plane(q * r, Load::Kind::pressure, false); }
+Question edge_near_pressure(double q) {
+  const double c = q * r, size = breadth * c;
+  auto problem = plate_under(size, size, {circle(2 * r, {0.0, size / 2 - c})}, {Load::Kind::pressure});
+  problem.plate = watched(std::move(problem.plate), mesh::rectangle::top);
+  return settled(std::move(problem), largest_over(unit_stress, 1), outline_effect, 1);
 }
 
 /// Two holes L apart along y; the asked one is the upper.
@@ -236,24 +246,55 @@ Family rounded_square_infinite() {
 }
 
 Family pressure_half_plane() {
-  Family f{"pressure-half-plane",
+  Family f{
+      "pressure-half-plane",
+      "A29",
+      "Circular hole of radius r under pressure p at c from the edge of a half plane",
+      "c/r: distance to the edge over radius",
+      "largest stress on the edge named over p",
+      "a square plate 6000 c wide with the hole near one side; largest stress on the hole's edge and on that "
+      "side over p",
+      "the formulas are exact, the plate finite",
+      1e-7,
+      {},
+      {}};
+  for (const bool is_hole : {true, false})
+    add_series(f, {is_hole ? "hole" : "straight edge opposite",
+                   "c/r",
+                   {1.2, 1.5, std::sqrt(3.0), 2.0, 3.0, 5.0},
+                   {2.0},
+                   [is_hole](double q) { return is_hole ? pressed_near_edge(q) : edge_near_pressure(q); },
+                   {{Reference::pressure_half_plane, is_hole ? pressure_rim : pressure_edge}},
+                   1.2,
+                   5.0});
+  return f;
+}
+
+Family pressure_ring_family() {
+  Family f{"pressure-ring",
            "A29",
-           "Circular hole of radius r under pressure p at c from the edge of a half plane",
-           "c/r: distance to the edge over radius",
-           "largest stress on the hole's edge over p",
-           "a square plate 6000 c wide with the hole near one side; largest edge stress over p",
-           "the formula is exact, the plate finite",
-           1e-7,
+           "Ring of radii a and b under pressure p inside",
+           "b/a: outer over inner radius",
+           "largest stress on the inner edge over p",
+           "the ring itself; largest edge stress over p",
+           "the source is exact: rounding and the bound only",
+           1e-8,
            {},
            {}};
-  for (const double q : {1.2, 1.5, std::sqrt(3.0), 2.0, 3.0, 5.0}) {
-    f.points.push_back({"",
-                        {{"c/r", q}},
-                        {{Reference::pressure_half_plane, pressure_rim(q)}},
-                        in_half_plane(q * r, Load::Kind::pressure, false),
-                        q == 2});
-  }
-  f.curves.push_back({Reference::pressure_half_plane, "", pressure_rim, 1.2, 5.0, false, {}});
+  add_series(f, {"",
+                 "b/a",
+                 {1.2, 1.5, 2.0, 3.0, 5.0, 10.0},
+                 {2.0},
+                 [](double ratio) {
+                   const double outer = 2 * r * ratio;
+                   return settled({elliptic_ring({outer, outer}, {2 * r, 2 * r}),
+                                   family_material,
+                                   {unit_load(Load::Kind::pressure)}},
+                                  largest_over(unit_stress));
+                 },
+                 {{Reference::pressure_ring, pressure_ring}},
+                 1.2,
+                 10.0});
   return f;
 }
 

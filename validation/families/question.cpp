@@ -136,14 +136,23 @@ Measure stress_at(const Point& point, double nominal, std::size_t hole) {
   };
 }
 
-Ours with_rising_degree(const solver::Model& model, const mesh::Plate& plate, solver::Quantity quantity,
-                        double tolerance, double nominal) {
+namespace {
+
+solver::Estimate asked_value(const solver::DegreeSequence& sequence, const solver::Ask& ask) {
+  if (!solver::is_at_tip(ask.quantity)) return sequence.value(0, ask.raiser, ask.quantity).stress;
+  return sequence.tip_value(0, ask.raiser)[ask.quantity == solver::Quantity::t_stress ? 2 : 0];
+}
+
+}  // namespace
+
+Ours with_rising_degree(const solver::Model& model, const mesh::Plate& plate, const solver::Ask& ask,
+                        double nominal) {
   const auto start = Clock::now();
   solver::DegreeSequence sequence(model, plate);
   Ours ours;
-  ours.is_settled = raise_degree(sequence, {quantity, 0, tolerance, ""});
+  ours.is_settled = raise_degree(sequence, ask);
   if (!ours.is_settled) ours.reason = "the highest degree does not meet the tolerance";
-  ours.value = sequence.value(0, 0, quantity).stress.scaled(1 / nominal);
+  ours.value = asked_value(sequence, ask).scaled(1 / nominal);
   ours.degree = sequence.displacements().back().degree;
   ours.unknowns = static_cast<std::size_t>(sequence.displacements().back().values.rows());
   ours.seconds = seconds_since(start);
@@ -159,7 +168,7 @@ Question exact_field(mesh::Plate plate, StressField field, solver::Quantity quan
     rule.growth = 0.7;
     const solver::Model model(mesh::triangulate(mesh::trace(plate), rule), {}, material, plate.thickness,
                               {{"exact", traction_of(field)}});
-    return with_rising_degree(model, plate, quantity, tolerance, nominal);
+    return with_rising_degree(model, plate, {quantity, 0, tolerance, ""}, nominal);
   };
 }
 

@@ -59,9 +59,10 @@ Measure stress_at(const Point& point, double nominal, std::size_t hole = 0);
 Question exact_field(mesh::Plate plate, StressField field, solver::Quantity quantity, double nominal,
                      const solver::HookeLaw& material = family_material);
 
-/// Raises the degree on a model's mesh until a number at the first hole meets
-/// the tolerance; the model must have one load.
-Ours with_rising_degree(const solver::Model& model, const mesh::Plate& plate, solver::Quantity quantity,
-                        double tolerance, double nominal);
+/// Raises the degree on a model's mesh until the asked number meets its tolerance;
+/// the model must have one load. Ours is the number over `nominal`; of a stress
+/// intensity that is K_I.
+Ours with_rising_degree(const solver::Model& model, const mesh::Plate& plate, const solver::Ask& ask,
+                        double nominal);
 
 }  // namespace raiser::validation

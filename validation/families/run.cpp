@@ -32,15 +32,15 @@ Ours solve(const FamilyPoint& point, double tolerance) {
 
 }  // namespace
 
-HeldValue hold(const Cited& cited, const std::vector<Parameter>& parameters, const Ours& ours) {
+HeldValue hold(const Cited& cited, const std::vector<Parameter>& parameters, const Ours& ours, double scale) {
   const Published& from = record(cited.reference);
   HeldValue held;
   held.reference = cited.reference;
   held.published = cited.value;
-  const double scale = std::abs(ours.value->value);
-  held.off = (cited.value - ours.value->value) / scale;
+  held.scale = std::max(std::abs(ours.value->value), scale);
+  held.off = (cited.value - ours.value->value) / held.scale;
   // Rounding alone leaves a trillionth.
-  const double slack = ours.value->bound / scale + ours.model + 1e-12;
+  const double slack = ours.value->bound / held.scale + ours.model + 1e-12;
   held.agreement = agreement(from, parameters, held.off, slack);
   if (from.claim && *from.claim == 0) held.digits = -std::log10(std::max(std::abs(held.off), 1e-16));
   return held;
@@ -56,7 +56,8 @@ FamilyResult run(const Family& family, bool quick, const std::function<bool()>& 
     if (quick && !point.is_quick) continue;
     PointResult row{point.series, point.parameters, solve(point, result.tolerance), {}};
     if (row.ours.value)
-      for (const Cited& cited : point.cited) row.held.push_back(hold(cited, point.parameters, row.ours));
+      for (const Cited& cited : point.cited)
+        row.held.push_back(hold(cited, point.parameters, row.ours, point.scale));
     result.points.push_back(std::move(row));
   }
   return result;

@@ -3,8 +3,9 @@
 
 #include <cmath>
 
+#include "validation/families/bars.hpp"
 #include "validation/families/list.hpp"
-#include "validation/families/question.hpp"
+#include "validation/families/series.hpp"
 
 namespace raiser::validation {
 
@@ -61,27 +62,53 @@ Family circle_strip_tension() {
   return f;
 }
 
+namespace {
+
+/// The largest stress on the strip's upper edge, which positive bending pulls.
+Question outer_edge_question(double x) {
+  auto problem = plate_under(length, W, {circle(x * W)}, {Load::Kind::bending});
+  problem.plate = watched(std::move(problem.plate), mesh::rectangle::top);
+  return settled(std::move(problem), largest_over(unit_stress * bending_edge_nominal(x), 1),
+                 end_effect(x * W / 2), 1);
+}
+
+}  // namespace
+
 Family circle_strip_bending() {
   Family f{
       "circle-strip-bending",
       "A06",
       "Circular hole of diameter d in the middle of a strip of width W, bending in the plane",
       "d/W: diameter over width",
-      "Kt at the hole's edge, on 6 M d/((W^3-d^3) t)",
-      strip_reading,
+      "Kt, at the hole on 6 M d/((W^3-d^3) t), at the outer edge on 6 M W/((W^3-d^3) t)",
+      "a strip six widths long, linear traction on its ends; largest stress on the hole's edge and on the "
+      "strip's upper edge over the nominal stress",
       "Kt = 2 is the exact value for a small hole (a linear field) kept for all widths; the nominal stress "
-      "takes up most of the width's effect, not all.",
+      "takes up most of the width's effect, not all. The outer edge's largest stress lies half a width "
+      "beside the hole, where the nominal stress of the net section does not hold",
       1e-5,
       {},
       {}};
-  for (const double x : {0.1, 0.2, 0.3, 0.4, 0.5, 0.6, 0.7, 0.8})
-    f.points.push_back({"",
-                        {{"d/W", x}},
-                        {{Reference::bending_circle, bending_factor}},
-                        strip_question(circle(x * W), Load::Kind::bending, unit_stress * bending_nominal(x)),
-                        x == 0.4});
-  f.curves.push_back(
-      {Reference::bending_circle, "", [](double) { return bending_factor; }, 0.0, 0.8, false, {}});
+  const std::vector<double> shares{0.1, 0.2, 0.3, 0.4, 0.5, 0.6, 0.7, 0.8};
+  add_series(f, {"hole",
+                 "d/W",
+                 shares,
+                 {0.4},
+                 [](double x) {
+                   return strip_question(circle(x * W), Load::Kind::bending,
+                                         unit_stress * bending_nominal(x));
+                 },
+                 {{Reference::bending_circle, [](double) { return bending_factor; }}},
+                 0.0,
+                 0.8});
+  add_series(f, {"outer edge",
+                 "d/W",
+                 shares,
+                 {0.4},
+                 outer_edge_question,
+                 {{Reference::bending_outer_edge, [](double) { return bending_edge_factor; }}},
+                 0.0,
+                 0.8});
   return f;
 }
 

@@ -42,6 +42,8 @@ double peterson_circle(double x) {
 
 double bending_nominal(double x) { return x / (1 - x * x * x); }
 
+double bending_edge_nominal(double x) { return 1 / (1 - x * x * x); }
+
 double roark_eccentric(double q, double c_over_w) {
   const double root = std::sqrt(1 - q * q);
   const double nominal = root / (1 - q) * (1 - c_over_w) / (1 - c_over_w * (2 - root));
@@ -75,5 +77,7 @@ double half_plane_far(double q) {
 double pressure_rim(double q) { return (q * q + 1) / (q * q - 1); }
 
 double pressure_edge(double q) { return 4 / (q * q - 1); }
+
+double pressure_ring(double ratio) { return (ratio * ratio + 1) / (ratio * ratio - 1); }
 
 }  // namespace raiser::validation

@@ -86,6 +86,10 @@ constexpr std::array<Entry, 13> bowie_two_biaxial{{{0.1, 1.98},
 /// Computed with converged finite elements of another code; no published table stands behind them.
 constexpr std::array<Entry, 4> wall{{{0.1, 0.941}, {0.5, 0.5866}, {1, 0.4042}, {2, 0.25}}};
 
+/// K/S in sqrt(mm) for rho = 1 mm, computed likewise.
+constexpr std::array<Entry, 7> notch_crack{
+    {{0.02, 0.8299}, {0.05, 1.2394}, {0.1, 1.6105}, {0.2, 1.9849}, {0.5, 2.4322}, {1, 2.8427}, {2, 3.5221}}};
+
 constexpr std::array<Entry, 9> t_centre{{{0.1, -1.0071},
                                          {0.2, -1.0295},
                                          {0.3, -1.0714},
@@ -293,6 +297,12 @@ double notch_crack_short(double kt) { return half_plane_crack * kt; }
 
 double notch_crack_lukas(double kt, double l_over_rho) {
   return half_plane_crack * kt / std::sqrt(1 + 4.5 * l_over_rho);
+}
+
+std::optional<double> notch_crack_table(double l_over_rho) {
+  const auto k = entry(notch_crack, l_over_rho);
+  if (!k) return std::nullopt;
+  return *k / std::sqrt(pi * l_over_rho);
 }
 
 std::optional<double> t_stress(Cracked cracked, double x) {

@@ -71,6 +71,9 @@ double collinear_row(double x);  ///< endless row
 double notch_crack_short(double kt);                     ///< 1.1215 kt
 double notch_crack_lukas(double kt, double l_over_rho);  ///< P. Lukas and M. Klesnil
 
+/// K/(S sqrt(pi l)) at a semicircular notch in a half plane's edge: computed table, entries only.
+std::optional<double> notch_crack_table(double l_over_rho);
+
 /// T/sigma in long strips, computed table (entries only): centre crack, one edge
 /// crack in tension and in bending, two edge cracks.
 enum class Cracked { centre, edge, edge_bending, two_edges };

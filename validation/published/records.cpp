@@ -89,6 +89,16 @@ std::vector<Published> central_circle() {
        "0 to 3.8 % high up to d/W 0.5, 4.2 % at 0.6",
        3.76e-2,
        true},
+      {Reference::bending_outer_edge,
+       "Howland-Stevenson 1933",
+       "R. C. J. Howland and A. C. Stevenson, Phil. Trans. R. Soc. A 232 (1933); Peterson, Chart 4.88",
+       "central hole, in-plane bending; Kt = 1 on 6 M W/((W^3-d^3) t) at the outer edge",
+       Basis::nominal,
+       {{"d/W", 0, 0.5}},
+       "none given",
+       "0 to 1.9 % high up to d/W 0.5, 0.7 % low at 0.8",
+       1.9e-2,
+       true},
   };
 }
 
@@ -254,13 +264,24 @@ std::vector<Published> other_shapes() {
       {Reference::pressure_half_plane,
        "Jeffery 1921",
        "G. B. Jeffery, Phil. Trans. R. Soc. A 221 (1921) 265",
-       "circular hole under pressure, centre at c from a straight free edge; largest tangential stress on "
-       "the hole over the pressure, q = c/r",
+       "circular hole under pressure, centre at c from a straight free edge; tangential stress over the "
+       "pressure, q = c/r: (q^2+1)/(q^2-1) the largest on the hole, 4/(q^2-1) on the edge opposite",
        Basis::pressure,
        {{"c/r", 1.2, 1e9}},
        "exact",
        "within 0.2 %",
        2e-3,
+       true,
+       0.0},
+      {Reference::pressure_ring,
+       "Lame 1852",
+       "G. Lame, Lecons sur la theorie mathematique de l'elasticite (1852)",
+       "ring of radii a and b under inner pressure; tangential stress at a over the pressure",
+       Basis::pressure,
+       {},
+       "exact",
+       "exact",
+       1e-6,
        true,
        0.0},
   };
