@@ -8,6 +8,7 @@
 #include <string_view>
 #include <vector>
 
+#include "io/import/report.hpp"
 #include "solver/solution.hpp"
 
 namespace raiser::io {
@@ -46,9 +47,10 @@ struct Case {
   /// "hole.2.diameter" (tables count from 1), "load.1.stress". A key that is
   /// absent was left to its default.
   std::map<std::string, std::string, std::less<>> written;
-  /// By hole: which table [[hole]] it comes from, from 1; a row has one table.
+  /// By hole: which table [[hole]] it comes from, from 1; a row has one table. 0: it was imported.
   std::vector<std::size_t> hole_tables;
-  /// Where the origin of a drawn outline came to lie, mm; all positions count
+  std::optional<ImportReport> import;  ///< of a plate that comes from a drawing
+  /// Where the origin of a drawn or imported outline came to lie, mm; all positions count
   /// from the middle of the bounding box.
   std::optional<mesh::Point> drawing_origin;
 };

@@ -9,10 +9,12 @@
 
 #include "io/case/alloys.hpp"
 #include "io/case/describe_cracks.hpp"
+#include "io/case/describe_import.hpp"
 #include "io/case/layout.hpp"
 #include "io/case/parts.hpp"
 #include "io/case/words.hpp"
 #include "mesh/plate/section.hpp"
+#include "mesh/plate/words.hpp"
 #include "solver/elasticity/outer_edge.hpp"
 
 namespace raiser::io {
@@ -27,10 +29,12 @@ using Phrases = std::vector<std::string>;
 
 constexpr std::size_t most_listed = 12;  // holes or loads that are described one by one
 constexpr std::string_view default_mark = " (default)";
+constexpr std::string_view imported = "hole.0.";  // path of the keys that an imported hole would have
 
 /// A remark on where a value comes from: nothing when it reads as the author
 /// wrote it, what they wrote when it reads otherwise, or that it is a default.
 std::string origin(const Case& input, const std::string& key, const std::string& reading) {
+  if (key.starts_with(imported)) return "";
   const auto written = input.written.find(key);
   if (written == input.written.end()) return std::string(default_mark);
   return written->second == reading ? "" : fmt::format(" (written {})", shown(written->second));
@@ -55,8 +59,8 @@ std::string percent(double ratio) { return fmt::format("{:.10g} %", ratio * 100.
 std::string describe_plate(const Case& input) {
   const Plate& plate = input.problem.plate;
   if (input.drawing_origin)
-    return row("Plate", {fmt::format("drawn outline, {} long and {} wide", derived(plate.length, "mm"),
-                                     derived(plate.width, "mm")),
+    return row("Plate", {fmt::format("{} outline, {} long and {} wide", input.import ? "imported" : "drawn",
+                                     derived(plate.length, "mm"), derived(plate.width, "mm")),
                          item(input, "thickness", "plate.thickness", plate.thickness, "mm")}) +
            row("", {"positions count from the middle of its bounding box",
                     fmt::format("the drawing's origin lies at ({:.6g}, {:.6g}) mm",
@@ -158,7 +162,8 @@ std::string describe_hole(const Case& input, std::size_t index) {
   const std::string place = fmt::format("at x = {}, y = {}", x, y);
   phrases.push_back(place + origin(input, path + "at", fmt::format("{}, {}", x, y)));
   std::string label = "  " + hole.name;
-  if (!input.written.contains(path + "name")) label += std::string(default_mark);
+  if (path == imported) phrases.emplace_back("imported");
+  if (path != imported && !input.written.contains(path + "name")) label += std::string(default_mark);
   return row(label, phrases) + row("", {net_section(input.problem.plate, hole)});
 }
 
@@ -176,8 +181,10 @@ std::string describe_outline(const Case& input) {
   const Plate& plate = input.problem.plate;
   if (!plate.outline) return "";
   const auto& raisers = plate.outline->raisers;
-  std::string result = row("Outline", {fmt::format("edges {}", fmt::join(plate.outline->edges, ", ")),
-                                       fmt::format("{} notches and fillets", raisers.size())});
+  std::string result = row(
+      "Outline",
+      {fmt::format("edges {}", fmt::join(plate.outline->edges, ", ")),
+       raisers.size() == 1 ? "1 notch or fillet" : fmt::format("{} notches and fillets", raisers.size())});
   const std::size_t listed = raisers.size() > most_listed ? most_listed / 2 : raisers.size();
   for (std::size_t i = 0; i < listed; ++i) {
     const mesh::Raiser& at = raisers[i];
@@ -305,7 +312,7 @@ std::string describe_load(const Case& input, std::size_t index) {
   const std::string path = input.load_tables.at(index) + ".";
   Phrases phrases = meaning(input.problem.plate, load);
   if (load.kind == Load::Kind::edge)
-    phrases.insert(phrases.begin(), mesh::edge_names(input.problem.plate).at(load.edge) + " edge");
+    phrases.insert(phrases.begin(), mesh::edge_phrase(mesh::edge_names(input.problem.plate).at(load.edge)));
   if (load.kind == Load::Kind::tension && !input.written.contains(path + "direction")) {
     phrases.push_back("direction along" + std::string(default_mark));
   }
@@ -337,7 +344,7 @@ std::string describe_supports(const Case& input) {
   const auto edges = mesh::edge_names(input.problem.plate);
   std::string result = row("Supports", {fmt::format("{}", input.problem.supports.size())});
   for (const solver::Support& support : input.problem.supports) {
-    Phrases phrases{edges.at(support.edge) + " edge"};
+    Phrases phrases{mesh::edge_phrase(edges.at(support.edge))};
     const bool still = !solver::displaces(support);
     if (still && support.normal && support.along) phrases.emplace_back("clamped: no displacement");
     if (still && !support.along) phrases.emplace_back("sliding: no displacement across the edge");
@@ -389,9 +396,9 @@ std::string describe_question(const Case& input) {
 std::string describe(const Case& input) {
   const std::string title = input.title + (input.written.contains("title") ? "" : std::string(default_mark));
   return title + '\n' + row("File", {input.file.string(), fmt::format("format {}", case_format)}) + '\n' +
-         describe_plate(input) + describe_material(input) + '\n' + describe_outline(input) +
-         describe_holes(input) + describe_cracks(input) + '\n' + describe_loads(input) + '\n' +
-         describe_supports(input) + describe_question(input);
+         describe_plate(input) + describe_import(input) + describe_material(input) + '\n' +
+         describe_outline(input) + describe_holes(input) + describe_cracks(input) + '\n' +
+         describe_loads(input) + '\n' + describe_supports(input) + describe_question(input);
 }
 
 }  // namespace raiser::io

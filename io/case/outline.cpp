@@ -3,6 +3,7 @@
 #include <fmt/format.h>
 
 #include "io/case/outline_parts.hpp"
+#include "io/case/read_import.hpp"
 
 namespace raiser::io {
 
@@ -113,23 +114,32 @@ std::vector<mesh::Point> places(const Repeat& repeat) {
   return result;
 }
 
-bool draws_outline(const Table& document) { return find(document, "outline") != nullptr; }
+bool draws_outline(const Table& document) {
+  return find(document, "outline") != nullptr || find(document, "import") != nullptr;
+}
 
 OutlineReading read_outline(const Table& document, const PlateSizes& sizes, Names& names) {
   OutlineReading result;
   const std::size_t before = document.report->faults.size();
-  const bool is_free = draws_outline(document);
+  const bool is_imported = find(document, "import") != nullptr;
+  const bool is_free = find(document, "outline") != nullptr;
   const bool is_stepped = find(document, "shoulder") != nullptr;
-  if (is_free && is_stepped)
+  if (is_imported && is_free)
+    complain(document, *find(document, "outline"), "the outline is imported already",
+             "remove [[outline]] or [import]");
+  else if (is_stepped && (is_free || is_imported))
     complain(document, *find(document, "shoulder"), "a drawn outline has no shoulders besides",
              "draw them as part of the outline");
+  else if (is_imported)
+    read_import(document, result, names);
   else if (is_free)
     read_free(document, result, names);
   else if (is_stepped)
     read_stepped(document, sizes, result, names);
+  const PlateSizes& box = is_imported ? result.sizes : sizes;
   std::optional<mesh::Outline> body = result.outline;
-  if (!is_free && !is_stepped && sizes.length && sizes.width)
-    body = mesh::rectangular(*sizes.length, *sizes.width);
+  if (!body && !is_free && !is_stepped && box.length && box.width)
+    body = mesh::rectangular(*box.length, *box.width);
   read_notches(document, body ? &*body : nullptr, result, names);
   result.is_sound = document.report->faults.size() == before;
   if (!result.is_sound) result.outline.reset();

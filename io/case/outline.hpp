@@ -25,15 +25,17 @@ std::optional<Repeat> read_repeat(const Table& table, std::size_t directions);
 /// The places of a row or grid about its middle, row by row from the lower left.
 std::vector<mesh::Point> places(const Repeat& repeat);
 
-/// Whether the case draws its own outline, which then gives the plate's sizes.
+/// Whether the case draws or imports its outline, which then gives the plate's sizes.
 bool draws_outline(const Table& document);
 
-/// What [[outline]], [[shoulder]] and [[notch]] make of the plate's outline.
+/// What [import], [[outline]], [[shoulder]] and [[notch]] make of the plate's outline.
 struct OutlineReading {
   std::optional<mesh::Outline> outline;      ///< empty for the rectangle, or when faulty
   bool is_sound = true;                      ///< no fault was found
   mesh::Point origin = mesh::Point::Zero();  ///< where the drawing's origin comes to lie, mm
   PlateSizes sizes;                          ///< of a drawn outline: its bounding box
+  std::vector<HoleReading> holes;            ///< imported with it
+  std::optional<ImportReport> import;
 };
 
 /// Adds the names of notches, shoulders and drawn raisers to `names`.

@@ -78,7 +78,8 @@ struct SupportReading {
   std::optional<solver::Support> support;
   Position at;
 };
-std::vector<SupportReading> read_supports(const Table& document);
+/// `edges` are those of the outline; empty for the rectangle's own.
+std::vector<SupportReading> read_supports(const Table& document, std::vector<std::string> edges);
 
 /// What is asked for, in the order of [ask], then of [[ask.result]].
 struct Question {

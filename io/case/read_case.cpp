@@ -54,9 +54,9 @@ void complain_of_missing(const Table& document, std::string_view key, std::strin
 }
 
 Parts read_parts(const Table& document, const std::string& default_title) {
-  constexpr std::array<std::string_view, 13> keys{"raiser",  "title",   "plate",    "material", "hole",
-                                                  "outline", "notch",   "shoulder", "crack",    "load",
-                                                  "pin",     "support", "ask"};
+  constexpr std::array<std::string_view, 14> keys{"raiser", "title",   "plate",   "material", "import",
+                                                  "hole",   "outline", "notch",   "shoulder", "crack",
+                                                  "load",   "pin",     "support", "ask"};
   refuse_unknown(document, keys);
   read_version(document);
   const Entry* title = find(document, "title");
@@ -84,6 +84,7 @@ Parts read_parts(const Table& document, const std::string& default_title) {
     parts.plate.length = parts.outline.sizes.length;
     parts.plate.width = parts.outline.sizes.width;
   }
+  parts.holes.insert(parts.holes.end(), parts.outline.holes.begin(), parts.outline.holes.end());
   std::vector<std::string_view> names;
   for (const HoleReading& hole : parts.holes) names.push_back(hole.name);
   std::vector<std::string_view> raisers = names;
@@ -98,10 +99,12 @@ Parts read_parts(const Table& document, const std::string& default_title) {
   }
   const std::size_t faults_before = document.report->faults.size();
   // Edges of an outline that could not be drawn have no names to speak of.
-  const bool known_edges = find(document, "outline") == nullptr && find(document, "shoulder") == nullptr;
+  const bool known_edges = !draws_outline(document) && find(document, "shoulder") == nullptr;
   if (parts.outline.is_sound || known_edges)
     parts.loads = read_loads(document, parts.plate, parts.outline.outline, names, cracks);
-  parts.supports = read_supports(document);
+  if (parts.outline.is_sound || known_edges)
+    parts.supports = read_supports(
+        document, parts.outline.outline ? parts.outline.outline->edges : std::vector<std::string>{});
   if (parts.outline.is_sound) parts.question = read_question(document, names, raisers, tips);
   parts.loads_are_sound = document.report->faults.size() == faults_before;
   const bool is_whole = find(document, "hole") == nullptr && find(document, "crack") == nullptr;
@@ -223,15 +226,18 @@ Case assemble(const Parts& parts, mesh::Plate plate, Report& report, const std::
   result.alloy = parts.material.alloy;
   result.written = std::move(report.written);
   for (const HoleReading& hole : parts.holes) result.hole_tables.push_back(hole.table);
+  result.import = parts.outline.import;
   if (parts.outline.sizes.length) result.drawing_origin = parts.outline.origin;
   return result;
 }
 
-CaseReading failure(std::vector<Diagnostic> faults) {
-  std::stable_sort(faults.begin(), faults.end(), [](const Diagnostic& a, const Diagnostic& b) {
+CaseReading failure(std::vector<Diagnostic> faults, const std::string& name) {
+  // Those of the case itself first, then those of a drawing.
+  std::stable_sort(faults.begin(), faults.end(), [&](const Diagnostic& a, const Diagnostic& b) {
     const Position x = a.position.value_or(Position{0, 0});
     const Position y = b.position.value_or(Position{0, 0});
-    return std::tie(x.line, x.column) < std::tie(y.line, y.column);
+    const bool is_later_a = a.file != name, is_later_b = b.file != name;
+    return std::tie(is_later_a, x.line, x.column) < std::tie(is_later_b, y.line, y.column);
   });
   return {std::nullopt, std::move(faults)};
 }
@@ -271,17 +277,21 @@ std::string text(const Diagnostic& diagnostic) {
   if (diagnostic.position)
     result += fmt::format(":{}:{}", diagnostic.position->line, diagnostic.position->column);
   result += ": ";
-  if (!diagnostic.key.empty()) result += diagnostic.key;
-  if (!diagnostic.value.empty()) result += fmt::format(" = {}", diagnostic.value);
-  if (!diagnostic.key.empty()) result += ": ";
+  // A fault that begins with the name of its thing needs no key before it: "hole 'bolt' lies outside".
+  const bool says_key = diagnostic.value.empty() && diagnostic.what.starts_with(diagnostic.key + " '");
+  const std::string key = says_key ? "" : diagnostic.key;
+  std::string subject = key;
+  if (!diagnostic.value.empty())
+    subject = key.empty() ? diagnostic.value : fmt::format("{} = {}", key, diagnostic.value);
+  if (!subject.empty()) result += subject + ": ";
   return result + fmt::format("{}; {}", diagnostic.what, diagnostic.cure);
 }
 
 CaseReading read_case_text(std::string_view content, const std::string& name) {
   content = without_byte_order_mark(content);
-  if (auto fault = screen(content, name)) return failure({*fault});
+  if (auto fault = screen(content, name)) return failure({*fault}, name);
   const auto parsed = parse_document(content, name);
-  if (const auto* fault = std::get_if<Diagnostic>(&parsed)) return failure({*fault});
+  if (const auto* fault = std::get_if<Diagnostic>(&parsed)) return failure({*fault}, name);
   Report report{name, {}, {}};
   const Table document{&std::get<Node>(parsed), "", "", &report};
   const Parts parts = read_parts(document, std::filesystem::path(name).stem().string());
@@ -290,16 +300,17 @@ CaseReading read_case_text(std::string_view content, const std::string& name) {
                            partial->crack_index.size() == parts.cracks.size();
   if (partial) check_geometry(parts, *partial, report);
   if (is_complete) check_balance(parts, partial->plate, report);
-  if (!report.faults.empty()) return failure(std::move(report.faults));
+  if (!report.faults.empty()) return failure(std::move(report.faults), name);
   return {assemble(parts, partial->plate, report, name), {}};
 }
 
 CaseReading read_case(const std::filesystem::path& file) {
-  if (auto fault = unreadable(file)) return failure({*fault});
+  if (auto fault = unreadable(file)) return failure({*fault}, file.string());
   std::ifstream stream(file, std::ios::binary);
   const std::string content{std::istreambuf_iterator<char>(stream), std::istreambuf_iterator<char>()};
   if (!stream.is_open() || stream.bad()) {
-    return failure({file_fault(file.string(), "the file cannot be read", "check its permissions")});
+    return failure({file_fault(file.string(), "the file cannot be read", "check its permissions")},
+                   file.string());
   }
   return read_case_text(content, file.string());
 }

@@ -4,6 +4,7 @@
 #include <cmath>
 
 #include "io/case/parts.hpp"
+#include "mesh/plate/words.hpp"
 #include "solver/elasticity/outer_edge.hpp"
 
 namespace raiser::io {
@@ -303,7 +304,7 @@ std::string default_name(const std::optional<Load>& load, const Context& context
     case Load::Kind::pin:
       return fmt::format("pin in {}", context.holes[load->hole]);
     case Load::Kind::edge:
-      return fmt::format("{} edge", context.edges[load->edge]);
+      return mesh::edge_phrase(context.edges[load->edge]);
   }
   return std::string(solver::word(load->kind));
 }

@@ -3,6 +3,7 @@
 #include <array>
 
 #include "io/case/parts.hpp"
+#include "mesh/plate/words.hpp"
 
 namespace raiser::io {
 
@@ -11,7 +12,6 @@ namespace {
 constexpr std::array<std::string_view, 5> support_keys{"name", "edge", "kind", "normal", "along"};
 constexpr std::array<std::string_view, 3> fixed_keys{"name", "edge", "kind"};
 constexpr std::array<std::string_view, 3> kinds{"clamped", "sliding", "displaced"};
-constexpr std::array<std::string_view, 4> edge_words{"right", "top", "left", "bottom"};
 
 /// Displacements of an edge that is moved: the normal one, the one along, or both.
 bool read_displacements(const Table& table, solver::Support& support) {
@@ -33,12 +33,15 @@ bool read_displacements(const Table& table, solver::Support& support) {
 
 }  // namespace
 
-std::vector<SupportReading> read_supports(const Table& document) {
+std::vector<SupportReading> read_supports(const Table& document, std::vector<std::string> edges) {
+  if (edges.empty()) edges = {"right", "top", "left", "bottom"};
+  const std::vector<std::string_view> edge_words(edges.begin(), edges.end());
+  const std::string sample = fmt::format("\"{}\"", edges.size() == 4 ? edges[2] : edges.front());
   std::vector<SupportReading> supports;
   Names names;
   for (const Table& table : tables_at(document, "support")) {
     refuse_unknown(table, support_keys);
-    const auto edge = choice(table, require(table, "edge", "\"left\""), edge_words);
+    const auto edge = choice(table, require(table, "edge", sample), edge_words);
     const auto kind = choice(table, require(table, "kind", "\"clamped\""), kinds);
     solver::Support support;
     bool sound = edge && kind;
@@ -50,10 +53,10 @@ std::vector<SupportReading> read_supports(const Table& document) {
       sound = read_displacements(table, support) && sound;
     }
     support.edge = edge.value_or(0);
-    support.name = unique_name(table,
-                               edge ? fmt::format("{} edge held", edge_words[*edge])
-                                    : fmt::format("support {}", supports.size() + 1),
-                               names);
+    support.name = unique_name(
+        table,
+        edge ? mesh::edge_phrase(edges[*edge]) + " held" : fmt::format("support {}", supports.size() + 1),
+        names);
     supports.push_back({sound ? std::optional(std::move(support)) : std::nullopt, table.node->at});
   }
   return supports;

@@ -6,6 +6,7 @@
 #include <vector>
 
 #include "io/case/case.hpp"
+#include "io/import/report.hpp"
 #include "mesh/region/region.hpp"
 
 namespace raiser::io {
@@ -16,14 +17,6 @@ struct Stroke {
   std::string kind;      ///< as the file calls it: "LINE", "ARC", ...
   std::string layer;     ///< may be empty
   std::size_t line = 0;  ///< of the file, from 1; 0 where the format has no lines
-};
-
-/// Entities of a drawing that were left out, all of one kind and reason.
-struct LeftOut {
-  std::string kind;
-  std::string why;  ///< e.g. "it is no curve", "in paper space"
-  std::size_t count = 0;
-  std::size_t line = 0;  ///< of the first one
 };
 
 /// A planar drawing as read, in its own units.

@@ -235,7 +235,7 @@ class DxfReader {
 
 DrawingReading whole_file_fault(const std::string& file, std::string what, std::string cure) {
   return {std::nullopt,
-          {{Diagnostic::Kind::input, file, std::nullopt, "", "", std::move(what), std::move(cure)}}};
+          {{Diagnostic::Kind::input, file, std::nullopt, "file", "", std::move(what), std::move(cure)}}};
 }
 
 }  // namespace

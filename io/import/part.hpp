@@ -15,7 +15,7 @@ struct PartRequest {
   std::filesystem::path path;
   std::string file;                  ///< as messages name it
   std::optional<std::string> layer;  ///< of a DXF drawing; all by default
-  std::optional<double> unit;        ///< mm in one unit of a DXF drawing that does not say
+  std::string unit_word;             ///< a unit of length for a drawing that does not say its own; or empty
   ContourRule rule;
   std::optional<std::array<double, 3>> face_at;  ///< mm, of a STEP file
 };
@@ -27,16 +27,18 @@ struct Part {
       inner;  ///< clockwise, by the middle of their boxes: from left to right, then upwards
   mesh::Point centre = mesh::Point::Zero();  ///< where the origin lies in the drawing, mm
   mesh::Point size = mesh::Point::Zero();    ///< of the bounding box, mm
-  std::string unit_word;                     ///< of the drawing, "" where the case says it
-  std::vector<std::string> repairs;
-  std::vector<LeftOut> left_out;
+  ImportReport report;
 };
 
-/// The outcome of an import: a part, or every fault found.
+/// The outcome of an import: a part, or every fault found. A fault without a
+/// position lies in the request; its key is "file", "units" or "face_at".
 struct PartReading {
   std::optional<Part> value;
   std::vector<Diagnostic> faults;
 };
+
+/// Whether a file is a STEP file by its name.
+bool is_step(const std::filesystem::path& path);
 
 /// Reads the outline of a part from a .dxf, .step or .stp file.
 PartReading read_part(const PartRequest& request);

@@ -3,12 +3,14 @@
 #include <fmt/format.h>
 
 #include <algorithm>
+#include <array>
 #include <cmath>
 #include <limits>
+#include <numbers>
 
 #include "io/import/curve_tools.hpp"
 #include "io/import/shapes.hpp"
-#include "mesh/plate/section.hpp"
+#include "mesh/plate/drawn.hpp"
 
 namespace raiser::io {
 namespace {
@@ -35,38 +37,102 @@ double distance(const Curve& curve, const Point& x) {
   return least;
 }
 
-double distance(const Loop& loop, const Point& x) {
-  double least = std::numeric_limits<double>::infinity();
-  for (const Curve& curve : loop) least = std::min(least, distance(curve, x));
-  return least;
-}
+/// What a place can name: an edge or arc, or a hole with all that lies in it.
+struct Thing {
+  Loop curves;
+  bool is_hole = false;
 
-/// Names by position: those given go to the nearest thing.
-template <class Things, class Default>
-std::vector<std::string> names_for(const Things& things, const std::vector<PlaceName>& given,
-                                   const Point& centre, std::string_view noun, Default otherwise,
-                                   std::vector<ContourFault>& faults) {
-  std::vector<std::string> names(things.size());
-  for (const PlaceName& name : given) {
-    if (things.empty()) {
-      faults.push_back(
-          {0, fmt::format("there is no {} to be called '{}'", noun, name.name), "remove the name"});
-      continue;
-    }
-    std::size_t best = 0;
-    for (std::size_t k = 1; k < things.size(); ++k)
-      if (distance(things[k], name.near - centre) < distance(things[best], name.near - centre)) best = k;
-    if (!names[best].empty())
-      faults.push_back({0,
-                        fmt::format("the {} nearest to {} is called both '{}' and '{}'", noun,
-                                    place(name.near), names[best], name.name),
-                        "move one of the places nearer to what it means"});
-    names[best] = name.name;
+  double distance_to(const Point& x) const {
+    if (is_hole && is_inside(x, flattened(curves))) return 0.0;
+    double least = std::numeric_limits<double>::infinity();
+    for (const Curve& curve : curves) least = std::min(least, distance(curve, x));
+    return least;
   }
-  for (std::size_t k = 0; k < names.size(); ++k)
-    if (names[k].empty()) names[k] = otherwise(k);
-  return names;
-}
+};
+
+/// Places farther than this part of the part's size from everything mean nothing.
+constexpr double farthest = 0.1;
+/// Distances that differ by less than this part of the size are the same.
+constexpr double rounding = 1e-6;
+
+/// Which things the places name, with what is wrong with them.
+class Naming {
+ public:
+  Naming(const Part& part, bool is_edge, std::vector<Thing> things, std::vector<PlaceFault>& faults)
+      : part_(part), is_edge_(is_edge), things_(std::move(things)), faults_(faults), names_(things_.size()) {}
+
+  /// The names, empty where none is given.
+  std::vector<std::string> settle(const std::vector<PlaceName>& given) {
+    for (std::size_t i = 0; i < given.size(); ++i)
+      if (const auto found = nearest(given[i].near, i)) put(given[i], *found, i);
+    return names_;
+  }
+
+ private:
+  void complain(std::size_t i, std::string what, std::string cure) {
+    faults_.push_back({is_edge_, i, std::move(what), std::move(cure)});
+  }
+
+  std::optional<std::size_t> nearest(const Point& near, std::size_t i) {
+    const std::string noun = is_edge_ ? "edge" : "hole, fillet or notch";
+    const std::string all = is_edge_ ? "edges" : "holes, fillets or notches";
+    const double size = part_.size.maxCoeff();
+    double best = std::numeric_limits<double>::infinity();
+    double second = best;
+    std::size_t found = 0;
+    for (std::size_t k = 0; k < things_.size(); ++k) {
+      const double own = things_[k].distance_to(near - part_.centre);
+      second = std::min(second, std::max(own, best));
+      if (own < best) found = k;
+      best = std::min(best, own);
+    }
+    if (!(best <= farthest * size)) {
+      const Point low = part_.centre - part_.size / 2, high = part_.centre + part_.size / 2;
+      complain(
+          i,
+          std::isfinite(best) ? fmt::format("the nearest {} is {:.4g} mm away", noun, best)
+                              : fmt::format("the part has no {}", noun),
+          fmt::format("give a place in the coordinates of the drawing, where the part reaches from {} to {}",
+                      place(low), place(high)));
+      return std::nullopt;
+    }
+    if (second - best <= rounding * size) {
+      complain(i, fmt::format("two {} are as near to this place", all),
+               is_edge_ ? "give a place near the middle of the edge" : "give a place on its edge or in it");
+      return std::nullopt;
+    }
+    return found;
+  }
+
+  void put(const PlaceName& name, std::size_t thing, std::size_t i) {
+    if (!names_[thing].empty() && names_[thing] != name.name)
+      complain(i, fmt::format("what lies nearest to this place is called '{}' already", names_[thing]),
+               "move one of the places nearer to what it means");
+    names_[thing] = name.name;
+  }
+
+  const Part& part_;
+  bool is_edge_;
+  std::vector<Thing> things_;
+  std::vector<PlaceFault>& faults_;
+  std::vector<std::string> names_;
+};
+
+/// Names that nothing has yet: "hole 1", "hole 2", ...
+class Numbering {
+ public:
+  explicit Numbering(std::set<std::string, std::less<>> taken) : taken_(std::move(taken)) {}
+  void take(const std::vector<std::string>& names) { taken_.insert(names.begin(), names.end()); }
+  /// "noun number", with the first number from `number` on that is free.
+  std::string next(std::string_view noun, std::size_t number) {
+    std::string name = fmt::format("{} {}", noun, number);
+    while (!taken_.insert(name).second) name = fmt::format("{} {}", noun, ++number);
+    return name;
+  }
+
+ private:
+  std::set<std::string, std::less<>> taken_;
+};
 
 Loop from_lowest(Loop loop) {
   const auto lower = [](const Curve& a, const Curve& b) {
@@ -85,12 +151,6 @@ bool is_rectangle(const Loop& loop, double size) {
   });
 }
 
-/// Turning of a curve to the left, rad.
-double turning(const Curve& curve) {
-  const double sense = curve.u.x() * curve.v.y() - curve.u.y() * curve.v.x() > 0 ? 1.0 : -1.0;
-  return curve.kind == Curve::Kind::line ? 0.0 : sense * (curve.end - curve.begin);
-}
-
 /// A whole turn in quarters.
 Loop quarters(const Loop& loop) {
   if (loop.size() != 1) return loop;
@@ -105,85 +165,95 @@ Loop quarters(const Loop& loop) {
   return result;
 }
 
-/// Material across x a little beyond an end of an arc, away from the arc.
-double width_beyond(const mesh::Plate& plate, const Point& end, const Point& other) {
-  const double step = 1e-3 * (end - other).norm() * (end.x() >= other.x() ? 1.0 : -1.0);
-  return mesh::shape_of(mesh::gross_along(plate, mesh::Direction::across, end.x() + step)).length;
-}
+/// Whether a curve of the outline cuts into the material.
+bool cuts_in(const Curve& curve) { return mesh::turning(curve) < -1e-6; }
 
-mesh::Raiser raiser_of(const Curve& arc, const std::string& number, const mesh::Plate& plate) {
+mesh::Raiser raiser_of(const Curve& arc) {
   mesh::Raiser raiser;
   raiser.centre = arc.centre;
   raiser.radius = std::min(arc.radius_of_curvature(arc.begin), arc.radius_of_curvature(arc.end));
-  const bool is_notch = turning(arc) < -2.1;
-  raiser.kind = is_notch ? mesh::Raiser::Kind::notch : mesh::Raiser::Kind::fillet;
-  raiser.name = fmt::format("{} {}", mesh::word(raiser.kind), number);
-  raiser.shape = fmt::format("arc of radius {:.6g} mm, turning by {:.4g} deg", raiser.radius,
-                             -turning(arc) * 57.29577951308232);
-  const Point a = start(arc);
-  const Point b = finish(arc);
-  if (is_notch) {
-    raiser.root = raiser.mouth = arc.at((arc.begin + arc.end) / 2);
-  } else {
-    const bool is_a_narrow = width_beyond(plate, a, b) < width_beyond(plate, b, a);
-    raiser.root = is_a_narrow ? a : b;
-    raiser.mouth = is_a_narrow ? b : a;
-  }
+  raiser.shape =
+      fmt::format("arc of {}radius {:.6g} mm, turning by {:.4g} deg", is_circular(arc) ? "" : "smallest ",
+                  raiser.radius, -mesh::turning(arc) * 180 / std::numbers::pi);
   return raiser;
 }
 
-/// First every curve an edge; then arcs that cut into the material raisers.
-mesh::Outline outline_of(Loop loop, const std::vector<std::string>& names, mesh::Plate plate) {
+/// The chain as an outline; `names` are those of its edges and arcs, empty
+/// where they have none of their own.
+mesh::Outline outline_of(const Part& part, Loop loop, const std::vector<std::string>& names,
+                         Numbering& numbering) {
   mesh::Outline outline;
-  outline.curves = std::move(loop);
-  outline.edges = names;
-  for (std::size_t k = 0; k < outline.curves.size(); ++k) outline.curves[k].owner = {Owner::Kind::edge, k};
-  plate.outline = outline;
-  mesh::Outline result = outline;
-  result.edges.clear();
-  for (std::size_t k = 0; k < outline.curves.size(); ++k) {
-    Curve& curve = result.curves[k];
-    if (turning(curve) < -1e-6) {
-      curve.owner = {Owner::Kind::raiser, result.raisers.size()};
-      result.raisers.push_back(raiser_of(curve, fmt::format("{}", result.raisers.size() + 1), plate));
-    } else {
-      curve.owner = {Owner::Kind::edge, result.edges.size()};
-      result.edges.push_back(names[k]);
+  const bool is_box = is_rectangle(loop, part.size.maxCoeff());
+  constexpr std::array<std::string_view, 4> sides{"bottom", "right", "top", "left"};
+  Numbering of_edges({names.begin(), names.end()});
+  std::vector<std::string> raiser_names;
+  std::size_t count = 0;
+  for (std::size_t k = 0; k < loop.size(); ++k) {
+    if (cuts_in(loop[k])) {
+      loop[k].owner = {Owner::Kind::raiser, outline.raisers.size()};
+      outline.raisers.push_back(raiser_of(loop[k]));
+      raiser_names.push_back(names[k]);
+      continue;
     }
+    ++count;
+    std::string name = names[k];
+    if (name.empty()) name = is_box ? std::string(sides[k]) : of_edges.next("edge", count);
+    const auto known = std::find(outline.edges.begin(), outline.edges.end(), name);
+    loop[k].owner = {Owner::Kind::edge, static_cast<std::size_t>(known - outline.edges.begin())};
+    if (known == outline.edges.end()) outline.edges.push_back(name);
   }
-  return result;
+  outline.curves = std::move(loop);
+  mesh::tell_notches(outline);
+  for (std::size_t i = 0; i < outline.raisers.size(); ++i) {
+    mesh::Raiser& raiser = outline.raisers[i];
+    raiser.name = raiser_names[i].empty() ? numbering.next(mesh::word(raiser.kind), i + 1) : raiser_names[i];
+  }
+  mesh::place_raisers(outline, part.size.x(), part.size.y());
+  return outline;
+}
+
+std::vector<mesh::Hole> holes_of(const Part& part, const std::vector<std::string>& names,
+                                 Numbering& numbering, std::vector<ContourFault>& faults) {
+  std::vector<mesh::Hole> holes;
+  for (std::size_t k = 0; k < part.inner.size(); ++k) {
+    const std::string name = names[k].empty() ? numbering.next("hole", k + 1) : names[k];
+    auto hole = hole_of(part.inner[k], 1e-6 * part.size.maxCoeff());
+    if (hole) {
+      hole->name = name;
+      holes.push_back(*hole);
+      continue;
+    }
+    const auto box = box_of(part.inner[k]);
+    faults.push_back({0,
+                      fmt::format("the hole about {} of the drawing is no circle, ellipse, slot or "
+                                  "rounded rectangle",
+                                  place((box[0] + box[1]) / 2 + part.centre)),
+                      "only such holes are imported: draw it as one of them"});
+  }
+  return holes;
 }
 
 }  // namespace
 
 PartPlate plate_of(const Part& part, double thickness, const std::vector<PlaceName>& edges,
-                   const std::vector<PlaceName>& holes) {
+                   const std::vector<PlaceName>& raisers, const std::set<std::string, std::less<>>& taken) {
   PartPlate result;
-  const double size = part.size.maxCoeff();
-  mesh::Plate plate{part.size.x(), part.size.y(), thickness, {}, std::nullopt};
-  const auto hole_names = names_for(
-      part.inner, holes, part.centre, "hole", [](std::size_t k) { return fmt::format("hole {}", k + 1); },
-      result.faults);
-  for (std::size_t k = 0; k < part.inner.size(); ++k) {
-    auto hole = hole_of(part.inner[k], 1e-6 * size);
-    if (!hole) {
-      const auto box = box_of(part.inner[k]);
-      result.faults.push_back({0,
-                               fmt::format("the hole about {} of the drawing is no circle, ellipse, slot or "
-                                           "rounded rectangle",
-                                           place((box[0] + box[1]) / 2 + part.centre)),
-                               "only such holes are imported: draw it as one of them"});
-      continue;
-    }
-    hole->name = hole_names[k];
-    plate.holes.push_back(*hole);
-  }
   const Loop outer = from_lowest(quarters(part.outer));
-  const auto edge_names = names_for(
-      outer, edges, part.centre, "edge", [](std::size_t k) { return fmt::format("edge {}", k + 1); },
-      result.faults);
-  if (!edges.empty() || !is_rectangle(outer, size)) plate.outline = outline_of(outer, edge_names, plate);
-  if (result.faults.empty()) result.plate = std::move(plate);
+  std::vector<Thing> edge_things, raiser_things;
+  for (const Loop& loop : part.inner) raiser_things.push_back({loop, true});
+  for (const Curve& curve : outer) (cuts_in(curve) ? raiser_things : edge_things).push_back({{curve}, false});
+  const auto edge_names = Naming(part, true, edge_things, result.misplaced).settle(edges);
+  const auto raiser_names = Naming(part, false, raiser_things, result.misplaced).settle(raisers);
+  Numbering numbering(taken);
+  numbering.take(raiser_names);
+  mesh::Plate plate{part.size.x(), part.size.y(), thickness, {}, std::nullopt};
+  plate.holes = holes_of(part, raiser_names, numbering, result.faults);
+  std::vector<std::string> names;  // by curve of the outline
+  std::size_t edge = 0, arc = part.inner.size();
+  for (const Curve& curve : outer) names.push_back(cuts_in(curve) ? raiser_names[arc++] : edge_names[edge++]);
+  if (!edges.empty() || !is_rectangle(outer, part.size.maxCoeff()))
+    plate.outline = outline_of(part, outer, names, numbering);
+  if (result.faults.empty() && result.misplaced.empty()) result.plate = std::move(plate);
   return result;
 }
 

@@ -161,7 +161,7 @@ std::optional<Curve> curve_of(int tag, const std::string& type, const Plane& pla
 }
 
 Diagnostic fault(const std::string& file, std::string what, std::string cure) {
-  return {Diagnostic::Kind::input, file, std::nullopt, "", "", std::move(what), std::move(cure)};
+  return {Diagnostic::Kind::input, file, std::nullopt, "file", "", std::move(what), std::move(cure)};
 }
 
 std::string list_of(const std::vector<Face>& faces) {
@@ -196,6 +196,7 @@ std::optional<Face> choose(const std::vector<Face>& faces, std::size_t others, c
             fmt::format("name a point on the face with face_at = [\"x mm\", \"y mm\", \"z mm\"]; "
                         "the planar faces are: {}",
                         list_of(faces))));
+  if (face_at) faults.back().key = "face_at";
   return std::nullopt;
 }
 

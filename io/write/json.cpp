@@ -243,6 +243,20 @@ Json outline(const mesh::Outline& o) {
   return {{"edges", o.edges}, {"raisers", raisers}};
 }
 
+Json import(const ImportReport& report) {
+  Json taken = Json::array(), left_out = Json::array();
+  for (const Taken& one : report.taken) taken.push_back({{"kind", one.kind}, {"count", one.count}});
+  for (const LeftOut& one : report.left_out)
+    left_out.push_back({{"kind", one.kind}, {"count", one.count}, {"why", one.why}, {"line", one.line}});
+  return {{"file", report.file},
+          {"layer", report.layer.empty() ? Json(nullptr) : Json(report.layer)},
+          {"unit", {{"word", report.unit}, {"in_mm", report.unit_in_mm}, {"source", report.unit_source}}},
+          {"gap", quantity(report.gap, "mm")},
+          {"taken", taken},
+          {"left_out", left_out},
+          {"repairs", report.repairs}};
+}
+
 Json supports(const Case& c) {
   const auto edges = mesh::edge_names(c.problem.plate);
   const auto length = [](const std::optional<double>& value) {
@@ -268,6 +282,7 @@ Json input(const Case& c) {
                 {"width", quantity(plate.width, "mm")},
                 {"thickness", quantity(plate.thickness, "mm")}}}};
   if (plate.outline) object["outline"] = outline(*plate.outline);
+  if (c.import) object["import"] = import(*c.import);
   if (c.drawing_origin) object["drawing_origin"] = position(*c.drawing_origin);
   object["material"] = material(c);
   object["holes"] = holes;

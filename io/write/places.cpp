@@ -6,6 +6,7 @@
 
 #include "io/write/layout.hpp"
 #include "io/write/table_parts.hpp"
+#include "mesh/plate/words.hpp"
 
 namespace raiser::io {
 namespace {
@@ -31,7 +32,7 @@ std::string_view name_of(Symmetry symmetry) {
 std::string owner_name(const mesh::Plate& plate, const mesh::Owner& owner) {
   if (owner.kind == mesh::Owner::Kind::raiser) return phrase(mesh::raiser(plate, owner.index));
   const auto names = mesh::edge_names(plate);
-  return owner.index < names.size() ? fmt::format("edge {}", plain(names[owner.index])) : "an edge";
+  return owner.index < names.size() ? mesh::edge_phrase(plain(names[owner.index])) : "an edge";
 }
 
 std::string field_line(const SingularField& field) {

@@ -91,12 +91,20 @@ std::string concentration_line(std::string_view name, const solver::Concentratio
                  fmt::format("  {} {}  ", name, with_bound(*kt.kt)), 13);
 }
 
-std::string section_line(const solver::Section& section) {
+// Zero for what rounding leaves of a value that vanishes beside `scale`.
+double without_rounding(double value, double scale) { return std::abs(value) < 1e-11 * scale ? 0.0 : value; }
+
+std::string section_line(const solver::Section& section, const mesh::Plate& plate) {
   const bool across = section.direction == solver::Section::Direction::across;
+  const double size = std::max(plate.length, plate.width);
+  const double force = std::max(
+      {std::abs(section.normal_force), std::abs(section.shear_force), std::abs(section.moment) / size});
   return wrapped(
       fmt::format("gross {} mm^2, net {} mm^2; normal force {} N, shear force {} N, moment {} N mm",
-                  brief(section.gross_area), brief(section.net_area), brief(section.normal_force, 5),
-                  brief(section.shear_force, 5), brief(section.moment, 5)),
+                  brief(section.gross_area), brief(section.net_area),
+                  brief(without_rounding(section.normal_force, force), 5),
+                  brief(without_rounding(section.shear_force, force), 5),
+                  brief(without_rounding(section.moment, force * size), 5)),
       fmt::format("  section {} = {} mm: ", across ? "x" : "y", brief(section.station)), 13);
 }
 
@@ -145,7 +153,7 @@ std::string raiser_in_full(const Result& result, const solver::RaiserFindings& f
   text += images_line(result, found);
   text += concentration_line("Kt gross", found.gross);
   text += concentration_line("Kt net  ", found.net);
-  return text + section_line(found.section);
+  return text + section_line(found.section, plate);
 }
 
 std::string kt_text(const solver::Concentration& kt) { return kt.kt ? fitted(*kt.kt, 16) : "-"; }
@@ -250,10 +258,16 @@ std::string holding_part(const Result& result) {
                     "  ", 4);
   }
   if (!result.solution.reactions.empty()) text += "\nReactions of supports\n";
+  const double size = std::max(problem.plate.length, problem.plate.width);
+  double force = 0.0;
+  for (const solver::SupportReaction& at : result.solution.reactions)
+    force = std::max({force, at.reaction.force.norm(), std::abs(at.reaction.moment) / size});
   for (const solver::SupportReaction& at : result.solution.reactions)
     text += wrapped(fmt::format("{}: force ({}, {}) N, moment {} N mm about the plate's centre",
-                                plain(problem.supports.at(at.support).name), brief(at.reaction.force.x(), 6),
-                                brief(at.reaction.force.y(), 6), brief(at.reaction.moment, 6)),
+                                plain(problem.supports.at(at.support).name),
+                                brief(without_rounding(at.reaction.force.x(), force), 6),
+                                brief(without_rounding(at.reaction.force.y(), force), 6),
+                                brief(without_rounding(at.reaction.moment, force * size), 6)),
                     "  ", 4);
   if (!result.solution.reactions.empty())
     text += wrapped(fmt::format("loads and reactions balance within {}; stress has no limit at the ends of a "
@@ -275,8 +289,8 @@ std::string checks_part(const Result& result) {
   text += wrapped(
       fmt::format("mean stress at x = {} mm: {} MPa from the loads, {} MPa recovered; departure from the "
                   "nominal distribution {}",
-                  brief(checks.far_station, 4), brief(checks.far_applied), brief(recovered),
-                  percent(checks.far_scatter)),
+                  brief(checks.far_station, 4), brief(without_rounding(checks.far_applied, largest)),
+                  brief(recovered), percent(checks.far_scatter)),
       "  ", 4);
   double on_raisers = 0.0;
   for (const solver::RaiserFindings& found : solution.combined.raisers)

@@ -7,9 +7,7 @@
 #include <cmath>
 #include <numbers>
 
-#include "mesh/plate/plate.hpp"
-#include "mesh/plate/section.hpp"
-#include "mesh/region/vertex.hpp"
+#include "mesh/plate/drawn.hpp"
 
 namespace raiser::mesh {
 
@@ -218,69 +216,6 @@ void centre(ChainResult& result, Outline& outline) {
   for (Raiser& raiser : outline.raisers) raiser.centre += result.origin;
 }
 
-/// The deepest point of an inward arc: farthest from the chord of its ends.
-Point deepest(const Curve& curve) {
-  const Point chord = curve.finish() - curve.start();
-  const Point inward = Point(-chord.y(), chord.x()).normalized();
-  // d/dt (inward . x) = 0 on an arc
-  const double t0 = std::atan2(inward.dot(curve.v), inward.dot(curve.u));
-  const double low = std::min(curve.begin, curve.end);
-  const double high = std::max(curve.begin, curve.end);
-  const double t = t0 + 2 * pi * std::round(((low + high) / 2 - t0) / (2 * pi));
-  return curve.at(std::clamp(t, low, high));
-}
-
-/// Sections of the raisers: a fillet's narrow end is where the section across is
-/// the smaller one.
-void place_sections(Outline& outline, double length, double width) {
-  Plate plate;
-  plate.length = length;
-  plate.width = width;
-  plate.outline = outline;
-  for (const Curve& curve : outline.curves) {
-    if (curve.owner.kind != Owner::Kind::raiser) continue;
-    Raiser& raiser = outline.raisers[curve.owner.index];
-    if (raiser.kind == Raiser::Kind::notch) {
-      raiser.root = raiser.mouth = deepest(curve);
-      continue;
-    }
-    const auto size = [&](const Point& x) {
-      return shape_of(gross_along(plate, Direction::across, x.x())).length;
-    };
-    raiser.root = curve.start();
-    raiser.mouth = curve.finish();
-    if (size(raiser.root) > size(raiser.mouth)) std::swap(raiser.root, raiser.mouth);
-  }
-}
-
-/// An inward arc that ends in a sharp re-entrant corner has no peak.
-void drop_singular(Outline& outline) {
-  std::vector<bool> singular(outline.raisers.size(), false);
-  const std::size_t n = outline.curves.size();
-  for (std::size_t i = 0; i < n; ++i) {
-    if (angle_between(outline.curves[i], outline.curves[(i + 1) % n]) < pi + least_corner) continue;
-    for (const std::size_t k : {i, (i + 1) % n})
-      if (const Owner& owner = outline.curves[k].owner; owner.kind == Owner::Kind::raiser)
-        singular[owner.index] = true;
-  }
-  std::vector<std::size_t> moved(outline.raisers.size());
-  std::vector<Raiser> kept;
-  for (std::size_t i = 0; i < singular.size(); ++i) {
-    moved[i] = kept.size();
-    if (!singular[i]) kept.push_back(outline.raisers[i]);
-  }
-  for (Curve& curve : outline.curves) {
-    if (curve.owner.kind != Owner::Kind::raiser) continue;
-    if (!singular[curve.owner.index]) {
-      curve.owner.index = moved[curve.owner.index];
-      continue;
-    }
-    outline.edges.push_back("arc " + outline.raisers[curve.owner.index].name);
-    curve.owner = {Owner::Kind::edge, outline.edges.size() - 1};
-  }
-  outline.raisers = std::move(kept);
-}
-
 }  // namespace
 
 ChainResult chain_outline(std::vector<OutlinePoint> points) {
@@ -301,12 +236,12 @@ ChainResult chain_outline(std::vector<OutlinePoint> points) {
     builder.add_piece(i);
   }
   Outline& outline = builder.outline;
+  tell_notches(outline);
   for (std::size_t i = 0; i < outline.raisers.size(); ++i)
     if (outline.raisers[i].name.empty())
       outline.raisers[i].name = fmt::format("{} {}", word(outline.raisers[i].kind), builder.arcs[i] + 1);
   centre(result, outline);
-  drop_singular(outline);
-  place_sections(outline, result.length, result.width);
+  place_raisers(outline, result.length, result.width);
   result.outline = std::move(outline);
   return result;
 }

@@ -33,10 +33,10 @@ struct OutlinePoint {
 };
 
 /// A free outline through the points, run either way. Rounded re-entrant
-/// corners become fillets and arcs that bulge inwards notches, each a raiser;
-/// an inward arc that ends in a sharp re-entrant corner has no peak and stays
-/// an edge. The chain is moved so that its bounding box is centred at the
-/// origin; `origin` is where the points' origin comes to lie.
+/// corners and arcs that bulge inwards become fillets and notches, each a raiser
+/// (tell_notches() has the difference); an inward arc that ends in a sharp re-entrant corner has no peak and
+/// stays an edge. The chain is moved so that its bounding box is centred at the origin; `origin` is where the
+/// points' origin comes to lie.
 struct ChainResult {
   std::optional<Outline> outline;
   Point origin = Point::Zero();

@@ -205,7 +205,7 @@ OutlineResult with_notches(const Outline& body, const std::vector<Notch>& notche
       by_edge[notches[i].edge].push_back(i);
   }
   Outline outline = body;
-  outline.body = body.curves;
+  outline.body = body.gross();
   outline.curves.clear();
   for (const Curve& curve : body.curves) {
     const bool cut = curve.owner.kind == Owner::Kind::edge && !by_edge[curve.owner.index].empty();

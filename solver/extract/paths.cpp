@@ -9,6 +9,7 @@
 
 #include "mesh/legendre.hpp"
 #include "mesh/plate/section.hpp"
+#include "mesh/plate/words.hpp"
 #include "solver/adapt/bound.hpp"
 
 namespace raiser::solver {
@@ -99,7 +100,7 @@ std::string name_of(const mesh::Raiser& raiser) {
 std::string end_name(const Plate& plate, const Owner& owner) {
   if (owner.kind == Owner::Kind::raiser) return name_of(mesh::raiser(plate, owner.index));
   const auto edges = mesh::edge_names(plate);
-  return owner.index < edges.size() ? edges[owner.index] + " edge" : "edge";
+  return owner.index < edges.size() ? mesh::edge_phrase(edges[owner.index]) : "edge";
 }
 
 std::string start_name(const mesh::Raiser& raiser, bool across, bool from_begin) {

@@ -140,7 +140,7 @@ class ExitCodes(Program):
         lines = result.stderr.splitlines()
         # Hole i conflicts with 50 - i later ones: three in full, then a count.
         self.assertEqual(len(lines), 46 * 4 + 3 + 2 + 1)
-        self.assertIn("pile.toml:10:1: hole: hole 'hole 1' lies in the way of 46 later holes more", lines[3])
+        self.assertIn("pile.toml:10:1: hole 'hole 1' lies in the way of 46 later holes more", lines[3])
 
     def test_not_met(self):
         result = self.run_it("solve", self.case("fine.toml", TOO_FINE), "--json")

@@ -12,6 +12,7 @@ usage: schema_test.py READ_VERDICTS
 import copy
 import json
 import pathlib
+import shutil
 import subprocess
 import sys
 import tempfile
@@ -33,7 +34,8 @@ BEYOND = ["is taken", "does not lead into the material", "is beyond the end of t
           "its yield strength of", "the edge runs from 0 to", "the loaded part ends where", "the shares add up to",
           "shares for", "is named twice", "holds the corner", "is held by", "round hole",
           "small displacements cover", "must not be negative", "the ends differ", "have the same number of entries",
-          "no straight edge", "at and holes say the same"]
+          "no straight edge", "at and holes say the same", "as near to this place", " mm away; give a place",
+          "lies nearest to this place is called", "says that its unit is", ".dxf:", "the part has no", "nothing on the plate raises"]
 BEYOND_KEYS = ["load.hole = ", "load.crack = ", "load.edge = ", "notch.edge = ", "crack.from = ", "crack.edge = ",
                "ask.holes = ", "ask.at = ", "ask.tips = ", "ask.result.hole = ", "ask.result.at = ",
                "ask.result.tip = ", "pin.hole = ", "pin.holes = ", "support.edge = "]
@@ -43,7 +45,8 @@ def is_beyond_schema(kind, message):
     unknown_name = "is not known here" in message and any(key in message for key in BEYOND_KEYS)
     ratio = "Poisson's ratio lies" in message or "a tolerance is relative" in message or "double precision gives" in message
     in_text = ' = "' in message.split("; ")[0]
-    return kind == "physics" or unknown_name or (ratio and in_text) or any(part in message for part in BEYOND)
+    drawing = "import.file = " in message  # whatever the drawing holds
+    return kind == "physics" or drawing or unknown_name or (ratio and in_text) or any(part in message for part in BEYOND)
 
 
 def toml_value(value):
@@ -138,8 +141,13 @@ def check_files(validator, program):
 
 def check_mutations(validator, program, folder):
     files = {}
+    for drawing in [*TOP.glob("examples/*.dxf"), *TOP.glob("tests/io/cases/good/*.dxf")]:
+        shutil.copy(drawing, folder)
     for case in sorted([*TOP.glob("examples/*.toml"), *TOP.glob("tests/io/cases/good/*.toml")]):
-        for number, mutant in enumerate(mutations(tomllib.loads(case.read_text(encoding="utf-8")))):
+        text = case.read_text(encoding="utf-8")
+        if "# schema: no mutations" in text:  # STEP files take long to read
+            continue
+        for number, mutant in enumerate(mutations(tomllib.loads(text))):
             file = pathlib.Path(folder) / f"{case.stem}-{number}.toml"
             file.write_text(toml(mutant), encoding="utf-8")
             files[str(file)] = mutant

@@ -30,11 +30,11 @@ class DrawingFile {
   std::filesystem::path folder_, path_;
 };
 
-PartReading read(const std::filesystem::path& path, std::optional<double> unit = std::nullopt) {
+PartReading read(const std::filesystem::path& path, const std::string& unit = "") {
   PartRequest request;
   request.path = path;
   request.file = path.filename().string();
-  request.unit = unit;
+  request.unit_word = unit;
   return read_part(request);
 }
 
@@ -94,12 +94,12 @@ TEST(Part, ByHandFromDxfAndFromStepIsThePlateItIs) {
 TEST(Part, UnitsAreHonouredOrAskedForNeverGuessed) {
   const DrawingFile silent(plate_drawing(0, 1).text());
   EXPECT_NE(all(read(silent.path())).find("does not say its units"), std::string::npos);
-  const auto told = read(silent.path(), 10.0);
+  const auto told = read(silent.path(), "cm");
   ASSERT_TRUE(told.value) << all(told);
   EXPECT_NEAR(told.value->size.x(), 800, 1e-9);
   const DrawingFile inches(plate_drawing(1, 1).text(), "inches.dxf");
-  EXPECT_NE(all(read(inches.path(), 1.0)).find("the case says another"), std::string::npos);
-  EXPECT_TRUE(read(inches.path(), 25.4).value);
+  EXPECT_NE(all(read(inches.path(), "mm")).find("says that its unit is in"), std::string::npos);
+  EXPECT_TRUE(read(inches.path(), "in").value);
 }
 
 TEST(Part, OtherFilesAreRefused) {
@@ -115,11 +115,15 @@ TEST(Part, EdgesAndHolesAreNamedByPlace) {
   const PartPlate plate = plate_of(*part.value, 5, {{"clamped", Point(60, 45)}}, {{"bolt", Point(80, 41)}});
   ASSERT_TRUE(plate.plate);
   EXPECT_EQ(plate.plate->holes[0].name, "bolt");
-  EXPECT_EQ(mesh::edge_names(*plate.plate),
-            (std::vector<std::string>{"edge 1", "edge 2", "edge 3", "clamped"}));
+  EXPECT_EQ(mesh::edge_names(*plate.plate), (std::vector<std::string>{"bottom", "right", "top", "clamped"}));
   const PartPlate twice = plate_of(*part.value, 5, {}, {{"a", Point(80, 41)}, {"b", Point(80, 39)}});
   EXPECT_FALSE(twice.plate);
-  ASSERT_EQ(twice.faults.size(), 1U);
+  ASSERT_EQ(twice.misplaced.size(), 1U);
+  EXPECT_EQ(twice.misplaced[0].index, 1U);
+  const PartPlate corner = plate_of(*part.value, 5, {{"a", Point(60, 20)}, {"b", Point(0, 0)}}, {});
+  ASSERT_EQ(corner.misplaced.size(), 2U);
+  EXPECT_NE(corner.misplaced[0].what.find("two edges are as near"), std::string::npos);
+  EXPECT_NE(corner.misplaced[1].cure.find("from (60, 20) mm to (140, 60) mm"), std::string::npos);
 }
 
 // A stepped strip with fillets of 3 mm: arcs that cut into the material are fillets.
