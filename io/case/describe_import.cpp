@@ -2,8 +2,6 @@
 
 #include <fmt/format.h>
 
-#include <cmath>
-
 #include "io/case/layout.hpp"
 #include "io/write/layout.hpp"
 
@@ -30,32 +28,16 @@ Phrases left_out_of(const ImportReport& report) {
   return phrases;
 }
 
-/// "arc of 12.6 mm about (10, 0) mm", in the coordinates of the drawing.
-std::string in_words(const mesh::Curve& curve, const mesh::Point& origin) {
-  mesh::Point middle = curve.at((curve.begin + curve.end) / 2) - origin;
-  for (double& x : middle)
-    if (std::abs(x) < 1e-9 * (1 + origin.norm())) x = 0.0;  // what rounding leaves
-  double length = 0.0;
-  constexpr int steps = 64;
-  for (int k = 0; k < steps; ++k) {
-    const auto at = [&](int i) { return curve.at(curve.begin + (curve.end - curve.begin) * i / steps); };
-    length += (at(k + 1) - at(k)).norm();
-  }
-  return fmt::format("{}, {:.4g} mm, its middle at ({:.6g}, {:.6g}) mm",
-                     curve.kind == mesh::Curve::Kind::line ? "straight" : "arc", length, middle.x(),
-                     middle.y());
-}
-
-std::string edges_of(const Case& input) {
-  const mesh::Outline outline = mesh::outline_of(input.problem.plate);
-  const mesh::Point origin = input.drawing_origin.value_or(mesh::Point::Zero());
+std::string edges_of(const ImportReport& report) {
   std::string result = row("  edges", {"in the drawing's coordinates"});
-  std::size_t listed = 0;
-  for (const mesh::Curve& curve : outline.gross()) {
-    if (curve.owner.kind != mesh::Owner::Kind::edge) continue;
-    if (++listed > most_listed) return result + row("    and more", {"not listed here"});
-    result += row("    " + outline.edges.at(curve.owner.index), {in_words(curve, origin)});
+  for (std::size_t k = 0; k < report.edges.size() && k < most_listed; ++k) {
+    const ImportedEdge& edge = report.edges[k];
+    result +=
+        row("    " + edge.name, {edge.is_straight ? "straight" : "arc", fmt::format("{:.4g} mm", edge.length),
+                                 fmt::format("its middle at ({:.6g}, {:.6g}) mm", edge.x, edge.y)});
   }
+  if (report.edges.size() > most_listed)
+    result += row("    and more", {fmt::format("{} not listed here", report.edges.size() - most_listed)});
   return result;
 }
 
@@ -77,7 +59,7 @@ std::string describe_import(const Case& input) {
     result += wrapped(report.repairs[k], fmt::format("{:16}", k == 0 ? "  repaired" : ""), 16);
   if (report.repairs.size() > most_listed)
     result += row("", {fmt::format("and {} more", report.repairs.size() - most_listed)});
-  return result + edges_of(input) + '\n';
+  return result + edges_of(report) + '\n';
 }
 
 }  // namespace raiser::io

@@ -3,9 +3,10 @@
 #include <fmt/format.h>
 
 #include <array>
+#include <cmath>
 #include <filesystem>
 
-#include "io/import/dxf.hpp"
+#include "io/import/curve_tools.hpp"
 #include "io/import/part_plate.hpp"
 
 namespace raiser::io {
@@ -128,6 +129,21 @@ Position place_of(const Table& import, const std::vector<Named>& raisers, const 
   return import.node->at;
 }
 
+/// The edges of the plate in the coordinates of the drawing.
+std::vector<ImportedEdge> edges_of(const mesh::Plate& plate, const mesh::Point& centre) {
+  const mesh::Outline outline = mesh::outline_of(plate);
+  std::vector<ImportedEdge> edges;
+  for (const mesh::Curve& curve : outline.curves) {
+    if (curve.owner.kind != mesh::Owner::Kind::edge) continue;
+    mesh::Point middle = curve.at((curve.begin + curve.end) / 2) + centre;
+    for (double& x : middle)
+      if (std::abs(x) < 1e-9 * plate.length) x = 0.0;  // what rounding leaves
+    edges.push_back({outline.edges.at(curve.owner.index), curve.kind == mesh::Curve::Kind::line,
+                     length(curve), middle.x(), middle.y()});
+  }
+  return edges;
+}
+
 }  // namespace
 
 void read_import(const Table& document, OutlineReading& result, Names& names) {
@@ -147,6 +163,7 @@ void read_import(const Table& document, OutlineReading& result, Names& names) {
   result.origin = -part.value->centre;
   result.sizes = {plate.plate->length, plate.plate->width, std::nullopt};
   result.import = std::move(part.value->report);
+  result.import->edges = edges_of(*plate.plate, part.value->centre);
   for (mesh::Hole hole : plate.plate->holes) {
     hole.centre += part.value->centre;
     names.insert(hole.name);

@@ -20,6 +20,14 @@ struct Taken {
   std::size_t count = 0;
 };
 
+/// One piece of an edge of the part, so that a place near it can be given.
+struct ImportedEdge {
+  std::string name;
+  bool is_straight = true;
+  double length = 0.0;      ///< mm
+  double x = 0.0, y = 0.0;  ///< mm, of its middle in the drawing
+};
+
 /// What was made of a drawing, for people.
 struct ImportReport {
   std::string file;   ///< as messages name it
@@ -30,6 +38,7 @@ struct ImportReport {
   double gap = 0.0;         ///< mm: ends this close were joined
   std::vector<Taken> taken;
   std::vector<LeftOut> left_out;
+  std::vector<ImportedEdge> edges;
   std::vector<std::string> repairs;  ///< one line each: what was changed or taken for something else
 };
 

@@ -109,22 +109,39 @@ const RaiserFindings* worst_raiser(const Result& result) {
   return all.raisers.empty() ? nullptr : &all.raisers[worst_first(all).front()];
 }
 
+// Where the colours end, and why there.
+std::string end_of_colours(const Result& result, double top) {
+  return fmt::format("the colours end near {}, {}", together(brief(top, 4) + " MPa"),
+                     result.solution.combined.raisers.empty()
+                         ? "exceeded on a hundredth of the area"
+                         : "the largest stress on edges or on all but a hundredth of the area");
+}
+
 void add_crack_lines(std::vector<std::string>& lines, const Result& result, std::optional<double> top) {
   const auto& all = result.solution.combined;
   if (all.tips.empty()) return;
   const solver::TipFindings& worst = all.tips[worst_tips_first(all).front()];
   lines.push_back(fmt::format("{} at {}", intensity_words(worst), tip_name(result, worst.tip)));
   if (top)
-    lines.push_back(fmt::format(
-        "The stress at a crack tip grows without limit and there is no Kt of it: the colours end near {}, {}",
-        together(brief(*top, 4) + " MPa"),
-        all.raisers.empty() ? "exceeded on a hundredth of the area"
-                            : "the largest stress on edges or on all but a hundredth of the area"));
+    lines.push_back("The stress at a crack tip grows without limit and there is no Kt of it: " +
+                    end_of_colours(result, *top));
   for (const solver::CrackOpening& opening : result.solution.openings)
     if (opening.is_closed())
       lines.push_back(
           fmt::format("The faces of {} press on each other and were solved as free: K does not hold",
                       plain(mesh::label(result.input.problem.plate.cracks, opening.crack))));
+}
+
+void add_place_lines(std::vector<std::string>& lines, const Result& result, std::optional<double> top) {
+  const auto& places = result.solution.places;
+  if (places.empty()) return;
+  std::string line = fmt::format("{} without a peak stress: {} at ({}, {}) mm",
+                                 places.size() == 1 ? "A place" : fmt::format("{} places", places.size()),
+                                 places.front().what, brief(places.front().point.x(), 4),
+                                 brief(places.front().point.y(), 4));
+  if (places.size() > 1) line += " and others";
+  if (top && result.solution.combined.tips.empty()) line += "; " + end_of_colours(result, *top);
+  lines.push_back(line);
 }
 
 void add_peak_lines(std::vector<std::string>& lines, const Result& result, const RaiserFindings& found) {
@@ -141,6 +158,7 @@ std::vector<std::string> caption(const Result& result, std::optional<double> top
   std::vector<std::string> lines;
   add_crack_lines(lines, result, top);
   if (const RaiserFindings* found = worst_raiser(result)) add_peak_lines(lines, result, *found);
+  add_place_lines(lines, result, top);
   lines.push_back(fmt::format("Plate {} × {} × {}", brief(plate.length), brief(plate.width),
                               amount(plate.thickness, "mm")));
   lines.push_back(
@@ -250,7 +268,7 @@ CellSource source_of(const solver::Field& field) {
           }};
 }
 
-/// Where colours end in a plate with cracks: at the largest stress on the edges
+/// Where colours end in a plate whose stress has no limit somewhere: at the largest stress on the edges
 /// of holes and notches, or at what only a hundredth of the area exceeds.
 double colour_top(const Result& result) {
   double top = 0.0;
@@ -276,8 +294,7 @@ double colour_top(const Result& result) {
 
 void add_tips(Picture& picture, const Result& result) {
   const auto& found = result.solution.combined;
-  if (found.tips.empty()) return;
-  picture.top = colour_top(result);
+  if (!found.tips.empty() || !result.solution.places.empty()) picture.top = colour_top(result);
   const std::vector<mesh::CrackTip> tips = mesh::tips(picture.plate.cracks);
   for (const std::size_t i : worst_tips_first(found)) {
     const solver::TipFindings& own = found.tips[i];

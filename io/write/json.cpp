@@ -244,7 +244,12 @@ Json outline(const mesh::Outline& o) {
 }
 
 Json import(const ImportReport& report) {
-  Json taken = Json::array(), left_out = Json::array();
+  Json taken = Json::array(), left_out = Json::array(), edges = Json::array();
+  for (const ImportedEdge& edge : report.edges)
+    edges.push_back({{"name", edge.name},
+                     {"straight", edge.is_straight},
+                     {"length", quantity(edge.length, "mm")},
+                     {"middle", position({edge.x, edge.y})}});
   for (const Taken& one : report.taken) taken.push_back({{"kind", one.kind}, {"count", one.count}});
   for (const LeftOut& one : report.left_out)
     left_out.push_back({{"kind", one.kind}, {"count", one.count}, {"why", one.why}, {"line", one.line}});
@@ -254,7 +259,8 @@ Json import(const ImportReport& report) {
           {"gap", quantity(report.gap, "mm")},
           {"taken", taken},
           {"left_out", left_out},
-          {"repairs", report.repairs}};
+          {"repairs", report.repairs},
+          {"edges", edges}};
 }
 
 Json supports(const Case& c) {
