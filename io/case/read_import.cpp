@@ -159,6 +159,10 @@ void read_import(const Table& document, OutlineReading& result, Names& names) {
   if (!part.value) return add_faults(*table, std::move(part.faults));
   const PartPlate plate = plate_of(*part.value, 1.0, places_of(edges), places_of(raisers), taken);
   if (!plate.plate) return add_faults(*table, plate, edges, raisers);
+  if (plate.plate->holes.size() > most_holes)
+    return complain(*table, *find(*table, "file"),
+                    fmt::format("the part has {} holes", plate.plate->holes.size()),
+                    fmt::format("a case has at most {}; leave the others out of the drawing", most_holes));
   result.outline = plate.plate->outline;
   result.origin = -part.value->centre;
   result.sizes = {plate.plate->length, plate.plate->width, std::nullopt};

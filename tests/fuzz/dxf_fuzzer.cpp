@@ -1,5 +1,6 @@
 // libFuzzer entry: whatever the bytes, the import gives an outline or faults,
-// each with its cure, and an outline is closed and the right way round.
+// each with its cure; an outline is closed and the right way round, and becomes a
+// plate or faults.
 
 #include <cmath>
 #include <cstddef>
@@ -10,6 +11,7 @@
 #include "io/import/contour.hpp"
 #include "io/import/curve_tools.hpp"
 #include "io/import/dxf.hpp"
+#include "io/import/part_plate.hpp"
 #include "io/import/shapes.hpp"
 
 namespace {
@@ -44,5 +46,15 @@ extern "C" int LLVMFuzzerTestOneInput(const std::uint8_t* data, std::size_t size
     check(loop);
     static_cast<void>(hole_of(loop, 1e-6));
   }
+  const auto box = box_of(found.outer);
+  Part part{found.outer, found.inner, (box[0] + box[1]) / 2, box[1] - box[0], {}};
+  for (auto& curve : part.outer) curve.centre -= part.centre;
+  for (auto& loop : part.inner)
+    for (auto& curve : loop) curve.centre -= part.centre;
+  const PartPlate plate = plate_of(part, 1.0, {{"near", part.centre}}, {{"hole", part.centre}});
+  require(plate.plate.has_value() == (plate.faults.empty() && plate.misplaced.empty()));
+  const PartPlate plain = plate_of(part, 1.0, {}, {});
+  if (plain.plate)
+    for (const auto& fault : raiser::mesh::faults(*plain.plate)) require(!fault.what.empty());
   return 0;
 }

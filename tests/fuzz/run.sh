@@ -15,7 +15,7 @@ cmake --build "$build" -t "${path}_fuzzer"
 mkdir -p "$build/corpus-$path" "$build/findings"
 case $path in
   case) seeds="$top/tests/fuzz/corpus $top/tests/io/cases/good $top/tests/io/cases/bad $top/examples" ;;
-  dxf) seeds="$top/tests/fuzz/drawings" ;;
+  dxf) seeds="$top/tests/fuzz/drawings $top/tests/io/cases/drawings" ;;
 esac
 # shellcheck disable=SC2086
 exec nice "$build/${path}_fuzzer" -max_total_time="$seconds" -max_len=4096 -timeout=10 -rss_limit_mb=1500 \

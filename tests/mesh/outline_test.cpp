@@ -449,6 +449,36 @@ TEST(FreeOutline, MakesInwardArcsNotchesUnlessTheyEndInASharpCorner) {
   EXPECT_EQ(result.outline->raisers.size(), 0u);
 }
 
+// A V of 90 degrees in the top edge, 10 mm deep to its sharp end, rounded by 2 mm: the
+// same arc as that of a corner, but between two parts of one line.
+TEST(FreeOutline, KnowsANotchDrawnIntoAStraightEdge) {
+  std::vector<OutlinePoint> points(7);
+  const std::vector<Point> places = {{0, 0}, {100, 0}, {100, 40}, {60, 40}, {50, 30}, {40, 40}, {0, 40}};
+  for (std::size_t i = 0; i < 7; ++i) points[i].at = places[i];
+  points[4].corner_radius = 2;
+  const auto result = chain_outline(points);
+  ASSERT_TRUE(result.outline) << all_of(result.faults);
+  ASSERT_EQ(result.outline->raisers.size(), 1u);
+  const Raiser& notch = result.outline->raisers[0];
+  EXPECT_EQ(notch.kind, Raiser::Kind::notch);
+  EXPECT_EQ(notch.name, "notch 5");
+  EXPECT_LT((notch.root - Point(0, 10 + 2 * std::sqrt(2.0) - 2)).norm(), 1e-12);
+  EXPECT_NEAR(area(result.outline->gross()), 4000, 1e-9);
+  expect_closed(result.outline->gross());
+  Plate plate{result.length, result.width, 5, {}, result.outline};
+  EXPECT_NEAR(shape_of(gross_along(plate, Direction::across, 0)).length, 40, 1e-12);
+  EXPECT_NEAR(shape_of(material_along(plate, Direction::across, 0)).length, 20 + notch.root.y(), 1e-12);
+  // One cut into another edge of it leaves the drawn one closed.
+  Notch more;
+  more.name = "nick";
+  more.shape = NotchShape::semicircle;
+  more.edge = 0;
+  more.depth = 3;
+  const auto both = with_notches(*result.outline, {more});
+  ASSERT_TRUE(both.outline);
+  EXPECT_NEAR(area(both.outline->gross()), 4000, 1e-9);
+}
+
 TEST(FreeOutline, RefusesWhatDoesNotClose) {
   auto points = bracket(false);
   points[3].corner_radius = 60;
