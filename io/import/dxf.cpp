@@ -120,7 +120,7 @@ class DxfReader {
       const auto name = value_of(entry, 2);
       if (!name) continue;
       const bool is_off = number_of(entry, 62).value_or(7.0) < 0;
-      const bool is_frozen = (static_cast<long>(number_of(entry, 70).value_or(0.0)) & 1) != 0;
+      const bool is_frozen = (flags_of(entry, 70) & 1U) != 0;
       if (is_off || is_frozen) off_.insert(lower(*name));
     }
   }

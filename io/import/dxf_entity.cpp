@@ -133,8 +133,7 @@ EntityCurves of_light_polyline(const Record& entity) {
     if (tag.code == 20) vertices.back().at.y() = *value;
     if (tag.code == 42) vertices.back().bulge = *value;
   }
-  const auto flags = static_cast<long>(number_of(entity, 70).value_or(0.0));
-  return {chain(vertices, (flags & 1) != 0), "", "", {number_of(entity, 38).value_or(0.0)}};
+  return {chain(vertices, (flags_of(entity, 70) & 1U) != 0), "", "", {number_of(entity, 38).value_or(0.0)}};
 }
 
 }  // namespace
@@ -165,13 +164,13 @@ EntityCurves curves_of(const Record& entity) {
 }
 
 EntityCurves curves_of_polyline(const Record& head, std::span<const Record> vertices) {
-  const auto flags = static_cast<long>(number_of(head, 70).value_or(0.0));
-  if ((flags & (8 | 16 | 64)) != 0 || facing(head) == Facing::aslant)
+  const unsigned flags = flags_of(head, 70);
+  if ((flags & (8U | 16U | 64U)) != 0 || facing(head) == Facing::aslant)
     return {{},
             "the POLYLINE is one in space, or a mesh",
             "only planar drawings are imported: draw the outline of the part in x-y",
             {}};
-  if ((flags & (2 | 4)) != 0)
+  if ((flags & (2U | 4U)) != 0)
     return {{},
             "the POLYLINE is fitted by a spline or smoothed",
             "turn it into lines and arcs in the drawing: its edge would be a row of small corners",
@@ -182,7 +181,7 @@ EntityCurves curves_of_polyline(const Record& head, std::span<const Record> vert
     if (!at) return missing("VERTEX", 10);
     chain_of.push_back({*at, number_of(vertex, 42).value_or(0.0)});
   }
-  EntityCurves result{chain(chain_of, (flags & 1) != 0), "", "", {number_of(head, 30).value_or(0.0)}};
+  EntityCurves result{chain(chain_of, (flags & 1U) != 0), "", "", {number_of(head, 30).value_or(0.0)}};
   if (facing(head) == Facing::down) turn_over(result.curves);
   return result;
 }

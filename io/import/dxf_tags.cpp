@@ -98,6 +98,11 @@ std::optional<double> number_of(const Record& record, int code) {
   return text ? number(*text) : std::nullopt;
 }
 
+unsigned flags_of(const Record& record, int code) {
+  const double value = number_of(record, code).value_or(0.0);
+  return value >= 0.0 && value < 65536.0 ? static_cast<unsigned>(value) : 0U;
+}
+
 DxfSections sections_of(std::span<const Tag> tags) {
   DxfSections result;
   std::size_t at = 0;

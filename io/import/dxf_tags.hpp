@@ -35,6 +35,8 @@ std::optional<std::string_view> value_of(const Record& record, int code);
 /// The same as a number; nothing when there is none or it is not a finite number.
 std::optional<double> number_of(const Record& record, int code);
 std::optional<double> number(std::string_view text);
+/// The same as bits; none where it is no whole number that they could be.
+unsigned flags_of(const Record& record, int code);
 
 /// The sections of a drawing that raiser reads, as records.
 struct DxfSections {
