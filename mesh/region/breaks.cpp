@@ -25,27 +25,66 @@ double nearest_parameter(const Curve& curve, const Point& x) {
   return (curve.at(low) - x).norm() < (curve.at(high) - x).norm() ? low : high;
 }
 
-/// Where one break divides one curve: parameters, not yet in order.
-void add_stops(const Curve& curve, const Break& at, std::vector<double>& stops) {
-  const double t = nearest_parameter(curve, at.at);
-  const double step = at.size / curve.derivative(t).norm();
+/// Where breaks divide one curve: parameters in no order. First the places
+/// themselves, then the ends of the short sides beside them, which keep away from
+/// whatever is there already.
+std::vector<double> stops_on(const Curve& curve, const std::vector<const Break*>& breaks) {
   const double low = std::min(curve.begin, curve.end);
   const double high = std::max(curve.begin, curve.end);
-  const double margin = std::max(step / 3, 1e-9 * (high - low));
-  for (const double stop : {t - step, t, t + step}) {
-    const auto close = [&](double other) { return std::abs(stop - other) < margin; };
-    if (stop < low + margin || stop > high - margin) continue;
+  std::vector<double> stops;
+  const auto add = [&](double stop, double from_ends, double from_stops) {
+    const auto close = [&](double other) { return std::abs(stop - other) < from_stops; };
+    if (stop < low + from_ends || stop > high - from_ends) return;
     if (std::none_of(stops.begin(), stops.end(), close)) stops.push_back(stop);
-  }
+  };
+  const double least = 1e-9 * (high - low);
+  for (const bool beside : {false, true})
+    for (const Break* at : breaks) {
+      const double t = nearest_parameter(curve, at->at);
+      const double step = at->size / curve.derivative(t).norm();
+      const double margin = std::max(step / 3, least);
+      if (!beside) add(t, margin, least);
+      if (beside && step > 0)
+        for (const double stop : {t - step, t + step}) add(stop, margin, margin);
+    }
+  return stops;
 }
 
 double distance(const Curve& curve, const Point& x) {
   return (curve.at(nearest_parameter(curve, x)) - x).norm();
 }
 
+/// Whether one arc goes on where another of the same circle or ellipse ends.
+bool goes_on(const Curve& before, const Curve& after) {
+  return before.kind == Curve::Kind::arc && after.kind == Curve::Kind::arc && before.owner == after.owner &&
+         before.centre == after.centre && before.u == after.u && before.v == after.v;
+}
+
+/// Moves joints of a circle or ellipse to breaks beside them: they are places like
+/// any other.
+void move_joints(Loop& loop, const std::vector<Break>& breaks) {
+  for (std::size_t k = 0; k < loop.size() && loop.size() > 1; ++k) {
+    Curve& before = loop[k];
+    Curve& after = loop[(k + 1) % loop.size()];
+    if (!goes_on(before, after)) continue;
+    const Point travel = before.derivative(before.end) * (before.end > before.begin ? 1.0 : -1.0);
+    for (const Break& at : breaks) {
+      const Point way = at.at - before.at(before.end);
+      if (!(at.owner == before.owner) || way.norm() >= at.size / 3) continue;
+      const bool is_past = way.dot(travel) > 0;
+      const double shift =
+          nearest_parameter(is_past ? after : before, at.at) - (is_past ? after.begin : before.end);
+      before.end += shift;
+      after.begin += shift;
+      break;
+    }
+  }
+}
+
 }  // namespace
 
 Region broken(Region region, const std::vector<Break>& breaks) {
+  for (Loop& loop : region.loops) move_joints(loop, breaks);
   // The curves a break belongs to: the nearest of its owner's, and both at a joint.
   std::vector<double> nearest(breaks.size(), std::numeric_limits<double>::infinity());
   for (std::size_t b = 0; b < breaks.size(); ++b)
@@ -55,12 +94,13 @@ Region broken(Region region, const std::vector<Break>& breaks) {
   for (Loop& loop : region.loops) {
     Loop divided;
     for (const Curve& curve : loop) {
-      std::vector<double> stops;
+      std::vector<const Break*> own;
       for (std::size_t b = 0; b < breaks.size(); ++b) {
         const double reach = nearest[b] + 1e-9 * (curve.at(curve.end) - curve.at(curve.begin)).norm();
         if (curve.owner == breaks[b].owner && distance(curve, breaks[b].at) <= reach)
-          add_stops(curve, breaks[b], stops);
+          own.push_back(&breaks[b]);
       }
+      std::vector<double> stops = stops_on(curve, own);
       std::sort(stops.begin(), stops.end());
       if (curve.end < curve.begin) std::reverse(stops.begin(), stops.end());
       stops.push_back(curve.end);

@@ -16,8 +16,8 @@ struct Break {
 };
 
 /// The region with its curves divided at the breaks. A break takes the place
-/// of its owner's edge that is nearest to it; at the end of a curve, or nearer
-/// to another division than a third of its size, it divides nothing.
+/// of its owner's edge that is nearest to it; nearer to a corner than a third of
+/// its size it divides nothing, a joint of arcs as near moves to it.
 Region broken(Region region, const std::vector<Break>& breaks);
 
 }  // namespace raiser::mesh

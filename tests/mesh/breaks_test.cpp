@@ -41,7 +41,22 @@ TEST(Breaks, DivideAnArcAlsoAcrossItsJoints) {
     nearest = std::min(nearest, (curve.start() - at).norm());
     EXPECT_GT(std::abs(curve.end - curve.begin) * 10, 0.1);  // no slivers
   }
-  EXPECT_LT(nearest, 0.2);
+  EXPECT_LT(nearest, 1e-12);  // the joint is where the break is
+}
+
+TEST(Breaks, NearOneAnotherAreAllVertices) {
+  const auto on = [](double angle) {
+    return Point(Point(5, 0) + 10 * Point(std::cos(angle), std::sin(angle)));
+  };
+  const std::vector<Break> breaks{{{Owner::Kind::raiser, 0}, on(1.0), 1.0},
+                                  {{Owner::Kind::raiser, 0}, on(1.02), 1.0}};
+  const Region cut = broken(trace(plate()), breaks);
+  EXPECT_NEAR(length_of(cut.loops[1]), 20 * std::acos(-1.0), 1e-9);
+  for (const Break& at : breaks) {
+    double nearest = 1;
+    for (const Curve& curve : cut.loops[1]) nearest = std::min(nearest, (curve.start() - at.at).norm());
+    EXPECT_LT(nearest, 1e-12);
+  }
 }
 
 TEST(Breaks, AtAnEndDivideNothing) {
