@@ -53,23 +53,43 @@ double force_miss(const Pin& pin, const BearingPressure& pressure) {
   return (sum - pin.force).norm() / size;
 }
 
-UnitLoad doubt_of(const Plate& plate, const Pin& pin, const PinContact& contact) {
-  UnitLoad doubt =
-      unit_load(plate, "doubt of contact",
-                [owner = pin.owner, centre = pin.centre, now = contact.pressure, before = contact.before](
-                    const Owner& at, const Point& x, const Point& n) -> Point {
-                  if (!(at == owner)) return Point::Zero();
-                  const double angle = std::atan2(x.y() - centre.y(), x.x() - centre.x());
-                  return (before.at(angle) - now.at(angle)) * n;
-                });
+/// What the pressure of the degree before was where it is now: of arcs, at the same
+/// share of the arc, carrying the same force. The ends move as well, but what that
+/// changes of the stress is only as much as the stress changes over the way.
+double before_at(const PinContact& contact, double angle) {
+  const BearingPressure &now = contact.pressure, &before = contact.before;
+  using Form = BearingPressure::Form;
+  if (now.form != Form::arc || before.form != Form::arc) return before.at(angle);
+  const double way = unwound(angle, now.begin) - now.begin;
+  const double ratio = (before.end - before.begin) / (now.end - now.begin);
+  return way > now.end - now.begin ? 0.0 : ratio * before.at(before.begin + ratio * way);
+}
+
+/// The difference of the pressures one degree before from those now, twice: as
+/// far as the bounds of contact reach. It is even under the mirror lines that the
+/// pressures were found with, which rounding hides.
+UnitLoad doubt_of(const std::vector<Pin>& pins, const std::vector<PinContact>& contacts,
+                  const std::vector<std::size_t>& loads, mesh::Mirrors mirrors) {
+  UnitLoad doubt{"doubt of contact",
+                 [pins, contacts](const Owner& at, const Point& x, const Point& n) -> Point {
+                   for (std::size_t p = 0; p < pins.size(); ++p) {
+                     if (!(at == pins[p].owner)) continue;
+                     const double angle = std::atan2(x.y() - pins[p].centre.y(), x.x() - pins[p].centre.x());
+                     return 2 * (contacts[p].pressure.at(angle) - before_at(contacts[p], angle)) * n;
+                   }
+                   return Point::Zero();
+                 }};
+  doubt.under_x = mirrors.x ? Parity::even : Parity::neither;
+  doubt.under_y = mirrors.y ? Parity::even : Parity::neither;
   doubt.doubt = true;
+  doubt.loads = loads;
   return doubt;
 }
 
 }  // namespace
 
 PinsInContact with_contact(const Problem& problem, double tolerance) {
-  PinsInContact result{problem, {}, {}, ""};
+  PinsInContact result{problem, {}, std::nullopt, ""};
   const Plate& plate = problem.plate;
   std::vector<std::size_t> which;
   std::vector<Pin> pins;
@@ -94,15 +114,15 @@ PinsInContact with_contact(const Problem& problem, double tolerance) {
                               is_even(problem, other, pins, {.x = false, .y = true})};
   const Contact contact = find_contact(plate, problem.material, other.traction, mirrors,
                                        held_edges(plate, problem.supports), pins, tolerance);
-  result.reason = contact.reason;
+  if (!contact.found) result.reason = contact.reason;
   if (contact.pins.empty()) return result;
   for (std::size_t p = 0; p < pins.size(); ++p) {
     const PinContact& found = contact.pins[p];
     result.problem.loads[which[p]].bearing = found.pressure;
     result.pins.push_back({which[p], found.all_round, found.begin, found.end, found.largest, found.largest_at,
                            force_miss(pins[p], found.pressure), found.pressure});
-    result.doubts.push_back(doubt_of(plate, pins[p], found));
   }
+  result.doubt = doubt_of(pins, contact.pins, which, mirrors);
   return result;
 }
 

@@ -278,7 +278,8 @@ Solution report(const Problem& problem, const DegreeSequence& sequence,
   for (const Displacements& level : last_of(sequence.displacements())) fields.emplace_back(model, level);
   std::vector<Section> sections;
   for (const RaiserFindings& found : solution.combined.raisers) sections.push_back(found.section);
-  solution.ligaments = ligaments(problem.plate, sections, fields);
+  solution.ligaments =
+      ligaments(problem.plate, sections, fields, largest_doubt(model, sequence.scans().back()));
   solution.places = place_findings(places, fields, problem.material);
   solution.field = std::move(fields.back());
 

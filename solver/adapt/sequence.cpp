@@ -29,23 +29,23 @@ EdgeValue DegreeSequence::value(std::size_t load_case, std::size_t raiser, Quant
   const RaiserExtremes& last = scans_.back().extremes[load_case][raiser];
   const double size = std::max(std::abs(last[0].value), std::abs(last[1].value));
   const Point arm = last[k].point - centres_[raiser];
-  return {{values.back(), error_bound(values, size) + doubt(load_case, raiser)},
+  return {{values.back(), error_bound(values, size) + doubt(load_case, raiser, quantity)},
           last[k].point,
           std::atan2(arm.y(), arm.x()),
           last[k].traction_miss};
 }
 
-double DegreeSequence::doubt(std::size_t load_case, std::size_t raiser) const {
-  const auto& loads = model_->loads();
-  const auto holds_pin = [&](const UnitLoad& load) { return !load.loads.empty(); };
-  if (load_case > 0 && !holds_pin(loads[load_case - 1])) return 0.0;
-  double sum = 0.0;
-  for (std::size_t l = 0; l < loads.size(); ++l) {
-    if (!loads[l].doubt) continue;
-    const RaiserExtremes& extremes = scans_.back().extremes[l + 1][raiser];
-    sum += std::max(std::abs(extremes[0].value), std::abs(extremes[1].value));
-  }
-  return sum;
+double DegreeSequence::doubt(std::size_t load_case, std::size_t raiser, Quantity quantity) const {
+  if (!scanner_.has_doubt(load_case)) return 0.0;
+  const auto k = static_cast<std::size_t>(quantity);
+  const EdgeScan& last = scans_.back();
+  return std::abs(last.doubted[load_case][raiser][k].value - last.extremes[load_case][raiser][k].value);
+}
+
+double DegreeSequence::doubt_excess(const Ask& ask) const {
+  if (is_at_tip(ask.quantity)) return tip_excess(ask, tip_doubt(0, ask.raiser));
+  const double doubt_of_it = doubt(0, ask.raiser, ask.quantity);
+  return doubt_of_it == 0.0 ? 0.0 : doubt_of_it / (ask.tolerance * peak(ask.raiser));
 }
 
 double DegreeSequence::peak(std::size_t raiser) const {
@@ -77,22 +77,30 @@ std::array<Estimate, 3> DegreeSequence::tip_value(std::size_t load_case, std::si
       result[i].bound =
           std::max(result[i].bound,
                    std::abs(tip_scanner_.value(tip_scans_.back(), load_case, tip, d)[i] - result[i].value));
+    result[i].bound += tip_doubt(load_case, tip)[i];
   }
   return result;
 }
 
-double DegreeSequence::tip_excess(const Ask& ask) const {
+Eigen::Vector3d DegreeSequence::tip_doubt(std::size_t load_case, std::size_t tip) const {
+  if (!scanner_.has_doubt(load_case)) return Eigen::Vector3d::Zero();
+  return tip_scanner_.value(tip_scans_.back(), *doubt_in(*model_) + 1, tip, 0).cwiseAbs();
+}
+
+double DegreeSequence::tip_excess(const Ask& ask, const Eigen::Vector3d& bounds) const {
   std::vector<Eigen::Vector3d> k;
   for (std::size_t tip = 0; tip < tip_scanner_.tips(); ++tip)
     k.push_back(tip_scanner_.value(tip_scans_.back(), 0, tip, 0));
-  const std::array<Estimate, 3> own = tip_value(0, ask.raiser);
   const bool is_t = ask.quantity == Quantity::t_stress;
-  const double bound = is_t ? own[2].bound : std::max(own[0].bound, own[1].bound);
+  const double bound = is_t ? bounds[2] : std::max(bounds[0], bounds[1]);
   return bound / allowed_at_tip(plate_->cracks, k, ask);
 }
 
 double DegreeSequence::excess(const Ask& ask) const {
-  if (is_at_tip(ask.quantity)) return tip_excess(ask);
+  if (is_at_tip(ask.quantity)) {
+    const std::array<Estimate, 3> own = tip_value(0, ask.raiser);
+    return tip_excess(ask, {own[0].bound, own[1].bound, own[2].bound});
+  }
   const double allowed = ask.tolerance * peak(ask.raiser);
   const double bound = value(0, ask.raiser, ask.quantity).stress.bound;
   return bound == 0.0 ? 0.0 : bound / allowed;

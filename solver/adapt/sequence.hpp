@@ -37,10 +37,14 @@ class DegreeSequence {
 
   /// Bound of an asked number over its tolerance; it is met at 1 or below.
   double excess(const Ask& ask) const;
+  /// The part of it that comes from what is not known of pressures: no finer mesh
+  /// and no higher degree takes it away.
+  double doubt_excess(const Ask& ask) const;
 
  private:
-  /// The largest stress on the raiser that what is not known of pressures makes.
-  double doubt(std::size_t load_case, std::size_t raiser) const;
+  /// What the doubt of the model changes of a value at a raiser, and of K and T.
+  double doubt(std::size_t load_case, std::size_t raiser, Quantity quantity) const;
+  Eigen::Vector3d tip_doubt(std::size_t load_case, std::size_t tip) const;
 
   const Model* model_;
   const Plate* plate_;
@@ -52,7 +56,7 @@ class DegreeSequence {
   TipScanner tip_scanner_;
   std::vector<TipScan> tip_scans_;
 
-  double tip_excess(const Ask& ask) const;
+  double tip_excess(const Ask& ask, const Eigen::Vector3d& bounds) const;
 };
 
 }  // namespace raiser::solver

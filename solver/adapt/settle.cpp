@@ -1,6 +1,7 @@
 #include <fmt/format.h>
 
 #include <algorithm>
+#include <array>
 #include <chrono>
 #include <cmath>
 #include <optional>
@@ -80,6 +81,15 @@ std::vector<SingularPlace> singular_places(const Problem& problem, const mesh::R
   return singular_places(boundary, held, sum_of(loads), problem.material);
 }
 
+/// Where the pressure of pins ends: with a root in contact, with a kink by a cosine.
+std::vector<Point> ends_of_pressure(const Problem& problem) {
+  std::vector<Point> result;
+  for (const Load& load : problem.loads)
+    if (load.kind == Load::Kind::pin)
+      for (const mesh::Break& end : breaks(problem.plate, load)) result.push_back(end.at);
+  return result;
+}
+
 /// The first mesh for a tolerance, before anything is solved. Singular places
 /// that geometry alone does not show are handed on, those of mirror images too.
 mesh::SizeRule first_rule(const Problem& problem, double tolerance,
@@ -87,6 +97,10 @@ mesh::SizeRule first_rule(const Problem& problem, double tolerance,
   mesh::SizeRule rule;
   for (const SingularPlace& place : places)
     if (place.kind != SingularPlace::Kind::corner) rule.singular.push_back(place.site.vertex.at);
+  for (const Point& end : ends_of_pressure(problem)) {
+    rule.singular.push_back(end);
+    rule.joint_growth = 3.0;  // the largest stress may be just there
+  }
   if (tolerance < 5e-5) rule.turn *= 0.8;
   if (tolerance < 1e-5) {
     rule.growth = 0.7;
@@ -125,8 +139,16 @@ void refine(const Plate& plate, mesh::Mirrors mirrors, const Ask& ask, double fa
 int first_degree(double tolerance) { return tolerance < 5e-4 ? 4 : 3; }
 int last_degree(double tolerance) { return tolerance < 1e-5 ? max_degree : 8; }
 
-/// Raises the degree until every asked number is met, refinement pays more, or
-/// the budget is spent. Returns the largest excess.
+/// Whether an asked number stays in doubt because the pressure of pins is not
+/// known well enough, however fine the mesh.
+bool is_doubtful(const DegreeSequence& sequence, const std::vector<Ask>& asks) {
+  constexpr double share = 0.6;
+  return std::any_of(asks.begin(), asks.end(),
+                     [&](const Ask& ask) { return sequence.doubt_excess(ask) > share; });
+}
+
+/// Raises the degree until every asked number is met, refinement pays more, only
+/// better known pressures help, or the budget is spent. Returns the largest excess.
 double raise_degree(DegreeSequence& sequence, const std::vector<Ask>& asks, double tolerance, int refinement,
                     Clock::time_point start, std::vector<Level>& levels) {
   double worst = std::numeric_limits<double>::infinity();
@@ -142,6 +164,7 @@ double raise_degree(DegreeSequence& sequence, const std::vector<Ask>& asks, doub
     for (std::size_t h = 0; h < sequence.scans().back().extremes[0].size(); ++h)
       level.peak = std::max(level.peak, sequence.peak(h));
     levels.push_back(level);
+    if (degree >= first + 2 && worst > 1.0 && is_doubtful(sequence, asks)) break;
   }
   return worst;
 }
@@ -153,7 +176,8 @@ std::string place_of(const Ask& ask, const Plate& plate) {
 }
 
 /// Why the sequence does not do, for at least one asked number.
-std::string reason_for(const DegreeSequence& sequence, const Plate& plate, const std::vector<Ask>& asks) {
+std::string reason_for(const DegreeSequence& sequence, const Plate& plate, const std::vector<Ask>& asks,
+                       int refinements) {
   std::vector<double> excess;
   for (const Ask& ask : asks) excess.push_back(sequence.excess(ask));
   const auto missed = std::count_if(excess.begin(), excess.end(), [](double e) { return e > 1.0; });
@@ -161,7 +185,7 @@ std::string reason_for(const DegreeSequence& sequence, const Plate& plate, const
   return fmt::format(
       "{} of {} asked numbers miss their tolerance after {} refinements and degree {}; the worst, at {}, "
       "has a bound {:.2g} times the tolerance",
-      missed, asks.size(), most_refinements, sequence.displacements().back().degree,
+      missed, asks.size(), refinements, sequence.displacements().back().degree,
       place_of(asks[worst - excess.begin()], plate), *worst);
 }
 
@@ -180,47 +204,66 @@ std::string contact_reason(const PinsInContact& contact) {
                                : "; the numbers stand on the last pressure tried");
 }
 
-/// The share of a tolerance that may go into the pressure of pins in contact.
-constexpr double contact_share = 0.3;
+/// A solution, and whether better known pressures of pins would mend it.
+struct Attempt {
+  Solution solution;
+  bool is_doubtful = false;
+};
 
-}  // namespace
-
-Solution settle(const Problem& asked, const std::vector<Ask>& asks, Report extent) {
-  const auto start = Clock::now();
-  require_legal(asked, asks);
-  const double tolerance = least_tolerance(asks);
-  const PinsInContact contact = with_contact(asked, contact_share * tolerance);
+/// Refines until the asked numbers are met, or the budget is spent, or only
+/// better known pressures help.
+Attempt refine_until_met(const PinsInContact& contact, const std::vector<Ask>& asks, double tolerance,
+                         Report extent, Clock::time_point start, std::vector<Level>& levels) {
   const Problem& problem = contact.problem;
   std::vector<UnitLoad> loads = unit_loads(problem.plate, problem.loads, problem.supports);
   const mesh::Region boundary = divided(problem);
   const std::vector<SingularPlace> places = singular_places(problem, boundary, loads);
-  loads.insert(loads.end(), contact.doubts.begin(), contact.doubts.end());
+  if (contact.doubt) loads.push_back(*contact.doubt);
   const mesh::Mirrors mirrors = usable_mirrors(problem, loads);
   const mesh::Region region = mesh::cut(boundary, mirrors);
   const std::vector<HeldEdge> held = held_edges(problem.plate, problem.supports);
   mesh::SizeRule rule = first_rule(problem, tolerance, places);
-  std::vector<Level> levels;
   for (int refinement = 0;; ++refinement) {
     const Model model(mesh::triangulate(region, rule), mirrors, problem.material, problem.plate.thickness,
                       loads, held);
     DegreeSequence sequence(model, problem.plate);
     const double worst = raise_degree(sequence, asks, tolerance, refinement, start, levels);
     const bool is_settled = worst <= 1.0;
-    if (is_settled || refinement == most_refinements) {
+    const bool doubtful = !is_settled && is_doubtful(sequence, asks);
+    if (is_settled || doubtful || refinement == most_refinements) {
       Solution solution = report(problem, sequence, places, extent);
       const bool is_met = is_settled && contact.reason.empty();
       solution.status = is_met ? Solution::Status::settled : Solution::Status::not_met;
-      if (!is_settled) solution.reason = reason_for(sequence, problem.plate, asks);
+      if (!is_settled) solution.reason = reason_for(sequence, problem.plate, asks, refinement);
+      if (doubtful) solution.reason += "; the contact pressure of the pins is not known better";
       if (!contact.reason.empty()) solution.reason = contact_reason(contact);
       solution.pins = contact.pins;
-      solution.levels = std::move(levels);
-      solution.seconds = seconds_since(start);
-      return solution;
+      return {std::move(solution), doubtful};
     }
     const double finer = std::pow(0.6, refinement + 1);
     for (const Ask& ask : asks)
       if (sequence.excess(ask) > 1.0) refine(problem.plate, mirrors, ask, finer, rule);
   }
+}
+
+}  // namespace
+
+Solution settle(const Problem& problem, const std::vector<Ask>& asks, Report extent) {
+  // Of a tolerance, what may go into the pressure of pins in contact, at first and at last.
+  constexpr std::array contact_shares = {0.3, 0.03, 0.003};
+  const auto start = Clock::now();
+  require_legal(problem, asks);
+  const double tolerance = least_tolerance(asks);
+  std::vector<Level> levels;
+  Attempt attempt;
+  for (const double share : contact_shares) {
+    attempt =
+        refine_until_met(with_contact(problem, share * tolerance), asks, tolerance, extent, start, levels);
+    if (!attempt.is_doubtful) break;
+  }
+  attempt.solution.levels = std::move(levels);
+  attempt.solution.seconds = seconds_since(start);
+  return std::move(attempt.solution);
 }
 
 }  // namespace raiser::solver

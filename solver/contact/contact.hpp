@@ -23,8 +23,9 @@ struct PinContact {
 
 /// The contact of all pins, found together.
 struct Contact {
-  bool settled = false;
-  std::string reason;  ///< why not; empty when settled
+  bool found = false;    ///< the conditions of contact hold, with the bounds given
+  bool settled = false;  ///< found, and the bounds are within the tolerance
+  std::string reason;    ///< why not settled; empty when settled
   std::vector<PinContact> pins;
   int degree = 0;
   std::size_t unknowns = 0;

@@ -79,6 +79,12 @@ std::vector<std::size_t> image_of(const Plate& plate, mesh::Mirrors mirror) {
 
 }  // namespace
 
+std::optional<std::size_t> doubt_in(const Model& model) {
+  for (std::size_t l = 0; l < model.loads().size(); ++l)
+    if (model.loads()[l].doubt) return l;
+  return std::nullopt;
+}
+
 EdgeScanner::EdgeScanner(const Model& model, const Plate& plate)
     : model_(&model), raisers_(mesh::raiser_count(plate)) {
   for (const mesh::BoundarySide& side : model.mesh().boundary())
@@ -99,13 +105,29 @@ Eigen::VectorXd EdgeScanner::weights(std::size_t load_case, std::size_t image) c
   return model_->factors(load_case, model_->images()[image]);
 }
 
+bool EdgeScanner::has_doubt(std::size_t load_case) const {
+  const auto doubt = doubt_in(*model_);
+  if (!doubt || load_case == 0) return doubt.has_value();
+  const std::vector<std::size_t>& in_doubt = model_->loads()[*doubt].loads;
+  const std::vector<std::size_t>& own = model_->loads()[load_case - 1].loads;
+  return load_case != *doubt + 1 &&
+         std::find_first_of(own.begin(), own.end(), in_doubt.begin(), in_doubt.end()) != own.end();
+}
+
 /// The search for one quantity in one case over all raisers.
 struct EdgeScanner::Search {
   const EdgeScanner& scanner;
   const Displacements& displacements;
   const EdgeScan& scan;
   std::size_t load_case;
+  bool doubted;  ///< with the model's doubt added
   Quantity quantity;
+
+  Eigen::VectorXd weights(std::size_t image) const {
+    Eigen::VectorXd result = scanner.weights(load_case, image);
+    if (doubted) result += scanner.weights(*doubt_in(*scanner.model_) + 1, image);
+    return result;
+  }
 
   struct Best {
     double value = -std::numeric_limits<double>::infinity();
@@ -118,7 +140,7 @@ struct EdgeScanner::Search {
   template <class Visit>
   void each(Visit visit) const {
     for (std::size_t image = 0; image < scanner.model_->images().size(); ++image) {
-      const Eigen::VectorXd weight = scanner.weights(load_case, image);
+      const Eigen::VectorXd weight = weights(image);
       for (std::size_t side = 0; side < scanner.sides_.size(); ++side)
         visit(side, image, wanted(scan.sides[side], weight, quantity, scanner.model_->material()));
     }
@@ -147,7 +169,7 @@ struct EdgeScanner::Search {
     const EdgeProbe probe(*scanner.model_, displacements.degree, {&best.s, 1});
     const mesh::BoundarySide& side = scanner.sides_[best.side];
     const SideStress stress = probe.at(side, displacements);
-    const Eigen::VectorXd weight = scanner.weights(load_case, best.image);
+    const Eigen::VectorXd weight = weights(best.image);
     Extreme result;
     result.value = wanted(stress, weight, quantity, scanner.model_->material())[0];
     if (quantity == Quantity::smallest_edge_stress) result.value = -result.value;
@@ -158,21 +180,35 @@ struct EdgeScanner::Search {
   }
 };
 
+std::vector<RaiserExtremes> EdgeScanner::extremes(const Displacements& displacements, const EdgeScan& scan,
+                                                  std::size_t load_case, bool doubted) const {
+  std::vector<RaiserExtremes> result(raisers_);
+  for (std::size_t k = 0; k < quantity_count; ++k) {
+    const Search search{*this, displacements, scan, load_case, doubted, static_cast<Quantity>(k)};
+    const auto best = search.between_nodes();
+    for (std::size_t h = 0; h < raisers_; ++h) result[h][k] = search.from_solution(best[h]);
+  }
+  return result;
+}
+
 EdgeScan EdgeScanner::scan(const Displacements& displacements) const {
   EdgeScan result;
   const EdgeProbe probe(*model_, displacements.degree, search_points(),
                         sides_at_search_points(displacements.degree));
   for (const mesh::BoundarySide& side : sides_) result.sides.push_back(probe.at(side, displacements));
   // With one load, the load alone is all loads together.
-  const std::size_t cases = model_->loads().size() == 1 ? 1 : model_->loads().size() + 1;
-  result.extremes.assign(cases, std::vector<RaiserExtremes>(raisers_));
-  for (std::size_t c = 0; c < cases; ++c)
-    for (std::size_t k = 0; k < quantity_count; ++k) {
-      const Search search{*this, displacements, result, c, static_cast<Quantity>(k)};
-      const auto best = search.between_nodes();
-      for (std::size_t h = 0; h < raisers_; ++h) result.extremes[c][h][k] = search.from_solution(best[h]);
-    }
-  if (cases == 1) result.extremes.push_back(result.extremes.front());
+  const auto doubt = doubt_in(*model_);
+  const bool is_alone = model_->loads().size() == (doubt ? 2 : 1);
+  for (std::size_t c = 0; c <= model_->loads().size(); ++c) {
+    const bool repeats = c > 0 && is_alone && !(doubt && c == *doubt + 1);
+    const bool has_values = c == 0 || !(doubt && c == *doubt + 1);
+    result.extremes.push_back(!has_values ? std::vector<RaiserExtremes>{}
+                              : repeats   ? result.extremes.front()
+                                          : extremes(displacements, result, c, false));
+    result.doubted.push_back(!has_doubt(c) ? std::vector<RaiserExtremes>{}
+                             : repeats     ? result.doubted.front()
+                                           : extremes(displacements, result, c, true));
+  }
   return result;
 }
 

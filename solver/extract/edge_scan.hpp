@@ -1,12 +1,17 @@
 #pragma once
 
 #include <array>
+#include <optional>
 #include <vector>
 
 #include "solver/extract/quantity.hpp"
 #include "solver/field/edge.hpp"
 
 namespace raiser::solver {
+
+/// The load of a model that is no part of all loads together, but what is not known
+/// of the pressures of the loads in it; a model has at most one.
+std::optional<std::size_t> doubt_in(const Model& model);
 
 /// An extreme value on a raiser's edge in one solution.
 struct Extreme {
@@ -21,6 +26,8 @@ using RaiserExtremes = std::array<Extreme, quantity_count>;
 /// positions on the sides under all loads.
 struct EdgeScan {
   std::vector<std::vector<RaiserExtremes>> extremes;  ///< [case][raiser]
+  /// The same with the model's doubt added, for cases that it belongs to; empty for others.
+  std::vector<std::vector<RaiserExtremes>> doubted;
   std::vector<SideStress> sides;  ///< by EdgeScanner::sides(), at search_points(), per load
 };
 
@@ -39,9 +46,13 @@ class EdgeScanner {
   std::size_t raiser_in(std::size_t side, std::size_t image) const;
   /// Factor of each load's stress in an image for a case.
   Eigen::VectorXd weights(std::size_t load_case, std::size_t image) const;
+  /// Whether what is not known of pressures belongs to a case.
+  bool has_doubt(std::size_t load_case) const;
 
  private:
   struct Search;
+  std::vector<RaiserExtremes> extremes(const Displacements& displacements, const EdgeScan& scan,
+                                       std::size_t load_case, bool doubted) const;
   const Model* model_;
   std::size_t raisers_;
   std::vector<mesh::BoundarySide> sides_;

@@ -109,7 +109,7 @@ std::string start_name(const mesh::Raiser& raiser, bool across, bool from_begin)
 }
 
 Ligament follow(const Plate& plate, std::size_t raiser, const Section& section, const mesh::Interval& piece,
-                bool from_begin, const std::vector<Field>& fields) {
+                bool from_begin, const std::vector<Field>& fields, double doubt) {
   const bool across = section.direction == Section::Direction::across;
   Ligament ligament;
   ligament.raiser = raiser;
@@ -137,6 +137,7 @@ Ligament follow(const Plate& plate, std::size_t raiser, const Section& section, 
       for (const auto& value : values) sequence.push_back(value[c]);
       point.bound = std::max(point.bound, error_bound(sequence, size));
     }
+    point.bound += doubt;
     ligament.points.push_back(point);
   }
   return ligament;
@@ -161,7 +162,11 @@ std::vector<std::vector<EdgeSample>> edge_samples(const Model& model, const Plat
       const Eigen::VectorXd shear = last.sides[side].shear * weight;
       const RaiserExtremes& extremes = last.extremes[0][raiser];
       const double size = std::max(std::abs(extremes[0].value), std::abs(extremes[1].value));
-      const double bound = largest_bound(tangential, size);
+      double bound = largest_bound(tangential, size);
+      if (scanner.has_doubt(0))
+        bound += (last.sides[side].tangential * scanner.weights(*doubt_in(model) + 1, image))
+                     .cwiseAbs()
+                     .maxCoeff();
       // The side's last point is the next side's first.
       for (std::size_t q = 0; q + 1 < positions.size(); q += 2) {
         EdgeSample sample;
@@ -181,14 +186,28 @@ std::vector<std::vector<EdgeSample>> edge_samples(const Model& model, const Plat
   return result;
 }
 
+double largest_doubt(const Model& model, const EdgeScan& scan) {
+  const auto doubt = doubt_in(model);
+  double largest = 0.0;
+  if (doubt)
+    for (const SideStress& side : scan.sides) {
+      const auto column = static_cast<Eigen::Index>(*doubt);
+      largest = std::max({largest, side.tangential.col(column).cwiseAbs().maxCoeff(),
+                          side.normal.col(column).cwiseAbs().maxCoeff()});
+    }
+  return largest;
+}
+
 std::vector<Ligament> ligaments(const Plate& plate, const std::vector<Section>& sections,
-                                const std::vector<Field>& fields) {
+                                const std::vector<Field>& fields, double doubt) {
   std::vector<Ligament> result;
   for (std::size_t i = 0; i < sections.size(); ++i)
     for (const mesh::Interval& piece :
          mesh::material_along(plate, sections[i].direction, sections[i].station)) {
-      if (piece.raiser_at_begin() == i) result.push_back(follow(plate, i, sections[i], piece, true, fields));
-      if (piece.raiser_at_end() == i) result.push_back(follow(plate, i, sections[i], piece, false, fields));
+      if (piece.raiser_at_begin() == i)
+        result.push_back(follow(plate, i, sections[i], piece, true, fields, doubt));
+      if (piece.raiser_at_end() == i)
+        result.push_back(follow(plate, i, sections[i], piece, false, fields, doubt));
     }
   return result;
 }

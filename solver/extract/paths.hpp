@@ -15,11 +15,15 @@ std::vector<std::vector<EdgeSample>> edge_samples(const Model& model, const Plat
                                                   const EdgeScanner& scanner,
                                                   const std::vector<EdgeScan>& scans);
 
+/// The largest stress that what is not known of pressures makes, MPa: it is on the
+/// edge that they press on. 0 where all is known.
+double largest_doubt(const Model& model, const EdgeScan& scan);
+
 /// The ligaments on every side of every raiser along the section that its
 /// nominal stresses stand on, under all loads. `fields` are those of
-/// successive degrees; the last gives the values.
+/// successive degrees; the last gives the values. `doubt` is added to the bounds.
 std::vector<Ligament> ligaments(const Plate& plate, const std::vector<Section>& sections,
-                                const std::vector<Field>& fields);
+                                const std::vector<Field>& fields, double doubt = 0.0);
 
 /// The mean of sigma_xx over the gross section x = station of the plate, and
 /// its largest departure from the nominal distribution, which is `mean` at the

@@ -8,10 +8,9 @@
 #include <numbers>
 
 #include "mesh/triangulate/triangulate.hpp"
+#include "solver/linear/threads.hpp"
 #include "solver/solution.hpp"
 
-// The tests whose names begin with DISABLED_ do not hold yet: where tolerances are
-// tight the contact pressure does not settle, and the program says "not met".
 namespace raiser::solver {
 namespace {
 
@@ -21,6 +20,8 @@ using mesh::HoleShape;
 constexpr double pi = std::numbers::pi;
 constexpr double modulus = 210000;
 const HookeLaw steel{modulus, 0.3, PlaneState::stress};
+// As the program does: small products gain nothing by threads.
+[[maybe_unused]] const bool has_one_thread = (use_one_thread(), true);
 
 Plate strip(double diameter = 20) {
   return {240, 60, 6, {{"a", HoleShape::circle, diameter, diameter, 0, Point(0, 0), 0}}};
@@ -69,14 +70,22 @@ TEST(Contact, ForceAndInterferenceScaleTogether) {
 
 // H. Hertz (1882), a cylinder in a cylindrical hole, in the form of K. L. Johnson, Contact Mechanics (1985),
 // section 4.2(c): half width b = sqrt(4 F R / (pi E)), 1 / R = 1 / r_pin - 1 / r_hole, largest pressure
-// 2 F / (pi b); a rigid pin, plane stress.
-TEST(Contact, DISABLED_TendsToHertzForSmallArcs) {
-  const double gap = 0.5, force = 60, radius = 10;
+// 2 F / (pi b); a rigid pin, plane stress. Both surfaces count as planes there, which is wrong by a share in
+// proportion to b / r_hole (0.4 % at the larger of these forces): two forces tell the limit.
+TEST(Contact, TendsToHertzForSmallArcs) {
+  const double gap = 0.5, radius = 10;
   const double relative = radius * (radius - gap) / gap;
-  const double half = std::sqrt(4 * force * relative / (pi * modulus));
-  const Contact contact = found(force, gap);
-  EXPECT_NEAR(arc(contact) / 2 * radius, half, 0.003 * half);
-  EXPECT_NEAR(contact.pins[0].largest.value, 2 * force / (pi * half), 0.003 * 2 * force / (pi * half));
+  const auto off = [&](double force) {
+    const double half = std::sqrt(4 * force * relative / (pi * modulus));
+    const Contact contact = found(force, gap, 1e-5);
+    return std::pair{arc(contact) / 2 * radius / half - 1,
+                     contact.pins[0].largest.value / (2 * force / (pi * half)) - 1};
+  };
+  const auto [width_at_60, pressure_at_60] = off(60);
+  const auto [width_at_15, pressure_at_15] = off(15);  // an arc half as wide
+  EXPECT_NEAR(width_at_60, 2 * width_at_15, 0.02 * std::abs(width_at_60));
+  EXPECT_NEAR(2 * width_at_15 - width_at_60, 0.0, 2e-4);
+  EXPECT_NEAR(2 * pressure_at_15 - pressure_at_60, 0.0, 2e-4);
 }
 
 // G. Lame (1852): a rigid disc pressed into a wide plate, p = E |gap| / ((1 + nu) a).
@@ -99,7 +108,7 @@ TEST(Contact, IsTheSameWithoutTheMirrorLine) {
     EXPECT_NEAR(a.value, b.value, a.bound + b.bound);
 }
 
-TEST(Contact, DISABLED_BoundsHoldAgainstAFinerSolution) {
+TEST(Contact, BoundsHoldAgainstAFinerSolution) {
   for (const double gap : {0.0, 0.05, -0.008}) {
     const PinContact coarse = found(5000, gap, 3e-3).pins.at(0);
     const PinContact fine = found(5000, gap, 1e-6).pins.at(0);
@@ -110,7 +119,7 @@ TEST(Contact, DISABLED_BoundsHoldAgainstAFinerSolution) {
 
 // The same contact from pressures at places that are let go and taken up again:
 // no arc, no ends, other functions, another mesh.
-TEST(Contact, DISABLED_AgreesWithAUnilateralSolution) {
+TEST(Contact, AgreesWithAUnilateralSolution) {
   for (const double gap : {0.0, 0.03, -0.006}) {
     const Plate plate = strip();
     const UnitLoad left{
@@ -124,7 +133,7 @@ TEST(Contact, DISABLED_AgreesWithAUnilateralSolution) {
     const Model model(mesh::triangulate(mesh::trace(plate), rule), {}, steel, 6, {left});
     const Pin pin{{Owner::Kind::raiser, 0}, Point::Zero(), 10.0, gap, Point(5000, 0)};
     Room room;
-    const auto start = PinSystem(model, 4, {pin}, room).unilateral(96);
+    const auto start = PinSystem(model, 4, {pin}, room).unilateral(192);
     EXPECT_TRUE(start.settled);
     const PinContact contact = found(5000, gap).pins.at(0);
     for (std::size_t k = 0; k < start.angles[0].size(); ++k) {
@@ -178,13 +187,26 @@ Solution settled(const Problem& problem, double tolerance = 1e-3) {
   return solution;
 }
 
-TEST(PinInContact, DISABLED_IsSettledWithItsForceCarried) {
+/// What a pin in the eye of a lug presses on the half of its edge to the right, N.
+double force_beyond(const PinFindings& pin) {
+  constexpr int panels = 20000;
+  double sum = 0;
+  for (int k = 0; k < panels; ++k) {
+    const double angle = -pi / 2 + pi * (k + 0.5) / panels;
+    sum += pin.pressure.at(angle) * std::cos(angle) * pi / panels;
+  }
+  return sum * 8 * 8;  // radius, thickness
+}
+
+TEST(PinInContact, IsSettledWithItsForceCarried) {
   for (const double clearance : {0.0, 0.1, -0.02}) {
     const Solution solution = settled(lug(clearance));
     ASSERT_EQ(solution.pins.size(), 1U);
     EXPECT_LT(solution.pins[0].force_miss, 1e-8) << clearance;
     EXPECT_TRUE(solution.mirrors_used.y);
-    EXPECT_NEAR(solution.combined.raisers[0].section.normal_force, 32000, 0.002 * 32000);
+    // The section through the eye's centre carries what presses beyond it: with interference more
+    // than the pin's force, since the pin presses the other way, too.
+    EXPECT_NEAR(solution.combined.raisers[0].section.normal_force, force_beyond(solution.pins[0]), 20);
     const Estimate coarse = solution.combined.raisers[0].largest.stress;
     const Estimate fine = settled(lug(clearance), 2e-5).combined.raisers[0].largest.stress;
     EXPECT_NEAR(coarse.value, fine.value, coarse.bound);
@@ -192,7 +214,7 @@ TEST(PinInContact, DISABLED_IsSettledWithItsForceCarried) {
   }
 }
 
-TEST(PinInContact, DISABLED_ClearanceRaisesThePeakOfALug) {
+TEST(PinInContact, ClearanceRaisesThePeakOfALug) {
   const auto peak = [](const Problem& problem) {
     return settled(problem).combined.raisers[0].largest.stress.value;
   };
@@ -201,7 +223,7 @@ TEST(PinInContact, DISABLED_ClearanceRaisesThePeakOfALug) {
 }
 
 // By a support instead of a load at the other end: the same plate.
-TEST(PinInContact, DISABLED_MayPullAtASupport) {
+TEST(PinInContact, MayPullAtASupport) {
   Problem held = lug(0.05);
   held.loads.pop_back();
   held.supports = {{"wall", rectangle::left, 0.0, 0.0}};
@@ -212,7 +234,7 @@ TEST(PinInContact, DISABLED_MayPullAtASupport) {
   EXPECT_LT(a.checks.support_miss, 1e-6);
 }
 
-TEST(PinInContact, DISABLED_TurnedPlateTurnsTheAnswer) {
+TEST(PinInContact, TurnedPlateTurnsTheAnswer) {
   Problem along = lug(0.05);
   Problem across{{40, 120, 8, {{"eye", HoleShape::circle, 16, 16, 0, Point(0, 35), 0}}}, steel, {}};
   across.loads = {pin_load(32000, pi / 2, 0.05), end(rectangle::bottom, 100)};
@@ -223,7 +245,7 @@ TEST(PinInContact, DISABLED_TurnedPlateTurnsTheAnswer) {
   EXPECT_NEAR(a.pins[0].begin.value + pi / 2, b.pins[0].begin.value, 1e-3);
 }
 
-TEST(PinInContact, DISABLED_TwoPinsAndABypassAreFoundTogether) {
+TEST(PinInContact, TwoPinsAndABypassAreFoundTogether) {
   Problem problem{{200,
                    50,
                    5,
