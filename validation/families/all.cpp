@@ -33,6 +33,7 @@ std::vector<Family> families() {
           fillet_chart(),
           fillet_power(),
           textbook_fillets(),
+          lug_pin(),
           elliptic_membrane(),
           orthotropic_infinite(),
           orthotropic_strip_tension(),

@@ -35,6 +35,7 @@ Family fillet_step_bending();
 Family fillet_chart();
 Family fillet_power();
 Family textbook_fillets();
+Family lug_pin();
 Family elliptic_membrane();
 Family orthotropic_infinite();
 Family orthotropic_strip_tension();
