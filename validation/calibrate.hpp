@@ -11,7 +11,18 @@ namespace raiser::validation {
 
 /// One number of a solution held against its truth. Stresses in MPa, K in MPa sqrt(mm).
 struct Trial {
-  enum class What { largest, smallest, von_mises, edge_sample, ligament_point, k_one, k_two, t_stress };
+  enum class What {
+    largest,
+    smallest,
+    von_mises,
+    edge_sample,
+    ligament_point,
+    k_one,
+    k_two,
+    t_stress,
+    contact_pressure,
+    contact_end  ///< rad
+  };
   What what = What::largest;
   std::size_t hole = 0;   ///< or the crack tip
   std::string load;       ///< kind of the load, "together" for several
@@ -31,7 +42,7 @@ Verdict verdict(const Trial& trial);
 
 /// What came of one plate.
 struct PlateTrial {
-  enum class Truth { finer_solution, closed_form, finer_cracked };
+  enum class Truth { finer_solution, closed_form, finer_cracked, finer_pinned };
   std::uint64_t seed = 0;
   Truth truth = Truth::finer_solution;
   bool is_settled = false;
@@ -71,6 +82,12 @@ PlateTrial try_closed_form(std::uint64_t seed);
 /// K_II that is zero by symmetry to rounding is left out.
 PlateTrial try_cracked_plate(std::uint64_t seed);
 
+/// Solves random_pinned_plate(seed), asking all three quantities at every hole, and
+/// holds them, the largest pressures and the ends of the arcs of contact against the
+/// same asked 50 times as finely (200 times without contact), contact, mesh and
+/// degree included; the bounds of that are its doubt.
+PlateTrial try_pinned_plate(std::uint64_t seed);
+
 /// The first `count` seeds whose random plate has at most `most_holes` holes.
 std::vector<std::uint64_t> seeds_with_few_holes(std::size_t count, std::size_t most_holes);
 
@@ -92,6 +109,9 @@ std::vector<const Trial*> peaks(const std::vector<PlateTrial>& plates);
 
 /// All trials of K and T at crack tips.
 std::vector<const Trial*> tip_values(const std::vector<PlateTrial>& plates);
+
+/// All trials of plates with pins: peaks, pressures and ends of contact.
+std::vector<const Trial*> pin_values(const std::vector<PlateTrial>& plates);
 
 /// The result as Markdown: coverage and ratios by group, every miss, every
 /// plate that is not settled, unknowns and CPU time.

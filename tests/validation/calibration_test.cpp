@@ -120,5 +120,21 @@ TEST(Calibration, BoundsOfKAndTHoldOnCrackedPlates) {
   EXPECT_GT(t.median_ratio, 2.0) << "bounds so close to the error are luck";
 }
 
+/// The short run on plates with pins, by cosine and in contact; the full one is in
+/// validation/calibration.md.
+TEST(Calibration, BoundsHoldOnPlatesWithPins) {
+  std::vector<PlateTrial> plates;
+  for (std::uint64_t seed = 0; seed < 8; ++seed) plates.push_back(try_pinned_plate(seed));
+  for (const PlateTrial& plate : plates) {
+    EXPECT_TRUE(plate.is_settled) << "seed " << plate.seed << ": " << plate.reason;
+    EXPECT_FALSE(plate.trials.empty()) << "seed " << plate.seed << ": " << plate.reason;
+  }
+  const Tally t = tally(pin_values(plates));
+  EXPECT_EQ(t.within, t.numbers) << calibration_report(plates);
+  EXPECT_GT(t.numbers, 50u);
+  EXPECT_LT(t.median_ratio, 40.0);
+  EXPECT_GT(t.median_ratio, 2.0) << "bounds so close to the error are luck";
+}
+
 }  // namespace
 }  // namespace raiser::validation

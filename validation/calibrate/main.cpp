@@ -21,8 +21,8 @@ namespace {
 using raiser::validation::PlateTrial;
 
 constexpr const char* usage =
-    "usage: raiser_calibrate [--seeds A..B] [--closed N] [--cracked A..B] [--jobs N]\n"
-    "                        [--short] [--records FILE] [--from FILE]\n"
+    "usage: raiser_calibrate [--seeds A..B] [--closed N] [--cracked A..B] [--pinned A..B]\n"
+    "                        [--jobs N] [--short] [--records FILE] [--from FILE]\n"
     "\n"
     "Solves seeded random plates and plates with a closed form and prints, as\n"
     "Markdown, how often the true error lies within the bound.\n"
@@ -30,14 +30,16 @@ constexpr const char* usage =
     "  --seeds A..B    random plates with the seeds A to B - 1 (default 0..320)\n"
     "  --closed N      N plates with a closed form (default 60)\n"
     "  --cracked A..B  random plates with cracks (default 0..240)\n"
+    "  --pinned A..B   random plates with pins (default 0..120)\n"
     "  --jobs N        worker processes (default 1)\n"
-    "  --short         16 plates with at most two holes, 8 closed forms, 12 plates with cracks\n"
+    "  --short         16 plates with at most two holes, 8 closed forms, 12 plates with cracks, 8 with pins\n"
     "  --records FILE  also writes every number to FILE\n"
     "  --from FILE     solves nothing: reports what --records wrote\n";
 
 struct Options {
   std::uint64_t first = 0, last = 320, closed = 60, jobs = 1;
   std::uint64_t first_cracked = 0, last_cracked = 240;
+  std::uint64_t first_pinned = 0, last_pinned = 120;
   bool is_short = false;
   std::string records, from;
 };
@@ -67,6 +69,9 @@ Options read(const std::vector<std::string>& arguments) {
     } else if (name == "--cracked" && dots != std::string::npos) {
       options.first_cracked = number(name, value.substr(0, dots));
       options.last_cracked = number(name, value.substr(dots + 2));
+    } else if (name == "--pinned" && dots != std::string::npos) {
+      options.first_pinned = number(name, value.substr(0, dots));
+      options.last_pinned = number(name, value.substr(dots + 2));
     } else if (name == "--closed") {
       options.closed = number(name, value);
     } else if (name == "--jobs") {
@@ -100,6 +105,9 @@ std::vector<Task> tasks(const Options& options) {
   const std::uint64_t last_cracked = options.is_short ? 12 : options.last_cracked;
   for (std::uint64_t seed = options.is_short ? 0 : options.first_cracked; seed < last_cracked; ++seed)
     list.push_back({PlateTrial::Truth::finer_cracked, seed});
+  const std::uint64_t last_pinned = options.is_short ? 8 : options.last_pinned;
+  for (std::uint64_t seed = options.is_short ? 0 : options.first_pinned; seed < last_pinned; ++seed)
+    list.push_back({PlateTrial::Truth::finer_pinned, seed});
   return list;
 }
 
@@ -109,6 +117,8 @@ PlateTrial run(const Task& task) {
       return raiser::validation::try_closed_form(task.seed);
     case PlateTrial::Truth::finer_cracked:
       return raiser::validation::try_cracked_plate(task.seed);
+    case PlateTrial::Truth::finer_pinned:
+      return raiser::validation::try_pinned_plate(task.seed);
     case PlateTrial::Truth::finer_solution:
       break;
   }

@@ -15,8 +15,11 @@ namespace {
 using Trials = std::vector<const Trial*>;
 
 bool is_peak(const Trial& trial) { return trial.what <= Trial::What::von_mises; }
-bool is_at_tip(const Trial& trial) { return trial.what >= Trial::What::k_one; }
-bool is_on_path(const Trial& trial) { return !is_peak(trial) && !is_at_tip(trial); }
+bool is_at_tip(const Trial& trial) {
+  return trial.what >= Trial::What::k_one && trial.what <= Trial::What::t_stress;
+}
+bool is_of_contact(const Trial& trial) { return trial.what >= Trial::What::contact_pressure; }
+bool is_on_path(const Trial& trial) { return !is_peak(trial) && !is_at_tip(trial) && !is_of_contact(trial); }
 
 /// The value below which `share` of them lie; 0 for none.
 double quantile(std::vector<double> values, double share) {
@@ -45,6 +48,10 @@ const char* words(Trial::What what) {
       return "K_II";
     case Trial::What::t_stress:
       return "T";
+    case Trial::What::contact_pressure:
+      return "largest contact pressure";
+    case Trial::What::contact_end:
+      return "end of an arc of contact";
   }
   return "";
 }
@@ -93,7 +100,7 @@ std::string coverage_table(const std::vector<PlateTrial>& plates) {
   std::map<std::string, Trials> by_stop;
   for (const PlateTrial& plate : plates)
     for (const Trial& trial : plate.trials) {
-      if (!is_peak(trial)) continue;
+      if (!is_peak(trial) || plate.truth == PlateTrial::Truth::finer_pinned) continue;
       (plate.truth == PlateTrial::Truth::closed_form ? closed : random).push_back(&trial);
       by_stop[stop_of(plate)].push_back(&trial);
     }
@@ -131,6 +138,17 @@ std::string tip_table(const std::vector<PlateTrial>& plates) {
   return text;
 }
 
+/// Plates with pins.
+std::string pin_table(const std::vector<PlateTrial>& plates) {
+  const Trials all = pin_values(plates);
+  if (all.empty()) return "";
+  std::string text = "\nPlates with pins:\n\n" + std::string(heading) + row("**all**", all);
+  text += rows_by(all, [](const Trial& t) { return std::string(words(t.what)); });
+  text += rows_by(all, [](const Trial& t) { return t.load; });
+  text += rows_by(all, [](const Trial& t) { return ligament_class(t.ligament); });
+  return text;
+}
+
 std::string along_paths(const std::vector<PlateTrial>& plates) {
   Trials paths;
   for (const PlateTrial& plate : plates)
@@ -149,8 +167,15 @@ const char* name_of(PlateTrial::Truth truth) {
       return "closed form";
     case PlateTrial::Truth::finer_cracked:
       return "cracked seed";
+    case PlateTrial::Truth::finer_pinned:
+      return "pinned seed";
   }
   return "";
+}
+
+const char* unit_of(Trial::What what) {
+  if (what == Trial::What::contact_end) return "rad";
+  return what == Trial::What::k_one || what == Trial::What::k_two ? "MPa sqrt(mm)" : "MPa";
 }
 
 std::string misses(const std::vector<PlateTrial>& plates) {
@@ -164,8 +189,7 @@ std::string misses(const std::vector<PlateTrial>& plates) {
           "truth +- {:.1g} {}\n",
           found == Verdict::outside ? "outside" : "undecided", name_of(plate.truth), plate.seed,
           is_at_tip(t) ? "tip" : "hole", t.hole + 1, t.shape, t.ligament, words(t.what), t.load,
-          t.is_asked ? "" : " alone", t.value, t.error, t.bound, t.doubt,
-          is_at_tip(t) && t.what != Trial::What::t_stress ? "MPa sqrt(mm)" : "MPa");
+          t.is_asked ? "" : " alone", t.value, t.error, t.bound, t.doubt, unit_of(t.what));
     }
   return "\nNumbers not surely within their bound:\n\n" + (text.empty() ? "none\n" : text);
 }
@@ -227,7 +251,15 @@ Trials peaks(const std::vector<PlateTrial>& plates) {
   Trials result;
   for (const PlateTrial& plate : plates)
     for (const Trial& trial : plate.trials)
-      if (is_peak(trial)) result.push_back(&trial);
+      if (is_peak(trial) && plate.truth != PlateTrial::Truth::finer_pinned) result.push_back(&trial);
+  return result;
+}
+
+Trials pin_values(const std::vector<PlateTrial>& plates) {
+  Trials result;
+  for (const PlateTrial& plate : plates)
+    for (const Trial& trial : plate.trials)
+      if (plate.truth == PlateTrial::Truth::finer_pinned) result.push_back(&trial);
   return result;
 }
 
@@ -248,13 +280,14 @@ std::string calibration_report(const std::vector<PlateTrial>& plates) {
   const auto settled =
       std::count_if(plates.begin(), plates.end(), [](const PlateTrial& p) { return p.is_settled; });
   return fmt::format(
-             "{} random plates, {} random plates with cracks and {} plates with a closed form; "
+             "{} random plates, {} random plates with cracks, {} with pins and {} plates with a closed form; "
              "{} of {} settled.\n\n",
-             count(Truth::finer_solution), count(Truth::finer_cracked), count(Truth::closed_form), settled,
-             plates.size()) +
-         coverage_table(plates) + tip_table(plates) + along_paths(plates) + misses(plates) +
-         not_settled(plates) + costs(plates, Truth::finer_solution, "random plates") +
-         costs(plates, Truth::finer_cracked, "random plates with cracks");
+             count(Truth::finer_solution), count(Truth::finer_cracked), count(Truth::finer_pinned),
+             count(Truth::closed_form), settled, plates.size()) +
+         coverage_table(plates) + tip_table(plates) + pin_table(plates) + along_paths(plates) +
+         misses(plates) + not_settled(plates) + costs(plates, Truth::finer_solution, "random plates") +
+         costs(plates, Truth::finer_cracked, "random plates with cracks") +
+         costs(plates, Truth::finer_pinned, "random plates with pins");
 }
 
 }  // namespace raiser::validation
