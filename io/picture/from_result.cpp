@@ -139,7 +139,7 @@ void add_place_lines(std::vector<std::string>& lines, const Result& result, std:
                                  places.size() == 1 ? "A place" : fmt::format("{} places", places.size()),
                                  places.front().what, brief(places.front().point.x(), 4),
                                  brief(places.front().point.y(), 4));
-  if (places.size() > 1) line += " and others";
+  if (places.size() > 1) line += places.size() == 2 ? " and another" : " and others";
   if (top && result.solution.combined.tips.empty()) line += "; " + end_of_colours(result, *top);
   lines.push_back(line);
 }

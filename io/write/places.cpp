@@ -88,7 +88,9 @@ std::string places_part(const Result& result) {
   if (places.size() > most_shown) text += fmt::format("  and {} more\n", places.size() - most_shown);
   std::set<std::string> said;
   for (const PlaceFindings& place : places) {
-    if (said.insert(place.why).second) text += wrapped(place.why, "  Why: ", 7);
+    // Reasons that differ in the exponent alone, which stands with each place, are one.
+    if (said.insert(place.why.substr(0, place.why.find(", as r^"))).second)
+      text += wrapped(place.why, "  Why: ", 7);
     if (said.insert(place.cure).second) text += wrapped(place.cure, "  Do: ", 6);
   }
   const std::string defined = definitions(places);
