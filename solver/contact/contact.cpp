@@ -350,13 +350,15 @@ class Run {
           off = std::max({off, std::abs(next[p].begin - arcs_[p].begin) / next[p].half(),
                           std::abs(next[p].end - arcs_[p].end) / next[p].half()});
       arcs_ = std::move(next);
+      off_ = off;
       if (off <= fits && move <= fits) return "";
     }
     return "the ends of the arc of contact were not found";
   }
 
   void sequence(double tolerance, Contact& contact) {
-    mesh_ = mesh_for(plate_, mirrors_, pins_, arcs_);
+    constexpr double close = 3e-4;  // of half the arc, for a mesh that few digits do not need made again
+    if (off_ > close || tolerance < 1e-4) mesh_ = mesh_for(plate_, mirrors_, pins_, arcs_);
     const Model fitted = model(mesh_);
     std::vector<History> histories(pins_.size());
     for (int degree = first_degree(tolerance); degree <= last_degree; ++degree) {
@@ -392,6 +394,7 @@ class Run {
   std::vector<Arc> arcs_;
   Room room_;
   mesh::Mesh mesh_;
+  double off_ = 0.0;  ///< how far the arcs found lie from those the mesh was made for, of half an arc
 };
 
 }  // namespace

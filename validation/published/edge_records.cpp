@@ -182,8 +182,9 @@ std::vector<Published> step_and_lug_records() {
        Basis::net,
        {{"d/H", 0.15, 0.75}},
        "none given",
-       "5 to 18 % above a cosine pressure over the loaded half: the pressure decides",
-       0.18,
+       "5 to 18 % above a cosine pressure over the loaded half, 6 % below to 26 % above a rigid pin without "
+       "friction, by its clearance: the pressure decides",
+       0.26,
        true},
       {Reference::orthotropic_circle,
        "Lekhnitskii 1947",
