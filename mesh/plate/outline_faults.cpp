@@ -113,7 +113,7 @@ void check_box(const Plate& plate, Faults& faults) {
 }
 
 /// Two pieces that follow each other: the corner between them, and whether they
-/// meet a second time.
+/// meet a second time. In a chain of two they do, at its other joint.
 void check_corner(const Plate& plate, const Curve& a, const Curve& b, Faults& faults) {
   const Outline& outline = *plate.outline;
   const double angle = angle_between(a, b);
@@ -126,8 +126,10 @@ void check_corner(const Plate& plate, const Curve& a, const Curve& b, Faults& fa
     return;
   }
   if (a.kind == Curve::Kind::line && b.kind == Curve::Kind::line) return;
-  const Curve first = part(a, a.begin, a.end - 0.1 * (a.end - a.begin));
-  const Curve second = part(b, b.begin + 0.1 * (b.end - b.begin), b.end);
+  const double at_other = outline.curves.size() == 2 ? 0.1 : 0.0;
+  const double step_a = a.end - a.begin, step_b = b.end - b.begin;
+  const Curve first = part(a, a.begin + at_other * step_a, a.end - 0.1 * step_a);
+  const Curve second = part(b, b.begin + 0.1 * step_b, b.end - at_other * step_b);
   const double touch = rounding * size_of(plate);
   if (distance(first, b, 2 * touch) < touch || distance(a, second, 2 * touch) < touch)
     report(faults, fmt::format("{} and {} cross", name_of(outline, a), name_of(outline, b)),

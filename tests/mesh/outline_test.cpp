@@ -479,6 +479,19 @@ TEST(FreeOutline, KnowsANotchDrawnIntoAStraightEdge) {
   EXPECT_NEAR(area(both.outline->gross()), 4000, 1e-9);
 }
 
+// Of two pieces each meets the other at both of its ends.
+TEST(FreeOutline, OfTwoPiecesIsADiscOrHalfOfOne) {
+  const Piece arc{Piece::Kind::outwards, 30.0};
+  const ChainResult disc = chain_outline({{{30, 0}, 0, "rim", "", arc}, {{-30, 0}, 0, "rim", "", arc}});
+  ASSERT_TRUE(disc.outline) << all_of(disc.faults);
+  EXPECT_TRUE(faults(plate_of(*disc.outline, disc.length, disc.width)).empty());
+  EXPECT_NEAR(area(disc.outline->curves), 900 * pi, 1e-9);
+  const ChainResult half = chain_outline({{{30, 0}, 0, "rim", "", arc}, {{-30, 0}, 0, "flat", "", {}}});
+  ASSERT_TRUE(half.outline) << all_of(half.faults);
+  EXPECT_TRUE(faults(plate_of(*half.outline, half.length, half.width)).empty());
+  EXPECT_NEAR(area(half.outline->curves), 450 * pi, 1e-9);
+}
+
 TEST(FreeOutline, RefusesWhatDoesNotClose) {
   auto points = bracket(false);
   points[3].corner_radius = 60;

@@ -5,6 +5,7 @@
 #include <cmath>
 #include <numbers>
 
+#include "mesh/plate/chain.hpp"
 #include "solver/elasticity/outer_edge.hpp"
 #include "solver/solution.hpp"
 
@@ -88,6 +89,36 @@ TEST(EdgeLoad, TwoHalvesAreTheWhole) {
   const Solution b = solved(strip(), {on_edge(rectangle::right, 100, {}, {}, 20),
                                       on_edge(rectangle::right, 100, {}, 20), on_edge(rectangle::left, 100)});
   EXPECT_NEAR(largest(a).value, largest(b).value, largest(a).bound + largest(b).bound);
+}
+
+// A uniform normal stress all round a closed edge balances, wherever its pieces meet.
+TEST(EdgeLoad, AllRoundADiscIsTheSolutionOfLame) {
+  for (const int pieces : {2, 3, 5, 8}) {
+    std::vector<mesh::OutlinePoint> points;
+    for (int k = 0; k < pieces; ++k) {
+      const double t = 0.3 + 2 * std::numbers::pi * k / pieces;
+      points.push_back({Point(17.123 + 31.7 * std::cos(t), 31.7 * std::sin(t)),
+                        0,
+                        "rim",
+                        "",
+                        {mesh::Piece::Kind::outwards, 31.7}});
+    }
+    const mesh::ChainResult chain = mesh::chain_outline(points);
+    ASSERT_TRUE(chain.outline);
+    mesh::Hole bore;
+    bore.name = "bore";
+    bore.length = bore.width = 12.0;
+    Load pull;
+    pull.kind = Load::Kind::edge;
+    pull.edge = 0;
+    pull.stress = 10;
+    const Problem problem{{chain.length, chain.width, 2, {bore}, chain.outline}, {2e5, 0.3}, {pull}};
+    ASSERT_FALSE(imbalance(problem.plate, problem.loads)) << pieces;
+    const Solution solution = settle(problem, {{Quantity::largest_edge_stress, 0, 1e-4, ""}});
+    const Estimate stress = solution.combined.raisers.front().largest.stress;
+    const double expected = 2 * 10 * 31.7 * 31.7 / (31.7 * 31.7 - 6.0 * 6.0);
+    EXPECT_NEAR(stress.value, expected, stress.bound + 1e-6) << pieces;
+  }
 }
 
 TEST(EdgeLoad, FarAwayOnlyTheResultantOfAPartCounts) {
