@@ -20,6 +20,7 @@ using Clock = std::chrono::steady_clock;
 
 constexpr int most_refinements = 5;
 constexpr std::size_t most_unknowns = 3'000'000;
+constexpr int most_sectors = 24;
 
 double seconds_since(Clock::time_point start) {
   return std::chrono::duration<double>(Clock::now() - start).count();
@@ -135,9 +136,14 @@ void refine(const Plate& plate, mesh::Mirrors mirrors, const Ask& ask, double fa
 }
 
 /// Low degrees tell little where many digits are asked for, and degrees beyond
-/// 8 pay only there.
+/// 8 pay only there, and for T: what a ring leaves unresolved of the near field
+/// enters T over the root of its radius and falls only with the degree and with
+/// more sectors, while it rises when the fan shrinks.
 int first_degree(double tolerance) { return tolerance < 5e-4 ? 4 : 3; }
-int last_degree(double tolerance) { return tolerance < 1e-5 ? max_degree : 8; }
+int last_degree(const std::vector<Ask>& asks, double tolerance) {
+  const auto is_t = [](const Ask& ask) { return ask.quantity == Quantity::t_stress; };
+  return tolerance < 1e-5 || std::any_of(asks.begin(), asks.end(), is_t) ? max_degree : 8;
+}
 
 /// Whether an asked number stays in doubt because the pressure of pins is not
 /// known well enough, however fine the mesh.
@@ -152,8 +158,8 @@ bool is_doubtful(const DegreeSequence& sequence, const std::vector<Ask>& asks) {
 double raise_degree(DegreeSequence& sequence, const std::vector<Ask>& asks, double tolerance, int refinement,
                     Clock::time_point start, std::vector<Level>& levels) {
   double worst = std::numeric_limits<double>::infinity();
-  const int first = first_degree(tolerance);
-  for (int degree = first; degree <= last_degree(tolerance) && worst > 1.0; ++degree) {
+  const int first = first_degree(tolerance), last = last_degree(asks, tolerance);
+  for (int degree = first; degree <= last && worst > 1.0; ++degree) {
     const std::size_t unknowns = Discretisation(sequence.model().mesh(), degree).unknowns();
     if (unknowns > most_unknowns && degree > first + 2) break;
     sequence.solve(degree);
@@ -241,8 +247,13 @@ Attempt refine_until_met(const PinsInContact& contact, const std::vector<Ask>& a
       return {std::move(solution), doubtful};
     }
     const double finer = std::pow(0.6, refinement + 1);
-    for (const Ask& ask : asks)
-      if (sequence.excess(ask) > 1.0) refine(problem.plate, mirrors, ask, finer, rule);
+    for (const Ask& ask : asks) {
+      if (!(sequence.excess(ask) > 1.0)) continue;
+      if (ask.quantity == Quantity::t_stress)
+        rule.tip_sectors = std::min(most_sectors, rule.tip_sectors + 4);
+      else
+        refine(problem.plate, mirrors, ask, finer, rule);
+    }
   }
 }
 

@@ -85,6 +85,18 @@ TEST(TStress, OfAnInclinedCrackIsTheClosedForm) {
   }
 }
 
+// Deep cracks, and many digits: what the rings leave unresolved falls with the degree, not with their size.
+TEST(TStress, OfDeepCracksSettlesToFewPartsInAHundredThousand) {
+  for (const double depth : {80.0, 95.0}) {
+    auto problem = plate_under(600, 100, {}, {Load::Kind::tension});
+    problem.plate.cracks = {{"edge", {{0, 50}, {0, 50 - depth}}, true, {}}};
+    const auto coarse = solved(problem, 3e-4, solver::Quantity::t_stress).combined.tips.front().t_stress;
+    const auto fine = solved(problem, 1e-5, solver::Quantity::t_stress).combined.tips.front().t_stress;
+    EXPECT_NEAR(coarse.value, fine.value, coarse.bound + fine.bound) << depth;
+    EXPECT_LT(fine.bound, 3e-5 * std::abs(fine.value)) << depth;
+  }
+}
+
 // T over the remote stress of strips, computed by another code to about 0.002.
 TEST(TStress, OfCrackedStripsIsAsOtherFiniteElementsHaveIt) {
   const auto strip = [](Load::Kind load, std::vector<mesh::Crack> cracks) {
