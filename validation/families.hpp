@@ -68,6 +68,14 @@ struct Family {
 /// All families in the order of their records.
 std::vector<Family> families();
 
+/// Published records that no family solves, and why.
+struct LeftOut {
+  std::string records;
+  std::string title;
+  std::string why;
+};
+std::vector<LeftOut> left_out();
+
 /// How a published value stands to ours.
 enum class Agreement {
   exact,          ///< the source is exact and ours agrees within bound and model

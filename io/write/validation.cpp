@@ -215,6 +215,9 @@ std::string validation_page(const std::vector<FamilyResult>& results, bool chart
   const auto broken = breaches(results);
   for (const Breach& breach : broken) text += "- " + breach_text(breach) + ".\n";
   if (broken.empty()) text += "Nowhere.\n";
+  text += "\n## Records that no family solves\n\n";
+  for (const validation::LeftOut& record : validation::left_out())
+    text += fmt::format("- {}, {}: {}.\n", record.records, record.title, record.why);
   text += "\n";
   for (const FamilyResult& result : results) text += page_section(result, charts);
   text.pop_back();

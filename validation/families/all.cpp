@@ -62,4 +62,21 @@ std::vector<Family> families() {
           textbook_cracks()};
 }
 
+std::vector<LeftOut> left_out() {
+  return {
+      {"A23", "deep hyperbolic notches (H. Neuber, 1937)",
+       "the outline is a hyperbola, and raiser's curves are straight lines and elliptic arcs; no arc stands "
+       "for "
+       "it to six digits. The closed forms themselves are held to printed values by a test"},
+      {"A30", "hole reinforced by a ring of the same material",
+       "the ring is a second thickness, and a plate has one: with the ring as a line force it would be our "
+       "own "
+       "edge stress of A01 and A29 put into the formula that is to be checked"},
+      {"D13, D20", "fatigue factors of round shafts",
+       "the shafts are round, and what is worked is the notch sensitivity of a given factor"},
+      {"D14", "strengths by A. A. Griffith's formula",
+       "a strength from surface energy and a flaw's length in an infinite plate: no plate is given"},
+      {"D15", "a bolt by EN 1993-1-8", "resistances by a code's formulas, in which no stress is worked out"}};
+}
+
 }  // namespace raiser::validation

@@ -102,7 +102,7 @@ Family crack_inclined() {
   };
   const auto t = [](double beta) {
     return no_finer_than(
-        3e-4, settled_tip(inclined_plate(beta), t_over(s), outline_effect, solver::Quantity::t_stress));
+        1e-5, settled_tip(inclined_plate(beta), t_over(s), outline_effect, solver::Quantity::t_stress));
   };
   add_series(f, {"K_I", "beta", angles, {45}, k_one, {{Reference::inclined_crack, inclined_one}}, 15, 90});
   add_series(f, {"K_II", "beta", oblique, {45}, k_two, {{Reference::inclined_crack, inclined_two}}, 15, 90});
@@ -334,7 +334,7 @@ Family crack_half_plane() {
       {"",
        {{"number", 2}},
        {{Reference::half_plane_crack, half_plane_crack_t}},
-       no_finer_than(3e-4, settled_tip(problem, t_over(s), outline_effect, solver::Quantity::t_stress)),
+       no_finer_than(1e-5, settled_tip(problem, t_over(s), outline_effect, solver::Quantity::t_stress)),
        true}};
   f.curves.push_back({Reference::half_plane_crack,
                       "",

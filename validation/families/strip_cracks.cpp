@@ -207,7 +207,7 @@ Family t_stress_strip() {
            "T/sigma, gross; in bending the outer fibre's; off relative to sigma where T is smaller",
            strip_reading,
            "no published digits are known to us: finite elements of another code, read off the crack's faces",
-           3e-3,
+           1e-5,
            {},
            {}};
   struct Line {
