@@ -8,9 +8,11 @@
 
 namespace raiser::validation {
 
-/// A published value beside ours, for one hole under one load.
+/// A published value beside ours, for one hole, notch, fillet or crack tip under one load.
 struct Comparison {
-  std::size_t hole = 0;
+  static constexpr std::size_t none = static_cast<std::size_t>(-1);
+  std::size_t hole = 0;     ///< index into mesh::raisers(plate), the holes first; `none` at a crack tip
+  std::string place;        ///< name of the raiser or of the tip
   std::string load;         ///< the load's name, or that of the combination
   std::string quantity;     ///< e.g. "Kt net"
   double published = 0.0;   ///< dimensionless; MPa when the quantity says so
@@ -26,7 +28,7 @@ struct Comparison {
   bool from_memory = false;
 };
 
-/// The published solutions that cover each hole, load by load, and the uniform
+/// The published solutions that cover each hole, notch, fillet and crack tip, load by load, and the uniform
 /// loads together where a solution covers the combination. A solution whose
 /// family applies but whose conditions are not met is returned with in_range
 /// false and a note. Empty when nothing published covers the plate.

@@ -336,6 +336,7 @@ Json published(const Result& result) {
     const std::string_view unit = line.quantity.find("MPa") == std::string::npos ? "1" : "MPa";
     const bool at_hole = line.hole < plate.holes.size();
     list.push_back({{"hole", at_hole ? Json(plate.holes[line.hole].name) : Json(nullptr)},
+                    {"place", line.place},
                     {"load", line.load},
                     {"quantity", line.quantity},
                     {"published", quantity(line.published, unit)},

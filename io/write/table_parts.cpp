@@ -171,8 +171,8 @@ std::string raiser_lines_head(std::string_view title) {
          fmt::format("  {}{}{}\n", left("", 12), right("MPa", 17), right("MPa", 17));
 }
 
-std::string comparison_lines(const validation::Comparison& line, const mesh::Plate& plate, bool name_load) {
-  const std::string where = line.hole < plate.holes.size() ? plain(plate.holes[line.hole].name) : "plate";
+std::string comparison_lines(const validation::Comparison& line, bool name_load) {
+  const std::string where = plain(line.place);
   const std::string load = name_load ? " under " + plain(line.load) : "";
   std::string text = wrapped(fmt::format("{} by {}, {} here: {}{}", brief(line.published, 5), line.solution,
                                          with_bound({line.ours, line.bound}), line.difference < 0 ? "-" : "+",
@@ -234,8 +234,7 @@ std::string published_part(const Result& result, const std::string& rest) {
   std::string text = "\nPublished values beside these\n";
   const std::size_t shown = std::min(result.published.size(), most);
   for (std::size_t i = 0; i < shown; ++i) {
-    text +=
-        comparison_lines(result.published[i], result.input.problem.plate, result.solution.units.size() > 1);
+    text += comparison_lines(result.published[i], result.solution.units.size() > 1);
   }
   if (shown == result.published.size()) return text;
   const std::string where = rest.empty() ? "" : ": see " + rest;

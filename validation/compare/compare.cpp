@@ -30,7 +30,7 @@ void add(Situation& s, const Load& load) {
       if (load.hole == s.hole) s.pressure += load.stress;
       break;
     case Load::Kind::face_pressure:
-      break;  // no plate with a crack comes here
+      break;  // in append_tips(): not covered
     case Load::Kind::edge:
     case Load::Kind::pin:
       break;  // in of_edges(); not covered
@@ -63,6 +63,11 @@ bool covered(const Load& load, std::size_t hole) {
 }
 
 std::vector<Comparison> solutions(const Situation& s) {
+  if (s.hole >= s.plate.holes.size()) {
+    const mesh::Raiser at = mesh::raiser(s.plate, s.hole);
+    return at.kind == mesh::Raiser::Kind::fillet ? compare_fillet(s) : compare_notch(s);
+  }
+  if (s.plate.outline) return {};  // the published solutions of holes know rectangles only
   auto rows = compare_group(s);
   if (!rows.empty()) return rows;
   switch (s.shape().shape) {
@@ -78,13 +83,16 @@ std::vector<Comparison> solutions(const Situation& s) {
   return {};
 }
 
-void append(std::vector<Comparison>& all, const mesh::Plate& plate, const solver::LoadFindings& findings,
-            const std::vector<Load>& loads) {
-  if (plate.outline) return;  // the published solutions here know rectangles only
-  const auto from_edges = of_edges(loads);
-  if (!from_edges) return;
+/// Whether the plate's edges are those of a rectangle, notches apart.
+bool has_four_edges(const mesh::Plate& plate) {
+  return mesh::edge_names(plate) == std::vector<std::string>{"right", "top", "left", "bottom"};
+}
+
+void append_raisers(std::vector<Comparison>& all, const mesh::Plate& plate,
+                    const solver::LoadFindings& findings, const std::vector<Load>& loads,
+                    const RemoteStress& from_edges) {
   for (const auto& found : findings.raisers) {
-    Situation s{plate, found.raiser, found, findings.name, *from_edges, 0.0, 0.0};
+    Situation s{plate, found.raiser, found, findings.name, from_edges, 0.0, 0.0};
     bool known = true;
     for (const Load& load : loads) {
       known = known && covered(load, found.raiser);
@@ -98,16 +106,42 @@ void append(std::vector<Comparison>& all, const mesh::Plate& plate, const solver
   }
 }
 
+void append_tips(std::vector<Comparison>& all, const solver::Problem& problem,
+                 const solver::LoadFindings& findings, const std::vector<Load>& loads,
+                 const RemoteStress& from_edges) {
+  const auto presses = [](const Load& load) {
+    return load.kind == Load::Kind::pressure || load.kind == Load::Kind::face_pressure;
+  };
+  if (problem.plate.outline || std::any_of(loads.begin(), loads.end(), presses)) return;
+  for (const solver::TipFindings& found : findings.tips) {
+    static const solver::RaiserFindings nothing;
+    Situation sum{problem.plate, 0, nothing, findings.name, from_edges, 0.0, 0.0};
+    for (const Load& load : loads) add(sum, load);
+    const auto rows = compare_tip({problem, found, findings.name, sum.remote, sum.bending});
+    all.insert(all.end(), rows.begin(), rows.end());
+  }
+}
+
+void append(std::vector<Comparison>& all, const solver::Problem& problem,
+            const solver::LoadFindings& findings, const std::vector<Load>& loads) {
+  const auto is_at_edge = [](const Load& load) { return load.kind == Load::Kind::edge; };
+  if (!has_four_edges(problem.plate) && std::any_of(loads.begin(), loads.end(), is_at_edge)) return;
+  const auto from_edges = of_edges(loads);
+  if (!from_edges) return;
+  if (problem.plate.cracks.empty()) append_raisers(all, problem.plate, findings, loads, *from_edges);
+  append_tips(all, problem, findings, loads, *from_edges);
+}
+
 }  // namespace
 
 std::vector<Comparison> compare(const solver::Problem& problem, const solver::LoadFindings& combined,
                                 const std::vector<solver::LoadFindings>& units) {
   std::vector<Comparison> all;
-  // Every family here is of isotropic plates without cracks that uniform tractions load, held nowhere.
+  // Every family here is of isotropic plates that uniform tractions load, held nowhere.
   const auto is_other = [](const Load& load) {
     return load.kind == Load::Kind::pin || load.from || load.to || load.stress_to || load.along_to;
   };
-  if (problem.material.orthotropy || !problem.plate.cracks.empty() || !problem.supports.empty() ||
+  if (problem.material.orthotropy || !problem.supports.empty() ||
       std::any_of(problem.loads.begin(), problem.loads.end(), is_other))
     return all;
   std::vector<std::vector<Load>> groups;  // one for each unit; edge loads come last, together
@@ -120,8 +154,8 @@ std::vector<Comparison> compare(const solver::Problem& problem, const solver::Lo
   }
   if (!at_edges.empty()) groups.push_back(at_edges);
   for (std::size_t i = 0; i < std::min(groups.size(), units.size()); ++i)
-    append(all, problem.plate, units[i], groups[i]);
-  if (groups.size() > 1) append(all, problem.plate, combined, problem.loads);
+    append(all, problem, units[i], groups[i]);
+  if (groups.size() > 1) append(all, problem, combined, problem.loads);
   return all;
 }
 

@@ -76,13 +76,28 @@ Effect neighbours(const Situation& s, std::size_t partner) {
   return {"other holes are not far away", sum};
 }
 
-Effect ends(const Strip& strip) {
-  constexpr double needed = 0.75;
-  const double share = strip.end / strip.width;
+Effect ends(double end, double width, std::string_view what, double needed) {
+  const double share = end / width;
   if (share >= needed) return {};
-  return {fmt::format("the strip is not long (the loaded end is {:.2g} widths from the hole, {} needed)",
-                      share, needed),
+  return {fmt::format("the strip is not long (the loaded end is {:.2g} widths from the {}, {} needed)", share,
+                      what, needed),
           std::exp(-4.2 * std::max(0.0, share))};
+}
+
+Effect ends(const Strip& strip) { return ends(strip.end, strip.width, "hole"); }
+
+Effect other_raisers(const mesh::Plate& plate, const Point& place, const std::vector<std::size_t>& own) {
+  double sum = 0.0;
+  for (std::size_t i = 0; i < mesh::raiser_count(plate); ++i) {
+    if (std::find(own.begin(), own.end(), i) != own.end()) continue;
+    const mesh::Raiser other = mesh::raiser(plate, i);
+    double half = other.radius;
+    if (i < plate.holes.size()) half = largest_half(plate.holes[i]);
+    if (other.notch) half = std::max(other.notch->depth, other.notch->width / 2);
+    const double ratio = half / (other.root - place).norm();
+    sum += 2.6 * ratio * ratio;
+  }
+  return {"other raisers are not far away", sum};
 }
 
 namespace {
@@ -134,18 +149,11 @@ std::string accuracy(const Published& record) {
 
 }  // namespace
 
-Comparison row(const Situation& s, Reference reference, std::string quantity, double factor, double nominal,
-               const std::vector<Parameter>& parameters, const std::vector<Effect>& effects) {
+Comparison beside(Reference reference, std::string quantity, double factor, const solver::Estimate& ours,
+                  const std::vector<Parameter>& parameters, const std::vector<Effect>& effects) {
   const Published& from = record(reference);
-  const solver::Estimate one = s.found.largest.stress.scaled(1 / nominal);
-  const solver::Estimate two = s.found.smallest.stress.scaled(1 / nominal);
-  const solver::Estimate& ours = one.value >= two.value ? one : two;
   Comparison c;
-  c.hole = s.hole;
-  c.load = s.load;
-  // Kt stands on the larger magnitude, the published value on the signed stress.
-  const bool is_peak = std::abs(ours.value) >= std::max(std::abs(one.value), std::abs(two.value));
-  c.quantity = is_peak ? std::move(quantity) : signed_name(quantity);
+  c.quantity = std::move(quantity);
   c.published = factor;
   c.ours = ours.value;
   c.bound = ours.bound;
@@ -157,6 +165,21 @@ Comparison row(const Situation& s, Reference reference, std::string quantity, do
   c.in_range = c.range_note.empty();
   c.accuracy = accuracy(from);
   c.from_memory = from.from_memory;
+  return c;
+}
+
+Comparison row(const Situation& s, Reference reference, std::string quantity, double factor, double nominal,
+               const std::vector<Parameter>& parameters, const std::vector<Effect>& effects) {
+  const solver::Estimate one = s.found.largest.stress.scaled(1 / nominal);
+  const solver::Estimate two = s.found.smallest.stress.scaled(1 / nominal);
+  const solver::Estimate& ours = one.value >= two.value ? one : two;
+  // Kt stands on the larger magnitude, the published value on the signed stress.
+  const bool is_peak = std::abs(ours.value) >= std::max(std::abs(one.value), std::abs(two.value));
+  Comparison c = beside(reference, is_peak ? std::move(quantity) : signed_name(quantity), factor, ours,
+                        parameters, effects);
+  c.hole = s.hole;
+  c.place = mesh::raiser(s.plate, s.hole).name;
+  c.load = s.load;
   return c;
 }
 

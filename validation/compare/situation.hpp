@@ -11,20 +11,20 @@
 
 namespace raiser::validation {
 
-/// One hole under one load or combination: what a published solution is looked
-/// up for.
+/// One hole, notch or fillet under one load or combination: what a published
+/// solution is looked up for.
 struct Situation {
   const mesh::Plate& plate;
-  std::size_t hole = 0;
+  std::size_t hole = 0;  ///< index into mesh::raisers(plate)
   const solver::RaiserFindings& found;
   std::string load;
   RemoteStress remote;    ///< MPa, in plate axes
   double bending = 0.0;   ///< MPa, outer fibre
   double pressure = 0.0;  ///< MPa, on this hole
 
-  const mesh::Hole& shape() const { return plate.holes[hole]; }
-  bool uniaxial() const;  ///< nothing but tension along or across
-  bool uniform() const;   ///< a uniform remote stress, nothing else
+  const mesh::Hole& shape() const { return plate.holes[hole]; }  ///< of a hole only
+  bool uniaxial() const;                                         ///< nothing but tension along or across
+  bool uniform() const;                                          ///< a uniform remote stress, nothing else
 };
 
 /// The plate seen as a strip under tension along x or along y.
@@ -67,12 +67,23 @@ Effect neighbours(const Situation& situation, std::size_t partner = mesh::PlateF
 /// A solution for a long strip needs its uniform end stress far from the hole:
 /// three quarters of the width from the hole's edge (the slowest self-balanced
 /// disturbance fades as exp(-4.2 x/W): J. Fadle, Ing.-Archiv 11 (1940), from
-/// memory).
+/// memory). `end` is the distance to the nearer loaded end, `what` the raiser,
+/// `needed` the widths that the source wants between them.
+Effect ends(double end, double width, std::string_view what, double needed = 0.75);
 Effect ends(const Strip& strip);
+
+/// How much holes, notches and fillets other than `own` disturb a solution for a
+/// raiser at `place`: as neighbours() has it, with a notch's depth for the radius.
+Effect other_raisers(const mesh::Plate& plate, const Point& place, const std::vector<std::size_t>& own);
 
 /// Our peak in a published definition, and everything said about the match.
 /// `nominal` in MPa is what the published factor multiplies.
 Comparison row(const Situation& situation, Reference reference, std::string quantity, double factor,
                double nominal, const std::vector<Parameter>& parameters, const std::vector<Effect>& effects);
+
+/// What a source says of a number of ours and how far that holds; place and load
+/// are left to the caller.
+Comparison beside(Reference reference, std::string quantity, double factor, const solver::Estimate& ours,
+                  const std::vector<Parameter>& parameters, const std::vector<Effect>& effects);
 
 }  // namespace raiser::validation
