@@ -236,7 +236,7 @@ std::vector<Published> hole_crack_records() {
        {},
        "about 0.002",
        "about 0.002",
-       0.016,
+       0.002,
        false},
       {Reference::williams,
        "Williams 1952",
