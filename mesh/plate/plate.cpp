@@ -217,7 +217,7 @@ void check_pair(const Plate& plate, std::size_t i, std::size_t j, Faults& faults
   const bool is_told = faults.size() < 1000;
   const Hole& a = plate.holes[i];
   const Hole& b = plate.holes[j];
-  const double reach = 0.5 * (std::max(a.length, a.width) + std::max(b.length, b.width));
+  const double reach = 0.5 * (std::hypot(a.length, a.width) + std::hypot(b.length, b.width));
   const double thin = thinnest_ligament * std::min(smaller_size(a), smaller_size(b));
   if ((a.centre - b.centre).norm() > reach + thin) return;
   const double distance = gap(a, b);

@@ -347,5 +347,17 @@ TEST(Faults, SizesTooFarApartToResolve) {
   EXPECT_TRUE(faults(Plate{10000, 5, 1, {circle(1, Point(0, 0))}}).empty());
 }
 
+// Two rounded squares whose corners meet overlap, though their centres are
+// farther apart than their sides are long.
+TEST(Plate, SeesSquaresThatMeetCornerToCorner) {
+  const auto square = [](double at, const char* name) {
+    return Hole{name, HoleShape::rounded_rectangle, 10, 10, 0.1, Point(at, at), 0};
+  };
+  const auto found = faults(Plate{200, 100, 5, {square(-6.5, "a"), square(3, "b")}});
+  ASSERT_EQ(found.size(), 1U);
+  EXPECT_NE(found[0].what.find("overlap"), std::string::npos);
+  EXPECT_TRUE(faults(Plate{200, 100, 5, {square(-6.5, "a"), square(4, "b")}}).empty());
+}
+
 }  // namespace
 }  // namespace raiser::mesh
