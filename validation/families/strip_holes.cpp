@@ -80,7 +80,7 @@ Family circle_strip_bending() {
       "A06",
       "Circular hole of diameter d in the middle of a strip of width W, bending in the plane",
       "d/W: diameter over width",
-      "Kt, at the hole on 6 M d/((W^3-d^3) t), at the outer edge on 6 M W/((W^3-d^3) t)",
+      "Kt on 6 M c/((W^3-d^3) t), c = d or W",
       "a strip six widths long, linear traction on its ends; largest stress on the hole's edge and on the "
       "strip's upper edge over the nominal stress",
       "Kt = 2 is the exact value for a small hole (a linear field) kept for all widths; the nominal stress "

@@ -118,7 +118,7 @@ std::vector<Published> hole_crack_records() {
        0.044,
        true},
       {Reference::newman_strip_one,
-       "Newman 1976, strip",
+       "Newman 1976, one in a strip",
        "J. C. Newman Jr., NASA TN D-8244 (1976), with the width factor of damage-tolerance notes",
        "one crack of length a from a central hole of radius R in a strip of width W, tension across; F = "
        "K/(sigma sqrt(pi a))",
@@ -129,7 +129,7 @@ std::vector<Published> hole_crack_records() {
        0.1,
        true},
       {Reference::newman_strip_two,
-       "Newman 1976, strip",
+       "Newman 1976, two in a strip",
        "J. C. Newman Jr., NASA TN D-8244 (1976), with the width factor of damage-tolerance notes",
        "two cracks of length a from a central hole of radius R in a strip of width W, tension across; F = "
        "K/(sigma sqrt(pi a))",

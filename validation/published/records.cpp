@@ -90,7 +90,7 @@ std::vector<Published> central_circle() {
        3.76e-2,
        true},
       {Reference::bending_outer_edge,
-       "Howland-Stevenson 1933",
+       "Howland-Stevenson 1933, outer edge",
        "R. C. J. Howland and A. C. Stevenson, Phil. Trans. R. Soc. A 232 (1933); Peterson, Chart 4.88",
        "central hole, in-plane bending; Kt = 1 on 6 M W/((W^3-d^3) t) at the outer edge",
        Basis::nominal,
