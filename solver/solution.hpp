@@ -26,7 +26,8 @@ struct Problem {
 };
 
 /// One asked number and its tolerance. At a raiser it is relative to the largest
-/// magnitude of edge stress there under all loads together. At a crack tip,
+/// magnitude of edge stress there under all loads together, or to 1e-5 of that on
+/// the whole plate's raisers where this is more. At a crack tip,
 /// `stress_intensity` means both K_I and K_II, relative to sqrt(K_I^2 + K_II^2),
 /// and T is relative to that over sqrt(pi a), a being the crack's length, or half
 /// of it when both its ends are tips; no less than 1 % of what T and the other

@@ -24,16 +24,18 @@ struct Trial {
     contact_end  ///< rad
   };
   What what = What::largest;
-  std::size_t hole = 0;   ///< or the crack tip
-  std::string load;       ///< kind of the load, "together" for several
-  bool is_asked = true;   ///< false: a unit load of several, for which no tolerance is asked
-  double value = 0.0;     ///< MPa
-  double bound = 0.0;     ///< MPa
-  double error = 0.0;     ///< MPa: magnitude of value less truth
-  double doubt = 0.0;     ///< MPa: how far the truth itself may be wrong
-  double scale = 0.0;     ///< MPa: largest magnitude of edge stress on the hole; of K and T at the tip
-  std::string shape;      ///< of the hole, or the kind of crack
-  double ligament = 0.0;  ///< smallest ligament of the hole over the smaller hole's diameter beside it
+  std::size_t hole = 0;  ///< index of the raiser, or of the crack tip
+  std::string load;      ///< kind of the load, "together" for several
+  bool is_asked = true;  ///< false: a unit load of several, for which no tolerance is asked
+  double value = 0.0;    ///< MPa
+  double bound = 0.0;    ///< MPa
+  double error = 0.0;    ///< MPa: magnitude of value less truth
+  double doubt = 0.0;    ///< MPa: how far the truth itself may be wrong
+  double scale = 0.0;    ///< MPa: largest magnitude of edge stress on the hole; of K and T at the tip
+  std::string shape;     ///< of the raiser, or the kind of crack
+  /// Smallest ligament of a hole over the smaller diameter beside it; of a notch or
+  /// fillet, that of its net section over twice its smallest radius.
+  double ligament = 0.0;
 };
 
 /// Whether the truth lies within the bound, with regard to its own doubt.
@@ -42,7 +44,7 @@ Verdict verdict(const Trial& trial);
 
 /// What came of one plate.
 struct PlateTrial {
-  enum class Truth { finer_solution, closed_form, finer_cracked, finer_pinned };
+  enum class Truth { finer_solution, closed_form, finer_cracked, finer_outlined, finer_pinned };
   std::uint64_t seed = 0;
   Truth truth = Truth::finer_solution;
   bool is_settled = false;
@@ -75,6 +77,9 @@ PlateTrial try_random_plate(std::uint64_t seed);
 /// hole (Kirsch 1898, Lame 1852, Inglis 1913), so that the truth is a closed
 /// form. Axes ratio 0.1 to 10, any angle and place.
 PlateTrial try_closed_form(std::uint64_t seed);
+
+/// The same of random_outlined_plate(seed), at every hole, notch and fillet.
+PlateTrial try_outlined_plate(std::uint64_t seed);
 
 /// Solves random_cracked_plate(seed), asking K and T at every tip, and holds them,
 /// those of each unit load too, against a solution of degree 10 of the whole plate

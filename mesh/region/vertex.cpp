@@ -52,6 +52,8 @@ double angle_between(const Curve& before, const Curve& after) {
   return pi - std::atan2(a.x() * b.y() - a.y() * b.x(), a.dot(b));
 }
 
+bool is_blunt(double angle) { return angle > pi / 2 + least_corner && angle < pi - least_corner; }
+
 std::vector<Vertex> vertices(const Region& region) {
   std::vector<Vertex> result;
   for (std::size_t l = 0; l < region.loops.size(); ++l) {

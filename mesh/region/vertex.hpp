@@ -23,6 +23,10 @@ struct Vertex {
 /// it a drawing's rounding rules, and the strength of the singularity is nil.
 inline constexpr double least_corner = 0.0175;
 
+/// Whether an angle of the material, rad, lies between a right and a straight
+/// one: stress there is finite, but as rough as a small power of the distance.
+bool is_blunt(double angle);
+
 /// Every place where two curves of the region meet.
 std::vector<Vertex> vertices(const Region& region);
 

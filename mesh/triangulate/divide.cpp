@@ -216,30 +216,42 @@ bool split_pass(std::vector<Piece>& pieces, const SizeRule& rule, const std::vec
 /// The smaller radius of curvature where two curves meet smoothly, if it jumps
 /// there. Across a mirror line the curve meets its own image: no jump.
 double radius_at_jump(const Piece& a, const Piece& b) {
-  if (a.on_mirror() || b.on_mirror() || a.is_fixed() || b.is_fixed()) return 0.0;
+  if (a.on_mirror() || b.on_mirror()) return 0.0;
   const double ra = a.curve.radius_of_curvature(a.curve.end);
   const double rb = b.curve.radius_of_curvature(b.curve.begin);
   const double smaller = std::min(ra, rb);
   return std::isfinite(smaller) && smaller < 0.99 * std::max(ra, rb) ? smaller : 0.0;
 }
 
+/// The angle of the material where two pieces meet; on a mirror line with its
+/// mirror image, and straight where both lie on mirror lines.
+double whole_angle(const Piece& a, const Piece& b) {
+  if (a.on_mirror() && b.on_mirror()) return std::numbers::pi;
+  return (a.on_mirror() || b.on_mirror() ? 2 : 1) * angle_between(a.curve, b.curve);
+}
+
 /// Whether stress is singular, or asked to be taken as such, where two pieces meet.
 bool is_singular(const Piece& a, const Piece& b, const SizeRule& rule) {
-  if (a.is_fixed() || b.is_fixed()) return false;
-  double angle = angle_between(a.curve, b.curve);
-  if (a.on_mirror() || b.on_mirror()) angle *= 2;  // with its mirror image
-  if (angle > std::numbers::pi + least_corner && !(a.on_mirror() && b.on_mirror())) return true;
+  if (whole_angle(a, b) > std::numbers::pi + least_corner) return true;
   const double close = 1e-9 * (a.length + b.length);
   return std::any_of(rule.singular.begin(), rule.singular.end(),
                      [&](const Point& x) { return (x - b.from).norm() <= close; });
 }
 
+bool is_on_outline_raiser(const Piece& piece) {
+  return piece.loop == 0 && piece.curve.owner.kind == Owner::Kind::raiser;
+}
+
 /// Wanted length of the sides where two pieces meet, if they are to shrink
-/// towards that place: at a singular place or a jump of curvature.
+/// towards that place: at a corner or a jump of curvature.
 double size_at_joint(const Piece& a, const Piece& b, const SizeRule& rule) {
-  if (is_singular(a, b, rule)) return rule.corner * std::min(a.length, b.length);
+  if (a.is_fixed() || b.is_fixed()) return 0.0;
+  const double shorter = std::min(a.length, b.length);
+  if (is_singular(a, b, rule)) return rule.corner * shorter;
+  if (is_blunt(whole_angle(a, b))) return rule.blunt * shorter;
   const double factor = std::min(rule.factor(a.curve.owner), rule.factor(b.curve.owner));
-  return rule.joint * factor * radius_at_jump(a, b);
+  return (is_on_outline_raiser(a) || is_on_outline_raiser(b) ? rule.end : rule.joint) * factor *
+         radius_at_jump(a, b);
 }
 
 /// Pieces of `piece` that shrink geometrically to a wanted length at its begin

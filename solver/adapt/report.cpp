@@ -272,14 +272,15 @@ Solution report(const Problem& problem, const DegreeSequence& sequence,
     solution.units.push_back(findings(problem, sequence, l + 1, unit.name, own));
     solution.units.back().loads = unit.loads;
   }
-  solution.edges = edge_samples(model, problem.plate, sequence.scanner(), last_of(sequence.scans()));
+  solution.edges = edge_samples(model, problem.plate, sequence.scanner(), last_of(sequence.scans()),
+                                sequence.convergence());
 
   std::vector<Field> fields;
   for (const Displacements& level : last_of(sequence.displacements())) fields.emplace_back(model, level);
   std::vector<Section> sections;
   for (const RaiserFindings& found : solution.combined.raisers) sections.push_back(found.section);
-  solution.ligaments =
-      ligaments(problem.plate, sections, fields, largest_doubt(model, sequence.scans().back()));
+  solution.ligaments = ligaments(problem.plate, sections, fields, sequence.convergence(),
+                                 largest_doubt(model, sequence.scans().back()));
   solution.places = place_findings(places, fields, problem.material);
   solution.field = std::move(fields.back());
 

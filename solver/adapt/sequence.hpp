@@ -2,6 +2,8 @@
 
 #include <vector>
 
+#include "mesh/triangulate/size_rule.hpp"
+#include "solver/adapt/bound.hpp"
 #include "solver/crack/tip_scan.hpp"
 #include "solver/extract/edge_scan.hpp"
 #include "solver/solution.hpp"
@@ -12,7 +14,8 @@ namespace raiser::solver {
 /// Holds a reference to the model.
 class DegreeSequence {
  public:
-  DegreeSequence(const Model& model, const Plate& plate);
+  /// `end`: SizeRule::end of the model's mesh.
+  DegreeSequence(const Model& model, const Plate& plate, double end = mesh::SizeRule{}.end);
 
   /// Solves with a degree higher than any before. Throws as Model::solve does.
   void solve(int degree);
@@ -20,11 +23,15 @@ class DegreeSequence {
   const Model& model() const { return *model_; }
   const EdgeScanner& scanner() const { return scanner_; }
   const std::vector<Displacements>& displacements() const { return displacements_; }
+  Convergence convergence() const;
   const std::vector<EdgeScan>& scans() const { return scans_; }
   const TipScanner& tip_scanner() const { return tip_scanner_; }
   const std::vector<TipScan>& tip_scans() const { return tip_scans_; }
 
-  /// The value of the last degree with its bound from all of them.
+  /// The value of the last degree with its bound from all of them: no less than a
+  /// tenth of the largest bound of the three quantities, and where a notch or fillet
+  /// begins, ends or changes its radius, than what the triangles there are known
+  /// to leave out.
   EdgeValue value(std::size_t load_case, std::size_t raiser, Quantity quantity) const;
 
   /// K_I, K_II and T of a crack tip from the last degree, with bounds from all
@@ -35,7 +42,8 @@ class DegreeSequence {
   /// Largest magnitude of edge stress on the raiser under all loads, MPa.
   double peak(std::size_t raiser) const;
 
-  /// Bound of an asked number over its tolerance; it is met at 1 or below.
+  /// Bound of an asked number over its tolerance; it is met at 1 or below. A raiser
+  /// that carries less than 1e-5 of the largest edge stress is held to that share of it.
   double excess(const Ask& ask) const;
   /// The part of it that comes from what is not known of pressures: no finer mesh
   /// and no higher degree takes it away.
@@ -46,9 +54,20 @@ class DegreeSequence {
   double doubt(std::size_t load_case, std::size_t raiser, Quantity quantity) const;
   Eigen::Vector3d tip_doubt(std::size_t load_case, std::size_t tip) const;
 
+  /// Places on a raiser's edge where its curvature jumps, and how near is at them.
+  struct Joints {
+    std::vector<Point> places;
+    double near = 0.0;  ///< mm
+  };
+  std::vector<Joints> joints() const;
+  /// The bound of one quantity by itself.
+  double own_bound(std::size_t load_case, std::size_t raiser, std::size_t quantity) const;
+
   const Model* model_;
   const Plate* plate_;
+  double end_ = 0.0;
   std::vector<Point> centres_;  ///< of the raisers
+  std::vector<Joints> joints_;  ///< of the raisers; none on holes
   EdgeScanner scanner_;
   Room room_;
   std::vector<Displacements> displacements_;

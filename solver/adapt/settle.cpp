@@ -95,6 +95,7 @@ std::vector<Point> ends_of_pressure(const Problem& problem) {
 /// that geometry alone does not show are handed on, those of mirror images too.
 mesh::SizeRule first_rule(const Problem& problem, double tolerance,
                           const std::vector<SingularPlace>& places) {
+  constexpr double least_turn = 0.4;
   mesh::SizeRule rule;
   for (const SingularPlace& place : places)
     if (place.kind != SingularPlace::Kind::corner) rule.singular.push_back(place.site.vertex.at);
@@ -102,6 +103,8 @@ mesh::SizeRule first_rule(const Problem& problem, double tolerance,
     rule.singular.push_back(end);
     rule.joint_growth = 3.0;  // the largest stress may be just there
   }
+  rule.turn *= std::max(least_turn, 1 / std::sqrt(problem.material.stretch()));
+  rule.end = std::clamp(5 * tolerance, 2e-4, rule.end);
   if (tolerance < 5e-5) rule.turn *= 0.8;
   if (tolerance < 1e-5) {
     rule.growth = 0.7;
@@ -178,21 +181,35 @@ double raise_degree(DegreeSequence& sequence, const std::vector<Ask>& asks, doub
 std::string place_of(const Ask& ask, const Plate& plate) {
   if (is_at_tip(ask.quantity)) return "tip " + mesh::tips(plate.cracks)[ask.raiser].name;
   const mesh::Raiser at = mesh::raiser(plate, ask.raiser);
-  return fmt::format("{} {}", word(at.kind), at.name);
+  const std::string kind(word(at.kind));
+  return at.name.starts_with(kind + " ") ? at.name : kind + " " + at.name;
+}
+
+/// Whether what was asked is on an edge that runs into a place without a peak.
+bool runs_into_growth(const Ask& ask, const std::vector<SingularPlace>& places) {
+  const Owner own{Owner::Kind::raiser, ask.raiser};
+  return !is_at_tip(ask.quantity) &&
+         std::any_of(places.begin(), places.end(), [&](const SingularPlace& place) {
+           return place.site.vertex.before.owner == own || place.site.vertex.after.owner == own;
+         });
 }
 
 /// Why the sequence does not do, for at least one asked number.
 std::string reason_for(const DegreeSequence& sequence, const Plate& plate, const std::vector<Ask>& asks,
-                       int refinements) {
+                       const std::vector<SingularPlace>& places, int refinements) {
   std::vector<double> excess;
   for (const Ask& ask : asks) excess.push_back(sequence.excess(ask));
   const auto missed = std::count_if(excess.begin(), excess.end(), [](double e) { return e > 1.0; });
   const auto worst = std::max_element(excess.begin(), excess.end());
-  return fmt::format(
+  const Ask& ask = asks[worst - excess.begin()];
+  std::string reason = fmt::format(
       "{} of {} asked numbers miss their tolerance after {} refinements and degree {}; the worst, at {}, "
       "has a bound {:.2g} times the tolerance",
-      missed, asks.size(), refinements, sequence.displacements().back().degree,
-      place_of(asks[worst - excess.begin()], plate), *worst);
+      missed, asks.size(), refinements, sequence.displacements().back().degree, place_of(ask, plate), *worst);
+  if (runs_into_growth(ask, places))
+    reason +=
+        ": its edge runs into a place where the stress grows without limit, so that no largest one exists";
+  return reason;
 }
 
 /// The plate's boundary, with vertices where the tractions change.
@@ -232,7 +249,7 @@ Attempt refine_until_met(const PinsInContact& contact, const std::vector<Ask>& a
   for (int refinement = 0;; ++refinement) {
     const Model model(mesh::triangulate(region, rule), mirrors, problem.material, problem.plate.thickness,
                       loads, held);
-    DegreeSequence sequence(model, problem.plate);
+    DegreeSequence sequence(model, problem.plate, rule.end);
     const double worst = raise_degree(sequence, asks, tolerance, refinement, start, levels);
     const bool is_settled = worst <= 1.0;
     const bool doubtful = !is_settled && is_doubtful(sequence, asks);
@@ -240,7 +257,7 @@ Attempt refine_until_met(const PinsInContact& contact, const std::vector<Ask>& a
       Solution solution = report(problem, sequence, places, extent);
       const bool is_met = is_settled && contact.reason.empty();
       solution.status = is_met ? Solution::Status::settled : Solution::Status::not_met;
-      if (!is_settled) solution.reason = reason_for(sequence, problem.plate, asks, refinement);
+      if (!is_settled) solution.reason = reason_for(sequence, problem.plate, asks, places, refinement);
       if (doubtful) solution.reason += "; the contact pressure of the pins is not known better";
       if (!contact.reason.empty()) solution.reason = contact_reason(contact);
       solution.pins = contact.pins;

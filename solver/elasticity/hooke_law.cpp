@@ -3,6 +3,7 @@
 #include <fmt/format.h>
 
 #include <Eigen/LU>
+#include <algorithm>
 #include <cmath>
 #include <numbers>
 
@@ -123,6 +124,17 @@ Eigen::Matrix3d HookeLaw::compliance() const {
 
 double HookeLaw::through_thickness(double sigma_xx, double sigma_yy) const {
   return state == PlaneState::strain ? poissons_ratio * (sigma_xx + sigma_yy) : 0.0;
+}
+
+double HookeLaw::stretch() const {
+  if (!orthotropy) return 1.0;
+  // The squares of the roots over i solve x^2 - sum x + product = 0.
+  const double sum = youngs_modulus / orthotropy->shear_modulus - 2 * poissons_ratio;
+  const double product = youngs_modulus / orthotropy->youngs_modulus_2;
+  const double split = sum * sum / 4 - product;
+  const double large = split > 0 ? sum / 2 + std::sqrt(split) : std::sqrt(product);
+  const double small = product / large;
+  return std::sqrt(std::max(large, 1 / small));
 }
 
 bool HookeLaw::has_mirrors() const {

@@ -50,6 +50,10 @@ struct HookeLaw {
   Eigen::Matrix3d compliance() const;
   /// sigma_zz that goes with the in-plane normal stresses, MPa.
   double through_thickness(double sigma_xx, double sigma_yy) const;
+  /// By how much fields are drawn out along a material axis, beside isotropic ones: the
+  /// largest ratio that a root of S. G. Lekhnitskii's characteristic equation
+  /// (Anisotropic Plates, 1968, section 6) has to one; 1 when isotropic.
+  double stretch() const;
   /// Whether the law is its own image in a mirror line along x or y.
   bool has_mirrors() const;
 };

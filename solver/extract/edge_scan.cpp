@@ -3,8 +3,11 @@
 #include <algorithm>
 #include <cmath>
 #include <limits>
+#include <map>
 #include <numeric>
 #include <stdexcept>
+
+#include "mesh/region/vertex.hpp"
 
 namespace raiser::solver {
 namespace {
@@ -72,6 +75,20 @@ Eigen::VectorXd wanted(const SideStress& stress, const Eigen::VectorXd& weight, 
   return tangential;
 }
 
+/// Whether the side is boundary of the plate that is not held, and no load acts at
+/// the place `t` of its curve.
+bool is_free(const Model& model, const mesh::BoundarySide& side, double t) {
+  const mesh::Curve& curve = side.curve;
+  if (curve.owner.kind != Owner::Kind::edge && curve.owner.kind != Owner::Kind::raiser) return false;
+  for (const HeldEdge& held : model.held())
+    if (held.owner == curve.owner) return false;
+  const Point along = (curve.end > curve.begin ? 1.0 : -1.0) * curve.derivative(t).normalized();
+  const Point normal(along.y(), -along.x());
+  return std::all_of(model.loads().begin(), model.loads().end(), [&](const UnitLoad& load) {
+    return load.traction(curve.owner, curve.at(t), normal).isZero(0.0);
+  });
+}
+
 std::vector<std::size_t> image_of(const Plate& plate, mesh::Mirrors mirror) {
   if (auto image = mesh::mirror_image(plate, mirror)) return std::move(image->raisers);
   throw std::invalid_argument("EdgeScanner: the plate does not have the mirror lines of the mesh");
@@ -95,6 +112,33 @@ EdgeScanner::EdgeScanner(const Model& model, const Plate& plate)
     if (image.mirror() != mesh::Mirrors{}) map = image_of(plate, image.mirror());
     raiser_of_.push_back(std::move(map));
   }
+  free_ends_ = free_ends();
+  is_searched_.assign(sides_.size(), true);
+  for (const FreeEnd& end : free_ends_) is_searched_[end.side] = false;
+}
+
+std::vector<EdgeScanner::FreeEnd> EdgeScanner::free_ends() const {
+  const mesh::Mesh& mesh = model_->mesh();
+  std::map<int, const mesh::BoundarySide*> begins;  // by corner of the mesh
+  for (const mesh::BoundarySide& side : mesh.boundary())
+    begins[mesh.triangles()[side.triangle][side.side]] = &side;
+  std::map<int, std::size_t> own;  // raisers' sides by the corner where they begin
+  for (std::size_t i = 0; i < sides_.size(); ++i)
+    own[mesh.triangles()[sides_[i].triangle][sides_[i].side]] = i;
+  std::vector<FreeEnd> result;
+  for (const auto& [begin, before] : begins) {
+    const int corner = mesh.triangles()[before->triangle][(before->side + 1) % 3];
+    const auto found = begins.find(corner);
+    if (found == begins.end()) continue;
+    const mesh::BoundarySide& after = *found->second;
+    if (after.curve.owner == before->curve.owner ||
+        !mesh::is_blunt(mesh::angle_between(before->curve, after.curve)) ||
+        !is_free(*model_, *before, before->curve.end) || !is_free(*model_, after, after.curve.begin))
+      continue;
+    if (const auto side = own.find(begin); side != own.end()) result.push_back({side->second, 1.0});
+    if (const auto side = own.find(corner); side != own.end()) result.push_back({side->second, -1.0});
+  }
+  return result;
 }
 
 std::size_t EdgeScanner::raiser_in(std::size_t side, std::size_t image) const {
@@ -135,6 +179,7 @@ struct EdgeScanner::Search {
     double s = 0.0;
     std::size_t side = 0;
     std::size_t image = 0;
+    bool is_free_end = false;
   };
 
   template <class Visit>
@@ -142,7 +187,8 @@ struct EdgeScanner::Search {
     for (std::size_t image = 0; image < scanner.model_->images().size(); ++image) {
       const Eigen::VectorXd weight = weights(image);
       for (std::size_t side = 0; side < scanner.sides_.size(); ++side)
-        visit(side, image, wanted(scan.sides[side], weight, quantity, scanner.model_->material()));
+        if (scanner.is_searched_[side])
+          visit(side, image, wanted(scan.sides[side], weight, quantity, scanner.model_->material()));
     }
   }
 
@@ -162,12 +208,18 @@ struct EdgeScanner::Search {
       const double value = interpolate(values, s);
       if (value > result[raiser].value) result[raiser] = {value, 0.0, s, side, image};
     });
+    for (std::size_t image = 0; image < scanner.model_->images().size(); ++image)
+      for (const FreeEnd& end : scanner.free_ends_)
+        if (Best& best = result[scanner.raiser_in(end.side, image)]; best.value < 0.0)
+          best = {0.0, 0.0, end.s, end.side, image, true};
     return result;
   }
 
   Extreme from_solution(const Best& best) const {
-    const EdgeProbe probe(*scanner.model_, displacements.degree, {&best.s, 1});
     const mesh::BoundarySide& side = scanner.sides_[best.side];
+    if (best.is_free_end)
+      return {0.0, scanner.model_->images()[best.image].apply(side.curve.at(side.parameter(best.s))), 0.0};
+    const EdgeProbe probe(*scanner.model_, displacements.degree, {&best.s, 1});
     const SideStress stress = probe.at(side, displacements);
     const Eigen::VectorXd weight = weights(best.image);
     Extreme result;

@@ -33,7 +33,10 @@ struct EdgeScan {
 
 /// Searches the edges of all raisers between the nodes: every side is sampled at
 /// Chebyshev points, the interpolant through them maximised, and the value at
-/// its maximum taken from the solution itself. Holds a reference to the model.
+/// its maximum taken from the solution itself. At a blunt corner with a free edge
+/// (see mesh::SizeRule::blunt) all stress vanishes, as slowly as a small power of
+/// the distance: there 0 counts in place of the last side. Holds a reference to the
+/// model.
 class EdgeScanner {
  public:
   EdgeScanner(const Model& model, const Plate& plate);
@@ -51,12 +54,21 @@ class EdgeScanner {
 
  private:
   struct Search;
+  /// The end of a raiser's edge in a corner where all stress vanishes.
+  struct FreeEnd {
+    std::size_t side = 0;
+    double s = 0.0;  ///< -1 or 1
+  };
+  std::vector<FreeEnd> free_ends() const;
+
   std::vector<RaiserExtremes> extremes(const Displacements& displacements, const EdgeScan& scan,
                                        std::size_t load_case, bool doubted) const;
   const Model* model_;
   std::size_t raisers_;
   std::vector<mesh::BoundarySide> sides_;
   std::vector<std::vector<std::size_t>> raiser_of_;  ///< [image][raiser in the mesh]
+  std::vector<FreeEnd> free_ends_;
+  std::vector<bool> is_searched_;  ///< by side
 };
 
 }  // namespace raiser::solver

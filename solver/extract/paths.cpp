@@ -81,12 +81,13 @@ mesh::Loop chain_of(const Plate& plate, const mesh::Loop& outline, std::size_t r
 /// The largest bound along one side from the values of successive degrees. At a
 /// single point the differences may vanish by accident, most of all beside a
 /// jump of curvature, where they fall slowly.
-double largest_bound(const std::vector<Eigen::VectorXd>& degrees, double size) {
+double largest_bound(const std::vector<Eigen::VectorXd>& degrees, double size,
+                     const Convergence& convergence) {
   double largest = 0.0;
   for (Eigen::Index q = 0; q < degrees.back().size(); ++q) {
     std::vector<double> sequence;
     for (const Eigen::VectorXd& values : degrees) sequence.push_back(values[q]);
-    largest = std::max(largest, error_bound(sequence, size));
+    largest = std::max(largest, convergence.bound(sequence, size));
   }
   return largest;
 }
@@ -109,7 +110,8 @@ std::string start_name(const mesh::Raiser& raiser, bool across, bool from_begin)
 }
 
 Ligament follow(const Plate& plate, std::size_t raiser, const Section& section, const mesh::Interval& piece,
-                bool from_begin, const std::vector<Field>& fields, double doubt) {
+                bool from_begin, const std::vector<Field>& fields, const Convergence& convergence,
+                double doubt) {
   const bool across = section.direction == Section::Direction::across;
   Ligament ligament;
   ligament.raiser = raiser;
@@ -135,7 +137,7 @@ Ligament follow(const Plate& plate, std::size_t raiser, const Section& section, 
     for (int c = 0; c < 3; ++c) {
       std::vector<double> sequence;
       for (const auto& value : values) sequence.push_back(value[c]);
-      point.bound = std::max(point.bound, error_bound(sequence, size));
+      point.bound = std::max(point.bound, convergence.bound(sequence, size));
     }
     point.bound += doubt;
     ligament.points.push_back(point);
@@ -147,7 +149,8 @@ Ligament follow(const Plate& plate, std::size_t raiser, const Section& section, 
 
 std::vector<std::vector<EdgeSample>> edge_samples(const Model& model, const Plate& plate,
                                                   const EdgeScanner& scanner,
-                                                  const std::vector<EdgeScan>& scans) {
+                                                  const std::vector<EdgeScan>& scans,
+                                                  const Convergence& convergence) {
   std::vector<std::vector<EdgeSample>> result(mesh::raiser_count(plate));
   const std::vector<mesh::Raiser> raisers = mesh::raisers(plate);
   const auto& positions = search_points();
@@ -162,7 +165,7 @@ std::vector<std::vector<EdgeSample>> edge_samples(const Model& model, const Plat
       const Eigen::VectorXd shear = last.sides[side].shear * weight;
       const RaiserExtremes& extremes = last.extremes[0][raiser];
       const double size = std::max(std::abs(extremes[0].value), std::abs(extremes[1].value));
-      double bound = largest_bound(tangential, size);
+      double bound = largest_bound(tangential, size, convergence);
       if (scanner.has_doubt(0))
         bound += (last.sides[side].tangential * scanner.weights(*doubt_in(model) + 1, image))
                      .cwiseAbs()
@@ -199,15 +202,16 @@ double largest_doubt(const Model& model, const EdgeScan& scan) {
 }
 
 std::vector<Ligament> ligaments(const Plate& plate, const std::vector<Section>& sections,
-                                const std::vector<Field>& fields, double doubt) {
+                                const std::vector<Field>& fields, const Convergence& convergence,
+                                double doubt) {
   std::vector<Ligament> result;
   for (std::size_t i = 0; i < sections.size(); ++i)
     for (const mesh::Interval& piece :
          mesh::material_along(plate, sections[i].direction, sections[i].station)) {
       if (piece.raiser_at_begin() == i)
-        result.push_back(follow(plate, i, sections[i], piece, true, fields, doubt));
+        result.push_back(follow(plate, i, sections[i], piece, true, fields, convergence, doubt));
       if (piece.raiser_at_end() == i)
-        result.push_back(follow(plate, i, sections[i], piece, false, fields, doubt));
+        result.push_back(follow(plate, i, sections[i], piece, false, fields, convergence, doubt));
     }
   return result;
 }

@@ -2,6 +2,7 @@
 
 #include <vector>
 
+#include "solver/adapt/bound.hpp"
 #include "solver/extract/edge_scan.hpp"
 #include "solver/solution.hpp"
 
@@ -13,7 +14,8 @@ namespace raiser::solver {
 /// the model's mesh; the last gives the values, all together the bounds.
 std::vector<std::vector<EdgeSample>> edge_samples(const Model& model, const Plate& plate,
                                                   const EdgeScanner& scanner,
-                                                  const std::vector<EdgeScan>& scans);
+                                                  const std::vector<EdgeScan>& scans,
+                                                  const Convergence& convergence);
 
 /// The largest stress that what is not known of pressures makes, MPa: it is on the
 /// edge that they press on. 0 where all is known.
@@ -23,7 +25,8 @@ double largest_doubt(const Model& model, const EdgeScan& scan);
 /// nominal stresses stand on, under all loads. `fields` are those of
 /// successive degrees; the last gives the values. `doubt` is added to the bounds.
 std::vector<Ligament> ligaments(const Plate& plate, const std::vector<Section>& sections,
-                                const std::vector<Field>& fields, double doubt = 0.0);
+                                const std::vector<Field>& fields, const Convergence& convergence,
+                                double doubt = 0.0);
 
 /// The mean of sigma_xx over the gross section x = station of the plate, and
 /// its largest departure from the nominal distribution, which is `mean` at the

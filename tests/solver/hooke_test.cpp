@@ -105,6 +105,17 @@ TEST(Orthotropic, MirrorsAreLostOffTheAxes) {
   EXPECT_FALSE(at_angle(std::numbers::pi / 4).has_mirrors());
 }
 
+TEST(Orthotropic, StretchIsTheLargestRatioOfARootToOne) {
+  EXPECT_EQ((HookeLaw{200e3, 0.3}.stretch()), 1.0);
+  // Isotropic constants: both roots are i.
+  EXPECT_NEAR((HookeLaw{200e3, 0.25, PlaneState::stress, Orthotropy{200e3, 80e3}}.stretch()), 1.0, 1e-6);
+  // x^4 - 5 x^2 + 4 = 0: roots 2 and 1; the turned sheet has the roots 1/2 and 1.
+  const Orthotropy half{50e3, 200e3 / 5.5};
+  EXPECT_NEAR((HookeLaw{200e3, 0.25, PlaneState::stress, half}.stretch()), 2.0, 1e-9);
+  const Orthotropy turned{200e3, 200e3 / 5.5};
+  EXPECT_NEAR((HookeLaw{50e3, 0.0625, PlaneState::stress, turned}.stretch()), 2.0, 1e-9);
+}
+
 TEST(Turns, StressAndStrainDoTheSameWork) {
   const Eigen::Vector2d first(std::cos(0.7), std::sin(0.7));
   EXPECT_TRUE((strain_turn(first).transpose() * stress_turn(first)).isIdentity(1e-15));

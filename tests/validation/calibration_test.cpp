@@ -105,6 +105,21 @@ TEST(Calibration, BoundsHoldOnPlatesWithFewHoles) {
   EXPECT_GT(t.median_ratio, 2.0) << "bounds so close to the error are luck";
 }
 
+/// The short run on notches, shoulders and free outlines; the full one is there, too.
+TEST(Calibration, BoundsHoldOnNotchesAndFillets) {
+  std::vector<PlateTrial> plates;
+  for (std::uint64_t seed = 0; seed < 6; ++seed) plates.push_back(try_outlined_plate(seed));
+  for (const PlateTrial& plate : plates) {
+    EXPECT_TRUE(plate.is_settled) << "seed " << plate.seed << ": " << plate.reason;
+    EXPECT_FALSE(plate.trials.empty()) << "seed " << plate.seed << ": " << plate.reason;
+  }
+  const Tally t = tally(peaks(plates));
+  EXPECT_EQ(t.within, t.numbers) << calibration_report(plates);
+  EXPECT_GT(t.numbers, 40u);
+  EXPECT_LT(t.median_ratio, 60.0);
+  EXPECT_GT(t.median_ratio, 2.0) << "bounds so close to the error are luck";
+}
+
 /// The short run on plates with cracks; the full one is in validation/calibration.md.
 TEST(Calibration, BoundsOfKAndTHoldOnCrackedPlates) {
   std::vector<PlateTrial> plates;

@@ -4,6 +4,7 @@
 #include <unistd.h>
 
 #include <algorithm>
+#include <array>
 #include <charconv>
 #include <cstdio>
 #include <fstream>
@@ -21,28 +22,63 @@ namespace {
 using raiser::validation::PlateTrial;
 
 constexpr const char* usage =
-    "usage: raiser_calibrate [--seeds A..B] [--closed N] [--cracked A..B] [--pinned A..B]\n"
-    "                        [--jobs N] [--short] [--records FILE] [--from FILE]\n"
+    "usage: raiser_calibrate [--holes A..B] [--closed A..B] [--cracked A..B] [--outlined A..B]\n"
+    "                        [--pinned A..B] [--short] [--jobs N] [--records FILE] [--from FILE]\n"
     "\n"
-    "Solves seeded random plates and plates with a closed form and prints, as\n"
-    "Markdown, how often the true error lies within the bound.\n"
+    "Solves seeded random plates and prints, as Markdown, how often the true error\n"
+    "lies within the bound. A..B are the seeds A to B - 1; kinds that are not named\n"
+    "are left out. Without any: --holes 0..320 --closed 0..60.\n"
     "\n"
-    "  --seeds A..B    random plates with the seeds A to B - 1 (default 0..320)\n"
-    "  --closed N      N plates with a closed form (default 60)\n"
-    "  --cracked A..B  random plates with cracks (default 0..240)\n"
-    "  --pinned A..B   random plates with pins (default 0..120)\n"
-    "  --jobs N        worker processes (default 1)\n"
-    "  --short         16 plates with at most two holes, 8 closed forms, 12 plates with cracks, 8 with pins\n"
-    "  --records FILE  also writes every number to FILE\n"
-    "  --from FILE     solves nothing: reports what --records wrote\n";
+    "  --holes A..B     plates with holes\n"
+    "  --closed A..B    plates with a closed form\n"
+    "  --cracked A..B   plates with cracks\n"
+    "  --outlined A..B  notches, shoulders and free outlines, some orthotropic or clamped\n"
+    "  --pinned A..B    pins that press on holes, by cosine and in contact\n"
+    "  --short          a few plates of each kind\n"
+    "  --jobs N         worker processes (default 1)\n"
+    "  --records FILE   also writes every number to FILE\n"
+    "  --from FILE      solves nothing: reports what --records wrote\n";
+
+/// A kind of random plate and how it is tried.
+struct Kind {
+  const char* option;
+  PlateTrial::Truth truth;
+  PlateTrial (*attempt)(std::uint64_t seed);
+  std::uint64_t few;  ///< of them in a short run
+};
+constexpr std::array kinds{
+    Kind{"--holes", PlateTrial::Truth::finer_solution, raiser::validation::try_random_plate, 16},
+    Kind{"--closed", PlateTrial::Truth::closed_form, raiser::validation::try_closed_form, 8},
+    Kind{"--cracked", PlateTrial::Truth::finer_cracked, raiser::validation::try_cracked_plate, 12},
+    Kind{"--outlined", PlateTrial::Truth::finer_outlined, raiser::validation::try_outlined_plate, 12},
+    Kind{"--pinned", PlateTrial::Truth::finer_pinned, raiser::validation::try_pinned_plate, 8},
+};
+
+struct Task {
+  const Kind* kind;
+  std::uint64_t seed;
+};
 
 struct Options {
-  std::uint64_t first = 0, last = 320, closed = 60, jobs = 1;
-  std::uint64_t first_cracked = 0, last_cracked = 240;
-  std::uint64_t first_pinned = 0, last_pinned = 120;
-  bool is_short = false;
+  std::vector<Task> tasks;
+  std::uint64_t jobs = 1;
   std::string records, from;
 };
+
+void add_tasks(Options& options, const Kind& kind, std::uint64_t first, std::uint64_t last) {
+  for (std::uint64_t seed = first; seed < last; ++seed) options.tasks.push_back({&kind, seed});
+}
+
+void add_few(Options& options) {
+  for (const Kind& kind : kinds) {
+    if (kind.truth != PlateTrial::Truth::finer_solution) {
+      add_tasks(options, kind, 0, kind.few);
+      continue;
+    }
+    for (const std::uint64_t seed : raiser::validation::seeds_with_few_holes(kind.few, 2))
+      options.tasks.push_back({&kind, seed});
+  }
+}
 
 std::uint64_t number(const std::string& option, const std::string& text) {
   std::uint64_t value = 0;
@@ -52,77 +88,47 @@ std::uint64_t number(const std::string& option, const std::string& text) {
   return value;
 }
 
+/// Whether the option names a kind of plate; its tasks are added.
+bool reads_kind(const std::string& name, const std::string& value, Options& options) {
+  for (const Kind& kind : kinds) {
+    const std::size_t dots = value.find("..");
+    if (name != kind.option || dots == std::string::npos) continue;
+    add_tasks(options, kind, number(name, value.substr(0, dots)), number(name, value.substr(dots + 2)));
+    return true;
+  }
+  return false;
+}
+
 Options read(const std::vector<std::string>& arguments) {
   Options options;
+  bool names_plates = false;
   for (std::size_t i = 0; i < arguments.size(); ++i) {
     const std::string& name = arguments[i];
     if (name == "--short") {
-      options.is_short = true;
+      add_few(options);
+      names_plates = true;
       continue;
     }
     if (i + 1 == arguments.size()) throw std::invalid_argument(name + ": unknown, or its value is missing");
     const std::string& value = arguments[++i];
-    const std::size_t dots = value.find("..");
-    if (name == "--seeds" && dots != std::string::npos) {
-      options.first = number(name, value.substr(0, dots));
-      options.last = number(name, value.substr(dots + 2));
-    } else if (name == "--cracked" && dots != std::string::npos) {
-      options.first_cracked = number(name, value.substr(0, dots));
-      options.last_cracked = number(name, value.substr(dots + 2));
-    } else if (name == "--pinned" && dots != std::string::npos) {
-      options.first_pinned = number(name, value.substr(0, dots));
-      options.last_pinned = number(name, value.substr(dots + 2));
-    } else if (name == "--closed") {
-      options.closed = number(name, value);
+    if (reads_kind(name, value, options)) {
+      names_plates = true;
     } else if (name == "--jobs") {
       options.jobs = std::max<std::uint64_t>(1, number(name, value));
     } else if (name == "--records") {
       options.records = value;
     } else if (name == "--from") {
       options.from = value;
+      names_plates = true;
     } else {
       throw std::invalid_argument(name + " " + value + ": unknown option or value");
     }
   }
-  return options;
-}
-
-struct Task {
-  PlateTrial::Truth truth;
-  std::uint64_t seed;
-};
-
-std::vector<Task> tasks(const Options& options) {
-  std::vector<std::uint64_t> seeds;
-  if (options.is_short)
-    seeds = raiser::validation::seeds_with_few_holes(16, 2);
-  else
-    for (std::uint64_t seed = options.first; seed < options.last; ++seed) seeds.push_back(seed);
-  std::vector<Task> list;
-  for (const std::uint64_t seed : seeds) list.push_back({PlateTrial::Truth::finer_solution, seed});
-  for (std::uint64_t seed = 0; seed < (options.is_short ? 8 : options.closed); ++seed)
-    list.push_back({PlateTrial::Truth::closed_form, seed});
-  const std::uint64_t last_cracked = options.is_short ? 12 : options.last_cracked;
-  for (std::uint64_t seed = options.is_short ? 0 : options.first_cracked; seed < last_cracked; ++seed)
-    list.push_back({PlateTrial::Truth::finer_cracked, seed});
-  const std::uint64_t last_pinned = options.is_short ? 8 : options.last_pinned;
-  for (std::uint64_t seed = options.is_short ? 0 : options.first_pinned; seed < last_pinned; ++seed)
-    list.push_back({PlateTrial::Truth::finer_pinned, seed});
-  return list;
-}
-
-PlateTrial run(const Task& task) {
-  switch (task.truth) {
-    case PlateTrial::Truth::closed_form:
-      return raiser::validation::try_closed_form(task.seed);
-    case PlateTrial::Truth::finer_cracked:
-      return raiser::validation::try_cracked_plate(task.seed);
-    case PlateTrial::Truth::finer_pinned:
-      return raiser::validation::try_pinned_plate(task.seed);
-    case PlateTrial::Truth::finer_solution:
-      break;
+  if (!names_plates) {
+    add_tasks(options, kinds[0], 0, 320);
+    add_tasks(options, kinds[1], 0, 60);
   }
-  return raiser::validation::try_random_plate(task.seed);
+  return options;
 }
 
 using File = std::unique_ptr<std::FILE, int (*)(std::FILE*)>;
@@ -130,7 +136,7 @@ using File = std::unique_ptr<std::FILE, int (*)(std::FILE*)>;
 /// Solves one task and appends its lines to the file, in one piece.
 void work(const Task& task, int file) {
   openblas_set_num_threads(1);
-  const std::string lines = to_lines(run(task));
+  const std::string lines = to_lines(task.kind->attempt(task.seed));
   if (write(file, lines.data(), lines.size()) != static_cast<ssize_t>(lines.size())) _exit(1);
 }
 
@@ -138,7 +144,7 @@ void work(const Task& task, int file) {
 std::string lost(const Task& task, int status) {
   PlateTrial plate;
   plate.seed = task.seed;
-  plate.truth = task.truth;
+  plate.truth = task.kind->truth;
   plate.reason = WIFSIGNALED(status) ? fmt::format("failed: the process ended by signal {}", WTERMSIG(status))
                                      : "failed: the process ended early";
   return to_lines(plate);
@@ -204,12 +210,12 @@ int main(int argc, char** argv) {
   }
   try {
     const Options options = read(arguments);
-    const std::vector<Task> list = options.from.empty() ? tasks(options) : std::vector<Task>{};
-    const std::string text = options.from.empty() ? solve(list, options.jobs) : read_file(options.from);
+    const std::string text =
+        options.from.empty() ? solve(options.tasks, options.jobs) : read_file(options.from);
     if (!options.records.empty()) write_file(options.records, text);
     const std::vector<PlateTrial> plates = raiser::validation::from_lines(text);
     fmt::print("{}", calibration_report(plates));
-    return options.from.empty() && plates.size() != list.size() ? 1 : 0;
+    return options.from.empty() && plates.size() != options.tasks.size() ? 1 : 0;
   } catch (const std::exception& e) {
     fmt::print(stderr, "raiser_calibrate: {}\n\n{}", e.what(), usage);
     return 2;

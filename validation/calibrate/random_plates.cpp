@@ -6,6 +6,7 @@
 
 #include "mesh/triangulate/triangulate.hpp"
 #include "validation/calibrate/trial.hpp"
+#include "validation/random_outline.hpp"
 #include "validation/random_plate.hpp"
 
 namespace raiser::validation {
@@ -29,18 +30,20 @@ struct Finer {
 constexpr std::array finer{Finer{0.5, 0.75, 0.4, false}, Finer{0.42, 0.6, 0.3, false},
                            Finer{0.5, 0.75, 0.1, true}, Finer{0.35, 0.5, 0.05, true}};
 
-mesh::Mesh finer_mesh(const mesh::Plate& plate, const Finer& factors) {
+mesh::Mesh finer_mesh(const Problem& problem, const Finer& factors) {
   mesh::SizeRule rule;
-  rule.turn *= factors.turn;
+  rule.singular = solver::clamped_ends(problem.plate, problem.supports);
+  rule.turn *= factors.turn / std::sqrt(problem.material.stretch());
   rule.growth *= factors.growth;
   rule.joint *= factors.joint;
-  mesh::Mesh mesh = mesh::triangulate(mesh::trace(plate), rule);
+  rule.end *= factors.joint;
+  mesh::Mesh mesh = mesh::triangulate(mesh::trace(problem.plate), rule);
   return factors.is_divided ? divided(mesh) : mesh;
 }
 
 std::vector<solver::Ask> ask_everything(const mesh::Plate& plate) {
   std::vector<solver::Ask> asks;
-  for (std::size_t h = 0; h < plate.holes.size(); ++h)
+  for (std::size_t h = 0; h < mesh::raiser_count(plate); ++h)
     for (std::size_t q = 0; q < solver::quantity_count; ++q)
       asks.push_back({static_cast<Quantity>(q), h, calibration_tolerance, ""});
   return asks;
@@ -128,7 +131,7 @@ void hold_against_truth(const Problem& problem, const Solution& solution, PlateT
   std::string failure;
   for (const Finer& factors : finer) {
     try {
-      const FinerSolution truth(problem, finer_mesh(problem.plate, factors));
+      const FinerSolution truth(problem, finer_mesh(problem, factors));
       plate.truth_unknowns = truth.unknowns();
       plate.trials = hold_all(problem, solution, truth);
       if (is_clear(plate.trials)) return;
@@ -139,13 +142,12 @@ void hold_against_truth(const Problem& problem, const Solution& solution, PlateT
   if (plate.trials.empty()) plate.reason = "not compared, no truth: " + failure;
 }
 
-}  // namespace
-
-PlateTrial try_random_plate(std::uint64_t seed) {
+PlateTrial try_plate(PlateTrial::Truth truth, std::uint64_t seed, Problem (*make)(std::uint64_t)) {
   PlateTrial plate;
   plate.seed = seed;
+  plate.truth = truth;
   try {
-    const Problem problem = random_plate(seed);
+    const Problem problem = make(seed);
     const double start = cpu_seconds();
     const Solution solution = solver::settle(problem, ask_everything(problem.plate));
     plate.cpu_seconds = cpu_seconds() - start;
@@ -156,6 +158,16 @@ PlateTrial try_random_plate(std::uint64_t seed) {
     plate.reason = std::string("failed: ") + e.what();
   }
   return plate;
+}
+
+}  // namespace
+
+PlateTrial try_random_plate(std::uint64_t seed) {
+  return try_plate(PlateTrial::Truth::finer_solution, seed, random_plate);
+}
+
+PlateTrial try_outlined_plate(std::uint64_t seed) {
+  return try_plate(PlateTrial::Truth::finer_outlined, seed, random_outlined_plate);
 }
 
 std::vector<std::uint64_t> seeds_with_few_holes(std::size_t count, std::size_t most_holes) {

@@ -1,6 +1,7 @@
 #include <fmt/format.h>
 
 #include <algorithm>
+#include <array>
 #include <cmath>
 #include <functional>
 #include <limits>
@@ -104,7 +105,8 @@ std::string coverage_table(const std::vector<PlateTrial>& plates) {
       (plate.truth == PlateTrial::Truth::closed_form ? closed : random).push_back(&trial);
       by_stop[stop_of(plate)].push_back(&trial);
     }
-  text += row("truth: finer solution", random) + row("truth: closed form", closed);
+  if (!random.empty() && !closed.empty())
+    text += row("truth: finer solution", random) + row("truth: closed form", closed);
   text += rows_by(all, asked_or_not);
   text += rows_by(all, [](const Trial& t) { return std::string(words(t.what)); });
   text += rows_by(all, [](const Trial& t) { return "shape: " + t.shape; });
@@ -159,17 +161,23 @@ std::string along_paths(const std::vector<PlateTrial>& plates) {
          std::string(heading) + rows_by(paths, [](const Trial& t) { return std::string(words(t.what)); });
 }
 
+/// What the plates of one truth are called: a single one in front of its seed, and all of them.
+struct Naming {
+  PlateTrial::Truth truth;
+  const char* seed;
+  const char* plural;
+};
+constexpr std::array namings{
+    Naming{PlateTrial::Truth::finer_solution, "seed", "random plates"},
+    Naming{PlateTrial::Truth::closed_form, "closed form", "plates with a closed form"},
+    Naming{PlateTrial::Truth::finer_cracked, "cracked seed", "random plates with cracks"},
+    Naming{PlateTrial::Truth::finer_outlined, "outlined seed", "random plates with notches and fillets"},
+    Naming{PlateTrial::Truth::finer_pinned, "pinned seed", "random plates with pins"},
+};
+
 const char* name_of(PlateTrial::Truth truth) {
-  switch (truth) {
-    case PlateTrial::Truth::finer_solution:
-      return "seed";
-    case PlateTrial::Truth::closed_form:
-      return "closed form";
-    case PlateTrial::Truth::finer_cracked:
-      return "cracked seed";
-    case PlateTrial::Truth::finer_pinned:
-      return "pinned seed";
-  }
+  for (const Naming& naming : namings)
+    if (naming.truth == truth) return naming.seed;
   return "";
 }
 
@@ -188,7 +196,7 @@ std::string misses(const std::vector<PlateTrial>& plates) {
           "- {}, {} {}, {} {} ({}, ligament {:.3g}), {}, {}{}: value {:.6g}, error {:.2g}, bound {:.2g}, "
           "truth +- {:.1g} {}\n",
           found == Verdict::outside ? "outside" : "undecided", name_of(plate.truth), plate.seed,
-          is_at_tip(t) ? "tip" : "hole", t.hole + 1, t.shape, t.ligament, words(t.what), t.load,
+          is_at_tip(t) ? "tip" : "raiser", t.hole + 1, t.shape, t.ligament, words(t.what), t.load,
           t.is_asked ? "" : " alone", t.value, t.error, t.bound, t.doubt, unit_of(t.what));
     }
   return "\nNumbers not surely within their bound:\n\n" + (text.empty() ? "none\n" : text);
@@ -272,22 +280,19 @@ Trials tip_values(const std::vector<PlateTrial>& plates) {
 }
 
 std::string calibration_report(const std::vector<PlateTrial>& plates) {
-  using Truth = PlateTrial::Truth;
-  const auto count = [&](Truth truth) {
-    return std::count_if(plates.begin(), plates.end(),
-                         [truth](const PlateTrial& p) { return p.truth == truth; });
-  };
+  std::string counts, cost;
+  for (const Naming& naming : namings) {
+    const auto count = std::count_if(plates.begin(), plates.end(),
+                                     [&](const PlateTrial& p) { return p.truth == naming.truth; });
+    if (count == 0) continue;
+    counts += fmt::format("{}{} {}", counts.empty() ? "" : ", ", count, naming.plural);
+    if (naming.truth != PlateTrial::Truth::closed_form) cost += costs(plates, naming.truth, naming.plural);
+  }
   const auto settled =
       std::count_if(plates.begin(), plates.end(), [](const PlateTrial& p) { return p.is_settled; });
-  return fmt::format(
-             "{} random plates, {} random plates with cracks, {} with pins and {} plates with a closed form; "
-             "{} of {} settled.\n\n",
-             count(Truth::finer_solution), count(Truth::finer_cracked), count(Truth::finer_pinned),
-             count(Truth::closed_form), settled, plates.size()) +
-         coverage_table(plates) + tip_table(plates) + pin_table(plates) + along_paths(plates) +
-         misses(plates) + not_settled(plates) + costs(plates, Truth::finer_solution, "random plates") +
-         costs(plates, Truth::finer_cracked, "random plates with cracks") +
-         costs(plates, Truth::finer_pinned, "random plates with pins");
+  return fmt::format("{}; {} of {} settled.\n\n", counts, settled, plates.size()) + coverage_table(plates) +
+         tip_table(plates) + pin_table(plates) + along_paths(plates) + misses(plates) + not_settled(plates) +
+         cost;
 }
 
 }  // namespace raiser::validation

@@ -5,12 +5,14 @@
 #include <ctime>
 
 #include "mesh/plate/distance.hpp"
+#include "mesh/plate/section.hpp"
 #include "validation/random_plate.hpp"
 
 namespace raiser::validation {
 
 namespace {
 
+/// Of a hole, in diameters of the smaller hole beside it.
 double smallest_ligament(const mesh::Plate& plate, std::size_t i) {
   const mesh::Hole& hole = plate.holes[i];
   double least = mesh::edge_distance(plate, hole) / mean_diameter(hole);
@@ -22,14 +24,34 @@ double smallest_ligament(const mesh::Plate& plate, std::size_t i) {
   return least;
 }
 
+/// The shorter piece of material that begins or ends at the raiser on its net
+/// section, over twice its smallest radius.
+double net_ligament(const mesh::Plate& plate, std::size_t i) {
+  const mesh::Raiser raiser = mesh::raiser(plate, i);
+  double least = plate.width;
+  for (const mesh::Interval& piece : mesh::material_along(plate, mesh::Direction::across, raiser.root.x()))
+    if (piece.raiser_at_begin() == i || piece.raiser_at_end() == i)
+      least = std::min(least, piece.end - piece.begin);
+  return least / (2 * raiser.radius);
+}
+
+/// "notch U", "fillet undercut", "fillet of a free outline", ...
+std::string shape_of(const mesh::Raiser& raiser) {
+  const std::string kind(mesh::word(raiser.kind));
+  if (raiser.notch) return kind + " " + std::string(mesh::word(raiser.notch->shape));
+  if (raiser.fillet) return kind + " " + std::string(mesh::word(raiser.fillet->shape));
+  return kind + " of a free outline";
+}
+
 }  // namespace
 
-Trial trial_at(const mesh::Plate& plate, std::size_t hole, Trial::What what) {
+Trial trial_at(const mesh::Plate& plate, std::size_t raiser, Trial::What what) {
   Trial trial;
   trial.what = what;
-  trial.hole = hole;
-  trial.shape = mesh::word(plate.holes[hole].shape);
-  trial.ligament = smallest_ligament(plate, hole);
+  trial.hole = raiser;
+  const bool is_hole = raiser < plate.holes.size();
+  trial.shape = is_hole ? mesh::word(plate.holes[raiser].shape) : shape_of(mesh::raiser(plate, raiser));
+  trial.ligament = is_hole ? smallest_ligament(plate, raiser) : net_ligament(plate, raiser);
   return trial;
 }
 

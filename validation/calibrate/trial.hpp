@@ -8,8 +8,8 @@
 
 namespace raiser::validation {
 
-/// A trial with everything that follows from the plate and the hole.
-Trial trial_at(const mesh::Plate& plate, std::size_t hole, Trial::What what);
+/// A trial with everything that follows from the plate and the raiser.
+Trial trial_at(const mesh::Plate& plate, std::size_t raiser, Trial::What what);
 
 /// Holds a value with its bound against what is known of it.
 void hold(Trial& trial, const solver::Estimate& estimate, const Known& truth);

@@ -71,7 +71,8 @@ mesh::Mesh divided(const mesh::Mesh& mesh) {
 FinerSolution::FinerSolution(const solver::Problem& problem, mesh::Mesh mesh)
     : plate_(problem.plate),
       model_(std::move(mesh), {}, problem.material, problem.plate.thickness,
-             solver::unit_loads(problem.plate, problem.loads)),
+             solver::unit_loads(problem.plate, problem.loads, problem.supports),
+             solver::held_edges(problem.plate, problem.supports)),
       sequence_(model_, plate_) {
   for (const int degree : {coarse_degree, fine_degree}) {
     sequence_.solve(degree);
@@ -99,7 +100,7 @@ Known FinerSolution::tip(std::size_t load_case, std::size_t tip, int which) cons
 
 std::optional<Known> FinerSolution::tangential(std::size_t hole, const mesh::Point& x) const {
   for (const mesh::BoundarySide& side : sequence_.scanner().sides()) {
-    if (side.curve.owner.index != hole) continue;
+    if (!(side.curve.owner == mesh::Owner{mesh::Owner::Kind::raiser, hole})) continue;
     const auto s = position_on(side, x);
     if (!s) continue;
     std::array<double, 2> values{};
