@@ -23,17 +23,17 @@ double error_bound(std::span<const double> values, double scale, double slowness
 }
 
 double tail_factor(std::span<const double> values, int degree) {
-  constexpr double most = 6.0;
+  constexpr double least = 1.25, most = 6.0;
   const std::size_t n = values.size();
   if (n < 3) return most;
   const double last = std::abs(values[n - 1] - values[n - 2]);
   const double before = std::abs(values[n - 2] - values[n - 3]);
-  if (last == 0.0) return 1.0;
+  if (last == 0.0) return least;
   // Where the error is c / p^k, differences are in the ratio ((p - 1) / p)^(k + 1), and
   // p / k of the last one is still to come.
   const double p = degree;
   const double power = std::log(before / last) / std::log(p / (p - 1)) - 1;
-  return power > 2 * p / most ? std::max(1.0, 2 * p / power) : most;
+  return power > 2 * p / most ? std::max(least, 2 * p / power) : most;
 }
 
 }  // namespace raiser::solver

@@ -17,7 +17,7 @@ namespace raiser::solver {
 double error_bound(std::span<const double> values, double scale, double slowness = 1.0);
 
 /// Twice what is still to come of a value whose differences fall like a power of
-/// the degree, over its last difference; 1 to 6. From the last three of the
+/// the degree, over its last difference; 1.25 to 6. From the last three of the
 /// values, which end with degree `degree`. For corners, held edges and jumps of
 /// curvature, which leave such a tail behind the fast decay.
 double tail_factor(std::span<const double> values, int degree);

@@ -95,7 +95,7 @@ std::vector<Point> ends_of_pressure(const Problem& problem) {
 /// that geometry alone does not show are handed on, those of mirror images too.
 mesh::SizeRule first_rule(const Problem& problem, double tolerance,
                           const std::vector<SingularPlace>& places) {
-  constexpr double least_turn = 0.4;
+  constexpr double least_turn = 0.4, far_reaching = 1.5;
   mesh::SizeRule rule;
   for (const SingularPlace& place : places)
     if (place.kind != SingularPlace::Kind::corner) rule.singular.push_back(place.site.vertex.at);
@@ -103,11 +103,14 @@ mesh::SizeRule first_rule(const Problem& problem, double tolerance,
     rule.singular.push_back(end);
     rule.joint_growth = 3.0;  // the largest stress may be just there
   }
-  rule.turn *= std::max(least_turn, 1 / std::sqrt(problem.material.stretch()));
+  // Along stiff fibres a field reaches far and changes fast beside them.
+  const double stretch = problem.material.stretch();
+  rule.turn *= std::max(least_turn, 1 / std::sqrt(stretch));
+  if (stretch > far_reaching) rule.growth = 0.7;
   rule.end = std::clamp(5 * tolerance, 2e-4, rule.end);
   if (tolerance < 5e-5) rule.turn *= 0.8;
   if (tolerance < 1e-5) {
-    rule.growth = 0.7;
+    rule.growth = std::min(rule.growth, 0.7);
     rule.joint = tolerance < 1e-7 ? 0.002 : 0.01;
   }
   if (tolerance < 3e-4) {

@@ -25,9 +25,9 @@ TEST(TailFactor, CoversWhatAPowerOfTheDegreeLeaves) {
     }
 }
 
-TEST(TailFactor, IsOneWhereDifferencesFallFast) {
-  EXPECT_EQ(tail_factor(std::vector{1.0, 1.1, 1.101}, 5), 1.0);
-  EXPECT_EQ(tail_factor(std::vector{1.0, 1.1, 1.1}, 5), 1.0);
+TEST(TailFactor, IsLittleWhereDifferencesFallFast) {
+  EXPECT_EQ(tail_factor(std::vector{1.0, 1.1, 1.101}, 5), 1.25);
+  EXPECT_EQ(tail_factor(std::vector{1.0, 1.1, 1.1}, 5), 1.25);
 }
 
 TEST(TailFactor, HasAnEnd) {

@@ -49,7 +49,7 @@ TEST(Calibration, ReportListsEveryMissAndEveryPlateNotSettled) {
   const std::string text = calibration_report({good, bad});
   EXPECT_NE(text.find("1 of 2 settled"), std::string::npos) << text;
   EXPECT_NE(text.find("| **all** | 2 | 50.00 % | 1 | 0 |"), std::string::npos) << text;
-  EXPECT_NE(text.find("- outside, seed 17, hole 1"), std::string::npos) << text;
+  EXPECT_NE(text.find("- outside, seed 17, raiser 1"), std::string::npos) << text;
   EXPECT_NE(text.find("- seed 17: the bound stays wide"), std::string::npos) << text;
   EXPECT_EQ(text.find("seed 4"), std::string::npos) << text;
 }
@@ -108,14 +108,14 @@ TEST(Calibration, BoundsHoldOnPlatesWithFewHoles) {
 /// The short run on notches, shoulders and free outlines; the full one is there, too.
 TEST(Calibration, BoundsHoldOnNotchesAndFillets) {
   std::vector<PlateTrial> plates;
-  for (std::uint64_t seed = 0; seed < 6; ++seed) plates.push_back(try_outlined_plate(seed));
+  for (std::uint64_t seed = 0; seed < 4; ++seed) plates.push_back(try_outlined_plate(seed));
   for (const PlateTrial& plate : plates) {
     EXPECT_TRUE(plate.is_settled) << "seed " << plate.seed << ": " << plate.reason;
     EXPECT_FALSE(plate.trials.empty()) << "seed " << plate.seed << ": " << plate.reason;
   }
   const Tally t = tally(peaks(plates));
   EXPECT_EQ(t.within, t.numbers) << calibration_report(plates);
-  EXPECT_GT(t.numbers, 40u);
+  EXPECT_GT(t.numbers, 30u);
   EXPECT_LT(t.median_ratio, 60.0);
   EXPECT_GT(t.median_ratio, 2.0) << "bounds so close to the error are luck";
 }

@@ -4,7 +4,6 @@
 #include <array>
 #include <cmath>
 #include <functional>
-#include <limits>
 #include <map>
 
 #include "validation/calibrate.hpp"
@@ -241,6 +240,7 @@ double Tally::coverage() const {
 }
 
 Tally tally(const Trials& trials) {
+  constexpr double most_ratio = 1e6;
   Tally result;
   std::vector<double> ratios;
   for (const Trial* trial : trials) {
@@ -248,7 +248,7 @@ Tally tally(const Trials& trials) {
     const Verdict found = verdict(*trial);
     result.within += found == Verdict::within;
     result.undecided += found == Verdict::undecided;
-    ratios.push_back(trial->bound / std::max(trial->error, std::numeric_limits<double>::min()));
+    ratios.push_back(std::min(trial->bound / trial->error, most_ratio));  // the error may be 0
   }
   result.median_ratio = quantile(ratios, 0.5);
   result.ratio_95 = quantile(ratios, 0.95);
