@@ -9,6 +9,14 @@
 #include "solver/crack/factors.hpp"
 
 namespace raiser::solver {
+namespace {
+
+/// The larger one of the edge stresses in magnitude.
+std::size_t peak_of(const RaiserExtremes& extremes) {
+  return std::abs(extremes[0].value) >= std::abs(extremes[1].value) ? 0 : 1;
+}
+
+}  // namespace
 
 DegreeSequence::DegreeSequence(const Model& model, const Plate& plate, double end)
     : model_(&model), plate_(&plate), end_(end), scanner_(model, plate), tip_scanner_(model, plate) {
@@ -21,7 +29,7 @@ std::vector<DegreeSequence::Joints> DegreeSequence::joints() const {
   std::vector<Joints> result(centres_.size());
   if (!plate_->outline) return result;
   for (const mesh::Curve& curve : plate_->outline->curves) {
-    if (curve.owner.kind != Owner::Kind::raiser) continue;
+    if (curve.owner.kind != Owner::Kind::raiser || curve.kind == mesh::Curve::Kind::line) continue;
     Joints& own = result[plate_->holes.size() + curve.owner.index];
     for (const double t : {curve.begin, curve.end}) {
       const double reach = near * curve.radius_of_curvature(t);
@@ -50,26 +58,32 @@ double DegreeSequence::own_bound(std::size_t load_case, std::size_t raiser, std:
   for (const EdgeScan& scan : scans_) values.push_back(scan.extremes[load_case][raiser][quantity].value);
   const RaiserExtremes& last = scans_.back().extremes[load_case][raiser];
   const double size = std::max(std::abs(last[0].value), std::abs(last[1].value));
-  const int degree = displacements_.back().degree;
-  double bound = convergence().bound(values, size);
+  return convergence().bound(values, size);
+}
+
+double DegreeSequence::left_out_at_joint(std::size_t load_case, std::size_t raiser,
+                                         std::size_t quantity) const {
+  const RaiserExtremes& last = scans_.back().extremes[load_case][raiser];
   const Joints& joints = joints_[raiser];
   const bool is_at_joint = std::any_of(joints.places.begin(), joints.places.end(), [&](const Point& x) {
     return (x - last[quantity].point).norm() < joints.near;
   });
+  if (!is_at_joint) return 0.0;
   // Stress at a jump of curvature is as rough as r log r: what the triangles there
   // leave out falls with the square of the degree. The factor is calibrated.
   constexpr double unresolved = 2.5;
-  if (is_at_joint) bound += unresolved * end_ / (degree * degree) * size;
-  return bound;
+  const int degree = displacements_.back().degree;
+  return unresolved * end_ / (degree * degree) * std::max(std::abs(last[0].value), std::abs(last[1].value));
 }
 
 EdgeValue DegreeSequence::value(std::size_t load_case, std::size_t raiser, Quantity quantity) const {
   const auto k = static_cast<std::size_t>(quantity);
   const Extreme& last = scans_.back().extremes[load_case][raiser][k];
   double bound = own_bound(load_case, raiser, k);
-  if (convergence().has_tail)
-    for (std::size_t other = 0; other < quantity_count; ++other)
-      bound = std::max(bound, 0.1 * own_bound(load_case, raiser, other));
+  // Where little stress is left, its differences may vanish by accident.
+  if (const std::size_t peak = peak_of(scans_.back().extremes[load_case][raiser]); convergence().has_tail)
+    bound = std::max(bound, 0.1 * own_bound(load_case, raiser, peak));
+  bound += left_out_at_joint(load_case, raiser, k);
   const Point arm = last.point - centres_[raiser];
   return {{last.value, bound + doubt(load_case, raiser, quantity)},
           last.point,

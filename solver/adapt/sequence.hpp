@@ -29,7 +29,7 @@ class DegreeSequence {
   const std::vector<TipScan>& tip_scans() const { return tip_scans_; }
 
   /// The value of the last degree with its bound from all of them: no less than a
-  /// tenth of the largest bound of the three quantities, and where a notch or fillet
+  /// tenth of the bound of the largest magnitude of edge stress there, and where a notch or fillet
   /// begins, ends or changes its radius, than what the triangles there are known
   /// to leave out.
   EdgeValue value(std::size_t load_case, std::size_t raiser, Quantity quantity) const;
@@ -60,8 +60,10 @@ class DegreeSequence {
     double near = 0.0;  ///< mm
   };
   std::vector<Joints> joints() const;
-  /// The bound of one quantity by itself.
+  /// The bound of one quantity from its own values.
   double own_bound(std::size_t load_case, std::size_t raiser, std::size_t quantity) const;
+  /// What the triangles leave out of a quantity that lies at a joint; 0 elsewhere.
+  double left_out_at_joint(std::size_t load_case, std::size_t raiser, std::size_t quantity) const;
 
   const Model* model_;
   const Plate* plate_;

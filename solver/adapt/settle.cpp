@@ -236,6 +236,19 @@ struct Attempt {
   bool is_doubtful = false;
 };
 
+/// The mesh by the rule. Where it cannot be made, sides shrink less towards the ends
+/// of notches and fillets, which the bounds then count.
+mesh::Mesh meshed(const mesh::Region& region, mesh::SizeRule& rule) {
+  while (rule.end < rule.joint) {
+    try {
+      return mesh::triangulate(region, rule);
+    } catch (const std::runtime_error&) {
+      rule.end = std::min(4 * rule.end, rule.joint);
+    }
+  }
+  return mesh::triangulate(region, rule);
+}
+
 /// Refines until the asked numbers are met, or the budget is spent, or only
 /// better known pressures help.
 Attempt refine_until_met(const PinsInContact& contact, const std::vector<Ask>& asks, double tolerance,
@@ -250,8 +263,7 @@ Attempt refine_until_met(const PinsInContact& contact, const std::vector<Ask>& a
   const std::vector<HeldEdge> held = held_edges(problem.plate, problem.supports);
   mesh::SizeRule rule = first_rule(problem, tolerance, places);
   for (int refinement = 0;; ++refinement) {
-    const Model model(mesh::triangulate(region, rule), mirrors, problem.material, problem.plate.thickness,
-                      loads, held);
+    const Model model(meshed(region, rule), mirrors, problem.material, problem.plate.thickness, loads, held);
     DegreeSequence sequence(model, problem.plate, rule.end);
     const double worst = raise_degree(sequence, asks, tolerance, refinement, start, levels);
     const bool is_settled = worst <= 1.0;
