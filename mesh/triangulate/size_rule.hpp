@@ -20,7 +20,7 @@ struct SizeRule {
   double corner = 1e-4;       ///< side length at a re-entrant corner over the shorter side before grading
   /// The same at a corner between a right and a straight angle: stress is finite there,
   /// but as rough as a small power of the distance.
-  double blunt = 0.02;
+  double blunt = 1e-3;
   std::vector<Point> singular;  ///< places on the boundary that are graded as re-entrant corners are
   std::vector<double> refine;   ///< by raiser: factor on the side lengths there; 1 where absent
 

@@ -2,8 +2,10 @@
 
 #include <algorithm>
 #include <cmath>
+#include <limits>
 #include <numbers>
 #include <stdexcept>
+#include <utility>
 
 #include "solver/adapt/bound.hpp"
 #include "solver/crack/factors.hpp"
@@ -18,8 +20,14 @@ std::size_t peak_of(const RaiserExtremes& extremes) {
 
 }  // namespace
 
-DegreeSequence::DegreeSequence(const Model& model, const Plate& plate, double end)
-    : model_(&model), plate_(&plate), end_(end), scanner_(model, plate), tip_scanner_(model, plate) {
+DegreeSequence::DegreeSequence(const Model& model, const Plate& plate, double end,
+                               std::vector<SingularPlace> places)
+    : model_(&model),
+      plate_(&plate),
+      end_(end),
+      places_(std::move(places)),
+      scanner_(model, plate),
+      tip_scanner_(model, plate) {
   for (const mesh::Raiser& raiser : mesh::raisers(plate)) centres_.push_back(raiser.centre);
   joints_ = joints();
 }
@@ -76,6 +84,13 @@ double DegreeSequence::left_out_at_joint(std::size_t load_case, std::size_t rais
   return unresolved * end_ / (degree * degree) * std::max(std::abs(last[0].value), std::abs(last[1].value));
 }
 
+bool DegreeSequence::is_at_place_without_peak(const Point& x) const {
+  constexpr double share = 0.02;
+  return std::any_of(places_.begin(), places_.end(), [&](const SingularPlace& place) {
+    return (x - place.site.vertex.at).norm() < share * place.site.reach;
+  });
+}
+
 EdgeValue DegreeSequence::value(std::size_t load_case, std::size_t raiser, Quantity quantity) const {
   const auto k = static_cast<std::size_t>(quantity);
   const Extreme& last = scans_.back().extremes[load_case][raiser][k];
@@ -84,6 +99,7 @@ EdgeValue DegreeSequence::value(std::size_t load_case, std::size_t raiser, Quant
   if (const std::size_t peak = peak_of(scans_.back().extremes[load_case][raiser]); convergence().has_tail)
     bound = std::max(bound, 0.1 * own_bound(load_case, raiser, peak));
   bound += left_out_at_joint(load_case, raiser, k);
+  if (is_at_place_without_peak(last.point)) bound = std::numeric_limits<double>::infinity();
   const Point arm = last.point - centres_[raiser];
   return {{last.value, bound + doubt(load_case, raiser, quantity)},
           last.point,

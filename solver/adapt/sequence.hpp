@@ -4,6 +4,7 @@
 
 #include "mesh/triangulate/size_rule.hpp"
 #include "solver/adapt/bound.hpp"
+#include "solver/corner/singular_place.hpp"
 #include "solver/crack/tip_scan.hpp"
 #include "solver/extract/edge_scan.hpp"
 #include "solver/solution.hpp"
@@ -14,8 +15,9 @@ namespace raiser::solver {
 /// Holds a reference to the model.
 class DegreeSequence {
  public:
-  /// `end`: SizeRule::end of the model's mesh.
-  DegreeSequence(const Model& model, const Plate& plate, double end = mesh::SizeRule{}.end);
+  /// `end`: SizeRule::end of the model's mesh. `places`: where no peak exists.
+  DegreeSequence(const Model& model, const Plate& plate, double end = mesh::SizeRule{}.end,
+                 std::vector<SingularPlace> places = {});
 
   /// Solves with a degree higher than any before. Throws as Model::solve does.
   void solve(int degree);
@@ -31,7 +33,7 @@ class DegreeSequence {
   /// The value of the last degree with its bound from all of them: no less than a
   /// tenth of the bound of the largest magnitude of edge stress there, and where a notch or fillet
   /// begins, ends or changes its radius, than what the triangles there are known
-  /// to leave out.
+  /// to leave out. Infinite where the extreme lies at a place without a peak.
   EdgeValue value(std::size_t load_case, std::size_t raiser, Quantity quantity) const;
 
   /// K_I, K_II and T of a crack tip from the last degree, with bounds from all
@@ -62,12 +64,14 @@ class DegreeSequence {
   std::vector<Joints> joints() const;
   /// The bound of one quantity from its own values.
   double own_bound(std::size_t load_case, std::size_t raiser, std::size_t quantity) const;
+  bool is_at_place_without_peak(const Point& x) const;
   /// What the triangles leave out of a quantity that lies at a joint; 0 elsewhere.
   double left_out_at_joint(std::size_t load_case, std::size_t raiser, std::size_t quantity) const;
 
   const Model* model_;
   const Plate* plate_;
   double end_ = 0.0;
+  std::vector<SingularPlace> places_;
   std::vector<Point> centres_;  ///< of the raisers
   std::vector<Joints> joints_;  ///< of the raisers; none on holes
   EdgeScanner scanner_;

@@ -82,24 +82,29 @@ std::vector<SingularPlace> singular_places(const Problem& problem, const mesh::R
   return singular_places(boundary, held, sum_of(loads), problem.material);
 }
 
-/// Where the pressure of pins ends: with a root in contact, with a kink by a cosine.
-std::vector<Point> ends_of_pressure(const Problem& problem) {
+/// Where the pressure of pins on holes that are asked about ends: with a root in
+/// contact, with a kink by a cosine.
+std::vector<Point> ends_of_pressure(const Problem& problem, const std::vector<Ask>& asks) {
+  const auto is_asked = [&](std::size_t hole) {
+    return std::any_of(asks.begin(), asks.end(),
+                       [hole](const Ask& ask) { return !is_at_tip(ask.quantity) && ask.raiser == hole; });
+  };
   std::vector<Point> result;
   for (const Load& load : problem.loads)
-    if (load.kind == Load::Kind::pin)
+    if (load.kind == Load::Kind::pin && is_asked(load.hole))
       for (const mesh::Break& end : breaks(problem.plate, load)) result.push_back(end.at);
   return result;
 }
 
 /// The first mesh for a tolerance, before anything is solved. Singular places
 /// that geometry alone does not show are handed on, those of mirror images too.
-mesh::SizeRule first_rule(const Problem& problem, double tolerance,
+mesh::SizeRule first_rule(const Problem& problem, const std::vector<Ask>& asks, double tolerance,
                           const std::vector<SingularPlace>& places) {
   constexpr double least_turn = 0.4, far_reaching = 1.5;
   mesh::SizeRule rule;
   for (const SingularPlace& place : places)
     if (place.kind != SingularPlace::Kind::corner) rule.singular.push_back(place.site.vertex.at);
-  for (const Point& end : ends_of_pressure(problem)) {
+  for (const Point& end : ends_of_pressure(problem, asks)) {
     rule.singular.push_back(end);
     rule.joint_growth = 3.0;  // the largest stress may be just there
   }
@@ -188,31 +193,28 @@ std::string place_of(const Ask& ask, const Plate& plate) {
   return at.name.starts_with(kind + " ") ? at.name : kind + " " + at.name;
 }
 
-/// Whether what was asked is on an edge that runs into a place without a peak.
-bool runs_into_growth(const Ask& ask, const std::vector<SingularPlace>& places) {
-  const Owner own{Owner::Kind::raiser, ask.raiser};
-  return !is_at_tip(ask.quantity) &&
-         std::any_of(places.begin(), places.end(), [&](const SingularPlace& place) {
-           return place.site.vertex.before.owner == own || place.site.vertex.after.owner == own;
-         });
+/// Whether all asked numbers that miss their tolerance lie where no peak exists.
+bool only_misses_where_no_peak_is(const DegreeSequence& sequence, const std::vector<Ask>& asks) {
+  return std::all_of(asks.begin(), asks.end(), [&](const Ask& ask) {
+    const double excess = sequence.excess(ask);
+    return excess <= 1.0 || std::isinf(excess);
+  });
 }
 
 /// Why the sequence does not do, for at least one asked number.
 std::string reason_for(const DegreeSequence& sequence, const Plate& plate, const std::vector<Ask>& asks,
-                       const std::vector<SingularPlace>& places, int refinements) {
+                       int refinements) {
   std::vector<double> excess;
   for (const Ask& ask : asks) excess.push_back(sequence.excess(ask));
   const auto missed = std::count_if(excess.begin(), excess.end(), [](double e) { return e > 1.0; });
   const auto worst = std::max_element(excess.begin(), excess.end());
   const Ask& ask = asks[worst - excess.begin()];
-  std::string reason = fmt::format(
-      "{} of {} asked numbers miss their tolerance after {} refinements and degree {}; the worst, at {}, "
-      "has a bound {:.2g} times the tolerance",
-      missed, asks.size(), refinements, sequence.displacements().back().degree, place_of(ask, plate), *worst);
-  if (runs_into_growth(ask, places))
-    reason +=
-        ": its edge runs into a place where the stress grows without limit, so that no largest one exists";
-  return reason;
+  const std::string head = fmt::format(
+      "{} of {} asked numbers miss their tolerance after {} refinements and degree {}; the worst, at {}, ",
+      missed, asks.size(), refinements, sequence.displacements().back().degree, place_of(ask, plate));
+  if (std::isinf(*worst))
+    return head + "lies at a place without a peak stress, where its edge meets another or a traction ends";
+  return head + fmt::format("has a bound {:.2g} times the tolerance", *worst);
 }
 
 /// The plate's boundary, with vertices where the tractions change.
@@ -261,18 +263,19 @@ Attempt refine_until_met(const PinsInContact& contact, const std::vector<Ask>& a
   const mesh::Mirrors mirrors = usable_mirrors(problem, loads);
   const mesh::Region region = mesh::cut(boundary, mirrors);
   const std::vector<HeldEdge> held = held_edges(problem.plate, problem.supports);
-  mesh::SizeRule rule = first_rule(problem, tolerance, places);
+  mesh::SizeRule rule = first_rule(problem, asks, tolerance, places);
   for (int refinement = 0;; ++refinement) {
     const Model model(meshed(region, rule), mirrors, problem.material, problem.plate.thickness, loads, held);
-    DegreeSequence sequence(model, problem.plate, rule.end);
+    DegreeSequence sequence(model, problem.plate, rule.end, places);
     const double worst = raise_degree(sequence, asks, tolerance, refinement, start, levels);
     const bool is_settled = worst <= 1.0;
     const bool doubtful = !is_settled && is_doubtful(sequence, asks);
-    if (is_settled || doubtful || refinement == most_refinements) {
+    const bool is_hopeless = !is_settled && only_misses_where_no_peak_is(sequence, asks);
+    if (is_settled || doubtful || is_hopeless || refinement == most_refinements) {
       Solution solution = report(problem, sequence, places, extent);
       const bool is_met = is_settled && contact.reason.empty();
       solution.status = is_met ? Solution::Status::settled : Solution::Status::not_met;
-      if (!is_settled) solution.reason = reason_for(sequence, problem.plate, asks, places, refinement);
+      if (!is_settled) solution.reason = reason_for(sequence, problem.plate, asks, refinement);
       if (doubtful) solution.reason += "; the contact pressure of the pins is not known better";
       if (!contact.reason.empty()) solution.reason = contact_reason(contact);
       solution.pins = contact.pins;

@@ -3,6 +3,7 @@
 #include <cmath>
 #include <numbers>
 
+#include "mesh/plate/build.hpp"
 #include "mesh/region/region.hpp"
 #include "solver/solution.hpp"
 #include "tests/mesh/polygon.hpp"
@@ -97,6 +98,25 @@ TEST(SettledCorner, ScalesWithThePlateByItsExponent) {
   const SingularField large = intensity(8.0);
   const double expected = one.intensity.value * std::pow(8.0, 1 - one.exponent.real());
   EXPECT_NEAR(large.intensity.value, expected, 1e-8 * expected);
+}
+
+/// A V notch in a loaded end: at its mouth the traction of the end fits no stress that
+/// leaves the flank free.
+TEST(SettledCorner, AnExtremeAtAPlaceWithoutAPeakHasNoBound) {
+  mesh::Notch notch{"end notch", mesh::NotchShape::v, mesh::rectangle::right, 0.0, 10.0, 1.0, 1.0};
+  Problem problem{{200, 100, 5, {}, mesh::with_notches(mesh::rectangular(200, 100), {notch}).outline},
+                  {2e5, 0.3, PlaneState::stress},
+                  {{Load::Kind::tension, "pull", 100.0}}};
+  const auto solution = settle(
+      problem, {{Quantity::largest_edge_stress, 0, 1e-3, ""}, {Quantity::smallest_edge_stress, 0, 1e-3, ""}});
+  EXPECT_EQ(solution.status, Solution::Status::not_met);
+  EXPECT_NE(solution.reason.find("lies at a place without a peak stress"), std::string::npos)
+      << solution.reason;
+  EXPECT_EQ(solution.levels.back().refinement, 0) << "a finer mesh is of no use";
+  const RaiserFindings& found = solution.combined.raisers.at(0);
+  EXPECT_TRUE(std::isinf(found.largest.stress.bound));
+  // The peak at the root is not touched by that.
+  EXPECT_LT(found.smallest.stress.bound, 1e-3 * std::abs(found.smallest.stress.value));
 }
 
 }  // namespace
