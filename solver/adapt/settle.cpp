@@ -112,7 +112,7 @@ mesh::SizeRule first_rule(const Problem& problem, const std::vector<Ask>& asks, 
   const double stretch = problem.material.stretch();
   rule.turn *= std::max(least_turn, 1 / std::sqrt(stretch));
   if (stretch > far_reaching) rule.growth = 0.7;
-  rule.end = std::clamp(5 * tolerance, 1e-3, rule.end);
+  rule.end = std::clamp(5 * tolerance, 2e-4, rule.end);
   if (tolerance < 5e-5) rule.turn *= 0.8;
   if (tolerance < 1e-5) {
     rule.growth = std::min(rule.growth, 0.7);
