@@ -54,6 +54,8 @@ void DegreeSequence::solve(int degree) {
   displacements_.push_back(model_->solve(degree, room_));
   scans_.push_back(scanner_.scan(displacements_.back()));
   tip_scans_.push_back(tip_scanner_.scan(displacements_.back()));
+  largest_peak_ = 0.0;
+  for (std::size_t r = 0; r < centres_.size(); ++r) largest_peak_ = std::max(largest_peak_, peak(r));
 }
 
 Convergence DegreeSequence::convergence() const {
@@ -174,9 +176,7 @@ double DegreeSequence::excess(const Ask& ask) const {
     return tip_excess(ask, {own[0].bound, own[1].bound, own[2].bound});
   }
   constexpr double negligible = 1e-5;
-  double largest = 0.0;
-  for (std::size_t r = 0; r < centres_.size(); ++r) largest = std::max(largest, peak(r));
-  const double allowed = ask.tolerance * std::max(peak(ask.raiser), negligible * largest);
+  const double allowed = ask.tolerance * std::max(peak(ask.raiser), negligible * largest_peak_);
   const double bound = value(0, ask.raiser, ask.quantity).stress.bound;
   return bound == 0.0 ? 0.0 : bound / allowed;
 }

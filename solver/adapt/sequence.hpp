@@ -71,6 +71,7 @@ class DegreeSequence {
   const Model* model_;
   const Plate* plate_;
   double end_ = 0.0;
+  double largest_peak_ = 0.0;  ///< MPa, over all raisers in the last solution
   std::vector<SingularPlace> places_;
   std::vector<Point> centres_;  ///< of the raisers
   std::vector<Joints> joints_;  ///< of the raisers; none on holes

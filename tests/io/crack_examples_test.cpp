@@ -1,11 +1,9 @@
 #include <gtest/gtest.h>
 
 #include <cmath>
-#include <filesystem>
 #include <numbers>
-#include <stdexcept>
 
-#include "io/case/case.hpp"
+#include "tests/io/example.hpp"
 #include "validation/published/cracks.hpp"
 
 namespace raiser::io {
@@ -13,29 +11,10 @@ namespace {
 
 using solver::TipFindings;
 
-struct Solved {
-  Case input;
-  solver::Solution solution;
-};
-
-Solved example(const char* name) {
-  CaseReading reading = read_case(std::filesystem::path(RAISER_SOURCE_DIR) / "examples" / name);
-  if (!reading.value) throw std::runtime_error(text(reading.faults.front()));
-  solver::Solution solution = solver::settle(reading.value->problem, reading.value->asks);
-  EXPECT_EQ(solution.status, solver::Solution::Status::settled) << solution.reason;
-  return {*std::move(reading.value), std::move(solution)};
-}
-
-// `exact` is what the same case gives when 1e-6 is asked for.
-void expect_within(const solver::Estimate& found, double exact, const char* what) {
-  EXPECT_LE(std::abs(found.value - exact), found.bound)
-      << what << " " << found.value << " +- " << found.bound;
-}
-
 TEST(CrackExamples, HangerWithACrackAtItsBoltHole) {
-  const Solved hanger = example("cracked-hanger.toml");
+  const test::Example hanger = test::example("cracked-hanger.toml");
   const TipFindings& tip = hanger.solution.combined.tips.at(0);
-  expect_within(tip.k_one, 740.0887, "K_I");
+  test::expect_within(tip.k_one, 740.0887, "K_I");
   EXPECT_LE(std::abs(tip.k_two.value), tip.k_two.bound);
   EXPECT_NEAR(tip.j_integral, tip.energy_release.value, 2e-3 * tip.energy_release.value);
   EXPECT_NEAR(tip.extension, tip.energy_release.value, 2e-3 * tip.energy_release.value);
@@ -48,10 +27,10 @@ TEST(CrackExamples, HangerWithACrackAtItsBoltHole) {
 }
 
 TEST(CrackExamples, VaneWithACrackAtItsEdge) {
-  const Solved vane = example("cracked-vane.toml");
+  const test::Example vane = test::example("cracked-vane.toml");
   const TipFindings& edge = vane.solution.combined.tips.at(0);
-  expect_within(edge.k_one, 283.9071, "K_I");
-  expect_within(edge.t_stress, -14.094, "T");
+  test::expect_within(edge.k_one, 283.9071, "K_I");
+  test::expect_within(edge.t_stress, -14.094, "T");
   // By the polynomials of B. Gross, J. E. Srawley and W. F. Brown for tension and bending added up.
   const auto& loads = vane.input.problem.loads;
   const double root = std::sqrt(std::numbers::pi * 0.6 * 25.4);

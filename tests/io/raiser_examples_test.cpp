@@ -1,11 +1,10 @@
 #include <gtest/gtest.h>
 
 #include <cmath>
-#include <filesystem>
 #include <stdexcept>
 
-#include "io/case/case.hpp"
 #include "mesh/plate/plate.hpp"
+#include "tests/io/example.hpp"
 #include "validation/published/edge_raisers.hpp"
 
 namespace raiser::io {
@@ -13,28 +12,19 @@ namespace {
 
 using solver::RaiserFindings;
 
-/// An example as it comes, solved.
+/// An example as it comes, solved; its raisers by name.
 class Example {
  public:
-  explicit Example(const char* name) : input_(read(name)) {
-    solution_ = solver::settle(input_.problem, input_.asks);
-    EXPECT_EQ(solution_.status, solver::Solution::Status::settled) << solution_.reason;
-  }
+  explicit Example(const char* name) : solved_(test::example(name)) {}
   const RaiserFindings& at(const std::string& name) const {
-    const auto all = mesh::raisers(input_.problem.plate);
-    for (const RaiserFindings& found : solution_.combined.raisers)
+    const auto all = mesh::raisers(solved_.input.problem.plate);
+    for (const RaiserFindings& found : solved_.solution.combined.raisers)
       if (all.at(found.raiser).name == name) return found;
     throw std::out_of_range(name);
   }
 
  private:
-  static Case read(const char* name) {
-    CaseReading reading = read_case(std::filesystem::path(RAISER_SOURCE_DIR) / "examples" / name);
-    if (!reading.value) throw std::runtime_error(text(reading.faults.front()));
-    return *std::move(reading.value);
-  }
-  Case input_;
-  solver::Solution solution_;
+  test::Example solved_;
 };
 
 // The edge stress of largest magnitude. `exact` is what the same case gives when 1e-7 is asked for (1e-5 of

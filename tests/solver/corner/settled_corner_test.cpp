@@ -119,5 +119,21 @@ TEST(SettledCorner, AnExtremeAtAPlaceWithoutAPeakHasNoBound) {
   EXPECT_LT(found.smallest.stress.bound, 1e-3 * std::abs(found.smallest.stress.value));
 }
 
+/// Stress falls to nothing where two free edges meet in a blunt corner, but like a
+/// small power of the distance: without that known, no degree settles it.
+TEST(SettledCorner, StressIsNothingInABluntCornerOfFreeEdges) {
+  mesh::Notch notch{"dent", mesh::NotchShape::v, mesh::rectangle::top, 0.0, 10.0, 5.0, 2.6};
+  Problem problem{{400, 100, 5, {}, mesh::with_notches(mesh::rectangular(400, 100), {notch}).outline},
+                  {2e5, 0.3, PlaneState::stress},
+                  {{Load::Kind::tension, "pull", 100.0}}};
+  const auto solution = settle(
+      problem, {{Quantity::largest_edge_stress, 0, 1e-3, ""}, {Quantity::smallest_edge_stress, 0, 1e-3, ""}});
+  EXPECT_EQ(solution.status, Solution::Status::settled) << solution.reason;
+  EXPECT_EQ(solution.levels.back().refinement, 0);
+  const EdgeValue& smallest = solution.combined.raisers.at(0).smallest;
+  EXPECT_EQ(smallest.stress.value, 0.0);
+  EXPECT_NEAR(smallest.point.y(), 50.0, 1e-9) << "at the mouth";
+}
+
 }  // namespace
 }  // namespace raiser::solver
