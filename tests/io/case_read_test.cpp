@@ -10,6 +10,7 @@
 #include "io/case/case.hpp"
 #include "io/case/describe.hpp"
 #include "io/case/layout.hpp"
+#include "tests/io/scratch.hpp"
 
 using namespace raiser::io;
 using raiser::mesh::HoleShape;
@@ -65,22 +66,6 @@ std::string only_fault(const std::string& content) {
 bool contains(const std::string& text, const std::string& part) {
   return text.find(part) != std::string::npos;
 }
-
-class Scratch {
- public:
-  Scratch() : folder_(std::filesystem::temp_directory_path() / fmt::format("raiser-case-{}", ::getpid())) {
-    std::filesystem::create_directories(folder_);
-  }
-  ~Scratch() { std::filesystem::remove_all(folder_); }
-  std::filesystem::path file(const std::string& name, const std::string& content) const {
-    std::ofstream(folder_ / name, std::ios::binary) << content;
-    return folder_ / name;
-  }
-  const std::filesystem::path& folder() const { return folder_; }
-
- private:
-  std::filesystem::path folder_;
-};
 
 }  // namespace
 
@@ -280,15 +265,15 @@ TEST(Case, TellsKindsOfFaultApart) {
 }
 
 TEST(Case, RefusesWhatIsNoCaseFile) {
-  const Scratch scratch;
+  const test::ScratchFolder scratch;
   const auto refusal = [](const std::filesystem::path& file) {
     const auto reading = read_case(file);
     EXPECT_FALSE(reading.value);
     EXPECT_EQ(reading.faults.size(), 1U) << all_faults(reading);
     return all_faults(reading);
   };
-  EXPECT_TRUE(contains(refusal(scratch.folder() / "none.toml"), "none.toml: there is no such file"));
-  EXPECT_TRUE(contains(refusal(scratch.folder()), "this is a folder"));
+  EXPECT_TRUE(contains(refusal(scratch.path() / "none.toml"), "none.toml: there is no such file"));
+  EXPECT_TRUE(contains(refusal(scratch.path()), "this is a folder"));
   EXPECT_TRUE(contains(refusal("/dev/zero"), "not a regular file"));
   EXPECT_TRUE(contains(refusal(scratch.file("empty.toml", "")), "the file is empty"));
   EXPECT_TRUE(contains(refusal(scratch.file("blank.toml", " \r\n\t\n")), "the file is empty"));
@@ -303,11 +288,11 @@ TEST(Case, RefusesWhatIsNoCaseFile) {
 }
 
 TEST(Case, ReadsFromAFile) {
-  const Scratch scratch;
+  const test::ScratchFolder scratch;
   const auto reading = read_case(scratch.file("strip.toml", head + bolt + pull));
   ASSERT_TRUE(reading.value) << all_faults(reading);
   EXPECT_EQ(reading.value->title, "strip");
-  EXPECT_EQ(reading.value->file, scratch.folder() / "strip.toml");
+  EXPECT_EQ(reading.value->file, scratch.path() / "strip.toml");
 }
 
 TEST(Case, StandsDeepNestingAndLongJunk) {

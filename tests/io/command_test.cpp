@@ -9,6 +9,7 @@
 #include "io/command/options.hpp"
 #include "io/command/run.hpp"
 #include "io/command/speech.hpp"
+#include "tests/io/scratch.hpp"
 #include "tests/io/solved.hpp"
 
 namespace raiser::io {
@@ -79,18 +80,16 @@ TEST(Targets, ClashOnlyWhenTheyAreTheSameFile) {
 }
 
 TEST(Run, SolvesACaseToTheStreamsItIsGiven) {
-  std::string pattern = (fs::temp_directory_path() / "raiser-test-XXXXXX").string();
-  const fs::path folder = ::mkdtemp(pattern.data());
-  std::ofstream(folder / "strap.toml") << test::one_hole;
+  const test::ScratchFolder folder;
+  const std::string strap = folder.file("strap.toml", test::one_hole).string();
   std::ostringstream out, err;
-  EXPECT_EQ(run({"solve", (folder / "strap.toml").string()}, out, err), Exit::settled) << err.str();
+  EXPECT_EQ(run({"solve", strap}, out, err), Exit::settled) << err.str();
   EXPECT_NE(out.str().find("Kt gross"), std::string::npos);
   EXPECT_LE(test::widest(out.str()), 80U) << out.str();
   for (const std::string& suffix : result_suffixes()) {
     if (suffix == "-tips.csv") continue;  // of cracks only
     EXPECT_GT(fs::file_size(folder / ("strap" + suffix)), 100U) << suffix;
   }
-  fs::remove_all(folder);
 }
 
 TEST(Output, SaysThatItFailed) {

@@ -15,6 +15,7 @@
 #include "io/write/table.hpp"
 #include "solver/crack/factors.hpp"
 #include "tests/io/cracked.hpp"
+#include "tests/io/scratch.hpp"
 #include "tests/io/solved.hpp"
 #include "validation/published/cracks.hpp"
 
@@ -173,10 +174,10 @@ TEST(CrackResult, PictureEndsItsColoursAndMarksTheTips) {
     for (const PictureCell& cell : picture.cells)
       largest = std::max(largest, *std::max_element(cell.values.begin(), cell.values.end()));
     EXPECT_GT(largest, limits.back());
-    const auto file = std::filesystem::temp_directory_path() / "raiser-crack-picture.svg";
+    const test::ScratchFolder folder;
+    const auto file = folder / "crack.svg";
     draw_svg(picture, file);
     EXPECT_GT(std::filesystem::file_size(file), 10000u);
-    std::filesystem::remove(file);
   }
 }
 

@@ -9,6 +9,7 @@
 #include <sstream>
 
 #include "io/write/provenance.hpp"
+#include "tests/io/scratch.hpp"
 
 namespace raiser::io {
 namespace {
@@ -17,12 +18,6 @@ namespace fs = std::filesystem;
 
 class Files : public testing::Test {
  protected:
-  Files() {
-    std::string pattern = (fs::temp_directory_path() / "raiser-test-XXXXXX").string();
-    folder = ::mkdtemp(pattern.data());
-  }
-  ~Files() override { fs::remove_all(folder); }
-
   static std::string content(const fs::path& file) {
     std::ifstream input(file, std::ios::binary);
     std::ostringstream text;
@@ -43,7 +38,8 @@ class Files : public testing::Test {
     return "";
   }
 
-  fs::path folder;
+  test::ScratchFolder scratch;
+  const fs::path& folder = scratch.path();
 };
 
 // While it lives, no file may grow beyond a few bytes: stands for a full disk.

@@ -12,6 +12,7 @@
 #include "io/picture/from_growth.hpp"
 #include "io/write/layout.hpp"
 #include "tests/io/cracked.hpp"
+#include "tests/io/scratch.hpp"
 
 namespace raiser::io {
 namespace {
@@ -106,19 +107,15 @@ TEST(GrowthChart, ShowsKAndTheLimits) {
 
 class GrowCommand : public ::testing::Test {
  protected:
-  GrowCommand() : folder_(fs::temp_directory_path() / "raiser_grow_test") {
-    fs::remove_all(folder_);
-    fs::create_directories(folder_);
-    std::ofstream(folder_ / "strap.toml") << test::cracked_strap;
-  }
-  ~GrowCommand() override { fs::remove_all(folder_); }
+  GrowCommand() : strap_(folder_.file("strap.toml", test::cracked_strap)) {}
   Exit grow(std::vector<std::string> arguments) {
-    arguments.insert(arguments.begin(), {"grow", (folder_ / "strap.toml").string()});
+    arguments.insert(arguments.begin(), {"grow", strap_.string()});
     out_.str("");
     err_.str("");
     return run(arguments, out_, err_);
   }
-  fs::path folder_;
+  test::ScratchFolder folder_;
+  fs::path strap_;
   std::ostringstream out_, err_;
 };
 

@@ -12,6 +12,7 @@
 #include "io/write/layout.hpp"
 #include "io/write/validation.hpp"
 #include "io/write/validation_words.hpp"
+#include "tests/io/scratch.hpp"
 
 namespace raiser::io {
 namespace {
@@ -120,8 +121,7 @@ TEST_F(Written, ChartKeepsEachSourceToItsRange) {
 }
 
 TEST_F(Written, ChartIsDrawnInBothKinds) {
-  const auto folder = std::filesystem::temp_directory_path() / "raiser-family-chart";
-  std::filesystem::create_directories(folder);
+  const test::ScratchFolder folder;
   const FamilyChart chart = chart_of(results[0]);
   draw_family_chart_svg(chart, folder / "a.svg");
   draw_family_chart_png(chart, folder / "a.png");
@@ -129,12 +129,12 @@ TEST_F(Written, ChartIsDrawnInBothKinds) {
   const std::string svg{std::istreambuf_iterator<char>(file), {}};
   EXPECT_NE(svg.find("</svg>"), std::string::npos);
   EXPECT_GT(std::filesystem::file_size(folder / "a.png"), 5000U);
-  std::filesystem::remove_all(folder);
 }
 
 TEST_F(Written, ChartWithoutPointsOrWithoutFiniteValuesIsRefused) {
   FamilyChart chart = chart_of(results[0]);
-  const auto file = std::filesystem::temp_directory_path() / "raiser-no-chart.svg";
+  const test::ScratchFolder folder;
+  const auto file = folder / "none.svg";
   chart.ours[0].marks[0].point.y() = std::numeric_limits<double>::quiet_NaN();
   EXPECT_THROW(draw_family_chart_svg(chart, file), std::invalid_argument);
   chart.ours.clear();

@@ -1,5 +1,4 @@
 #include <gtest/gtest.h>
-#include <unistd.h>
 
 #include <cmath>
 #include <filesystem>
@@ -8,6 +7,7 @@
 #include "dxf_writer.hpp"
 #include "io/import/part_plate.hpp"
 #include "solver/solution.hpp"
+#include "tests/io/scratch.hpp"
 
 namespace raiser::io {
 namespace {
@@ -18,16 +18,12 @@ using mesh::Point;
 class DrawingFile {
  public:
   explicit DrawingFile(const std::string& content, const std::string& name = "part.dxf")
-      : folder_(std::filesystem::temp_directory_path() / ("raiser-part-test-" + std::to_string(::getpid()))) {
-    std::filesystem::create_directories(folder_);
-    path_ = folder_ / name;
-    std::ofstream(path_, std::ios::binary) << content;
-  }
-  ~DrawingFile() { std::filesystem::remove_all(folder_); }
+      : path_(folder_.file(name, content)) {}
   const std::filesystem::path& path() const { return path_; }
 
  private:
-  std::filesystem::path folder_, path_;
+  test::ScratchFolder folder_;
+  std::filesystem::path path_;
 };
 
 PartReading read(const std::filesystem::path& path, const std::string& unit = "") {

@@ -10,6 +10,7 @@
 #include "io/import/contour.hpp"
 #include "io/import/curve_tools.hpp"
 #include "io/import/shapes.hpp"
+#include "tests/io/scratch.hpp"
 
 namespace raiser::io {
 namespace {
@@ -75,17 +76,15 @@ TEST(Step, RefusesOtherEdgesByName) {
 }
 
 TEST(Step, RefusesWhatIsNoStepFile) {
-  const auto folder = std::filesystem::temp_directory_path() / "raiser-step-test";
-  std::filesystem::create_directories(folder);
-  std::ofstream(folder / "text.step") << "hello";
-  std::ofstream(folder / "junk.step") << "ISO-10303-21;\njunk";
+  const test::ScratchFolder folder;
+  folder.file("text.step", "hello");
+  folder.file("junk.step", "ISO-10303-21;\njunk");
   for (const char* name : {"text.step", "junk.step", "missing.step"}) {
     const auto reading = read_step(folder / name, name, std::nullopt);
     EXPECT_FALSE(reading.value) << name;
     ASSERT_EQ(reading.faults.size(), 1U) << name;
     EXPECT_FALSE(reading.faults[0].cure.empty());
   }
-  std::filesystem::remove_all(folder);
 }
 
 TEST(Step, WritesNothingToStandardOutput) {
