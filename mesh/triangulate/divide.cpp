@@ -230,9 +230,11 @@ double whole_angle(const Piece& a, const Piece& b) {
   return (a.on_mirror() || b.on_mirror() ? 2 : 1) * angle_between(a.curve, b.curve);
 }
 
+bool is_corner(const Piece& a, const Piece& b) { return whole_angle(a, b) > std::numbers::pi + least_corner; }
+
 /// Whether stress is singular, or asked to be taken as such, where two pieces meet.
 bool is_singular(const Piece& a, const Piece& b, const SizeRule& rule) {
-  if (whole_angle(a, b) > std::numbers::pi + least_corner) return true;
+  if (is_corner(a, b)) return true;
   const double close = 1e-9 * (a.length + b.length);
   return std::any_of(rule.singular.begin(), rule.singular.end(),
                      [&](const Point& x) { return (x - b.from).norm() <= close; });
@@ -343,11 +345,15 @@ Division divide(const Region& whole, const SizeRule& rule) {
   }
   std::vector<std::vector<Piece>> chains(loops + region.slits.size());
   for (const Piece& piece : pieces) chains[piece.loop].push_back(piece);
-  for (std::size_t i = 0; i < chains.size(); ++i)
-    if (i < loops)
-      result.loops.push_back(grade_joints(chains[i], rule));
-    else
+  for (std::size_t i = 0; i < chains.size(); ++i) {
+    if (i >= loops) {
       result.slits.push_back(grade_kinks(chains[i], rule));
+      continue;
+    }
+    result.loops.push_back(grade_joints(chains[i], rule));
+    for (std::size_t k = 0; k < chains[i].size(); ++k)
+      result.has_corner = result.has_corner || is_corner(chains[i][k], chains[i][(k + 1) % chains[i].size()]);
+  }
   return result;
 }
 

@@ -61,6 +61,7 @@ struct Division {
   std::vector<DividedLoop> loops;
   std::vector<std::vector<Curve>> slits;
   std::vector<Fan> fans;
+  bool has_corner = false;  ///< a re-entrant one
 };
 
 /// Divides every curve of the region by the rule.

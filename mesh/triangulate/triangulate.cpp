@@ -149,11 +149,28 @@ struct Manner {
   bool by_delaunay = false;
 };
 
+/// Whether sides shrink towards some place of a loop faster than Gmsh's front
+/// follows without many small triangles.
+bool is_graded(const DividedLoop& loop) {
+  constexpr double fast = 4.0;
+  const auto length = [](const Curve& piece) { return (piece.at(piece.end) - piece.at(piece.begin)).norm(); };
+  double before = length(loop.back());
+  for (const Curve& piece : loop) {
+    const double own = length(piece);
+    if (std::max(own, before) > fast * std::min(own, before)) return true;
+    before = own;
+  }
+  return false;
+}
+
 /// Beside a place on a smooth edge that the sides shrink towards, Gmsh's usual
 /// shift is more than the edge bends.
 Manner manner(const SizeRule& rule, const Division& division, double growth, int attempt) {
   Manner result{growth, rule.crack_growth * growth / rule.growth};
-  result.by_delaunay = !division.fans.empty() || !rule.singular.empty();
+  // About a corner the front's triangles are the better ones.
+  const bool is_smooth = !division.has_corner;
+  result.by_delaunay = !division.fans.empty() || !rule.singular.empty() ||
+                       (is_smooth && std::any_of(division.loops.begin(), division.loops.end(), is_graded));
   constexpr std::array shifts = {1e-13, 1e-12, 1e-14};
   if (!rule.singular.empty()) result.shift = shifts[attempt % shifts.size()];
   return result;

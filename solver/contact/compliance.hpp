@@ -60,6 +60,11 @@ class Compliance {
   /// The model's own loads together.
   Model::Together own() const { return model_->together(space_, equations_); }
   Eigen::MatrixXd solve(const Eigen::MatrixXd& loads) const { return equations_.solve(loads); }
+  /// The work of each load in the displacements of every other one.
+  Eigen::MatrixXd work(const Eigen::MatrixXd& loads) const {
+    const Eigen::MatrixXd half = equations_.halfway(loads);
+    return half.transpose() * half;
+  }
   /// Radial displacement at places on the edge, one column of `values` a column; mm.
   Eigen::MatrixXd radial_displacement(const RoundEdge& edge, std::span<const double> angles,
                                       const Eigen::MatrixXd& values) const;

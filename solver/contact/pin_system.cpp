@@ -60,13 +60,13 @@ PinSystem::Parts PinSystem::assemble(const std::vector<EdgeBasis>& bases) const 
     count += basis.count;
   }
   parts.first.push_back(count);
-  Eigen::MatrixXd loads(own_displacement_.size(), count);
+  parts.loads.resize(own_displacement_.size(), count);
   parts.resultant = Eigen::MatrixXd::Zero(count, directions * static_cast<Eigen::Index>(pins_.size()));
   parts.size = Eigen::VectorXd::Zero(count);
   for (std::size_t p = 0; p < pins_.size(); ++p) {
     const Eigen::Index first = parts.first[p];
     const auto points = edge_points(edges_[p], bases[p], degree_);
-    loads.middleCols(first, bases[p].count) = compliance_.radial_loads(edges_[p], points);
+    parts.loads.middleCols(first, bases[p].count) = compliance_.radial_loads(edges_[p], points);
     for (const EdgePoint& point : points) {
       const double e[] = {std::cos(point.angle), std::sin(point.angle)};
       for (Eigen::Index c = 0; c < directions; ++c)
@@ -75,9 +75,8 @@ PinSystem::Parts PinSystem::assemble(const std::vector<EdgeBasis>& bases) const 
       parts.size.segment(first, bases[p].count) += images * pins_[p].opening(point.angle) * point.weight;
     }
   }
-  parts.displacement = compliance_.solve(loads);
-  parts.compliance = images * loads.transpose() * parts.displacement;
-  parts.own = images * loads.transpose() * own_displacement_;
+  parts.compliance = images * compliance_.work(parts.loads);
+  parts.own = images * parts.loads.transpose() * own_displacement_;
   return parts;
 }
 
@@ -122,7 +121,7 @@ PinSystem::Answer PinSystem::solve(const std::vector<EdgeBasis>& bases) const {
       way[components_[c]] = solved[count + directions * static_cast<Eigen::Index>(p) + c];
     answer.way.push_back(way);
   }
-  answer.displacement = own_displacement_ + parts.displacement * solved.head(count);
+  answer.load = parts.loads * solved.head(count);
   return answer;
 }
 
@@ -177,7 +176,8 @@ PinSystem::Start PinSystem::unilateral(int places) const {
 }
 
 Eigen::VectorXd PinSystem::gap(const Answer& answer, std::size_t pin, std::span<const double> angles) const {
-  Eigen::VectorXd result = compliance_.radial_displacement(edges_[pin], angles, answer.displacement);
+  const Eigen::VectorXd displacement = own_displacement_ + compliance_.solve(answer.load);
+  Eigen::VectorXd result = compliance_.radial_displacement(edges_[pin], angles, displacement);
   for (std::size_t k = 0; k < angles.size(); ++k)
     result[static_cast<Eigen::Index>(k)] +=
         pins_[pin].opening(angles[k]) - answer.way[pin].dot(Point(std::cos(angles[k]), std::sin(angles[k])));

@@ -34,7 +34,7 @@ class PinSystem {
   struct Answer {
     std::vector<Eigen::VectorXd> terms;  ///< by pin: coefficients of its basis, MPa
     std::vector<Point> way;              ///< by pin: d, mm
-    Eigen::VectorXd displacement;        ///< of all loads and pressures together
+    Eigen::VectorXd load;                ///< load vector of the pressures together
   };
   Answer solve(const std::vector<EdgeBasis>& bases) const;
 
@@ -54,7 +54,7 @@ class PinSystem {
   struct Parts {
     Eigen::MatrixXd compliance, resultant;
     Eigen::VectorXd own, size;
-    Eigen::MatrixXd displacement;  ///< columns as the compliance's
+    Eigen::MatrixXd loads;  ///< columns as the compliance's
     std::vector<Eigen::Index> first;
   };
   Parts assemble(const std::vector<EdgeBasis>& bases) const;

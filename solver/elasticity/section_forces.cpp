@@ -43,7 +43,9 @@ mesh::Loop curves_of(const Plate& plate, const std::vector<Load>& loads) {
   }
   mesh::Region region{{mesh::outline_of(plate).curves}};
   if (!holes.empty()) {
-    const mesh::Region whole = mesh::trace(plate);
+    Plate uncracked = plate;  // cracks change no resultant
+    uncracked.cracks.clear();
+    const mesh::Region whole = mesh::trace(uncracked);
     std::sort(holes.begin(), holes.end());
     holes.erase(std::unique(holes.begin(), holes.end()), holes.end());
     for (const std::size_t hole : holes)

@@ -125,14 +125,15 @@ Ligament follow(const Plate& plate, std::size_t raiser, const Section& section, 
     const double distance = share * ligament.width;
     const double position = from_begin ? piece.begin + distance : piece.end - distance;
     const Point x = across ? Point(section.station, position) : Point(position, section.station);
+    const auto place = fields.back().place(x);
+    if (!place) continue;
     std::vector<std::array<double, 3>> values;
     LigamentPoint point;
-    for (const Field& field : fields)
-      if (const auto value = field.at(x)) {
-        values.push_back({value->stress.xx, value->stress.yy, value->stress.xy});
-        point = {value->point, k == 0 ? 0.0 : distance, value->stress, 0.0};
-      }
-    if (values.empty()) continue;
+    for (const Field& field : fields) {
+      const FieldValue value = field.value(*place);
+      values.push_back({value.stress.xx, value.stress.yy, value.stress.xy});
+      point = {value.point, k == 0 ? 0.0 : distance, value.stress, 0.0};
+    }
     const double size = von_mises(point.stress);
     for (int c = 0; c < 3; ++c) {
       std::vector<double> sequence;

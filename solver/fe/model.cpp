@@ -156,6 +156,11 @@ Eigen::MatrixXd Equations::solve(Eigen::MatrixXd loads) const {
   return solved;
 }
 
+Eigen::MatrixXd Equations::halfway(Eigen::MatrixXd loads) const {
+  how.turn(loads);
+  return factors.halfway(loads);
+}
+
 Equations Model::equations(const Discretisation& space, const Class& cls, Room& room) const {
   Constraints how = constraints(space, cls);
   std::vector<bool> held = how.held;
@@ -282,6 +287,7 @@ void Model::share(const Point& force, const Point& x, const std::vector<std::siz
 }
 
 std::vector<std::vector<Resultant>> Model::reactions(const Displacements& displacements) const {
+  if (held_.empty()) return {};
   const Discretisation space(mesh_, displacements.degree);
   const Eigen::MatrixXd residual = forces(space, displacements.values) - load_vectors(space);
   // Held edges at each vertex; the functions of vertices alone make up a rigid motion of a straight edge.

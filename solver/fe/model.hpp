@@ -44,6 +44,8 @@ struct Equations {
   Factorisation factors;
   /// Displacements for load vectors, held unknowns 0.
   Eigen::MatrixXd solve(Eigen::MatrixXd loads) const;
+  /// Factorisation::halfway of load vectors.
+  Eigen::MatrixXd halfway(Eigen::MatrixXd loads) const;
 };
 
 /// A meshed plate (or its half or quarter between mirror lines) with its

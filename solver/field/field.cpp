@@ -63,7 +63,7 @@ std::size_t Field::grid_cell(const Point& x) const {
   return index(offset.y(), grid_.size() / columns_) * columns_ + index(offset.x(), columns_);
 }
 
-std::optional<Field::Place> Field::locate(const Point& x) const {
+std::optional<Field::Place> Field::locate(std::size_t image, const Point& x) const {
   constexpr double slack = 1e-9;
   for (const int t : grid_[grid_cell(x)]) {
     Point reference(1.0 / 3, 1.0 / 3);
@@ -72,11 +72,11 @@ std::optional<Field::Place> Field::locate(const Point& x) const {
       const mesh::MapPoint here = mesh_.map(t, reference);
       const Point change = here.jacobian.inverse() * (x - here.x);
       reference += change;
-      converged = change.norm() < 1e-12;
+      converged = change.norm() < 1e-12 || !mesh_.is_curved(t);
       if (!(reference.norm() < 10.0)) break;
     }
     if (converged && reference.x() >= -slack && reference.y() >= -slack && reference.sum() <= 1 + slack)
-      return Place{t, reference};
+      return Place{image, t, reference};
   }
   return std::nullopt;
 }
@@ -124,7 +124,7 @@ std::vector<FieldValue> Field::sample(std::size_t cell, std::span<const Point> r
   return evaluate(image, triangle, exchanged);
 }
 
-std::optional<FieldValue> Field::at(const Point& x) const {
+std::optional<Field::Place> Field::place(const Point& x) const {
   for (std::size_t image = 0; image < images_.size(); ++image) {
     const Point inner = images_[image].apply(x);
     const mesh::Mirrors mirror = images_[image].mirror();
@@ -132,10 +132,14 @@ std::optional<FieldValue> Field::at(const Point& x) const {
     const bool is_x = images_.size() == 1 || images_.back().sign[0] > 0 || mirror.x == (x.x() < 0);
     const bool is_y = images_.size() == 1 || images_.back().sign[1] > 0 || mirror.y == (x.y() < 0);
     if (!is_x || !is_y) continue;
-    if (const auto place = locate(inner))
-      return evaluate(image, place->triangle, {&place->reference, 1}).front();
+    if (const auto found = locate(image, inner)) return found;
   }
   return std::nullopt;
+}
+
+std::optional<FieldValue> Field::at(const Point& x) const {
+  const auto found = place(x);
+  return found ? std::optional(value(*found)) : std::nullopt;
 }
 
 }  // namespace raiser::solver

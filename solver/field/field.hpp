@@ -37,18 +37,25 @@ class Field {
   /// Values at reference points of cell `cell`, in order.
   std::vector<FieldValue> sample(std::size_t cell, std::span<const Point> reference) const;
 
-  /// Value at a point of the plate; nothing outside the material. A point on
-  /// a side that two cells share takes either's.
-  std::optional<FieldValue> at(const Point& x) const;
-
- private:
+  /// Where a point of the plate lies in the cells, the same for all fields on one mesh.
   struct Place {
+    std::size_t image;
     int triangle;
     Point reference;
   };
+  /// Nothing outside the material. A point on a side that two cells share lies in
+  /// either.
+  std::optional<Place> place(const Point& x) const;
+  FieldValue value(const Place& place) const {
+    return evaluate(place.image, place.triangle, {&place.reference, 1}).front();
+  }
+  /// Value at a point of the plate; nothing outside the material.
+  std::optional<FieldValue> at(const Point& x) const;
+
+ private:
   void build_grid();
   std::size_t grid_cell(const Point& x) const;
-  std::optional<Place> locate(const Point& x) const;
+  std::optional<Place> locate(std::size_t image, const Point& x) const;
   std::vector<FieldValue> evaluate(std::size_t image, int triangle, std::span<const Point> reference) const;
 
   mesh::Mesh mesh_;

@@ -49,9 +49,15 @@ void find_runs(const std::vector<int>& place, std::vector<Run>& runs) {
   }
 }
 
-/// Adds a symmetric n x n matrix to the lower triangle of the front. Read are
-/// only entries whose place is in that triangle.
-void add(const Dense& front, const double* matrix, int n, const std::vector<Run>& runs) {
+/// Puts zeros into the lower triangle of the front.
+void clear(const Dense& front) {
+  for (int c = 0; c < front.rows; ++c) std::fill(front.column(c) + c, front.column(c) + front.rows, 0.0);
+}
+
+/// Merges a symmetric n x n matrix into the lower triangle of the front, entry by
+/// entry. Read are only entries whose place is in that triangle.
+template <class Merge>
+void merge(const Dense& front, const double* matrix, int n, const std::vector<Run>& runs, Merge entry) {
   for (const Run& across : runs)
     for (int c = 0; c < across.length; ++c) {
       double* to = front.column(across.to + c);
@@ -60,7 +66,7 @@ void add(const Dense& front, const double* matrix, int n, const std::vector<Run>
         if (down.to < across.to) continue;
         double* target = to + down.to;
         const double* source = from + down.from;
-        for (int r = &down == &across ? c : 0; r < down.length; ++r) target[r] += source[r];
+        for (int r = &down == &across ? c : 0; r < down.length; ++r) entry(target[r], source[r]);
       }
     }
 }
@@ -115,8 +121,20 @@ void Factorisation::lay_out(const EliminationTree& tree, Room& room) {
     size += static_cast<std::size_t>(front.eliminated) * (front.eliminated + front.border.size());
     fronts_.push_back(std::move(front));
   }
-  factors_ = room.take(size);
   entries_ = size;
+  factors_ = room.take(size + pending(tree));
+}
+
+std::size_t Factorisation::pending(const EliminationTree& tree) const {
+  std::size_t held = 0, most = 0;
+  for (std::size_t g = 0; g < fronts_.size(); ++g) {
+    const EliminationTree::Group& group = tree.groups()[g];
+    held += fronts_[g].square();
+    most = std::max(most, held);
+    if (group.triangle >= 0) continue;
+    for (const int child : group.children) held -= fronts_[child].square();
+  }
+  return most;
 }
 
 Factorisation::Factorisation(const EliminationTree& tree, const Discretisation& space,
@@ -124,7 +142,8 @@ Factorisation::Factorisation(const EliminationTree& tree, const Discretisation& 
   number(tree, space, held);
   lay_out(tree, room);
   std::vector<int> row_of(free_, 0);  // by place in elimination order: row in the current front
-  std::vector<std::vector<double>> squares(fronts_.size());
+  // Children come just before their parent, so that squares wait on a stack.
+  double* top = factors_ + entries_;
   std::vector<int> place;
   std::vector<Run> runs;
   Discretisation::Local local;
@@ -133,12 +152,10 @@ Factorisation::Factorisation(const EliminationTree& tree, const Discretisation& 
     const Front& front = fronts_[g];
     const EliminationTree::Group& group = tree.groups()[g];
     const int border = static_cast<int>(front.border.size());
-    squares[g].assign(static_cast<std::size_t>(border) * border, 0.0);
-    const Dense dense{factors_ + front.offset, squares[g].data(), front.eliminated + border,
-                      front.eliminated};
-    std::fill_n(dense.columns, static_cast<std::size_t>(dense.rows) * dense.eliminated, 0.0);
+    const Dense dense{factors_ + front.offset, top, front.eliminated + border, front.eliminated};
     for (int k = 0; k < front.eliminated; ++k) row_of[front.first + k] = k;
     for (int k = 0; k < border; ++k) row_of[front.border[k]] = front.eliminated + k;
+    double* bottom = top;
     if (group.triangle >= 0) {
       space.local(group.triangle, local);
       element(group.triangle, matrix);
@@ -147,43 +164,66 @@ Factorisation::Factorisation(const EliminationTree& tree, const Discretisation& 
         for (int c = 0; c < 2; ++c)
           place.push_back(position_[2 * f + c] < 0 ? -1 : row_of[position_[2 * f + c]]);
       find_runs(place, runs);
-      add(dense, matrix.data(), static_cast<int>(place.size()), runs);
+      merge(dense, matrix.data(), static_cast<int>(place.size()), runs,
+            [](double& to, double from) { to = from; });  // its only entries
     } else {
+      clear(dense);
+      for (const int child : group.children) bottom -= fronts_[child].square();
+      const double* square = bottom;
       for (const int child : group.children) {
         place.clear();
         for (const int u : fronts_[child].border) place.push_back(row_of[u]);
         find_runs(place, runs);
-        add(dense, squares[child].data(), static_cast<int>(place.size()), runs);
-        std::vector<double>().swap(squares[child]);
+        merge(dense, square, static_cast<int>(place.size()), runs,
+              [](double& to, double from) { to += from; });
+        square += fronts_[child].square();
       }
     }
     eliminate(dense);
+    if (bottom != top) std::copy_n(dense.border, front.square(), bottom);
+    top = bottom + front.square();
   }
 }
 
-Eigen::MatrixXd Factorisation::solve(const Eigen::MatrixXd& loads) const {
+void Factorisation::solve_at(const Front& front, bool transposed, Eigen::MatrixXd& x) const {
+  const int rows = front.eliminated + static_cast<int>(front.border.size());
+  cblas_dtrsm(CblasColMajor, CblasLeft, CblasLower, transposed ? CblasTrans : CblasNoTrans, CblasNonUnit,
+              front.eliminated, static_cast<int>(x.cols()), 1.0, panel(front), rows, x.data() + front.first,
+              free_);
+}
+
+Eigen::MatrixXd Factorisation::halfway(const Eigen::MatrixXd& loads) const {
   const int columns = static_cast<int>(loads.cols());
-  Eigen::MatrixXd x(free_, columns);
-  for (Eigen::Index u = 0; u < loads.rows(); ++u)
-    if (position_[u] >= 0) x.row(position_[u]) = loads.row(u);
+  Eigen::MatrixXd x = Eigen::MatrixXd::Zero(free_, columns);
+  std::vector<bool> is_loaded(free_, false);
+  for (Eigen::Index u = 0; u < loads.rows(); ++u) {
+    if (position_[u] < 0 || (loads.row(u).array() == 0.0).all()) continue;
+    x.row(position_[u]) = loads.row(u);
+    is_loaded[position_[u]] = true;
+  }
   Eigen::MatrixXd border;
-  const auto panel = [&](const Front& front) { return factors_ + front.offset; };
-  const auto triangular = [&](const Front& front, CBLAS_TRANSPOSE transpose) {
-    const int rows = front.eliminated + static_cast<int>(front.border.size());
-    cblas_dtrsm(CblasColMajor, CblasLeft, CblasLower, transpose, CblasNonUnit, front.eliminated, columns, 1.0,
-                panel(front), rows, x.data() + front.first, free_);
-  };
   for (const Front& front : fronts_) {
-    if (front.eliminated == 0) continue;
-    triangular(front, CblasNoTrans);
+    const auto first = is_loaded.begin() + front.first;
+    if (std::find(first, first + front.eliminated, true) == first + front.eliminated) continue;
+    solve_at(front, false, x);
     const int n = static_cast<int>(front.border.size());
     if (n == 0) continue;
     border.resize(n, columns);
     cblas_dgemm(CblasColMajor, CblasNoTrans, CblasNoTrans, n, columns, front.eliminated, 1.0,
                 panel(front) + front.eliminated, front.eliminated + n, x.data() + front.first, free_, 0.0,
                 border.data(), n);
-    for (int k = 0; k < n; ++k) x.row(front.border[k]) -= border.row(k);
+    for (int k = 0; k < n; ++k) {
+      x.row(front.border[k]) -= border.row(k);
+      is_loaded[front.border[k]] = true;
+    }
   }
+  return x;
+}
+
+Eigen::MatrixXd Factorisation::solve(const Eigen::MatrixXd& loads) const {
+  const int columns = static_cast<int>(loads.cols());
+  Eigen::MatrixXd x = halfway(loads);
+  Eigen::MatrixXd border;
   for (auto front = fronts_.rbegin(); front != fronts_.rend(); ++front) {
     if (front->eliminated == 0) continue;
     const int n = static_cast<int>(front->border.size());
@@ -194,7 +234,7 @@ Eigen::MatrixXd Factorisation::solve(const Eigen::MatrixXd& loads) const {
                   panel(*front) + front->eliminated, front->eliminated + n, border.data(), n, 1.0,
                   x.data() + front->first, free_);
     }
-    triangular(*front, CblasTrans);
+    solve_at(*front, true, x);
   }
   Eigen::MatrixXd result = Eigen::MatrixXd::Zero(loads.rows(), columns);
   for (Eigen::Index u = 0; u < loads.rows(); ++u)

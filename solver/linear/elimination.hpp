@@ -59,6 +59,11 @@ class Factorisation {
   /// Entries of held unknowns are ignored, and zero in the result.
   Eigen::MatrixXd solve(const Eigen::MatrixXd& loads) const;
 
+  /// Loads, one column each, seen so that the product of two of them is the work of
+  /// one in the displacements of the other: half of what solve() does, and less
+  /// where loads act at few places. Rows in the order of elimination.
+  Eigen::MatrixXd halfway(const Eigen::MatrixXd& loads) const;
+
   /// Numbers stored in the factors.
   std::size_t entries() const { return entries_; }
 
@@ -68,9 +73,16 @@ class Factorisation {
     int eliminated = 0;
     std::vector<int> border;  ///< the other unknowns, in elimination order
     std::size_t offset = 0;   ///< of its columns in factors_
+    /// Numbers of what it hands to its parent.
+    std::size_t square() const { return border.size() * border.size(); }
   };
   void number(const EliminationTree& tree, const Discretisation& space, const std::vector<bool>& held);
   void lay_out(const EliminationTree& tree, Room& room);
+  const double* panel(const Front& front) const { return factors_ + front.offset; }
+  /// Solves with the eliminated part of a front, or its transpose, in place.
+  void solve_at(const Front& front, bool transposed, Eigen::MatrixXd& x) const;
+  /// The most numbers that wait for parents at a time, those of the front at hand included.
+  std::size_t pending(const EliminationTree& tree) const;
 
   std::vector<int> position_;  ///< by unknown: place in elimination order, -1 when held
   int free_ = 0;

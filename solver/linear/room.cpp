@@ -5,10 +5,18 @@
 #include <cstdint>
 #include <cstdlib>
 #include <new>
+#include <utility>
 
 namespace raiser::solver {
 
 namespace {
+
+/// Memory that a Room left, for the next one of this thread.
+struct Spare {
+  std::unique_ptr<double, Room::Free> memory;
+  std::size_t count = 0;
+};
+thread_local Spare spare;
 
 /// Memory in pages of two megabytes where the system has them: a five hundredth of
 /// the first touches. Nothing when there is not that much.
@@ -24,9 +32,20 @@ void* in_large_pages(std::size_t bytes) {
 
 void Room::Free::operator()(double* memory) const { std::free(memory); }
 
+Room::~Room() {
+  constexpr std::size_t most_kept = std::size_t{64} << 20;  // bytes
+  if (count_ <= spare.count || count_ * sizeof(double) > most_kept) return;
+  spare = {std::move(memory_), count_};
+}
+
 double* Room::take(std::size_t count) {
   constexpr std::size_t large = std::size_t{32} << 20;  // bytes
   if (count <= count_) return memory_.get();
+  if (count <= spare.count) {
+    memory_ = std::move(spare.memory);
+    count_ = std::exchange(spare.count, 0);
+    return memory_.get();
+  }
   if (count > SIZE_MAX / sizeof(double) / 2) throw std::bad_alloc();
   memory_.reset();  // its values are not needed
   count_ = 0;
