@@ -4,6 +4,7 @@
 #include <array>
 #include <chrono>
 #include <cmath>
+#include <memory>
 #include <optional>
 #include <stdexcept>
 
@@ -21,6 +22,7 @@ using Clock = std::chrono::steady_clock;
 constexpr int most_refinements = 5;
 constexpr std::size_t most_unknowns = 3'000'000;
 constexpr int most_sectors = 24;
+constexpr double plain_tolerance = 1e-3;  ///< of what is not asked for more closely
 
 double seconds_since(Clock::time_point start) {
   return std::chrono::duration<double>(Clock::now() - start).count();
@@ -59,7 +61,7 @@ mesh::Mirrors usable_mirrors(const Problem& problem, const std::vector<UnitLoad>
 }
 
 double least_tolerance(const std::vector<Ask>& asks) {
-  double least = 1e-3;
+  double least = plain_tolerance;
   for (const Ask& ask : asks) least = std::min(least, ask.tolerance);
   return least;
 }
@@ -251,8 +253,17 @@ mesh::Mesh meshed(const mesh::Region& region, mesh::SizeRule& rule) {
   return mesh::triangulate(region, rule);
 }
 
+/// A mesh, its model and what was solved on it.
+struct Stage {
+  Model model;
+  DegreeSequence sequence;
+
+  Stage(Model of, const Plate& plate, double end, const std::vector<SingularPlace>& places)
+      : model(std::move(of)), sequence(model, plate, end, places) {}
+};
+
 /// Refines until the asked numbers are met, or the budget is spent, or only
-/// better known pressures help.
+/// better known pressures help, or no finer mesh can be made.
 Attempt refine_until_met(const PinsInContact& contact, const std::vector<Ask>& asks, double tolerance,
                          Report extent, Clock::time_point start, std::vector<Level>& levels) {
   const Problem& problem = contact.problem;
@@ -263,24 +274,38 @@ Attempt refine_until_met(const PinsInContact& contact, const std::vector<Ask>& a
   const mesh::Mirrors mirrors = usable_mirrors(problem, loads);
   const mesh::Region region = mesh::cut(boundary, mirrors);
   const std::vector<HeldEdge> held = held_edges(problem.plate, problem.supports);
+  const auto stage_for = [&](mesh::SizeRule& rule) {
+    return std::make_unique<Stage>(
+        Model(meshed(region, rule), mirrors, problem.material, problem.plate.thickness, loads, held),
+        problem.plate, rule.end, places);
+  };
   mesh::SizeRule rule = first_rule(problem, asks, tolerance, places);
-  for (int refinement = 0;; ++refinement) {
-    const Model model(meshed(region, rule), mirrors, problem.material, problem.plate.thickness, loads, held);
-    DegreeSequence sequence(model, problem.plate, rule.end, places);
-    const double worst = raise_degree(sequence, asks, tolerance, refinement, start, levels);
-    const bool is_settled = worst <= 1.0;
+  std::unique_ptr<Stage> stage;
+  try {
+    stage = stage_for(rule);
+  } catch (const std::runtime_error&) {
+    // The first mesh for many digits may be too fine to be made.
+    rule = first_rule(problem, asks, plain_tolerance, places);
+    stage = stage_for(rule);
+  }
+  const auto finished = [&](bool is_settled, int refinements, const std::string& also) -> Attempt {
+    const DegreeSequence& sequence = stage->sequence;
     const bool doubtful = !is_settled && is_doubtful(sequence, asks);
-    const bool is_hopeless = !is_settled && only_misses_where_no_peak_is(sequence, asks);
-    if (is_settled || doubtful || is_hopeless || refinement == most_refinements) {
-      Solution solution = report(problem, sequence, places, extent);
-      const bool is_met = is_settled && contact.reason.empty();
-      solution.status = is_met ? Solution::Status::settled : Solution::Status::not_met;
-      if (!is_settled) solution.reason = reason_for(sequence, problem.plate, asks, refinement);
-      if (doubtful) solution.reason += "; the contact pressure of the pins is not known better";
-      if (!contact.reason.empty()) solution.reason = contact_reason(contact);
-      solution.pins = contact.pins;
-      return {std::move(solution), doubtful};
-    }
+    Solution solution = report(problem, sequence, places, extent);
+    const bool is_met = is_settled && contact.reason.empty();
+    solution.status = is_met ? Solution::Status::settled : Solution::Status::not_met;
+    if (!is_settled) solution.reason = reason_for(sequence, problem.plate, asks, refinements) + also;
+    if (doubtful) solution.reason += "; the contact pressure of the pins is not known better";
+    if (!contact.reason.empty()) solution.reason = contact_reason(contact);
+    solution.pins = contact.pins;
+    return {std::move(solution), doubtful};
+  };
+  for (int refinement = 0;; ++refinement) {
+    DegreeSequence& sequence = stage->sequence;
+    const bool is_settled = raise_degree(sequence, asks, tolerance, refinement, start, levels) <= 1.0;
+    if (is_settled || is_doubtful(sequence, asks) || only_misses_where_no_peak_is(sequence, asks) ||
+        refinement == most_refinements)
+      return finished(is_settled, refinement, "");
     const double finer = std::pow(0.6, refinement + 1);
     for (const Ask& ask : asks) {
       if (!(sequence.excess(ask) > 1.0)) continue;
@@ -288,6 +313,11 @@ Attempt refine_until_met(const PinsInContact& contact, const std::vector<Ask>& a
         rule.tip_sectors = std::min(most_sectors, rule.tip_sectors + 4);
       else
         refine(problem.plate, mirrors, ask, finer, rule);
+    }
+    try {
+      stage = stage_for(rule);
+    } catch (const std::runtime_error& error) {
+      return finished(false, refinement, fmt::format("; no finer mesh could be made: {}", error.what()));
     }
   }
 }

@@ -5,6 +5,7 @@
 #include <cmath>
 #include <filesystem>
 #include <stdexcept>
+#include <string>
 #include <utility>
 
 #include "io/case/case.hpp"
@@ -28,7 +29,7 @@ inline Example example(const char* name) {
 }
 
 /// `exact` is what the same case gives when many more digits are asked for.
-inline void expect_within(const solver::Estimate& found, double exact, const char* what) {
+inline void expect_within(const solver::Estimate& found, double exact, const std::string& what) {
   EXPECT_LE(std::abs(found.value - exact), found.bound)
       << what << " " << found.value << " +- " << found.bound;
 }

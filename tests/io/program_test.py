@@ -419,6 +419,21 @@ class Documents(Program):
             digest = hashlib.sha256(path.read_bytes()).hexdigest()
             self.assertEqual(written["provenance"]["case_sha256"], digest)
 
+    def test_growth_satisfies_its_schema(self):
+        schema = json.loads((SOURCE / "io/write/growth.schema.json").read_text())
+        jsonschema.Draft202012Validator.check_schema(schema)
+        validator = jsonschema.Draft202012Validator(schema)
+        for name, more in (("cracked-hanger", ["--to", "12 mm"]), ("cracked-vane", ["--to", "1 in", "--kinked"])):
+            case = SOURCE / "examples" / f"{name}.toml"
+            result = self.run_it("grow", case, *more, "--steps", "6", "--json", "--out", "x")
+            document = json.loads(result.stdout)
+            validator.validate(document)
+            self.assertEqual(len(document["steps"]), 6)
+            self.assertEqual(json.loads((self.folder / "x" / f"{name}-grow.json").read_text()), document)
+            self.assertEqual(document["case_sha256"], hashlib.sha256(case.read_bytes()).hexdigest())
+        for change in ({"path": "round"}, {"steps": []}, {"extra": 1}):
+            self.assertFalse(validator.is_valid(document | change), change)
+
     def test_schema_refuses_what_is_not_a_result(self):
         self.run_it("solve", self.case("strap.toml", GOOD))
         good = json.loads((self.folder / "strap.json").read_text())

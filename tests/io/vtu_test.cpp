@@ -13,8 +13,10 @@
 
 #include <array>
 #include <cmath>
+#include <map>
 #include <random>
 
+#include "tests/io/cracked.hpp"
 #include "tests/io/solved.hpp"
 
 namespace raiser::io {
@@ -147,6 +149,34 @@ TEST(Vtu, ASolvedPlateReadsBackAsTheSolverHasIt) {
       EXPECT_LT((Point(u[0], u[1]) - there->displacement).norm(), 1e-7) << "the same place, found by search";
     }
   }
+}
+
+// Along a crack the file has both faces: read back, they stand apart by what the
+// solver says of its opening, and nowhere else does the displacement jump.
+TEST(Vtu, ACrackIsOpenInTheFile) {
+  const Result result = test::solved(test::cracked_strap);
+  Read read(vtu(cells_of(result.solution.field), result.provenance));
+  std::map<std::pair<double, double>, std::pair<Point, double>> seen;  // displacement, largest distance
+  for (vtkIdType cell = 0; cell < read.grid()->GetNumberOfCells(); ++cell)
+    for (const Point& r : {Point(0.5, 0), Point(0.5, 0.5), Point(0, 0.5)}) {
+      Point place;
+      const auto u = read.at(cell, r, "displacement, mm", &place);
+      const std::pair key{std::round(place.x() * 1e4), std::round(place.y() * 1e4)};
+      const auto [at, is_new] = seen.try_emplace(key, Point(u[0], u[1]), 0.0);
+      if (!is_new) at->second.second = (Point(u[0], u[1]) - at->second.first).norm();
+    }
+  double edge = 0.0, flaw = 0.0, elsewhere = 0.0;
+  for (const auto& [key, value] : seen) {
+    const Point x(key.first / 1e4, key.second / 1e4);
+    const bool on_edge_crack = x.x() == 0.0 && x.y() > 15.0;
+    const bool on_flaw = (x - Point(60, -25)).norm() < 8.1;
+    double& largest = on_edge_crack ? edge : on_flaw ? flaw : elsewhere;
+    largest = std::max(largest, value.second);
+  }
+  // The widest places are the mouths, half a side away from the nearest point looked at.
+  EXPECT_NEAR(edge, result.solution.openings.at(0).largest, 0.2 * edge);
+  EXPECT_NEAR(flaw, result.solution.openings.at(1).largest, 0.2 * flaw);
+  EXPECT_LT(elsewhere, 1e-6 * edge);
 }
 
 TEST(Vtu, CellTypesAreTheStandardOnes) {

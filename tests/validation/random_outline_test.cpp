@@ -2,6 +2,7 @@
 
 #include <gtest/gtest.h>
 
+#include <cmath>
 #include <map>
 #include <string>
 
@@ -53,6 +54,21 @@ TEST(RandomOutline, ASeedAlwaysGivesTheSamePlate) {
   EXPECT_EQ(a.plate.width, b.plate.width);
   EXPECT_EQ(a.plate.outline->curves.size(), b.plate.outline->curves.size());
   EXPECT_NE(a.plate.width, c.plate.width);
+}
+
+// The first mesh that six digits ask of this plate cannot be made: a plain one serves,
+// and what it leaves out shows in the bound.
+TEST(RandomOutline, APlainMeshServesWhereTheFinestCannotBeMade) {
+  const solver::Problem problem = random_outlined_plate(6);
+  const auto value_for = [&](double tolerance) {
+    const std::vector<solver::Ask> asks{{solver::Quantity::largest_edge_stress, 2, tolerance, ""}};
+    const solver::Solution solution = solver::settle(problem, asks, solver::Report::brief);
+    EXPECT_EQ(solution.status, solver::Solution::Status::settled) << solution.reason;
+    return solution.combined.raisers.at(2).largest.stress;
+  };
+  const solver::Estimate close = value_for(1e-6), plain = value_for(1e-3);
+  EXPECT_LT(close.bound, 1e-2 * plain.bound);
+  EXPECT_LE(std::abs(close.value - plain.value), plain.bound + close.bound);
 }
 
 }  // namespace
