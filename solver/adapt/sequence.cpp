@@ -135,11 +135,12 @@ std::array<Estimate, 3> DegreeSequence::tip_value(std::size_t load_case, std::si
   }
   const double k_size = std::hypot(values[0].back(), values[1].back());
   const double length = crack_size(plate_->cracks[mesh::tips(plate_->cracks)[tip].crack]);
-  const std::array<double, 3> size = {k_size, k_size, k_size / std::sqrt(std::numbers::pi * length)};
+  const double root = std::sqrt(std::numbers::pi * length);
+  const std::array<double, 3> size = {k_size, k_size, k_size / root};
   // What the triangles at the tip leave unresolved acts like a slightly different crack
   // length: it falls with the fourth power of the degree, too slowly for differences
   // of degrees to show all of it. The factor is calibrated.
-  constexpr double unresolved = 22.0;
+  constexpr double unresolved = 28.0;
   const double tip_error = unresolved * tip_scanner_.depth(tip) / std::pow(displacements_.back().degree, 4);
   // T from a ring is off in proportion to one over its radius.
   const std::size_t domains = tip_scanner_.domains();
@@ -151,6 +152,9 @@ std::array<Estimate, 3> DegreeSequence::tip_value(std::size_t load_case, std::si
       result[i].bound =
           std::max(result[i].bound,
                    std::abs(tip_scanner_.value(tip_scans_.back(), load_case, tip, d)[i] - result[i].value));
+    // Of a crack that its load does not open, rounding is all that is left.
+    constexpr double rounding = 3e-12;
+    result[i].bound += rounding * std::max(k_size, std::abs(values[2].back()) * root) / (i == 2 ? root : 1.0);
     result[i].bound += tip_doubt(load_case, tip)[i];
   }
   return result;

@@ -6,6 +6,8 @@
 #include <numbers>
 #include <vector>
 
+#include "validation/published/edge_raisers.hpp"
+
 namespace raiser::validation {
 namespace {
 
@@ -141,6 +143,43 @@ TEST(ExactField, ExtremesAreThoseOfTheEdge) {
     }
     EXPECT_NEAR(low, seen_low, 1e-6 * std::abs(low));
     EXPECT_NEAR(high, seen_high, 1e-6 * std::abs(high));
+  }
+}
+
+// The field against its own definition: no traction on the hyperbola, the net section
+// carries the nominal load, stresses balance, and the roots have Neuber's factors.
+TEST(ExactField, DeepNotchesHaveNeubersFactors) {
+  for (const double q : {0.1, 1.0, 5.0, 25.0}) {
+    const double a = 3.0, h = 1e-4 * a / q;
+    const DeepNotches notches(a, a / q);
+    EXPECT_NEAR(notches.tension({a, 0.0}).yy, neuber_deep_tension(q), 1e-12 * q);
+    EXPECT_NEAR(notches.bending({a, 0.0}).yy, neuber_deep_bending(q), 1e-11 * q);
+    for (const bool is_bending : {false, true}) {
+      const auto at = [&](const Point& x) { return is_bending ? notches.bending(x) : notches.tension(x); };
+      for (const double y : {0.0, 0.3 * a, -2.0 * a}) {
+        const Point x(notches.edge(y), y);
+        const double b2 = a * a / q;  // the other half axis, squared
+        const Point n = Point(x.x() / (a * a), -y / b2).normalized();
+        const Stress s = at(x);
+        EXPECT_NEAR(s.xx * n.x() + s.xy * n.y(), 0.0, 1e-12 * q);
+        EXPECT_NEAR(s.xy * n.x() + s.yy * n.y(), 0.0, 1e-12 * q);
+      }
+      double force = 0.0, moment = 0.0;
+      constexpr int pieces = 20000;
+      for (int i = 0; i < pieces; ++i) {
+        const double phi = pi * (i + 0.5) / pieces - pi / 2;  // dense at the roots
+        const double x = a * std::sin(phi), dx = a * std::cos(phi) * pi / pieces;
+        force += at({x, 0.0}).yy * dx;
+        moment += at({x, 0.0}).yy * x * dx;
+      }
+      EXPECT_NEAR(force / (2 * a), is_bending ? 0.0 : 1.0, 1e-6);
+      EXPECT_NEAR(6 * moment / (4 * a * a), is_bending ? 1.0 : 0.0, 1e-6);
+      const Point x(0.4 * a, 0.2 * a);
+      const Stress e = at(x + Point(h, 0)), w = at(x - Point(h, 0)), n = at(x + Point(0, h)),
+                   s = at(x - Point(0, h));
+      EXPECT_NEAR((e.xx - w.xx + n.xy - s.xy) / (2 * h), 0.0, 1e-5);
+      EXPECT_NEAR((e.xy - w.xy + n.yy - s.yy) / (2 * h), 0.0, 1e-5);
+    }
   }
 }
 

@@ -1,6 +1,7 @@
 #pragma once
 
 #include <array>
+#include <cmath>
 #include <complex>
 #include <functional>
 #include <utility>
@@ -84,6 +85,30 @@ class Lekhnitskii {
 /// on the edge where it exceeds the stress elsewhere, as it does for E1 > E2.
 /// S. G. Lekhnitskii, Anisotropic Plates (1947; English 1968).
 double lekhnitskii_factor(const solver::HookeLaw& law);
+
+/// Stress between two infinitely deep notches whose edges, free of traction, are the
+/// branches of one hyperbola with its vertices at (-half_width, 0) and (half_width, 0),
+/// mm, loaded along y so that the net section y = 0 has the nominal stress 1 MPa:
+/// force over area, or 6 M / (t (2 half_width)^2), tensile at x > 0.
+/// H. Neuber, Kerbspannungslehre (1937), by the complex potentials of elliptic
+/// coordinates z = focus sin w, in which an edge is a line Re w = const; derived afresh.
+class DeepNotches {
+ public:
+  /// Both positive, mm; the radius is that of the vertices.
+  DeepNotches(double half_width, double root_radius);
+  Stress tension(const Point& x) const;
+  Stress bending(const Point& x) const;
+  /// The edge's distance from x = 0 at a height.
+  double edge(double y) const {
+    const double slope = y / (focus_ * std::cos(edge_));
+    return half_width_ * std::sqrt(1 + slope * slope);
+  }
+
+ private:
+  double half_width_;
+  double edge_;  ///< Re w there, rad
+  double focus_;
+};
 
 /// The stress components in axes turned anticlockwise by `angle` (rad), e.g.
 /// the remote stress in the axes of a hole at that angle.

@@ -22,6 +22,7 @@ std::vector<Family> families() {
           pressure_infinite(),
           pressure_half_plane(),
           pressure_ring_family(),
+          deep_notches(),
           notch_pair_tension(),
           notch_pair_bending(),
           notch_single_tension(),
@@ -64,10 +65,6 @@ std::vector<Family> families() {
 
 std::vector<LeftOut> left_out() {
   return {
-      {"A23", "deep hyperbolic notches (H. Neuber, 1937)",
-       "the outline is a hyperbola, and raiser's curves are straight lines and elliptic arcs; no arc stands "
-       "for "
-       "it to six digits. The closed forms themselves are held to printed values by a test"},
       {"A30", "hole reinforced by a ring of the same material",
        "the ring is a second thickness, and a plate has one: with the ring as a line force it would be our "
        "own "

@@ -24,6 +24,7 @@ Family rounded_square_infinite();
 Family pressure_infinite();
 Family pressure_half_plane();
 Family pressure_ring_family();
+Family deep_notches();
 Family notch_pair_tension();
 Family notch_pair_bending();
 Family notch_single_tension();

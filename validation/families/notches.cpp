@@ -80,7 +80,46 @@ Family bar_family(const char* id, const char* record, const char* title, bool bo
 double pair_tension(double x) { return 1 / (1 - x); }
 double bending(double x) { return 1 / ((1 - x) * (1 - x)); }
 
+/// A bar cut out from between deep hyperbolic notches, across their net section: its
+/// own notches, half ellipses three times as blunt, touch their roots from within the
+/// material, and the field's exact traction acts on all of its outline.
+Question deep_question(double q, bool is_bending) {
+  constexpr double half = D / 2, depth = 0.3 * half, blunt = 3;
+  const DeepNotches notches(half, half / q);
+  const mesh::Plate plate =
+      notched_bar(4 * half, 2 * (half + depth), {depth, blunt * half / q, 0.0, true}, true);
+  const auto field = [notches, is_bending](const Point& x) {
+    return is_bending ? notches.bending(x) : notches.tension(x);
+  };
+  return exact_field(plate, placed(field, Point::Zero(), std::numbers::pi / 2),
+                     solver::Quantity::largest_edge_stress, 1.0, family_material, upper_raiser(plate));
+}
+
 }  // namespace
+
+Family deep_notches() {
+  Family f;
+  f.id = "notch-deep";
+  f.records = "A23";
+  f.title = "Infinitely deep hyperbolic notches on both sides, tension and bending";
+  f.abscissa = "a/rho: half the net width over the root radius";
+  f.ordinate = "Kt net, at the root: on P/(2 a t), on 6M/(t (2a)^2)";
+  f.reading =
+      "a bar cut out from between the notches, its outline inside the material and touching both roots, on "
+      "which the field's exact traction acts; largest edge stress over the nominal one";
+  f.deviation = "the source is exact: rounding and the bound only";
+  f.tolerance = 9e-7;  // as close as the highest degree comes
+  for (const bool is_bending : {false, true}) {
+    const std::string series = is_bending ? "bending" : "tension";
+    const auto source = is_bending ? Reference::neuber_deep_bending : Reference::neuber_deep_tension;
+    const auto formula = is_bending ? neuber_deep_bending : neuber_deep_tension;
+    for (const double q : {1.0, 2.0, 5.0, 10.0, 25.0})
+      f.points.push_back(
+          {series, {{"a/rho", q}}, {{source, formula(q)}}, deep_question(q, is_bending), q == 5});
+    f.curves.push_back({source, series, formula, 1, 25, false, {}});
+  }
+  return f;
+}
 
 Family notch_pair_tension() {
   Family f = bar_family("notch-u-pair-tension", "A18",

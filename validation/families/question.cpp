@@ -160,15 +160,16 @@ Ours with_rising_degree(const solver::Model& model, const mesh::Plate& plate, co
 }
 
 Question exact_field(mesh::Plate plate, StressField field, solver::Quantity quantity, double nominal,
-                     const solver::HookeLaw& material) {
-  return [plate = std::move(plate), field = std::move(field), quantity, nominal, material](double tolerance) {
+                     const solver::HookeLaw& material, std::size_t raiser) {
+  return [plate = std::move(plate), field = std::move(field), quantity, nominal, material,
+          raiser](double tolerance) {
     mesh::SizeRule rule;
     // The field of a stiff sheet varies faster along the edge.
     rule.turn = material.orthotropy ? 0.04 : 0.2;
     rule.growth = 0.7;
     const solver::Model model(mesh::triangulate(mesh::trace(plate), rule), {}, material, plate.thickness,
                               {{"exact", traction_of(field)}});
-    return with_rising_degree(model, plate, {quantity, 0, tolerance, ""}, nominal);
+    return with_rising_degree(model, plate, {quantity, raiser, tolerance, ""}, nominal);
   };
 }
 

@@ -54,10 +54,10 @@ Measure largest_over(double nominal, std::size_t hole = 0);
 /// there, parallel to an axis of the plate.
 Measure stress_at(const Point& point, double nominal, std::size_t hole = 0);
 
-/// One hole in a plate on whose outline acts the traction of a field that is
-/// known: our number is the largest or smallest edge stress over `nominal`.
+/// A plate on whose outline acts the traction of a field that is known: our number
+/// is the largest or smallest edge stress at a raiser over `nominal`.
 Question exact_field(mesh::Plate plate, StressField field, solver::Quantity quantity, double nominal,
-                     const solver::HookeLaw& material = family_material);
+                     const solver::HookeLaw& material = family_material, std::size_t raiser = 0);
 
 /// Raises the degree on a model's mesh until the asked number meets its tolerance;
 /// the model must have one load. Ours is the number over `nominal`; of a stress
