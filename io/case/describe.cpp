@@ -13,6 +13,7 @@
 #include "io/case/layout.hpp"
 #include "io/case/parts.hpp"
 #include "io/case/words.hpp"
+#include "io/import/curve_tools.hpp"
 #include "mesh/plate/section.hpp"
 #include "mesh/plate/words.hpp"
 #include "solver/elasticity/outer_edge.hpp"
@@ -132,6 +133,10 @@ Phrases sizes(const Case& input, const Hole& hole, const std::string& path) {
     return {by_radius ? item(input, "radius", path + "radius", half, "mm")
                       : item(input, "diameter", path + "diameter", hole.length, "mm")};
   }
+  if (hole.shape == HoleShape::drawn)
+    return {fmt::format("{} curves of {} in all", hole.edge.size(), derived(length(hole.edge), "mm")),
+            fmt::format("{} by {}", derived(hole.length, "mm"), derived(hole.width, "mm")),
+            fmt::format("smallest radius {}", derived(hole.corner_radius, "mm"))};
   Phrases phrases{item(input, "length", path + "length", hole.length, "mm"),
                   item(input, "width", path + "width", hole.width, "mm")};
   if (hole.shape == HoleShape::rounded_rectangle) {
@@ -143,12 +148,11 @@ Phrases sizes(const Case& input, const Hole& hole, const std::string& path) {
 
 /// The net section through the hole's centre, every hole in its way left out.
 std::string net_section(const Plate& plate, const Hole& hole) {
-  double net = 0.0;
-  for (const mesh::Interval& piece : mesh::material_along(plate, mesh::Direction::across, hole.centre.x())) {
-    net += (piece.end - piece.begin) * plate.thickness;
-  }
-  return fmt::format("net section at x = {}: {}, {:.1f} % of gross", amount(hole.centre.x(), "mm"),
-                     derived(net, "mm^2"), 100.0 * net / (plate.width * plate.thickness));
+  const double x = hole.centre.x();
+  const double net = mesh::shape_of(mesh::material_along(plate, mesh::Direction::across, x)).length;
+  const double gross = mesh::shape_of(mesh::gross_along(plate, mesh::Direction::across, x)).length;
+  return fmt::format("net section at x = {}: {}, {:.1f} % of gross", amount(x, "mm"),
+                     derived(net * plate.thickness, "mm^2"), 100.0 * net / gross);
 }
 
 std::string describe_hole(const Case& input, std::size_t index) {

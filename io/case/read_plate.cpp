@@ -34,6 +34,8 @@ Keys keys_of(mesh::HoleShape shape) {
       return long_hole_keys;
     case mesh::HoleShape::rounded_rectangle:
       return rectangle_keys;
+    case mesh::HoleShape::drawn:  // not in a case file: imported alone
+      break;
   }
   return hole_keys;
 }

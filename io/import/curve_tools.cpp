@@ -33,6 +33,12 @@ double length(const Curve& curve) {
   return sum * span / 2;
 }
 
+double length(const mesh::Loop& loop) {
+  double sum = 0.0;
+  for (const Curve& curve : loop) sum += length(curve);
+  return sum;
+}
+
 Curve reversed(Curve curve) {
   std::swap(curve.begin, curve.end);
   return curve;

@@ -12,6 +12,8 @@ mesh::Point finish(const mesh::Curve& curve);
 
 /// mm, to rounding for lines and circular arcs and to 1e-12 or so for elliptic ones.
 double length(const mesh::Curve& curve);
+/// Of all curves of a chain together, mm.
+double length(const mesh::Loop& loop);
 
 /// The same curve run the other way.
 mesh::Curve reversed(mesh::Curve curve);

@@ -212,6 +212,19 @@ mesh::Outline outline_of(const Part& part, Loop loop, const std::vector<std::str
   return outline;
 }
 
+/// Adds what keeps a hole of no common shape from having a peak.
+void check_corners(const Part& part, const Loop& edge, const std::string& name,
+                   std::vector<ContourFault>& faults) {
+  constexpr std::size_t told_in_full = 3;
+  const std::vector<Point> corners = mesh::sharp_corners(edge);
+  for (std::size_t i = 0; i < std::min(corners.size(), told_in_full); ++i)
+    faults.push_back({0, fmt::format("{} has a sharp corner at {}", name, place(corners[i] + part.centre)),
+                      "draw the radius that it has: at a sharp corner the stress has no finite peak"});
+  if (corners.size() > told_in_full)
+    faults.push_back({0, fmt::format("{} has {} sharp corners more", name, corners.size() - told_in_full),
+                      "draw their radii, or arcs where these are points of a smooth curve"});
+}
+
 std::vector<mesh::Hole> holes_of(const Part& part, const std::vector<std::string>& names,
                                  Numbering& numbering, std::vector<ContourFault>& faults) {
   std::vector<mesh::Hole> holes;
@@ -223,12 +236,10 @@ std::vector<mesh::Hole> holes_of(const Part& part, const std::vector<std::string
       holes.push_back(*hole);
       continue;
     }
-    const auto box = box_of(part.inner[k]);
-    faults.push_back({0,
-                      fmt::format("the hole about {} of the drawing is no circle, ellipse, slot or "
-                                  "rounded rectangle",
-                                  place((box[0] + box[1]) / 2 + part.centre)),
-                      "only such holes are imported: draw it as one of them"});
+    const Loop edge = quarters(part.inner[k]);
+    check_corners(part, edge, fmt::format("hole '{}'", name), faults);
+    holes.push_back(mesh::drawn_hole(edge));
+    holes.back().name = name;
   }
   return holes;
 }

@@ -38,9 +38,9 @@ struct PartPlate {
 /// then one edge. The others are "edge 1", ... in order, those of a rectangle
 /// along x and y right, top, left and bottom. Holes (also by a place in them) and
 /// arcs have the names given or "hole 1", "fillet 2", ... in the part's order;
-/// names in `taken` are left out. Faults: holes that are no circle, ellipse, slot
-/// or rounded rectangle; places as near to two things, far from all, or with
-/// two names for one thing.
+/// names in `taken` are left out. Holes that are no circle, ellipse, slot or
+/// rounded rectangle are drawn ones. Faults: sharp corners of holes; places as near
+/// to two things, far from all, or with two names for one thing.
 PartPlate plate_of(const Part& part, double thickness, const std::vector<PlaceName>& edges,
                    const std::vector<PlaceName>& raisers,
                    const std::set<std::string, std::less<>>& taken = {});

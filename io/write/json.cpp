@@ -7,6 +7,7 @@
 #include <numbers>
 
 #include "io/case/alloys.hpp"
+#include "io/import/curve_tools.hpp"
 #include "io/write/crack_words.hpp"
 #include "io/write/layout.hpp"
 #include "solver/crack/factors.hpp"
@@ -175,13 +176,15 @@ Json findings(const solver::LoadFindings& load, const Case& input) {
 }
 
 Json hole(const mesh::Hole& h) {
-  return {{"name", h.name},
-          {"shape", mesh::word(h.shape)},
-          {"length", quantity(h.length, "mm")},
-          {"width", quantity(h.width, "mm")},
-          {"corner_radius", quantity(h.corner_radius, "mm")},
-          {"centre", position(h.centre)},
-          {"angle", quantity(h.angle * degrees_per_radian, "deg")}};
+  Json object{{"name", h.name},
+              {"shape", mesh::word(h.shape)},
+              {"length", quantity(h.length, "mm")},
+              {"width", quantity(h.width, "mm")},
+              {"corner_radius", quantity(h.corner_radius, "mm")},
+              {"centre", position(h.centre)},
+              {"angle", quantity(h.angle * degrees_per_radian, "deg")}};
+  if (h.shape == mesh::HoleShape::drawn) object["perimeter"] = quantity(length(h.edge), "mm");
+  return object;
 }
 
 Json load(const solver::Load& l, const mesh::Plate& plate) {

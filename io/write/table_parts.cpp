@@ -6,6 +6,7 @@
 #include <algorithm>
 #include <cctype>
 #include <cmath>
+#include <limits>
 #include <numbers>
 
 #include "io/write/layout.hpp"
@@ -37,8 +38,10 @@ std::string shape_text(const mesh::Hole& hole) {
     text += fmt::format(", diameter {} mm", brief(hole.length));
   } else {
     text += fmt::format(", {} x {} mm", brief(hole.length), brief(hole.width));
-    if (hole.corner_radius > 0) text += fmt::format(", corner radius {} mm", brief(hole.corner_radius));
-    text += fmt::format(", at {} deg", brief(hole.angle * 180.0 / std::numbers::pi, 4));
+    const bool is_drawn = hole.shape == mesh::HoleShape::drawn;
+    if (hole.corner_radius > 0)
+      text += fmt::format(", {} radius {} mm", is_drawn ? "smallest" : "corner", brief(hole.corner_radius));
+    if (!is_drawn) text += fmt::format(", at {} deg", brief(hole.angle * 180.0 / std::numbers::pi, 4));
   }
   return text + fmt::format(", centre ({}, {}) mm", brief(hole.centre.x()), brief(hole.centre.y()));
 }
@@ -47,12 +50,27 @@ std::string shape_text(const mesh::Plate& plate, std::size_t raiser) {
   return raiser < plate.holes.size() ? shape_text(plate.holes[raiser]) : mesh::raiser(plate, raiser).shape;
 }
 
+// The radius of a drawn hole's edge next to a point; where it is straight, half the
+// hole's smaller size.
+double drawn_radius(const mesh::Hole& hole, const mesh::Point& at) {
+  double radius = 0.0;
+  double least = std::numeric_limits<double>::infinity();
+  for (const mesh::Curve& curve : hole.edge) {
+    const mesh::Nearest found = mesh::nearest(curve, at - hole.centre);
+    if (found.distance >= least) continue;
+    least = found.distance;
+    radius = curve.radius_of_curvature(found.parameter);
+  }
+  return std::min(radius, std::min(hole.length, hole.width) / 2);
+}
+
 // The radius of curvature of a raiser's edge at a point where a peak can be, mm.
 double edge_radius(const mesh::Plate& plate, std::size_t raiser, const mesh::Point& at) {
   if (raiser >= plate.holes.size()) return mesh::raiser(plate, raiser).radius;
   const mesh::Hole& hole = plate.holes[raiser];
   const double a = hole.length / 2, b = hole.width / 2;
   if (hole.shape == mesh::HoleShape::rounded_rectangle) return hole.corner_radius;
+  if (hole.shape == mesh::HoleShape::drawn) return drawn_radius(hole, at);
   if (hole.shape != mesh::HoleShape::ellipse) return std::min(a, b);
   const mesh::Point own = Eigen::Rotation2Dd(-hole.angle) * (at - hole.centre);
   const double sine = own.y() / b, cosine = own.x() / a;

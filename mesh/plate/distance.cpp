@@ -4,6 +4,10 @@
 #include <cmath>
 #include <numbers>
 
+#include "mesh/plate/curve_distance.hpp"
+#include "mesh/plate/section.hpp"
+#include "mesh/region/region.hpp"
+
 namespace raiser::mesh {
 
 namespace {
@@ -52,6 +56,8 @@ Body body(const Hole& hole) {
       result.disc = hole.corner_radius;
       result.a = std::max(a - hole.corner_radius, 0.0);
       result.b = std::max(b - hole.corner_radius, 0.0);
+      break;
+    case HoleShape::drawn:  // no such sum: see drawn_half_extent() and drawn_gap()
       break;
   }
   return result;
@@ -106,9 +112,49 @@ Upper upper_bound(const Range& range) {
   return best;
 }
 
+// The farthest that a curve about the hole's centre reaches either way along n.
+double drawn_half_extent(const Hole& hole, const Point& n) {
+  double most = 0.0;
+  const auto take = [&](const Point& x) { most = std::max(most, std::abs(x.dot(n))); };
+  for (const Curve& curve : hole.edge) {
+    take(curve.start());
+    take(curve.finish());
+    if (curve.kind == Curve::Kind::line) continue;
+    const double first = std::atan2(n.dot(curve.v), n.dot(curve.u));
+    const auto [low, high] = std::minmax(curve.begin, curve.end);
+    for (double t = first + std::numbers::pi * std::ceil((low - first) / std::numbers::pi); t <= high;
+         t += std::numbers::pi)
+      take(curve.at(t));
+  }
+  return most;
+}
+
+bool covers(const Hole& hole, const Point& x) {
+  for (const Chord& chord : chords(hole, Direction::across, x.x()))
+    if (chord.begin < x.y() && x.y() < chord.end) return true;
+  return false;
+}
+
+// Of holes that overlap, minus the shift that parts their bounding boxes.
+double drawn_gap(const Hole& a, const Hole& b) {
+  const Loop one = trace(a, {});
+  const Loop other = trace(b, {});
+  double least = (one.front().start() - other.front().start()).norm();
+  for (const Curve& p : one)
+    for (const Curve& q : other) least = std::min(least, distance(p, q, least));
+  const double touch = 1e-12 * (a.length + a.width + b.length + b.width);
+  const bool crosses = least <= touch;
+  if (!crosses && !covers(a, other.front().start()) && !covers(b, one.front().start())) return least;
+  const double in_x = half_extent(a, Point::UnitX()) + half_extent(b, Point::UnitX());
+  const double in_y = half_extent(a, Point::UnitY()) + half_extent(b, Point::UnitY());
+  const Point between = (b.centre - a.centre).cwiseAbs();
+  return -std::max(std::min(in_x - between.x(), in_y - between.y()), 0.0);
+}
+
 }  // namespace
 
 double half_extent(const Hole& hole, const Point& direction) {
+  if (hole.shape == HoleShape::drawn) return drawn_half_extent(hole, direction);
   const Body shape = body(hole);
   return shape.farthest(direction).dot(direction) + shape.disc;
 }
@@ -117,6 +163,7 @@ double half_extent(const Hole& hole, const Point& direction) {
 // (and the overlap is minus it); found by bisecting ranges of directions and
 // dropping those whose upper bound cannot beat the best separation seen.
 double gap(const Hole& a, const Hole& b) {
+  if (a.shape == HoleShape::drawn || b.shape == HoleShape::drawn) return drawn_gap(a, b);
   const Body one = body(a);
   const Body other = body(b);
   const Point between = b.centre - a.centre;

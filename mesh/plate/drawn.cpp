@@ -1,11 +1,12 @@
 #include "mesh/plate/drawn.hpp"
 
+#include <Eigen/Geometry>
 #include <algorithm>
 #include <cmath>
+#include <limits>
 #include <numbers>
 #include <optional>
 
-#include "mesh/plate/plate.hpp"
 #include "mesh/plate/section.hpp"
 #include "mesh/region/vertex.hpp"
 
@@ -149,6 +150,50 @@ void tell_notches(Outline& outline) {
     outline.raisers[loop[k].owner.index].kind =
         rounds_corner && !flanks(loop, k) ? Raiser::Kind::fillet : Raiser::Kind::notch;
   }
+}
+
+namespace {
+
+/// The smallest radius of curvature on a curve: at its ends or where an axis of its
+/// ellipse meets it.
+double smallest_radius(const Curve& curve) {
+  double least = std::min(curve.radius_of_curvature(curve.begin), curve.radius_of_curvature(curve.end));
+  if (curve.kind == Curve::Kind::line) return least;
+  const auto [low, high] = std::minmax(curve.begin, curve.end);
+  for (double t = pi / 2 * std::ceil(low / (pi / 2)); t <= high; t += pi / 2)
+    least = std::min(least, curve.radius_of_curvature(t));
+  return least;
+}
+
+}  // namespace
+
+std::vector<Point> sharp_corners(const Loop& edge) {
+  std::vector<Point> corners;
+  for (std::size_t k = 0; k < edge.size(); ++k) {
+    const Curve& next = edge[(k + 1) % edge.size()];
+    if (angle_between(edge[k], next) > pi + least_corner) corners.push_back(next.start());
+  }
+  return corners;
+}
+
+Hole drawn_hole(Loop edge) {
+  Eigen::AlignedBox2d box;
+  Hole hole;
+  hole.shape = HoleShape::drawn;
+  hole.corner_radius = std::numeric_limits<double>::infinity();
+  for (const Curve& curve : edge) {
+    box.extend(curve.start());
+    for (int axis = 0; axis < 2; ++axis)
+      for (const double t : extremes(curve, axis)) box.extend(curve.at(t));
+    hole.corner_radius = std::min(hole.corner_radius, smallest_radius(curve));
+  }
+  hole.centre = box.center();
+  hole.length = box.sizes().x();
+  hole.width = box.sizes().y();
+  hole.corner_radius = std::min(hole.corner_radius, std::min(hole.length, hole.width) / 2);
+  for (Curve& curve : edge) curve.centre -= hole.centre;
+  hole.edge = std::move(edge);
+  return hole;
 }
 
 void place_raisers(Outline& outline, double length, double width) {

@@ -1,6 +1,6 @@
 #pragma once
 
-#include "mesh/plate/outline.hpp"
+#include "mesh/plate/plate.hpp"
 
 namespace raiser::mesh {
 
@@ -20,5 +20,12 @@ void tell_notches(Outline& outline);
 /// the smaller), and `body` closes the mouths of notches in straight edges.
 /// `length` and `width` are those of its bounding box about the origin, mm.
 void place_raisers(Outline& outline, double length, double width);
+
+/// The hole that a closed clockwise chain of curves is, wherever it lies.
+Hole drawn_hole(Loop edge);
+
+/// The corners of a hole's clockwise edge where the material is re-entrant by
+/// more than a drawing's rounding: the stress has no finite peak there.
+std::vector<Point> sharp_corners(const Loop& edge);
 
 }  // namespace raiser::mesh

@@ -224,7 +224,8 @@ Faults faults_at_outline(const Plate& plate, std::size_t hole) {
         fmt::format("{} leaves a ligament of {:.4g} mm to {}: too thin to resolve", who, nearest, other),
         fmt::format("leave at least {:.4g} mm", thin))};
   }
-  if (!holds(plate, shape.centre))
+  // The middle of a drawn hole need not lie in it, its edge does.
+  if (!holds(plate, region.loops[1].front().start()))
     return {fault(fmt::format("{} lies outside the plate", who), "move its centre inside the outline")};
   return {};
 }

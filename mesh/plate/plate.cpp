@@ -11,6 +11,7 @@
 
 #include "mesh/plate/crack_faults.hpp"
 #include "mesh/plate/distance.hpp"
+#include "mesh/plate/drawn.hpp"
 #include "mesh/plate/outline_faults.hpp"
 
 namespace raiser::mesh {
@@ -76,6 +77,8 @@ void check_resolution(const Plate& plate, std::size_t i, Faults& faults) {
     radius *= radius / larger;
   } else if (hole.shape == HoleShape::slot) {
     straight = hole.length - hole.width;
+  } else if (hole.shape == HoleShape::drawn) {
+    radius = hole.corner_radius;
   } else if (hole.shape == HoleShape::rounded_rectangle) {
     radius = hole.corner_radius;
     if (radius < smallest_corner * smaller_size(hole))
@@ -112,6 +115,15 @@ void check_shape(const Plate& plate, std::size_t i, Faults& faults) {
          fmt::format("{} is a slot of length {:.10g} mm, less than its width {:.10g} mm", who, hole.length,
                      hole.width),
          "give the overall length, ends included, or exchange the two and turn the angle by 90 deg"});
+  if (hole.shape == HoleShape::drawn) {
+    for (const Point& at : sharp_corners(hole.edge))
+      faults.push_back({i, PlateFault::none,
+                        fmt::format("{} has a sharp corner at ({:.6g}, {:.6g}) mm", who,
+                                    at.x() + hole.centre.x(), at.y() + hole.centre.y()),
+                        "draw the radius that it has: at a sharp corner the stress has no finite value"});
+    if (hole.edge.empty())
+      faults.push_back({i, PlateFault::none, fmt::format("{} is drawn without an edge", who), "draw it"});
+  }
   if (hole.shape != HoleShape::rounded_rectangle) return;
   if (!positive(hole.corner_radius))
     faults.push_back({i, PlateFault::none,
@@ -281,6 +293,8 @@ std::string_view word(HoleShape shape) {
       return "slot";
     case HoleShape::rounded_rectangle:
       return "rounded rectangle";
+    case HoleShape::drawn:
+      return "drawn";
   }
   return "";
 }

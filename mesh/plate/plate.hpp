@@ -11,20 +11,24 @@
 
 namespace raiser::mesh {
 
-enum class HoleShape { circle, ellipse, slot, rounded_rectangle };
+enum class HoleShape { circle, ellipse, slot, rounded_rectangle, drawn };
 
 /// One hole. `length` and `width` are its full sizes along its own first and
 /// second axis in mm: both the diameter for a circle, the two axes of an
 /// ellipse, overall length and width of a slot (round ends of radius width/2
-/// at the ends of the first axis), the sides of a rounded rectangle.
+/// at the ends of the first axis), the sides of a rounded rectangle, those of the
+/// bounding box of a drawn one.
 struct Hole {
   std::string name;
   HoleShape shape = HoleShape::circle;
   double length = 0.0;
   double width = 0.0;
-  double corner_radius = 0.0;  ///< mm; rounded rectangles only, 0 otherwise
+  double corner_radius = 0.0;  ///< mm; of a drawn hole the smallest radius of curvature; 0 of others
   Point centre = Point::Zero();
-  double angle = 0.0;  ///< rad, from the plate's x axis to the hole's first axis
+  double angle = 0.0;  ///< rad, from the plate's x axis to the hole's first axis; 0 of a drawn hole
+  /// Of a drawn hole alone: its edge, clockwise and without crossing itself, about
+  /// the middle of its bounding box.
+  Loop edge = {};
 };
 
 /// A plate of one thickness with holes and cracks: a rectangle, or what `outline`

@@ -75,6 +75,8 @@ Piece through(const Hole& hole, const Line& line) {
     case HoleShape::rounded_rectangle:
       return through_rounded_box(line, std::max(a - hole.corner_radius, 0.0),
                                  std::max(b - hole.corner_radius, 0.0), hole.corner_radius);
+    case HoleShape::drawn:
+      break;
   }
   return std::nullopt;
 }
@@ -168,7 +170,26 @@ std::vector<Interval> whole(const Plate& plate, bool across) {
 
 }  // namespace
 
+std::vector<Chord> chords(const Hole& hole, Direction direction, double station) {
+  if (hole.shape != HoleShape::drawn) {
+    const auto one = chord(hole, direction, station);
+    return one ? std::vector<Chord>{*one} : std::vector<Chord>{};
+  }
+  const int axis = direction == Direction::across ? 0 : 1;
+  const double tolerance = rounding * (hole.length + hole.width);
+  const auto found = passages(hole.edge, axis, station - hole.centre[axis], tolerance, false);
+  std::vector<Chord> result;
+  for (std::size_t i = 0; i + 1 < found.size(); i += 2)
+    result.push_back(
+        {found[i].position + hole.centre[1 - axis], found[i + 1].position + hole.centre[1 - axis]});
+  return result;
+}
+
 std::optional<Chord> chord(const Hole& hole, Direction direction, double station) {
+  if (hole.shape == HoleShape::drawn) {
+    const auto all = chords(hole, direction, station);
+    return all.empty() ? std::nullopt : std::optional(Chord{all.front().begin, all.back().end});
+  }
   const bool across = direction == Direction::across;
   const double c = std::cos(hole.angle);
   const double s = std::sin(hole.angle);
@@ -200,7 +221,7 @@ std::vector<Interval> material_along(const Plate& plate, Direction direction, do
   };
   std::vector<Gap> gaps;
   for (std::size_t i = 0; i < plate.holes.size(); ++i)
-    if (const auto piece = chord(plate.holes[i], direction, station)) gaps.push_back({*piece, i});
+    for (const Chord& piece : chords(plate.holes[i], direction, station)) gaps.push_back({piece, i});
   std::sort(gaps.begin(), gaps.end(),
             [](const Gap& a, const Gap& b) { return a.chord.begin < b.chord.begin; });
 

@@ -18,8 +18,12 @@ struct Chord {
 };
 
 /// Where the line at `station` (mm) passes through the hole; nothing when it
-/// misses or only touches it. Exact for every shape at any angle.
+/// misses or only touches it. Exact for every shape at any angle; a drawn hole is
+/// taken from its first to its last edge there.
 std::optional<Chord> chord(const Hole& hole, Direction direction, double station);
+
+/// The same for a hole of any shape: where it turns back there are several.
+std::vector<Chord> chords(const Hole& hole, Direction direction, double station);
 
 /// A piece of material on a section: positions in mm, begin < end, and what
 /// bounds it there.

@@ -18,8 +18,14 @@ Point reflect(Point p, Mirrors mirror) {
   return p;
 }
 
-/// Whether two holes of one centre cover the same material.
-bool same_shape(const Hole& a, const Hole& b, double angle_of_a, double tolerance) {
+std::optional<std::vector<std::size_t>> curve_images(const Loop& loop, const Loop& among, Mirrors mirror,
+                                                     double tolerance);
+
+/// Whether hole a in the mirror covers the same material as hole b where the centres agree.
+bool same_shape(const Hole& a, const Hole& b, Mirrors mirror, double tolerance) {
+  if (a.shape == HoleShape::drawn && b.shape == a.shape)
+    return curve_images(a.edge, b.edge, mirror, tolerance).has_value();
+  const double angle_of_a = mirror.x != mirror.y ? -a.angle : a.angle;
   if (a.shape != b.shape || std::abs(a.length - b.length) > tolerance ||
       std::abs(a.width - b.width) > tolerance || std::abs(a.corner_radius - b.corner_radius) > tolerance)
     return false;
@@ -35,10 +41,9 @@ std::optional<std::size_t> find_image(const Plate& plate, std::size_t hole, Mirr
   const double tolerance = coincidence(plate);
   const Hole& original = plate.holes[hole];
   const Point centre = reflect(original.centre, mirror);
-  const double angle = mirror.x != mirror.y ? -original.angle : original.angle;
   for (std::size_t i = 0; i < plate.holes.size(); ++i)
     if ((plate.holes[i].centre - centre).cwiseAbs().maxCoeff() <= tolerance &&
-        same_shape(original, plate.holes[i], angle, tolerance))
+        same_shape(original, plate.holes[i], mirror, tolerance))
       return i;
   return std::nullopt;
 }
@@ -52,16 +57,18 @@ bool same(const Curve& a, const Curve& b, double tolerance) {
          near(a.at((a.begin + a.end) / 2), b.at((b.begin + b.end) / 2));
 }
 
-/// The curve of the chain that each one's image is; nothing when one has none.
+/// The curve of another chain that each one's image is; nothing when one has none.
 /// The images of a chain follow each other the other way round.
-std::optional<std::vector<std::size_t>> curve_images(const Loop& loop, Mirrors mirror, double tolerance) {
+std::optional<std::vector<std::size_t>> curve_images(const Loop& loop, const Loop& among, Mirrors mirror,
+                                                     double tolerance) {
   const std::size_t n = loop.size();
+  if (among.size() != n) return std::nullopt;
   const bool turned = mirror.x != mirror.y;
   for (std::size_t first = 0; first < n; ++first) {
     std::vector<std::size_t> images;
     for (std::size_t i = 0; i < n; ++i) {
       const std::size_t k = turned ? (first + n - i) % n : (first + i) % n;
-      if (!same(reflected(loop[i], mirror.x, mirror.y), loop[k], tolerance)) break;
+      if (!same(reflected(loop[i], mirror.x, mirror.y), among[k], tolerance)) break;
       images.push_back(k);
     }
     if (images.size() == n) return images;
@@ -78,7 +85,7 @@ bool put(std::vector<std::size_t>& map, std::size_t from, std::size_t to) {
 
 bool map_outline(const Outline& outline, std::size_t holes, Mirrors mirror, double tolerance,
                  MirrorImage& image) {
-  const auto curves = curve_images(outline.curves, mirror, tolerance);
+  const auto curves = curve_images(outline.curves, outline.curves, mirror, tolerance);
   if (!curves) return false;
   image.edges.assign(outline.edges.size(), unmapped);
   image.raisers.resize(holes + outline.raisers.size(), unmapped);

@@ -32,6 +32,9 @@ struct Region {
   std::vector<RegionTip> tips = {};
 };
 
+/// The edge of a hole, clockwise.
+Loop trace(const Hole& hole, const Owner& owner);
+
 /// Outline, holes and cracks of a legal plate as curves. loops[0] is the outline
 /// as it stands (a rectangle starts at its lower left corner); loops[1 + i] is
 /// hole i.

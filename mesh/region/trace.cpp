@@ -36,28 +36,6 @@ class HoleLoop {
   Loop loop_;
 };
 
-Loop trace_hole(const Hole& hole, std::size_t index) {
-  HoleLoop loop(hole, {Owner::Kind::raiser, index});
-  const double a = hole.length / 2;
-  const double b = hole.width / 2;
-  if (hole.shape == HoleShape::circle || hole.shape == HoleShape::ellipse) {
-    for (int k = 0; k < 4; ++k) loop.arc(0, 0, a, b, -k * quarter);
-    return loop.take();
-  }
-  const double r = hole.shape == HoleShape::slot ? b : hole.corner_radius;
-  const double x = a - r;
-  const double y = hole.shape == HoleShape::slot ? 0.0 : b - r;
-  loop.line(-x, b, x, b);
-  loop.arc(x, y, r, r, quarter);
-  loop.line(a, y, a, -y);
-  loop.arc(x, -y, r, r, 0);
-  loop.line(x, -b, -x, -b);
-  loop.arc(-x, -y, r, r, -quarter);
-  loop.line(-a, -y, -a, y);
-  loop.arc(-x, y, r, r, -2 * quarter);
-  return loop.take();
-}
-
 Loop trace_outline(const Plate& plate) {
   Loop loop = outline_of(plate).curves;
   for (Curve& curve : loop)
@@ -97,6 +75,36 @@ void insert_cracks(Region& region, std::vector<Crack> cracks) {
 
 }  // namespace
 
+Loop trace(const Hole& hole, const Owner& owner) {
+  if (hole.shape == HoleShape::drawn) {
+    Loop edge = hole.edge;
+    for (Curve& curve : edge) {
+      curve.centre += hole.centre;
+      curve.owner = owner;
+    }
+    return edge;
+  }
+  HoleLoop loop(hole, owner);
+  const double a = hole.length / 2;
+  const double b = hole.width / 2;
+  if (hole.shape == HoleShape::circle || hole.shape == HoleShape::ellipse) {
+    for (int k = 0; k < 4; ++k) loop.arc(0, 0, a, b, -k * quarter);
+    return loop.take();
+  }
+  const double r = hole.shape == HoleShape::slot ? b : hole.corner_radius;
+  const double x = a - r;
+  const double y = hole.shape == HoleShape::slot ? 0.0 : b - r;
+  loop.line(-x, b, x, b);
+  loop.arc(x, y, r, r, quarter);
+  loop.line(a, y, a, -y);
+  loop.arc(x, -y, r, r, 0);
+  loop.line(x, -b, -x, -b);
+  loop.arc(-x, -y, r, r, -quarter);
+  loop.line(-a, -y, -a, y);
+  loop.arc(-x, y, r, r, -2 * quarter);
+  return loop.take();
+}
+
 void divide_at(std::vector<Loop>& loops, Point& end) {
   std::size_t best_loop = 0;
   std::size_t best_curve = 0;
@@ -128,7 +136,8 @@ void divide_at(std::vector<Loop>& loops, Point& end) {
 Region trace(const Plate& plate) {
   Region region;
   region.loops.push_back(trace_outline(plate));
-  for (std::size_t i = 0; i < plate.holes.size(); ++i) region.loops.push_back(trace_hole(plate.holes[i], i));
+  for (std::size_t i = 0; i < plate.holes.size(); ++i)
+    region.loops.push_back(trace(plate.holes[i], {Owner::Kind::raiser, i}));
   insert_cracks(region, plate.cracks);
   return region;
 }

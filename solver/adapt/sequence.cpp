@@ -59,7 +59,11 @@ void DegreeSequence::solve(int degree) {
 }
 
 Convergence DegreeSequence::convergence() const {
-  const bool is_smooth = !plate_->outline && !model_->material().orthotropy && model_->held().empty();
+  const bool is_drawn = std::any_of(plate_->holes.begin(), plate_->holes.end(), [](const mesh::Hole& hole) {
+    return hole.shape == mesh::HoleShape::drawn;
+  });
+  const bool is_smooth =
+      !plate_->outline && !is_drawn && !model_->material().orthotropy && model_->held().empty();
   return {displacements_.back().degree, !is_smooth};
 }
 

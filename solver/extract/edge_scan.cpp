@@ -131,8 +131,7 @@ std::vector<EdgeScanner::FreeEnd> EdgeScanner::free_ends() const {
     const auto found = begins.find(corner);
     if (found == begins.end()) continue;
     const mesh::BoundarySide& after = *found->second;
-    if (after.curve.owner == before->curve.owner ||
-        !mesh::is_blunt(mesh::angle_between(before->curve, after.curve)) ||
+    if (!mesh::is_blunt(mesh::angle_between(before->curve, after.curve)) ||
         !is_free(*model_, *before, before->curve.end) || !is_free(*model_, after, after.curve.begin))
       continue;
     if (const auto side = own.find(begin); side != own.end()) result.push_back({side->second, 1.0});

@@ -1,5 +1,7 @@
 #include "solver/extract/paths.hpp"
 
+#include <fmt/format.h>
+
 #include <Eigen/LU>
 #include <algorithm>
 #include <cmath>
@@ -10,6 +12,7 @@
 #include "mesh/legendre.hpp"
 #include "mesh/plate/section.hpp"
 #include "mesh/plate/words.hpp"
+#include "mesh/region/region.hpp"
 #include "solver/adapt/bound.hpp"
 
 namespace raiser::solver {
@@ -50,14 +53,21 @@ double way_along(const mesh::Loop& chain, const Point& x) {
   return way;
 }
 
-/// Puts samples in order and measures the way along the edge through them.
-/// Holes are star-shaped about their centres; other raisers have a chain of
-/// curves to follow.
-void order(std::vector<EdgeSample>& samples, const mesh::Loop& chain) {
+/// Puts samples in order and measures the way along the edge through them. The
+/// shapes that a case can name are star-shaped about their centres; drawn holes and
+/// other raisers have a chain of curves to follow. A closed one begins at the
+/// smallest angle.
+void order(std::vector<EdgeSample>& samples, const mesh::Loop& chain, bool is_closed) {
   std::vector<std::pair<double, EdgeSample>> placed;
   for (EdgeSample& sample : samples)
     placed.emplace_back(chain.empty() ? sample.angle : way_along(chain, sample.point), sample);
   std::sort(placed.begin(), placed.end(), [](const auto& a, const auto& b) { return a.first < b.first; });
+  if (is_closed)
+    std::rotate(
+        placed.begin(),
+        std::min_element(placed.begin(), placed.end(),
+                         [](const auto& a, const auto& b) { return a.second.angle < b.second.angle; }),
+        placed.end());
   for (std::size_t i = 0; i < samples.size(); ++i) {
     samples[i] = placed[i].second;
     if (i > 0)
@@ -65,10 +75,20 @@ void order(std::vector<EdgeSample>& samples, const mesh::Loop& chain) {
   }
 }
 
-/// The curves of a raiser of the outline in their order, none for a hole.
+/// A drawn hole's edge run anticlockwise, with the material on its right.
+mesh::Loop anticlockwise(const mesh::Hole& hole) {
+  mesh::Loop chain = mesh::trace(hole, {});
+  std::reverse(chain.begin(), chain.end());
+  for (mesh::Curve& curve : chain) std::swap(curve.begin, curve.end);
+  return chain;
+}
+
+/// The curves of a raiser of the outline or of a drawn hole in their order, none
+/// for another hole.
 mesh::Loop chain_of(const Plate& plate, const mesh::Loop& outline, std::size_t raiser) {
   mesh::Loop chain;
-  if (raiser < plate.holes.size()) return chain;
+  if (raiser < plate.holes.size())
+    return plate.holes[raiser].shape == mesh::HoleShape::drawn ? anticlockwise(plate.holes[raiser]) : chain;
   const Owner own{Owner::Kind::raiser, raiser - plate.holes.size()};
   const std::size_t n = outline.size();
   std::size_t first = 0;  // the chain may run over the outline's own beginning
@@ -104,8 +124,14 @@ std::string end_name(const Plate& plate, const Owner& owner) {
   return owner.index < edges.size() ? mesh::edge_phrase(edges[owner.index]) : "edge";
 }
 
-std::string start_name(const mesh::Raiser& raiser, bool across, bool from_begin) {
+/// A drawn hole may meet a section more than twice, its centre need not lie in it.
+std::string start_name(const Plate& plate, std::size_t index, bool across, const mesh::Interval& piece,
+                       bool from_begin) {
+  const mesh::Raiser raiser = mesh::raiser(plate, index);
   if (raiser.kind != mesh::Raiser::Kind::hole) return name_of(raiser);
+  if (plate.holes[index].shape == mesh::HoleShape::drawn)
+    return fmt::format("{}, {} = {:.6g} mm", name_of(raiser), across ? 'y' : 'x',
+                       (from_begin ? piece.begin : piece.end) + 0.0);
   return name_of(raiser) + (across ? ", y " : ", x ") + (from_begin ? ">" : "<") + " centre";
 }
 
@@ -115,7 +141,7 @@ Ligament follow(const Plate& plate, std::size_t raiser, const Section& section, 
   const bool across = section.direction == Section::Direction::across;
   Ligament ligament;
   ligament.raiser = raiser;
-  ligament.from = start_name(mesh::raiser(plate, raiser), across, from_begin);
+  ligament.from = start_name(plate, raiser, across, piece, from_begin);
   ligament.to = end_name(plate, from_begin ? piece.at_end : piece.at_begin);
   ligament.width = piece.end - piece.begin;
   for (int k = 0; k < ligament_points; ++k) {
@@ -186,7 +212,8 @@ std::vector<std::vector<EdgeSample>> edge_samples(const Model& model, const Plat
     }
   }
   const mesh::Loop outline = mesh::outline_of(plate).curves;
-  for (std::size_t i = 0; i < result.size(); ++i) order(result[i], chain_of(plate, outline, i));
+  for (std::size_t i = 0; i < result.size(); ++i)
+    order(result[i], chain_of(plate, outline, i), i < plate.holes.size());
   return result;
 }
 

@@ -79,6 +79,8 @@ std::vector<Comparison> solutions(const Situation& s) {
       return compare_slot(s);
     case mesh::HoleShape::rounded_rectangle:
       return compare_rounded_rectangle(s);
+    case mesh::HoleShape::drawn:
+      break;
   }
   return {};
 }
