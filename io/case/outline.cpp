@@ -141,7 +141,13 @@ OutlineReading read_outline(const Table& document, const PlateSizes& sizes, Name
   if (!body && !is_free && !is_stepped && box.length && box.width)
     body = mesh::rectangular(*box.length, *box.width);
   read_notches(document, body ? &*body : nullptr, result, names);
+  if (body)
+    result.edges = body->edges;
+  else if (is_imported || is_free || is_stepped)
+    result.edges = {std::string(any_name)};
   result.is_sound = document.report->faults.size() == before;
+  const bool is_plain = !is_imported && !is_free && !is_stepped && find(document, "notch") == nullptr;
+  result.is_known = result.is_sound && (body || is_plain);
   if (!result.is_sound) result.outline.reset();
   return result;
 }

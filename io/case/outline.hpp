@@ -32,10 +32,14 @@ bool draws_outline(const Table& document);
 struct OutlineReading {
   std::optional<mesh::Outline> outline;      ///< empty for the rectangle, or when faulty
   bool is_sound = true;                      ///< no fault was found
+  bool is_known = true;                      ///< sound, and all of its notches and fillets have their names
   mesh::Point origin = mesh::Point::Zero();  ///< where the drawing's origin comes to lie, mm
   PlateSizes sizes;                          ///< of a drawn outline: its bounding box
   std::vector<HoleReading> holes;            ///< imported with it
   std::optional<ImportReport> import;
+  /// Names of the edges that other tables can speak of; any_name where the outline
+  /// could not be read.
+  std::vector<std::string> edges{"right", "top", "left", "bottom"};
 };
 
 /// Adds the names of notches, shoulders and drawn raisers to `names`.

@@ -62,10 +62,10 @@ struct LoadReading {
   std::string path;  ///< of its table among what is written: "load.1", "pin.2"
 };
 /// Forces and moments become stresses on the plate's own sections; without the
-/// sizes they need such loads stay empty.
+/// sizes they need such loads stay empty, and so do loads on an outline that could
+/// not be read.
 std::vector<LoadReading> read_loads(const Table& document, const PlateSizes& plate,
-                                    const std::optional<mesh::Outline>& outline,
-                                    const std::vector<std::string_view>& holes,
+                                    const OutlineReading& outline, const std::vector<std::string_view>& holes,
                                     const std::vector<std::string_view>& cracks);
 
 /// The loads of one [[pin]]: one, or one for each hole of a row. An empty one
@@ -78,8 +78,7 @@ struct SupportReading {
   std::optional<solver::Support> support;
   Position at;
 };
-/// `edges` are those of the outline; empty for the rectangle's own.
-std::vector<SupportReading> read_supports(const Table& document, std::vector<std::string> edges);
+std::vector<SupportReading> read_supports(const Table& document, const OutlineReading& outline);
 
 /// What is asked for, in the order of [ask], then of [[ask.result]].
 struct Question {

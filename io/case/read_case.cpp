@@ -53,6 +53,24 @@ void complain_of_missing(const Table& document, std::string_view key, std::strin
   complain({document.node, std::string(key), "", document.report}, std::move(what), std::move(cure));
 }
 
+/// Names that other tables can speak of, with any_name at the end where those of an
+/// outline or drawing are not known.
+struct KnownNames {
+  std::vector<std::string_view> holes;
+  std::vector<std::string_view> raisers;  ///< the holes, then what the outline has
+};
+KnownNames known_names(const Table& document, const std::vector<HoleReading>& holes,
+                       const OutlineReading& outline) {
+  KnownNames names;
+  for (const HoleReading& hole : holes) names.holes.push_back(hole.name);
+  names.raisers = names.holes;
+  if (outline.outline)
+    for (const mesh::Raiser& raiser : outline.outline->raisers) names.raisers.push_back(raiser.name);
+  if (find(document, "import") != nullptr && !outline.import) names.holes.push_back(any_name);
+  if (!outline.is_known) names.raisers.push_back(any_name);
+  return names;
+}
+
 Parts read_parts(const Table& document, const std::string& default_title) {
   constexpr std::array<std::string_view, 14> keys{"raiser", "title",   "plate",   "material", "import",
                                                   "hole",   "outline", "notch",   "shoulder", "crack",
@@ -85,11 +103,7 @@ Parts read_parts(const Table& document, const std::string& default_title) {
     parts.plate.width = parts.outline.sizes.width;
   }
   parts.holes.insert(parts.holes.end(), parts.outline.holes.begin(), parts.outline.holes.end());
-  std::vector<std::string_view> names;
-  for (const HoleReading& hole : parts.holes) names.push_back(hole.name);
-  std::vector<std::string_view> raisers = names;
-  if (parts.outline.outline)
-    for (const mesh::Raiser& raiser : parts.outline.outline->raisers) raisers.push_back(raiser.name);
+  const KnownNames names = known_names(document, parts.holes, parts.outline);
   parts.cracks = read_cracks(document, parts.plate, parts.outline, parts.holes);
   std::vector<std::string_view> cracks;
   std::vector<std::string_view> tips;
@@ -98,17 +112,12 @@ Parts read_parts(const Table& document, const std::string& default_title) {
     tips.insert(tips.end(), crack.tips.begin(), crack.tips.end());
   }
   const std::size_t faults_before = document.report->faults.size();
-  // Edges of an outline that could not be drawn have no names to speak of.
-  const bool known_edges = !draws_outline(document) && find(document, "shoulder") == nullptr;
-  if (parts.outline.is_sound || known_edges)
-    parts.loads = read_loads(document, parts.plate, parts.outline.outline, names, cracks);
-  if (parts.outline.is_sound || known_edges)
-    parts.supports = read_supports(
-        document, parts.outline.outline ? parts.outline.outline->edges : std::vector<std::string>{});
-  if (parts.outline.is_sound) parts.question = read_question(document, names, raisers, tips);
+  parts.loads = read_loads(document, parts.plate, parts.outline, names.holes, cracks);
+  parts.supports = read_supports(document, parts.outline);
+  parts.question = read_question(document, names.holes, names.raisers, tips);
   parts.loads_are_sound = document.report->faults.size() == faults_before;
   const bool is_whole = find(document, "hole") == nullptr && find(document, "crack") == nullptr;
-  if (raisers.empty() && parts.outline.is_sound && is_whole) {
+  if (names.raisers.empty() && is_whole) {
     complain_of_missing(document, "hole", "nothing on the plate raises its stress",
                         "add [[hole]], [[notch]], [[shoulder]] or [[crack]] with its sizes");
   }

@@ -263,14 +263,13 @@ std::vector<CrackReading> read_cracks(const Table& document, const PlateSizes& p
              fmt::format("a case has at most {}; leave the others out", most_cracks));
     tables.erase(tables.begin() + most_cracks, tables.end());
   }
-  Context context{std::nullopt, outline.origin, {"right", "top", "left", "bottom"}, holes, {}};
+  Context context{std::nullopt, outline.origin, outline.edges, holes, {}};
   if (plate.length && plate.width && plate.thickness && outline.is_sound)
     context.plate = mesh::Plate{*plate.length, *plate.width, *plate.thickness, {}, outline.outline};
   for (const HoleReading& hole : holes) context.raisers.push_back(hole.name);
-  if (outline.outline) {
-    context.edges = outline.outline->edges;
+  if (outline.outline)
     for (const mesh::Raiser& raiser : outline.outline->raisers) context.raisers.push_back(raiser.name);
-  }
+  if (!outline.is_known) context.raisers.push_back(any_name);
   std::vector<CrackReading> cracks;
   Names names;
   Names tips;

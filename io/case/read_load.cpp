@@ -3,6 +3,7 @@
 #include <array>
 #include <cmath>
 
+#include "io/case/outline.hpp"
 #include "io/case/parts.hpp"
 #include "mesh/plate/words.hpp"
 #include "solver/elasticity/outer_edge.hpp"
@@ -30,6 +31,7 @@ constexpr std::array kinds{Load::Kind::tension, Load::Kind::shear, Load::Kind::b
 struct Context {
   PlateSizes plate;
   std::optional<mesh::Plate> drawn;  ///< the plate without its holes, when its outline is no rectangle
+  bool is_rectangle = true;          ///< known to be one: its sizes are those of its edges
   std::vector<std::string> edges;
   const std::vector<std::string_view>& holes;
   const std::vector<std::string_view>& cracks;
@@ -69,22 +71,32 @@ std::optional<solver::LoadedEnds> ends_of(const Table& table, const Context& con
   return ends;
 }
 
+/// Which end (axis 0: right or left) or side (1: top or bottom) `on` names.
+std::optional<std::size_t> read_on(const Table& table, int axis) {
+  constexpr std::array<std::string_view, 4> words{"right", "left", "top", "bottom"};
+  return choice(table, find(table, "on"), std::span(words).subspan(axis == 0 ? 0 : 2, 2));
+}
+
+/// The factor where both ends are equal, or could not be read: nothing if `on` is faulty.
+std::optional<double> on_either(const Table& table, int axis) {
+  const bool is_sound = find(table, "on") == nullptr || read_on(table, axis);
+  return is_sound ? std::optional(1.0) : std::nullopt;
+}
+
 /// The factor from a stress on the end named in `on` to that on the smaller one.
 /// Unequal ends must name one where a stress is given.
 std::optional<double> on_smaller(const Table& table, const solver::LoadedEnds& ends, int axis,
                                  double (*size)(const solver::LoadedEnd&)) {
-  constexpr std::array<std::string_view, 4> words{"right", "left", "top", "bottom"};
-  const auto own = std::span(words).subspan(axis == 0 ? 0 : 2, 2);
   const Entry* entry = find(table, "on");
   const bool equal = std::abs(size(ends.low) - size(ends.high)) <= 1e-9 * size(ends.high);
   if (entry == nullptr) {
     if (equal || find(table, "stress") == nullptr) return 1.0;
     complain(table, fmt::format("the ends differ: {:.6g} and {:.6g} mm^2", ends.low.area, ends.high.area),
              fmt::format("say which one the stress stands on, e.g. on = \"{}\", or give a force or moment",
-                         own.front()));
+                         axis == 0 ? "right" : "top"));
     return std::nullopt;
   }
-  const auto index = choice(table, entry, own);
+  const auto index = read_on(table, axis);
   if (!index) return std::nullopt;
   if (find(table, "stress") == nullptr) return 1.0;
   return size(*index == 0 ? ends.high : ends.low) / size(ends.reference());
@@ -100,12 +112,12 @@ std::optional<Load> read_tension(const Table& table, const Context& context) {
   const auto direction = entry == nullptr ? std::optional<std::size_t>(0) : choice(table, entry, directions);
   const bool across = direction.value_or(0) == 1;
   const auto ends = ends_of(table, context, across ? 1 : 0);
-  if (context.drawn && !ends) return std::nullopt;
-  const auto factor = ends ? on_smaller(table, *ends, across ? 1 : 0, area_of) : std::optional(1.0);
+  const auto factor =
+      ends ? on_smaller(table, *ends, across ? 1 : 0, area_of) : on_either(table, across ? 1 : 0);
   const auto area = ends ? std::optional(ends->reference().area)
                          : section(context.plate, across ? context.plate.length : context.plate.width);
   auto stress = stress_from(table, stress_or_force, Dimension::force, area, "\"100 MPa\"");
-  if (!direction || !stress || !factor) return std::nullopt;
+  if (!direction || !stress || !factor || (context.drawn && !ends)) return std::nullopt;
   *stress *= *factor;
   Load load;
   load.kind = across ? Load::Kind::transverse : Load::Kind::tension;
@@ -130,11 +142,10 @@ std::optional<Load> read_bending(const Table& table, const Context& context) {
   auto modulus = section(context.plate, context.plate.width);
   if (modulus) *modulus *= *context.plate.width / 6.0;
   const auto ends = ends_of(table, context, 0);
-  if (context.drawn && !ends) return std::nullopt;
   if (ends) modulus = ends->reference().modulus();
-  const auto factor = ends ? on_smaller(table, *ends, 0, modulus_of) : std::optional(1.0);
+  const auto factor = ends ? on_smaller(table, *ends, 0, modulus_of) : on_either(table, 0);
   auto stress = stress_from(table, keys, Dimension::moment, modulus, "\"50 MPa\"");
-  if (!stress || !factor) return std::nullopt;
+  if (!stress || !factor || (context.drawn && !ends)) return std::nullopt;
   *stress *= *factor;
   Load load;
   load.kind = Load::Kind::bending;
@@ -224,10 +235,11 @@ std::optional<Load> read_edge(const Table& table, const Context& context) {
   constexpr std::array<std::string_view, 2> shear_keys_of_edge{"shear", "shear_force"};
   refuse_unfitting(table, "an edge load", load_keys, edge_keys);
   const std::vector<std::string_view> words(context.edges.begin(), context.edges.end());
-  const auto edge = choice(table, require(table, "edge", fmt::format("\"{}\"", words.front())), words);
+  const auto edge = choice(table, require(table, "edge", sample_of(words, "right")), words);
   const bool end = edge.value_or(0) % 2 == 0;
-  std::optional<double> length = end ? context.plate.width : context.plate.length;
+  std::optional<double> length;
   if (context.drawn && edge) length = mesh::edge_length(*context.drawn->outline, *edge);
+  if (!context.drawn && context.is_rectangle) length = end ? context.plate.width : context.plate.length;
   const auto part = read_part(table, edge ? length : std::nullopt);
   auto loaded = length;
   if (part && length) loaded = part->to.value_or(*length) - part->from.value_or(0.0);
@@ -340,8 +352,7 @@ std::optional<Load> read_load(const Table& table, const Context& context) {
 }  // namespace
 
 std::vector<LoadReading> read_loads(const Table& document, const PlateSizes& plate,
-                                    const std::optional<mesh::Outline>& outline,
-                                    const std::vector<std::string_view>& holes,
+                                    const OutlineReading& outline, const std::vector<std::string_view>& holes,
                                     const std::vector<std::string_view>& cracks) {
   std::vector<LoadReading> loads;
   std::vector<Table> tables = tables_at(document, "load");
@@ -350,11 +361,10 @@ std::vector<LoadReading> read_loads(const Table& document, const PlateSizes& pla
              fmt::format("a case has at most {}; put loads of one kind together", most_loads));
     tables.erase(tables.begin() + most_loads, tables.end());
   }
-  Context context{plate, std::nullopt, {"right", "top", "left", "bottom"}, holes, cracks};
-  if (outline && plate.length && plate.width && plate.thickness) {
-    context.drawn = mesh::Plate{*plate.length, *plate.width, *plate.thickness, {}, outline};
-    context.edges = outline->edges;
-  }
+  const bool is_rectangle = outline.is_known && !outline.outline;
+  Context context{plate, std::nullopt, is_rectangle, outline.edges, holes, cracks};
+  if (outline.outline && plate.length && plate.width && plate.thickness)
+    context.drawn = mesh::Plate{*plate.length, *plate.width, *plate.thickness, {}, outline.outline};
   const std::vector<Table> pins = tables_at(document, "pin");
   Names written = written_names(tables);
   written.merge(written_names(pins));

@@ -134,7 +134,7 @@ std::optional<mesh::Hole> read_hole(const Table& table, const std::string& name)
 }  // namespace
 
 std::string sample_of(const std::vector<std::string_view>& names, std::string_view otherwise) {
-  return fmt::format("\"{}\"", names.empty() ? otherwise : names.front());
+  return fmt::format("\"{}\"", names.empty() || names.front() == any_name ? otherwise : names.front());
 }
 
 PlateSizes read_plate(const Table& table, bool is_drawn) {

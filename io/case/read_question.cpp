@@ -63,7 +63,7 @@ std::vector<std::size_t> read_selection(const Table& table, std::string_view key
     std::iota(picked.begin(), picked.end(), std::size_t{0});
     return picked;
   }
-  const std::string sample = words.empty() ? "[]" : fmt::format("[\"{}\"]", words.front());
+  const std::string sample = words.empty() ? "[]" : fmt::format("[{}]", sample_of(words));
   const std::vector<Node>* list = items(table, entry, sample);
   std::vector<bool> seen(words.size(), false);
   for (const Node& item : list == nullptr ? std::vector<Node>{} : *list) {

@@ -2,6 +2,7 @@
 
 #include <array>
 
+#include "io/case/outline.hpp"
 #include "io/case/parts.hpp"
 #include "mesh/plate/words.hpp"
 
@@ -33,10 +34,11 @@ bool read_displacements(const Table& table, solver::Support& support) {
 
 }  // namespace
 
-std::vector<SupportReading> read_supports(const Table& document, std::vector<std::string> edges) {
-  if (edges.empty()) edges = {"right", "top", "left", "bottom"};
+std::vector<SupportReading> read_supports(const Table& document, const OutlineReading& outline) {
+  const std::vector<std::string>& edges = outline.edges;
   const std::vector<std::string_view> edge_words(edges.begin(), edges.end());
-  const std::string sample = fmt::format("\"{}\"", edges.size() == 4 ? edges[2] : edges.front());
+  const std::string sample =
+      edges.size() == 4 ? fmt::format("\"{}\"", edges[2]) : sample_of(edge_words, "left");
   std::vector<SupportReading> supports;
   Names names;
   for (const Table& table : tables_at(document, "support")) {

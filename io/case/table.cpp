@@ -242,16 +242,22 @@ std::optional<std::string> text(const Table& table, const Entry* entry) {
 
 std::optional<std::size_t> choice(const Table& table, const Entry& entry, const Node& value,
                                   std::span<const std::string_view> words) {
-  const std::string sample = words.empty() ? "a name" : fmt::format("\"{}\"", words.front());
+  const bool has_first = !words.empty() && words.front() != any_name;
+  const std::string sample = has_first ? fmt::format("\"{}\"", words.front()) : "a name";
   if (value.kind != Node::Kind::text) {
     complain_of_kind(table, entry, value, "a text", sample);
     return std::nullopt;
   }
   const auto found = std::find(words.begin(), words.end(), value.text);
-  if (found != words.end()) return static_cast<std::size_t>(found - words.begin());
+  if (found != words.end() && *found != any_name) return static_cast<std::size_t>(found - words.begin());
+  if (std::find(words.begin(), words.end(), any_name) != words.end()) {
+    static_cast<void>(text(table, entry, value));  // complains of one that is no name
+    return std::nullopt;
+  }
   const std::string_view close = nearest(value.text, words);
   const std::string hint = close.empty() ? "" : fmt::format("; the nearest is \"{}\"", close);
-  const std::string cure = words.size() > 12
+  const std::string cure = words.empty() ? "the case has none of its kind: remove it, or add one"
+                           : words.size() > 12
                                ? fmt::format("it is one of {} names, such as {}", words.size(), sample)
                                : fmt::format("it is one of: {}", list(words));
   complain_of(table, entry, value, fmt::format("this is not known here{}", hint), cure);

@@ -72,7 +72,12 @@ std::optional<double> quantity(const Table& table, const Entry& entry, const Nod
 std::optional<std::string> text(const Table& table, const Entry* entry);
 std::optional<std::string> text(const Table& table, const Entry& entry, const Node& value);
 
-/// Which of the words the text is, or nothing and a fault.
+/// Stands in a list of names for those that are not known, since the drawing or
+/// outline that has them could not be read: any text may then be one of them.
+inline constexpr std::string_view any_name{};
+
+/// Which of the words the text is, or nothing and a fault; nothing without a fault
+/// for a text that may be one of names not known (any_name).
 std::optional<std::size_t> choice(const Table& table, const Entry* entry,
                                   std::span<const std::string_view> words);
 std::optional<std::size_t> choice(const Table& table, const Entry& entry, const Node& value,
