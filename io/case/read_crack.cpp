@@ -130,6 +130,28 @@ std::optional<Crack> read_from_edge(const Table& table, const Context& context) 
   return straight(mouth, *angle, *length);
 }
 
+/// Where a crack opens at the edge of a hole, notch or fillet, in a direction from its
+/// centre. A drawn hole may have its edge there more than once.
+std::optional<Mouth> read_mouth(const Table& table, const Context& context, const Site& site, double place) {
+  const auto mouths = mesh::mouths_on_raiser(site.plate, site.owner.index, place);
+  if (mouths.empty()) {
+    complain_of_geometry(table, *find(table, "place"), "nothing of that edge lies in this direction",
+                         "give the edge angle of a place on it, as the results count it");
+    return std::nullopt;
+  }
+  const auto& holes = site.plate.holes;
+  const bool is_drawn = !holes.empty() && holes.front().shape == mesh::HoleShape::drawn;
+  if (!is_drawn || mouths.size() == 1) return mouths.front();
+  const Point near = mouths.front().at - context.origin, far = mouths.back().at - context.origin;
+  complain_of_geometry(
+      table, *find(table, "place"),
+      fmt::format("that edge lies {} times in this direction, first at ({:.6g}, {:.6g}) mm and "
+                  "last at ({:.6g}, {:.6g}) mm",
+                  mouths.size(), near.x(), near.y(), far.x(), far.y()),
+      "give points in place of an angle, the first of them on the edge");
+  return std::nullopt;
+}
+
 std::optional<Crack> read_from_hole(const Table& table, const Context& context) {
   refuse_unfitting(table, "a crack from a hole", crack_keys, hole_keys);
   const auto raiser = choice(table, find(table, "from"), context.raisers);
@@ -139,11 +161,7 @@ std::optional<Crack> read_from_hole(const Table& table, const Context& context) 
   if (!raiser || !place || !length || !angle) return std::nullopt;
   const auto site = site_of(context, {std::nullopt, raiser});
   if (!site) return std::nullopt;
-  const auto mouth = mesh::mouth_on_raiser(site->plate, site->owner.index, *place);
-  if (!mouth)
-    complain_of_geometry(table, *find(table, "place"), "nothing of that edge lies in this direction",
-                         "give the edge angle of a place on it, as the results count it");
-  return straight(mouth, *angle, *length);
+  return straight(read_mouth(table, context, *site, *place), *angle, *length);
 }
 
 std::optional<Crack> read_inner(const Table& table, const Context& context) {

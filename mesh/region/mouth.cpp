@@ -71,23 +71,24 @@ std::optional<Mouth> mouth_on_edge(const Plate& plate, std::size_t edge, double 
   return found;
 }
 
-std::optional<Mouth> mouth_on_raiser(const Plate& plate, std::size_t raiser, double angle) {
+std::vector<Mouth> mouths_on_raiser(const Plate& plate, std::size_t raiser, double angle) {
   const Point centre = mesh::raiser(plate, raiser).centre;
   const Point direction(std::cos(angle), std::sin(angle));
-  std::optional<Mouth> best;
-  double least = std::numeric_limits<double>::infinity();
+  std::vector<Mouth> found;
   for (const Curve& curve : curves_of(plate, {Owner::Kind::raiser, raiser})) {
     const auto [low, high] = std::minmax(curve.begin, curve.end);
     const double slack = 1e-9 * (high - low);
-    for (const double t : crossings(curve, centre, direction)) {
-      if (t < low - slack || t > high + slack) continue;
-      const double distance = (curve.at(t) - centre).dot(direction);
-      if (distance <= 0.0 || distance >= least) continue;
-      least = distance;
-      best = mouth_at(curve, std::clamp(t, low, high));
-    }
+    for (const double t : crossings(curve, centre, direction))
+      if (t >= low - slack && t <= high + slack && (curve.at(t) - centre).dot(direction) > 0.0)
+        found.push_back(mouth_at(curve, std::clamp(t, low, high)));
   }
-  return best;
+  const auto way = [&](const Mouth& mouth) { return (mouth.at - centre).dot(direction); };
+  std::stable_sort(found.begin(), found.end(),
+                   [&](const Mouth& a, const Mouth& b) { return way(a) < way(b); });
+  // A joint of two curves is one place.
+  const auto same = [&](const Mouth& a, const Mouth& b) { return way(b) - way(a) <= 1e-6 * way(b); };
+  found.erase(std::unique(found.begin(), found.end(), same), found.end());
+  return found;
 }
 
 Mouth nearest_mouth(const Plate& plate, const Owner& owner, const Point& x) {

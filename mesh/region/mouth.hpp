@@ -17,10 +17,10 @@ struct Mouth {
 /// Nothing beyond the edge's ends.
 std::optional<Mouth> mouth_on_edge(const Plate& plate, std::size_t edge, double position);
 
-/// The place on the edge of a raiser that is seen from its centre at `angle` rad
-/// from +x, anticlockwise; the nearest one where there are several. Throws
-/// std::out_of_range when there is no such raiser.
-std::optional<Mouth> mouth_on_raiser(const Plate& plate, std::size_t raiser, double angle);
+/// The places on the edge of a raiser that lie in the direction `angle` from its
+/// centre, rad from +x, anticlockwise; the nearest first. Throws std::out_of_range
+/// when there is no such raiser.
+std::vector<Mouth> mouths_on_raiser(const Plate& plate, std::size_t raiser, double angle);
 
 /// The place on what belongs to one part of the plate that is nearest to a point.
 Mouth nearest_mouth(const Plate& plate, const Owner& owner, const Point& x);
