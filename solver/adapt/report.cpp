@@ -263,9 +263,16 @@ Solution report(const Problem& problem, const DegreeSequence& sequence,
   solution.openings = crack_openings(model, problem.plate, last);
   if (extent == Report::brief) return solution;
 
+  const bool is_alone = model.loads().size() == 1;
   for (std::size_t l = 0; l < model.loads().size(); ++l) {
     const UnitLoad& unit = model.loads()[l];
     if (unit.doubt) continue;
+    if (is_alone) {  // what all loads do it does
+      solution.units.push_back(solution.combined);
+      solution.units.back().name = unit.name;
+      solution.units.back().loads = unit.loads;
+      continue;
+    }
     std::vector<Load> own;
     for (const std::size_t i : unit.loads) own.push_back(problem.loads[i]);
     own = with_reactions(problem, std::move(own), reactions(problem, model, meshed, l + 1));
