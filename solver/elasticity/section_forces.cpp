@@ -42,15 +42,11 @@ mesh::Loop curves_of(const Plate& plate, const std::vector<Load>& loads) {
     if (load.kind == Load::Kind::pin) holes.push_back(load.hole);
   }
   mesh::Region region{{mesh::outline_of(plate).curves}};
-  if (!holes.empty()) {
-    Plate uncracked = plate;  // cracks change no resultant
-    uncracked.cracks.clear();
-    const mesh::Region whole = mesh::trace(uncracked);
-    std::sort(holes.begin(), holes.end());
-    holes.erase(std::unique(holes.begin(), holes.end()), holes.end());
-    for (const std::size_t hole : holes)
-      if (hole + 1 < whole.loops.size()) region.loops.push_back(whole.loops[hole + 1]);
-  }
+  std::sort(holes.begin(), holes.end());
+  holes.erase(std::unique(holes.begin(), holes.end()), holes.end());
+  for (const std::size_t hole : holes)
+    if (hole < plate.holes.size())
+      region.loops.push_back(mesh::trace(plate.holes[hole], {Owner::Kind::raiser, hole}));
   mesh::Loop all;
   for (const mesh::Loop& loop : mesh::broken(region, places).loops)
     all.insert(all.end(), loop.begin(), loop.end());
