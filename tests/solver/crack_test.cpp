@@ -105,6 +105,18 @@ TEST(Cracks, MirroredTipsHaveModeTwoOfTheOtherSign) {
   expect_consistent(solution, 1e-3);
 }
 
+// A crack along the tension: nothing opens it, K is zero and T the tension, and what
+// rounding leaves of them lies within the bounds.
+TEST(Cracks, AlongTheLoadHaveNoIntensityWithinTheBound) {
+  const Solution solution = solved(strip({chain({{-12, 0}, {12, 0}})}, {of(Load::Kind::tension, 100)}));
+  for (const TipFindings& tip : solution.combined.tips) {
+    EXPECT_LE(std::abs(tip.k_one.value), tip.k_one.bound);
+    EXPECT_LE(std::abs(tip.k_two.value), tip.k_two.bound);
+    EXPECT_LE(std::abs(tip.t_stress.value - 100), tip.t_stress.bound);
+    EXPECT_LT(tip.t_stress.bound, 1e-6);
+  }
+}
+
 TEST(Cracks, FacePressureIsRemoteTensionLessTheUniformStress) {
   // Superposition: exact in any plate for a crack across uniform tension.
   for (const bool at_edge : {false, true}) {

@@ -3,6 +3,7 @@
 #include <Eigen/Sparse>
 #include <Eigen/SparseCholesky>
 #include <algorithm>
+#include <cmath>
 #include <limits>
 #include <random>
 #include <stdexcept>
@@ -103,6 +104,26 @@ TEST(Factorisation, SolvesAsEigensSparseCholeskyDoes) {
         }
       EXPECT_LT(residual.norm() / loads.norm(), 1e-11);
     }
+}
+
+// Loads at a few unknowns, so that most of the elimination has nothing to do.
+TEST(Factorisation, HalfwayLoadsHaveTheWorkOfOneInTheDisplacementsOfAnother) {
+  const mesh::Mesh mesh = plate_mesh();
+  const EliminationTree tree(mesh);
+  const Discretisation space(mesh, 4);
+  const std::vector<bool> held = held_in(space, 20);
+  Room room;
+  const Factorisation factors(tree, space, held, element_of(mesh, space), room);
+  std::mt19937 random(7);
+  Eigen::MatrixXd loads = Eigen::MatrixXd::Zero(space.unknowns(), 3);
+  for (int column = 0; column < 3; ++column)
+    for (int k = 0; k < 5; ++k) loads(random() % held.size(), column) = std::sin(k + 2.0 * column);
+  for (std::size_t u = 0; u < held.size(); ++u)
+    if (held[u]) loads.row(static_cast<Eigen::Index>(u)).setZero();
+  const Eigen::MatrixXd half = factors.halfway(loads);
+  const Eigen::MatrixXd work = loads.transpose() * factors.solve(loads);
+  ASSERT_GT(work.norm(), 0.0);
+  EXPECT_LT((half.transpose() * half - work).norm(), 1e-12 * work.norm());
 }
 
 TEST(Factorisation, RefusesAMatrixThatIsNotPositive) {
