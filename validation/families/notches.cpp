@@ -98,17 +98,17 @@ Question deep_question(double q, bool is_bending) {
 }  // namespace
 
 Family deep_notches() {
-  Family f;
-  f.id = "notch-deep";
-  f.records = "A23";
-  f.title = "Infinitely deep hyperbolic notches on both sides, tension and bending";
-  f.abscissa = "a/rho: half the net width over the root radius";
-  f.ordinate = "Kt net, at the root: on P/(2 a t), on 6M/(t (2a)^2)";
-  f.reading =
-      "a bar cut out from between the notches, its outline inside the material and touching both roots, on "
-      "which the field's exact traction acts; largest edge stress over the nominal one";
-  f.deviation = "the source is exact: rounding and the bound only";
-  f.tolerance = 9e-7;  // as close as the highest degree comes
+  Family f{"notch-deep",
+           "A23",
+           "Infinitely deep hyperbolic notches on both sides, tension and bending",
+           "a/rho: half the net width over the root radius",
+           "Kt net, at the root: on P/(2 a t), on 6M/(t (2a)^2)",
+           "a bar cut out from between the notches, its outline inside the material and touching both roots, "
+           "on which the field's exact traction acts; largest edge stress over the nominal one",
+           "the source is exact: rounding and the bound only",
+           9e-7,  // as close as the highest degree comes
+           {},
+           {}};
   for (const bool is_bending : {false, true}) {
     const std::string series = is_bending ? "bending" : "tension";
     const auto source = is_bending ? Reference::neuber_deep_bending : Reference::neuber_deep_tension;
