@@ -25,6 +25,7 @@ HEAVY = {
     "CLI11": (re.compile(r"^CLI/"), 2),
     "JSON": (re.compile(r"^nlohmann/"), 2),
     "Cairo": (re.compile(r"^cairo"), 2),
+    "libpng": (re.compile(r"^png\.h"), 1),
 }
 
 
