@@ -6,7 +6,7 @@ set(tree ${scratch}/build)
 file(REMOVE_RECURSE ${prefix} ${tree})
 
 function(run)
-  execute_process(COMMAND ${ARGV} COMMAND_ECHO STDOUT COMMAND_ERROR_IS_FATAL ANY)
+  execute_process(COMMAND ${ARGV} WORKING_DIRECTORY ${scratch} COMMAND_ECHO STDOUT COMMAND_ERROR_IS_FATAL ANY)
 endfunction()
 
 run(${CMAKE_COMMAND} --install ${build} --prefix ${prefix})
