@@ -7,6 +7,7 @@
 
 #include "mesh/plate/plate.hpp"
 #include "mesh/plate/section.hpp"
+#include "solver/contact/contact_arc.hpp"
 #include "solver/corner/place_findings.hpp"
 #include "solver/crack/tip_scan.hpp"
 #include "solver/elasticity/hooke_law.hpp"
@@ -114,14 +115,9 @@ struct SupportReaction {
 
 /// Where a rigid pin touches its hole under all loads, and how hard.
 struct PinFindings {
-  std::size_t load = 0;     ///< index into Problem::loads
-  bool all_round = false;   ///< it touches everywhere
-  Estimate begin;           ///< rad, from +x: the arc of contact runs anticlockwise from here
-  Estimate end;             ///< rad
-  Estimate largest;         ///< MPa, the largest pressure
-  double largest_at = 0.0;  ///< rad
+  std::size_t load = 0;          ///< index into Problem::loads
+  std::vector<ContactArc> arcs;  ///< one, or several where a load that passes by draws the hole long
   double force_miss = 0.0;  ///< how far the pressure's resultant misses the pin's force, over that force
-  BearingPressure pressure;
 };
 
 /// One step of the sequence that the bounds stand on.

@@ -222,7 +222,7 @@ void add_arrows(std::vector<LoadArrow>& arrows, const mesh::Loop& loop, int want
 std::vector<solver::UnitLoad> acting(const Result& result) {
   solver::Problem problem = result.input.problem;
   for (const solver::PinFindings& pin : result.solution.pins)
-    problem.loads.at(pin.load).bearing = pin.pressure;
+    problem.loads.at(pin.load).bearing = solver::pressures(pin.arcs);
   return solver::unit_loads(problem.plate, problem.loads, problem.supports);
 }
 

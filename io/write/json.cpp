@@ -415,14 +415,18 @@ Json checks(const solver::PlateChecks& c) {
 
 Json pins(const Result& result) {
   Json list = Json::array();
-  for (const solver::PinFindings& pin : result.solution.pins)
+  for (const solver::PinFindings& pin : result.solution.pins) {
+    Json arcs = Json::array();
+    for (const solver::ContactArc& arc : pin.arcs)
+      arcs.push_back({{"all_round", arc.all_round},
+                      {"begin", quantity(arc.begin.scaled(degrees_per_radian), "deg")},
+                      {"end", quantity(arc.end.scaled(degrees_per_radian), "deg")},
+                      {"largest_pressure", quantity(arc.largest, "MPa")},
+                      {"at", quantity(arc.largest_at * degrees_per_radian, "deg")}});
     list.push_back({{"load", result.input.problem.loads.at(pin.load).name},
-                    {"all_round", pin.all_round},
-                    {"begin", quantity(pin.begin.scaled(degrees_per_radian), "deg")},
-                    {"end", quantity(pin.end.scaled(degrees_per_radian), "deg")},
-                    {"largest_pressure", quantity(pin.largest, "MPa")},
-                    {"at", quantity(pin.largest_at * degrees_per_radian, "deg")},
+                    {"arcs", std::move(arcs)},
                     {"force_miss", quantity(pin.force_miss, "1")}});
+  }
   return list;
 }
 

@@ -265,14 +265,18 @@ std::string holding_part(const Result& result) {
   std::string text;
   if (!result.solution.pins.empty()) text += "\nContact of pins\n";
   for (const solver::PinFindings& pin : result.solution.pins) {
-    const std::string where =
-        pin.all_round ? "touches all round"
-                      : fmt::format("touches from {} deg to {} deg", with_bound(pin.begin.scaled(1 / degree)),
-                                    with_bound(pin.end.scaled(1 / degree)));
-    text += wrapped(fmt::format("{}: {}; largest pressure {} MPa at {} deg; resultant within {} of the force",
-                                plain(problem.loads.at(pin.load).name), where, with_bound(pin.largest),
-                                brief(pin.largest_at / degree, 4), brief(std::max(pin.force_miss, 1e-15), 2)),
-                    "  ", 4);
+    std::string where;
+    for (const solver::ContactArc& arc : pin.arcs)
+      where += fmt::format(
+          "touches {}, largest pressure {} MPa at {} deg; ",
+          arc.all_round ? "all round"
+                        : fmt::format("from {} deg to {} deg", with_bound(arc.begin.scaled(1 / degree)),
+                                      with_bound(arc.end.scaled(1 / degree))),
+          with_bound(arc.largest), brief(arc.largest_at / degree, 4));
+    text +=
+        wrapped(fmt::format("{}: {}resultant within {} of the force", plain(problem.loads.at(pin.load).name),
+                            where, brief(std::max(pin.force_miss, 1e-15), 2)),
+                "  ", 4);
   }
   if (!result.solution.reactions.empty()) text += "\nReactions of supports\n";
   const double size = std::max(problem.plate.length, problem.plate.width);

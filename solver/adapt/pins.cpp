@@ -35,20 +35,23 @@ bool is_even(const Problem& problem, const UnitLoad& other, const std::vector<Pi
   });
 }
 
-/// How far the resultant of a pressure misses the pin's force, over its size or
-/// that of the pressure where there is none.
-double force_miss(const Pin& pin, const BearingPressure& pressure) {
+/// How far the resultant of the pressures misses the pin's force, over its size or
+/// that of the pressures where there is none.
+double force_miss(const Pin& pin, const std::vector<ContactArc>& arcs) {
   static const mesh::GaussRule rule = mesh::gauss_legendre(200);
-  const double half = 0.5 * (pressure.end - pressure.begin);
   Point sum = Point::Zero();
   double size = pin.force.norm();
-  for (std::size_t q = 0; q < rule.points.size(); ++q) {
-    // The substitution by a sine takes the root at the ends away.
-    const double phi = 0.5 * std::acos(-1.0) * rule.points[q];
-    const double angle = pressure.middle() + half * std::sin(phi);
-    const double length = pin.radius * half * std::cos(phi) * 0.5 * std::acos(-1.0) * rule.weights[q];
-    sum += length * pressure.at(angle) * Point(std::cos(angle), std::sin(angle));
-    if (pin.force.isZero(0.0)) size += length * std::abs(pressure.at(angle));
+  for (const ContactArc& arc : arcs) {
+    const BearingPressure& pressure = arc.pressure;
+    const double half = 0.5 * (pressure.end - pressure.begin);
+    for (std::size_t q = 0; q < rule.points.size(); ++q) {
+      // The substitution by a sine takes the root at the ends away.
+      const double phi = 0.5 * std::acos(-1.0) * rule.points[q];
+      const double angle = pressure.middle() + half * std::sin(phi);
+      const double length = pin.radius * half * std::cos(phi) * 0.5 * std::acos(-1.0) * rule.weights[q];
+      sum += length * pressure.at(angle) * Point(std::cos(angle), std::sin(angle));
+      if (pin.force.isZero(0.0)) size += length * std::abs(pressure.at(angle));
+    }
   }
   return (sum - pin.force).norm() / size;
 }
@@ -56,8 +59,7 @@ double force_miss(const Pin& pin, const BearingPressure& pressure) {
 /// What the pressure of the degree before was where it is now: of arcs, at the same
 /// share of the arc, carrying the same force. The ends move as well, but what that
 /// changes of the stress is only as much as the stress changes over the way.
-double before_at(const PinContact& contact, double angle) {
-  const BearingPressure &now = contact.pressure, &before = contact.before;
+double before_at(const BearingPressure& now, const BearingPressure& before, double angle) {
   using Form = BearingPressure::Form;
   if (now.form != Form::arc || before.form != Form::arc) return before.at(angle);
   const double way = unwound(angle, now.begin) - now.begin;
@@ -75,7 +77,12 @@ UnitLoad doubt_of(const std::vector<Pin>& pins, const std::vector<PinContact>& c
                    for (std::size_t p = 0; p < pins.size(); ++p) {
                      if (!(at == pins[p].owner)) continue;
                      const double angle = std::atan2(x.y() - pins[p].centre.y(), x.x() - pins[p].centre.x());
-                     return 2 * (contacts[p].pressure.at(angle) - before_at(contacts[p], angle)) * n;
+                     double sum = 0.0;
+                     for (std::size_t k = 0; k < contacts[p].arcs.size(); ++k) {
+                       const BearingPressure& now = contacts[p].arcs[k].pressure;
+                       sum += now.at(angle) - before_at(now, contacts[p].before[k], angle);
+                     }
+                     return 2 * sum * n;
                    }
                    return Point::Zero();
                  }};
@@ -117,10 +124,9 @@ PinsInContact with_contact(const Problem& problem, double tolerance) {
   if (!contact.found) result.reason = contact.reason;
   if (contact.pins.empty()) return result;
   for (std::size_t p = 0; p < pins.size(); ++p) {
-    const PinContact& found = contact.pins[p];
-    result.problem.loads[which[p]].bearing = found.pressure;
-    result.pins.push_back({which[p], found.all_round, found.begin, found.end, found.largest, found.largest_at,
-                           force_miss(pins[p], found.pressure), found.pressure});
+    const std::vector<ContactArc>& arcs = contact.pins[p].arcs;
+    result.problem.loads[which[p]].bearing = pressures(arcs);
+    result.pins.push_back({which[p], arcs, force_miss(pins[p], arcs)});
   }
   result.doubt = doubt_of(pins, contact.pins, which, mirrors);
   return result;

@@ -4,21 +4,16 @@
 #include <vector>
 
 #include "mesh/region/breaks.hpp"
+#include "solver/contact/contact_arc.hpp"
 #include "solver/contact/pin_system.hpp"
-#include "solver/elasticity/bearing.hpp"
-#include "solver/extract/estimate.hpp"
 
 namespace raiser::solver {
 
-/// The contact of one pin with its hole.
+/// The contact of one pin with its hole: on one arc, all round, or on several
+/// arcs, as where a load that passes the pin by draws the hole long.
 struct PinContact {
-  BearingPressure pressure;
-  BearingPressure before;  ///< of the degree before: the difference is what is not known of it
-  bool all_round = false;  ///< the pin touches everywhere, as with enough interference
-  Estimate begin;          ///< rad: the arc of contact, anticlockwise from `begin`
-  Estimate end;
-  Estimate largest;         ///< MPa, the largest pressure
-  double largest_at = 0.0;  ///< rad
+  std::vector<ContactArc> arcs;
+  std::vector<BearingPressure> before;  ///< by arc, of the degree before: the difference is what is not known
 };
 
 /// The contact of all pins, found together.

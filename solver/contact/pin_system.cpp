@@ -35,6 +35,10 @@ EdgeBasis hats(double begin, int places, bool mirrored) {
 
 double Pin::direction() const { return force.isZero(0.0) ? 0.0 : std::atan2(force.y(), force.x()); }
 
+double symmetry_axis(const Pin& pin, mesh::Mirrors mirrors) {
+  return mirrors.x && pin.force.isZero(0.0) ? turn / 4 : pin.direction();
+}
+
 double Pin::opening(double angle) const {
   if (gap <= 0) return gap;
   const double sine = gap * std::sin(angle - direction());
@@ -50,29 +54,30 @@ PinSystem::PinSystem(const Model& model, int degree, const std::vector<Pin>& pin
   own_displacement_ = compliance_.own().displacement;
 }
 
-PinSystem::Parts PinSystem::assemble(const std::vector<EdgeBasis>& bases) const {
+PinSystem::Parts PinSystem::assemble(const std::vector<Patch>& patches) const {
   const auto images = static_cast<double>(model_->images().size());
   const auto directions = static_cast<Eigen::Index>(components_.size());
   Parts parts;
   Eigen::Index count = 0;
-  for (const EdgeBasis& basis : bases) {
+  for (const Patch& patch : patches) {
     parts.first.push_back(count);
-    count += basis.count;
+    count += patch.basis.count;
   }
   parts.first.push_back(count);
   parts.loads.resize(own_displacement_.size(), count);
   parts.resultant = Eigen::MatrixXd::Zero(count, directions * static_cast<Eigen::Index>(pins_.size()));
   parts.size = Eigen::VectorXd::Zero(count);
-  for (std::size_t p = 0; p < pins_.size(); ++p) {
-    const Eigen::Index first = parts.first[p];
-    const auto points = edge_points(edges_[p], bases[p], degree_);
-    parts.loads.middleCols(first, bases[p].count) = compliance_.radial_loads(edges_[p], points);
+  for (std::size_t k = 0; k < patches.size(); ++k) {
+    const std::size_t p = patches[k].pin;
+    const Eigen::Index first = parts.first[k], own = patches[k].basis.count;
+    const auto points = edge_points(edges_[p], patches[k].basis, degree_);
+    parts.loads.middleCols(first, own) = compliance_.radial_loads(edges_[p], points);
     for (const EdgePoint& point : points) {
       const double e[] = {std::cos(point.angle), std::sin(point.angle)};
       for (Eigen::Index c = 0; c < directions; ++c)
-        parts.resultant.col(directions * static_cast<Eigen::Index>(p) + c).segment(first, bases[p].count) +=
+        parts.resultant.col(directions * static_cast<Eigen::Index>(p) + c).segment(first, own) +=
             images * e[components_[c]] * point.weight;
-      parts.size.segment(first, bases[p].count) += images * pins_[p].opening(point.angle) * point.weight;
+      parts.size.segment(first, own) += images * pins_[p].opening(point.angle) * point.weight;
     }
   }
   parts.compliance = images * compliance_.work(parts.loads);
@@ -108,14 +113,15 @@ Eigen::VectorXd PinSystem::solve(const Parts& parts, const std::vector<bool>& ac
   return result;
 }
 
-PinSystem::Answer PinSystem::solve(const std::vector<EdgeBasis>& bases) const {
-  const Parts parts = assemble(bases);
+PinSystem::Answer PinSystem::solve(const std::vector<Patch>& patches) const {
+  const Parts parts = assemble(patches);
   const Eigen::Index count = parts.first.back();
   const Eigen::VectorXd solved = solve(parts, std::vector<bool>(static_cast<std::size_t>(count), true));
   const auto directions = static_cast<Eigen::Index>(components_.size());
   Answer answer;
+  for (std::size_t k = 0; k < patches.size(); ++k)
+    answer.terms.emplace_back(solved.segment(parts.first[k], patches[k].basis.count));
   for (std::size_t p = 0; p < pins_.size(); ++p) {
-    answer.terms.emplace_back(solved.segment(parts.first[p], bases[p].count));
     Point way = Point::Zero();
     for (Eigen::Index c = 0; c < directions; ++c)
       way[components_[c]] = solved[count + directions * static_cast<Eigen::Index>(p) + c];
@@ -127,15 +133,16 @@ PinSystem::Answer PinSystem::solve(const std::vector<EdgeBasis>& bases) const {
 
 PinSystem::Start PinSystem::unilateral(int places) const {
   const bool mirrored = components_.size() < 2;
-  std::vector<EdgeBasis> bases;
-  for (const Pin& pin : pins_) bases.push_back(hats(pin.direction(), places, mirrored));
-  const Parts parts = assemble(bases);
+  std::vector<Patch> patches;
+  for (std::size_t q = 0; q < pins_.size(); ++q)
+    patches.push_back({q, hats(symmetry_axis(pins_[q], model_->mirrors()), places, mirrored)});
+  const Parts parts = assemble(patches);
   const auto count = static_cast<std::size_t>(parts.first.back());
   // From all round with interference, from the side that the force presses on
   // with clearance: the other way round every place would be let go at once.
   std::vector<bool> active(count, true);
   for (std::size_t q = 0; q < pins_.size(); ++q)
-    for (Eigen::Index k = 0; k < bases[q].count && pins_[q].gap > 0; ++k)
+    for (Eigen::Index k = 0; k < patches[q].basis.count && pins_[q].gap > 0; ++k)
       active[static_cast<std::size_t>(parts.first[q] + k)] =
           std::cos(turn * static_cast<double>(k) / places) > 0.7;
   Eigen::VectorXd solved;
@@ -165,7 +172,7 @@ PinSystem::Start PinSystem::unilateral(int places) const {
   for (std::size_t q = 0; q < pins_.size(); ++q) {
     std::vector<double> angles, pressure;
     for (int k = 0; k < places; ++k) {
-      angles.push_back(bases[q].pieces[k]);
+      angles.push_back(patches[q].basis.pieces[k]);
       const Eigen::Index index = parts.first[q] + (mirrored ? std::min(k, places - k) : k);
       pressure.push_back(std::max(0.0, solved[index]));
     }

@@ -22,6 +22,16 @@ struct Pin {
   double opening(double angle) const;
 };
 
+/// The line through the hole's centre that mirrors map to itself, by its angle
+/// (rad): the force lies on it. The force's direction without mirrors.
+double symmetry_axis(const Pin& pin, mesh::Mirrors mirrors);
+
+/// Functions that the pressure of one pin is made of; a pin may have several.
+struct Patch {
+  std::size_t pin = 0;
+  EdgeBasis basis;
+};
+
 /// What pressure on the pins' arcs closes the gap there and carries the forces,
 /// found by the principle of virtual work with the same functions:
 ///   u_r = d . e_r - opening on the arc,  integral of p e_r = force,
@@ -32,16 +42,16 @@ class PinSystem {
   PinSystem(const Model& model, int degree, const std::vector<Pin>& pins, Room& room);
 
   struct Answer {
-    std::vector<Eigen::VectorXd> terms;  ///< by pin: coefficients of its basis, MPa
+    std::vector<Eigen::VectorXd> terms;  ///< by patch: coefficients of its basis, MPa
     std::vector<Point> way;              ///< by pin: d, mm
     Eigen::VectorXd load;                ///< load vector of the pressures together
   };
-  Answer solve(const std::vector<EdgeBasis>& bases) const;
+  Answer solve(const std::vector<Patch>& patches) const;
 
   /// What a unilateral start needs: pressures at equidistant places, each
   /// spread linearly to the next, none of them negative and none in a gap.
   struct Start {
-    std::vector<std::vector<double>> angles;    ///< by pin, rising, from its direction
+    std::vector<std::vector<double>> angles;    ///< by pin, rising, from its symmetry axis
     std::vector<std::vector<double>> pressure;  ///< MPa, at least 0
     bool settled = false;                       ///< the choice of places came to an end
   };
@@ -57,7 +67,7 @@ class PinSystem {
     Eigen::MatrixXd loads;  ///< columns as the compliance's
     std::vector<Eigen::Index> first;
   };
-  Parts assemble(const std::vector<EdgeBasis>& bases) const;
+  Parts assemble(const std::vector<Patch>& patches) const;
   Eigen::VectorXd solve(const Parts& parts, const std::vector<bool>& active) const;
 
   const Model* model_;

@@ -52,7 +52,8 @@ struct Load {
   double direction = 0.0;  ///< kind pin: rad, of the force, from +x anticlockwise
   /// Kind pin: mm, diameter of the hole less that of the rigid pin; negative for interference.
   std::optional<double> clearance = std::nullopt;
-  std::optional<BearingPressure> bearing = std::nullopt;  ///< kind pin
+  /// Kind pin: what has been found of its pressure, by arc of contact.
+  std::vector<BearingPressure> bearing = {};
 };
 
 /// Whether the load must be balanced by others or held by supports.

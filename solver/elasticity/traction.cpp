@@ -75,17 +75,26 @@ Traction along_line(const Plate& plate, const Load& load) {
       };
 }
 
+/// What a pin presses with, by arc: a cosine as long as nothing was found.
+std::vector<BearingPressure> bearing(const Plate& plate, const Load& load) {
+  if (!load.bearing.empty()) return load.bearing;
+  const double radius = plate.holes[load.hole].length / 2;
+  return {cosine_pressure(load.force, load.direction, radius, plate.thickness)};
+}
+
 Traction of_pin(const Plate& plate, const Load& load) {
   if (load.hole >= plate.holes.size()) throw std::invalid_argument("a pin must name a hole of the plate");
   const mesh::Hole& hole = plate.holes[load.hole];
   if (hole.shape != mesh::HoleShape::circle) throw std::invalid_argument("a pin sits in a round hole");
-  const BearingPressure pressure =
-      load.bearing.value_or(cosine_pressure(load.force, load.direction, hole.length / 2, plate.thickness));
-  return [pressure, centre = hole.centre, edge = Owner{Owner::Kind::raiser, load.hole}](
-             const Owner& owner, const Point& x, const Point& n) -> Point {
-    if (!(owner == edge)) return Point::Zero();
-    return -pressure.at(std::atan2(x.y() - centre.y(), x.x() - centre.x())) * n;
-  };
+  return
+      [pressures = bearing(plate, load), centre = hole.centre, edge = Owner{Owner::Kind::raiser, load.hole}](
+          const Owner& owner, const Point& x, const Point& n) -> Point {
+        if (!(owner == edge)) return Point::Zero();
+        const double angle = std::atan2(x.y() - centre.y(), x.x() - centre.x());
+        double sum = 0.0;
+        for (const BearingPressure& pressure : pressures) sum += pressure.at(angle);
+        return -sum * n;
+      };
 }
 
 Traction on_edge(const Plate& plate, const Load& load) {
@@ -122,10 +131,12 @@ std::vector<mesh::Break> breaks(const Owner& hole, const Point& centre, double r
 std::vector<mesh::Break> breaks(const Plate& plate, const Load& load) {
   if (load.kind == Load::Kind::pin) {
     const mesh::Hole& hole = plate.holes.at(load.hole);
-    const double radius = hole.length / 2;
-    return breaks(
-        {Owner::Kind::raiser, load.hole}, hole.centre, radius,
-        load.bearing.value_or(cosine_pressure(load.force, load.direction, radius, plate.thickness)));
+    std::vector<mesh::Break> result;
+    for (const BearingPressure& pressure : bearing(plate, load))
+      for (const mesh::Break& at :
+           breaks({Owner::Kind::raiser, load.hole}, hole.centre, hole.length / 2, pressure))
+        result.push_back(at);
+    return result;
   }
   const auto line = load.kind == Load::Kind::edge ? straight_edge(plate, load.edge) : std::nullopt;
   if (!line) return {};

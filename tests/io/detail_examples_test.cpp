@@ -19,12 +19,12 @@ TEST(DetailExamples, LugWithAPinInContact) {
   EXPECT_NEAR(std::abs(eye.largest.angle), 78.475 * degree, 0.05 * degree);
   EXPECT_NEAR(eye.net.nominal, 20000 / (24.0 * 8), 1e-4);
   ASSERT_EQ(lug.solution.pins.size(), 1U);
-  const solver::PinFindings& pin = lug.solution.pins[0];
+  const solver::ContactArc& pin = lug.solution.pins[0].arcs.at(0);
   test::expect_within(pin.largest, 231.82240, "largest pressure");
   test::expect_within(pin.begin, 5.4173200, "beginning of the arc");
   test::expect_within(pin.end, 7.1490506, "end of the arc");
   EXPECT_NEAR(pin.largest_at, 2 * std::numbers::pi, 1e-6);
-  EXPECT_LT(pin.force_miss, 1e-10);
+  EXPECT_LT(lug.solution.pins[0].force_miss, 1e-10);
   EXPECT_NEAR(lug.solution.reactions.at(0).reaction.force.x(), -20000, 0.01);
   EXPECT_NEAR(lug.solution.reactions.at(0).reaction.force.y(), 0, 0.01);
 }

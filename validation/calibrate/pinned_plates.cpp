@@ -58,14 +58,17 @@ void hold_pins(const Problem& problem, const Solution& solution, const Solution&
                          const solver::Estimate& known_value) {
       Trial trial = trial_at(problem.plate, problem.loads[found.load].hole, what);
       trial.load = kind_of(problem);
-      trial.scale = exact.largest.value;
+      trial.scale = exact.arcs.front().largest.value;
       hold(trial, value, known(known_value));
       plate.trials.push_back(std::move(trial));
     };
-    put(Trial::What::contact_pressure, found.largest, exact.largest);
-    if (found.all_round || exact.all_round) continue;
-    put(Trial::What::contact_end, found.begin, exact.begin);
-    put(Trial::What::contact_end, found.end, exact.end);
+    for (std::size_t k = 0; k < found.arcs.size(); ++k) {
+      const solver::ContactArc &arc = found.arcs[k], &known_arc = exact.arcs.at(k);
+      put(Trial::What::contact_pressure, arc.largest, known_arc.largest);
+      if (arc.all_round || known_arc.all_round) continue;
+      put(Trial::What::contact_end, arc.begin, known_arc.begin);
+      put(Trial::What::contact_end, arc.end, known_arc.end);
+    }
   }
 }
 
