@@ -44,7 +44,7 @@ Verdict verdict(const Trial& trial);
 
 /// What came of one plate.
 struct PlateTrial {
-  enum class Truth { finer_solution, closed_form, finer_cracked, finer_outlined, finer_pinned };
+  enum class Truth { finer_solution, closed_form, finer_cracked, finer_outlined, finer_pinned, finer_drawn };
   std::uint64_t seed = 0;
   Truth truth = Truth::finer_solution;
   bool is_settled = false;
@@ -81,6 +81,9 @@ PlateTrial try_closed_form(std::uint64_t seed);
 /// The same of random_outlined_plate(seed), at every hole, notch and fillet.
 PlateTrial try_outlined_plate(std::uint64_t seed);
 
+/// The same of random_drawn_plate(seed).
+PlateTrial try_drawn_plate(std::uint64_t seed);
+
 /// Solves random_cracked_plate(seed), asking K and T at every tip, and holds them,
 /// those of each unit load too, against a solution of degree 10 of the whole plate
 /// on a finer mesh with finer fans about the tips, as try_random_plate does. A
@@ -89,8 +92,8 @@ PlateTrial try_cracked_plate(std::uint64_t seed);
 
 /// Solves random_pinned_plate(seed), asking all three quantities at every hole, and
 /// holds them, the largest pressures and the ends of the arcs of contact against the
-/// same asked 50 times as finely (200 times without contact), contact, mesh and
-/// degree included; the bounds of that are its doubt.
+/// same asked 250 times as finely, contact, mesh and degree included; its difference
+/// from the same asked 50 times as finely is its doubt.
 PlateTrial try_pinned_plate(std::uint64_t seed);
 
 /// The first `count` seeds whose random plate has at most `most_holes` holes.

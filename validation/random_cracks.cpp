@@ -26,7 +26,7 @@ Point turned(const Point& p, double angle) {
 }
 
 /// A chain of the given length: straight, or with one or two kinks.
-std::vector<Point> chain(Dice& dice, Point from, Point direction, double length) {
+std::vector<Point> chain(Dice& dice, const Point& from, Point direction, double length) {
   std::vector<Point> points = {from};
   const std::size_t segments = dice.chance(0.3) ? 2 + dice.below(2) : 1;
   for (std::size_t i = 0; i < segments; ++i) {

@@ -234,6 +234,19 @@ bool hold_and_pull(Dice& dice, solver::Problem& problem) {
   return true;
 }
 
+Plate random_shape(Dice& dice) {
+  switch (dice.below(3)) {
+    case 0:
+      return notched_plate(dice);
+    case 1:
+      return stepped_plate(dice);
+    default:
+      return free_plate(dice);
+  }
+}
+
+}  // namespace
+
 solver::HookeLaw random_material(Dice& dice) {
   solver::HookeLaw law{dice.log_uniform(3e3, 4e5), dice.uniform(0.0, 0.45),
                        dice.chance(0.8) ? solver::PlaneState::stress : solver::PlaneState::strain};
@@ -247,19 +260,6 @@ solver::HookeLaw random_material(Dice& dice) {
   law.orthotropy = orthotropy;
   return law;
 }
-
-Plate random_shape(Dice& dice) {
-  switch (dice.below(3)) {
-    case 0:
-      return notched_plate(dice);
-    case 1:
-      return stepped_plate(dice);
-    default:
-      return free_plate(dice);
-  }
-}
-
-}  // namespace
 
 solver::Problem random_outlined_plate(std::uint64_t seed) {
   Dice dice(seed ^ 0x6f75746c696e65u);  // other numbers than random_plate's

@@ -22,7 +22,8 @@ using solver::Load;
 
 constexpr double least_ligament = 0.02, largest_ligament = 10.0;  // diameters
 
-/// A hole of the given mean diameter at the origin.
+}  // namespace
+
 Hole random_hole(Dice& dice, double diameter, std::string name) {
   Hole hole;
   hole.name = std::move(name);
@@ -39,6 +40,8 @@ Hole random_hole(Dice& dice, double diameter, std::string name) {
     hole.angle = dice.uniform(-std::numbers::pi / 2, std::numbers::pi / 2);
   return hole;
 }
+
+namespace {
 
 Point anywhere(Dice& dice, const Plate& plate, const Hole& hole) {
   const double room_x = plate.length / 2 - mesh::half_extent(hole, Point::UnitX());
@@ -82,9 +85,10 @@ bool fits(const Plate& plate, const Hole& hole) {
 
 }  // namespace
 
-std::optional<Hole> random_hole_in(Dice& dice, const Plate& plate, double diameter, const std::string& name) {
+std::optional<Hole> random_hole_in(Dice& dice, const Plate& plate, double diameter, const std::string& name,
+                                   HoleMaker make) {
   for (int attempt = 0; attempt < 60; ++attempt) {
-    Hole hole = random_hole(dice, diameter, name);
+    Hole hole = make(dice, diameter, name);
     const double ligament = dice.log_uniform(least_ligament, largest_ligament);
     const bool beside = !plate.holes.empty() && dice.chance(0.6);
     if (beside) {

@@ -11,7 +11,6 @@ namespace raiser::io {
 namespace {
 
 using Keys = std::span<const std::string_view>;
-using solver::ElasticConstant;
 
 constexpr std::array<std::string_view, 10> all_keys{
     "youngs_modulus", "poissons_ratio", "E1",   "E2", "G12", "nu12", "angle",

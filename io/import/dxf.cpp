@@ -181,7 +181,7 @@ class DxfReader {
              "explode it in the drawing, or put it on a layer that is not imported");
   }
 
-  void take(const Record& entity, EntityCurves read) {
+  void take(const Record& entity, const EntityCurves& read) {
     if (!read.what.empty()) return complain(entity.line, entity.kind, read.what, read.cure);
     constexpr double largest = 1e9;
     for (const mesh::Curve& curve : read.curves) {

@@ -58,21 +58,21 @@ void DegreeSequence::solve(int degree) {
   for (std::size_t r = 0; r < centres_.size(); ++r) largest_peak_ = std::max(largest_peak_, peak(r));
 }
 
-Convergence DegreeSequence::convergence() const {
+bool DegreeSequence::has_tail() const {
   const bool is_drawn = std::any_of(plate_->holes.begin(), plate_->holes.end(), [](const mesh::Hole& hole) {
     return hole.shape == mesh::HoleShape::drawn;
   });
-  const bool is_smooth =
-      !plate_->outline && !is_drawn && !model_->material().orthotropy && model_->held().empty();
-  return {displacements_.back().degree, !is_smooth};
+  return plate_->outline || is_drawn || model_->material().orthotropy || !model_->held().empty();
 }
+
+Convergence DegreeSequence::convergence() const { return {displacements_.back().degree, has_tail()}; }
 
 double DegreeSequence::own_bound(std::size_t load_case, std::size_t raiser, std::size_t quantity) const {
   std::vector<double> values;
   for (const EdgeScan& scan : scans_) values.push_back(scan.extremes[load_case][raiser][quantity].value);
   const RaiserExtremes& last = scans_.back().extremes[load_case][raiser];
   const double size = std::max(std::abs(last[0].value), std::abs(last[1].value));
-  return convergence().bound(values, size);
+  return convergence().bound(values, size) + last[quantity].rounding;
 }
 
 double DegreeSequence::left_out_at_joint(std::size_t load_case, std::size_t raiser,

@@ -25,6 +25,9 @@ class DegreeSequence {
   const Model& model() const { return *model_; }
   const EdgeScanner& scanner() const { return scanner_; }
   const std::vector<Displacements>& displacements() const { return displacements_; }
+  /// Whether corners, held edges, jumps of curvature or of stiffness leave a slow tail in
+  /// the values.
+  bool has_tail() const;
   Convergence convergence() const;
   const std::vector<EdgeScan>& scans() const { return scans_; }
   const TipScanner& tip_scanner() const { return tip_scanner_; }

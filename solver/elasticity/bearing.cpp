@@ -20,7 +20,8 @@ double on_arc(const std::vector<double>& terms, double s) {
 double all_round(const std::vector<double>& terms, double t) {
   double sum = terms.empty() ? 0.0 : terms[0];
   for (std::size_t i = 1; i < terms.size(); ++i) {
-    const double k = static_cast<double>((i + 1) / 2);
+    const std::size_t wave = (i + 1) / 2;
+    const auto k = static_cast<double>(wave);
     sum += terms[i] * (i % 2 == 1 ? std::cos(k * t) : std::sin(k * t));
   }
   return sum;

@@ -227,6 +227,10 @@ struct EdgeScanner::Search {
     result.point = scanner.model_->images()[best.image].apply(side.curve.at(side.parameter(best.s)));
     result.traction_miss = std::hypot(((stress.raw_normal - stress.normal) * weight)[0],
                                       ((stress.raw_shear - stress.shear) * weight)[0]);
+    const double length = (side.curve.finish() - side.curve.start()).norm();
+    result.rounding = std::numeric_limits<double>::epsilon() * displacements.degree * displacements.degree *
+                      scanner.model_->material().youngs_modulus * scan.displacement.dot(weight.cwiseAbs()) /
+                      length;
     return result;
   }
 };
@@ -247,6 +251,8 @@ EdgeScan EdgeScanner::scan(const Displacements& displacements) const {
   const EdgeProbe probe(*model_, displacements.degree, search_points(),
                         sides_at_search_points(displacements.degree));
   for (const mesh::BoundarySide& side : sides_) result.sides.push_back(probe.at(side, displacements));
+  const auto corners = static_cast<Eigen::Index>(model_->mesh().points().size());
+  result.displacement = displacements.values.topRows(2 * corners).cwiseAbs().colwise().maxCoeff();
   // With one load, the load alone is all loads together.
   const auto doubt = doubt_in(*model_);
   const bool is_alone = model_->loads().size() == (doubt ? 2 : 1);

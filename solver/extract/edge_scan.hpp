@@ -18,6 +18,10 @@ struct Extreme {
   double value = 0.0;           ///< MPa
   Point point = Point::Zero();  ///< mm
   double traction_miss = 0.0;   ///< MPa: how far the raw stress misses the known traction there
+  /// MPa: what the rounding of displacements comes to in stress there. A side of length h
+  /// turns a rounding of the largest displacement u into E u p^2 / h, p the degree
+  /// (Markov's inequality, for the derivative of a polynomial).
+  double rounding = 0.0;
 };
 using RaiserExtremes = std::array<Extreme, quantity_count>;
 
@@ -29,6 +33,7 @@ struct EdgeScan {
   /// The same with the model's doubt added, for cases that it belongs to; empty for others.
   std::vector<std::vector<RaiserExtremes>> doubted;
   std::vector<SideStress> sides;  ///< by EdgeScanner::sides(), at search_points(), per load
+  Eigen::VectorXd displacement;   ///< mm, the largest component at a corner of the mesh, per load
 };
 
 /// Searches the edges of all raisers between the nodes: every side is sampled at

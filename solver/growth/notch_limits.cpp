@@ -21,7 +21,7 @@ struct Place {
 };
 
 Place place_of(const mesh::Region& bare, const Point& x) {
-  Place best{nullptr, {0.0, std::numeric_limits<double>::infinity()}};
+  Place best{&bare.loops.front().front(), {0.0, std::numeric_limits<double>::infinity()}};
   for (const mesh::Loop& loop : bare.loops)
     for (const mesh::Curve& curve : loop)
       if (const mesh::Nearest found = mesh::nearest(curve, x); found.distance < best.at.distance)

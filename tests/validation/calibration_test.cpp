@@ -1,5 +1,7 @@
 #include <gtest/gtest.h>
 
+#include <algorithm>
+
 #include "mesh/triangulate/triangulate.hpp"
 #include "validation/calibrate.hpp"
 #include "validation/calibrate/truth.hpp"
@@ -115,6 +117,23 @@ TEST(Calibration, BoundsHoldOnNotchesAndFillets) {
   }
   const Tally t = tally(peaks(plates));
   EXPECT_GE(t.coverage(), 0.98) << calibration_report(plates);
+  EXPECT_GT(t.numbers, 30u);
+  EXPECT_LT(t.median_ratio, 60.0);
+  EXPECT_GT(t.median_ratio, 2.0) << "bounds so close to the error are luck";
+}
+
+/// The short run on holes of drawn shapes; the full one is there, too.
+TEST(Calibration, BoundsHoldOnDrawnHoles) {
+  std::vector<PlateTrial> plates;
+  for (std::uint64_t seed = 0; seed < 4; ++seed) plates.push_back(try_drawn_plate(seed));
+  for (const PlateTrial& plate : plates) {
+    EXPECT_TRUE(plate.is_settled) << "seed " << plate.seed << ": " << plate.reason;
+    EXPECT_FALSE(plate.trials.empty()) << "seed " << plate.seed << ": " << plate.reason;
+  }
+  const std::vector<const Trial*> trials = peaks(plates);
+  EXPECT_TRUE(std::any_of(trials.begin(), trials.end(), [](const Trial* t) { return t->shape == "drawn"; }));
+  const Tally t = tally(trials);
+  EXPECT_EQ(t.within, t.numbers) << calibration_report(plates);
   EXPECT_GT(t.numbers, 30u);
   EXPECT_LT(t.median_ratio, 60.0);
   EXPECT_GT(t.median_ratio, 2.0) << "bounds so close to the error are luck";

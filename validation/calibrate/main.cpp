@@ -23,7 +23,8 @@ using raiser::validation::PlateTrial;
 
 constexpr const char* usage =
     "usage: raiser_calibrate [--holes A..B] [--closed A..B] [--cracked A..B] [--outlined A..B]\n"
-    "                        [--pinned A..B] [--short] [--jobs N] [--records FILE] [--from FILE]\n"
+    "                        [--drawn A..B] [--pinned A..B] [--short] [--jobs N] [--records FILE] [--from "
+    "FILE]\n"
     "\n"
     "Solves seeded random plates and prints, as Markdown, how often the true error\n"
     "lies within the bound. A..B are the seeds A to B - 1; kinds that are not named\n"
@@ -33,6 +34,7 @@ constexpr const char* usage =
     "  --closed A..B    plates with a closed form\n"
     "  --cracked A..B   plates with cracks\n"
     "  --outlined A..B  notches, shoulders and free outlines, some orthotropic or clamped\n"
+    "  --drawn A..B     holes of drawn shapes\n"
     "  --pinned A..B    pins that press on holes, by cosine and in contact\n"
     "  --short          a few plates of each kind\n"
     "  --jobs N         worker processes (default 1)\n"
@@ -51,6 +53,7 @@ constexpr std::array kinds{
     Kind{"--closed", PlateTrial::Truth::closed_form, raiser::validation::try_closed_form, 8},
     Kind{"--cracked", PlateTrial::Truth::finer_cracked, raiser::validation::try_cracked_plate, 12},
     Kind{"--outlined", PlateTrial::Truth::finer_outlined, raiser::validation::try_outlined_plate, 12},
+    Kind{"--drawn", PlateTrial::Truth::finer_drawn, raiser::validation::try_drawn_plate, 8},
     Kind{"--pinned", PlateTrial::Truth::finer_pinned, raiser::validation::try_pinned_plate, 8},
 };
 

@@ -6,6 +6,7 @@
 
 #include "mesh/triangulate/triangulate.hpp"
 #include "validation/calibrate/trial.hpp"
+#include "validation/random_drawn.hpp"
 #include "validation/random_outline.hpp"
 #include "validation/random_plate.hpp"
 
@@ -168,6 +169,10 @@ PlateTrial try_random_plate(std::uint64_t seed) {
 
 PlateTrial try_outlined_plate(std::uint64_t seed) {
   return try_plate(PlateTrial::Truth::finer_outlined, seed, random_outlined_plate);
+}
+
+PlateTrial try_drawn_plate(std::uint64_t seed) {
+  return try_plate(PlateTrial::Truth::finer_drawn, seed, random_drawn_plate);
 }
 
 std::vector<std::uint64_t> seeds_with_few_holes(std::size_t count, std::size_t most_holes) {

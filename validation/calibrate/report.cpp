@@ -171,6 +171,7 @@ constexpr std::array namings{
     Naming{PlateTrial::Truth::closed_form, "closed form", "plates with a closed form"},
     Naming{PlateTrial::Truth::finer_cracked, "cracked seed", "random plates with cracks"},
     Naming{PlateTrial::Truth::finer_outlined, "outlined seed", "random plates with notches and fillets"},
+    Naming{PlateTrial::Truth::finer_drawn, "drawn seed", "random plates with drawn holes"},
     Naming{PlateTrial::Truth::finer_pinned, "pinned seed", "random plates with pins"},
 };
 

@@ -11,7 +11,6 @@ namespace raiser::validation {
 
 namespace {
 
-using mesh::Crack;
 using solver::Load;
 
 constexpr double W = 100.0;   // mm, the specimens' width
