@@ -1,8 +1,10 @@
+#include <algorithm>
 #include <array>
 #include <cmath>
 #include <exception>
 #include <stdexcept>
 #include <string>
+#include <utility>
 
 #include "validation/calibrate/trial.hpp"
 #include "validation/random_pins.hpp"
@@ -96,10 +98,17 @@ PlateTrial try_pinned_plate(std::uint64_t seed) {
     const auto finer = [&](double share) {
       return solver::settle(problem, ask_holes(problem.plate, share * calibration_tolerance));
     };
-    const Truth truth{finer(0.02), finer(0.004)};
-    plate.truth_unknowns = truth.finest.unknowns;
-    hold_holes(problem, solution, truth, plate);
-    hold_arcs(problem, solution, truth, plate);
+    Truth truth{{}, finer(0.02)};
+    for (const double share : {0.004, 0.0008}) {
+      truth = {std::move(truth.finest), finer(share)};
+      plate.truth_unknowns = truth.finest.unknowns;
+      plate.trials.clear();
+      hold_holes(problem, solution, truth, plate);
+      hold_arcs(problem, solution, truth, plate);
+      if (std::none_of(plate.trials.begin(), plate.trials.end(),
+                       [](const Trial& t) { return verdict(t) == Verdict::undecided; }))
+        break;
+    }
   } catch (const std::exception& e) {
     plate.is_settled = false;
     plate.reason = std::string("failed: ") + e.what();
