@@ -5,6 +5,7 @@
 #include <limits>
 #include <string>
 
+#include "io/write/json.hpp"
 #include "io/write/layout.hpp"
 #include "io/write/summary.hpp"
 #include "tests/io/solved.hpp"
@@ -102,6 +103,24 @@ TEST(Table, ShowsTheWorstOfManyHolesAndCountsTheRest) {
   EXPECT_FALSE(holds(text, "bore 27 "));
   EXPECT_LT(text.find("bore 38 "), text.find("bore 37 "));
   EXPECT_TRUE(holds(text, "and 28 more holes, none of them worse: see plate.json")) << text;
+}
+
+TEST(Table, ShowsEveryArcThatAPinTouches) {
+  const Result result = test::solved(R"(
+raiser = 1
+plate = { length = "240 mm", width = "60 mm", thickness = "6 mm" }
+material = { youngs_modulus = "210 GPa", poissons_ratio = 0.3 }
+hole = [{ name = "eye", shape = "circle", diameter = "20 mm" }]
+support = [{ edge = "left", kind = "clamped" }]
+pin = [{ hole = "eye", force = "6 kN", direction = "0 deg", model = "contact" }]
+load = [{ kind = "edge", edge = "right", normal = "150 MPa" }]
+)");
+  ASSERT_EQ(result.solution.pins.size(), 1U);
+  EXPECT_EQ(result.solution.pins[0].arcs.size(), 2U);
+  const std::string text = table(result, {false, "plate.json"});
+  EXPECT_EQ(occurrences(text, "touches from"), 2U) << text;
+  EXPECT_LE(test::widest(text), 80U);
+  EXPECT_EQ(occurrences(json(result), "\"largest_pressure\""), 2U);
 }
 
 TEST(Table, ShowsAFewHolesInFullWorstFirst) {

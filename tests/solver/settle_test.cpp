@@ -6,6 +6,7 @@
 #include <limits>
 #include <string>
 
+#include "mesh/plate/shoulder.hpp"
 #include "solver/solution.hpp"
 
 namespace raiser::solver {
@@ -226,6 +227,37 @@ TEST(Settle, SaysWhatTheOuterEdgeCarriesBesideAHoleNearAnEnd) {
   const Solution middle = settle(problem, all_at(1e-3, 1));
   EXPECT_LT(middle.checks.outer_von_mises, middle.combined.raisers[0].von_mises.stress.value);
   EXPECT_GT(middle.checks.outer_von_mises, 100.0);
+}
+
+// A pressurised hole, and far from it a slender fillet that carries 1e-9 of its
+// peak: 1e-7 of that is below what double precision can tell on sides that short.
+// No finer mesh can be made in the end, and what is found by then is rounding, with
+// a bound that says so.
+TEST(Settle, KeepsWhatWasFoundWhereNoFinerMeshCanBeMade) {
+  const auto settled = [](double tolerance) {
+    mesh::Shoulder shoulder;
+    shoulder.name = "step";
+    shoulder.at = 91;
+    shoulder.width = 15.3;
+    shoulder.fillet.shape = mesh::FilletShape::ellipse;
+    shoulder.fillet.along = 27.7;
+    shoulder.fillet.across = 1.1;
+    mesh::Plate plate{300, 49, 1, {{"bore", HoleShape::circle, 11.5, 11.5, 0, Point(-144, 0), 0}}};
+    plate.outline = mesh::stepped_bar(plate.length, plate.width, {shoulder}).outline;
+    std::vector<Ask> asks;
+    for (const std::size_t fillet : {1, 2})
+      asks.push_back({Quantity::smallest_edge_stress, fillet, tolerance, ""});
+    return settle({plate, {200000, 0.3, PlaneState::stress}, {of(Kind::pressure, 30)}}, asks);
+  };
+  const Solution coarse = settled(1e-3), fine = settled(1e-7);
+  EXPECT_EQ(coarse.status, Solution::Status::settled) << coarse.reason;
+  EXPECT_EQ(fine.status, Solution::Status::not_met);
+  EXPECT_NE(fine.reason.find("no finer mesh could be made"), std::string::npos) << fine.reason;
+  for (std::size_t r = 0; r < 3; ++r) {
+    const Estimate a = coarse.combined.raisers.at(r).smallest.stress;
+    const Estimate b = fine.combined.raisers.at(r).smallest.stress;
+    EXPECT_NEAR(a.value, b.value, a.bound + b.bound) << r;
+  }
 }
 
 }  // namespace
