@@ -117,7 +117,7 @@ struct SupportReaction {
 struct PinFindings {
   std::size_t load = 0;          ///< index into Problem::loads
   std::vector<ContactArc> arcs;  ///< one, or several where a load that passes by draws the hole long
-  double force_miss = 0.0;  ///< how far the pressure's resultant misses the pin's force, over that force
+  double force_miss = 0.0;       ///< how far the pressure's resultant misses the pin's force, over that force
 };
 
 /// One step of the sequence that the bounds stand on.
