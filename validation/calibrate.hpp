@@ -94,7 +94,7 @@ PlateTrial try_cracked_plate(std::uint64_t seed);
 /// holds them, the largest pressures and the ends of the arcs of contact against the
 /// same asked 250 times as finely, contact, mesh and degree included; its difference
 /// from the same asked 50 times as finely is its doubt. Where that leaves a number
-/// undecided, 1250 and 250 times.
+/// undecided, 500 and 250 times.
 PlateTrial try_pinned_plate(std::uint64_t seed);
 
 /// The first `count` seeds whose random plate has at most `most_holes` holes.

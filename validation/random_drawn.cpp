@@ -57,10 +57,7 @@ Hole random_drawn_hole(Dice& dice, double diameter, std::string name) {
 }
 
 Plate random_holes(Dice& dice) {
-  Plate plate;
-  plate.width = dice.log_uniform(20.0, 500.0);
-  plate.length = plate.width * dice.log_uniform(0.7, 5.0);
-  plate.thickness = dice.log_uniform(0.5, 20.0);
+  Plate plate = random_bare_plate(dice, 0.7);
   const std::size_t count = 1 + dice.below(4);
   const double smaller = std::min(plate.length, plate.width);
   while (plate.holes.size() < count) {

@@ -29,14 +29,6 @@ using solver::Load;
 
 constexpr double pi = std::numbers::pi;
 
-Plate bare_plate(Dice& dice) {
-  Plate plate;
-  plate.width = dice.log_uniform(20.0, 500.0);
-  plate.length = plate.width * dice.log_uniform(1.0, 5.0);
-  plate.thickness = dice.log_uniform(0.5, 20.0);
-  return plate;
-}
-
 /// A notch in the upper or lower edge, or now and then in an end.
 Notch random_notch(Dice& dice, const Plate& plate) {
   const std::size_t edge = dice.chance(0.1)   ? mesh::rectangle::right
@@ -61,7 +53,7 @@ Notch random_notch(Dice& dice, const Plate& plate) {
 }
 
 Plate notched_plate(Dice& dice) {
-  Plate plate = bare_plate(dice);
+  Plate plate = random_bare_plate(dice, 1.0);
   const mesh::Outline body = mesh::rectangular(plate.length, plate.width);
   const std::size_t count = 1 + dice.below(4);
   std::vector<Notch> notches;
@@ -102,7 +94,7 @@ Fillet random_fillet(Dice& dice, double step) {
 }
 
 Plate stepped_plate(Dice& dice) {
-  Plate plate = bare_plate(dice);
+  Plate plate = random_bare_plate(dice, 1.0);
   const std::size_t count = 1 + dice.below(3);
   std::vector<Shoulder> shoulders;
   for (int attempt = 0; attempt < 300 && (shoulders.empty() || shoulders.size() < count); ++attempt) {
@@ -154,7 +146,7 @@ std::vector<OutlinePoint> side(Dice& dice, double length, double width, double l
 
 Plate free_plate(Dice& dice) {
   for (int attempt = 0; attempt < 1000; ++attempt) {
-    Plate plate = bare_plate(dice);
+    Plate plate = random_bare_plate(dice, 1.0);
     const double left = dice.uniform(0.15, 0.5) * plate.width, right = dice.uniform(0.15, 0.5) * plate.width;
     std::vector<OutlinePoint> points = side(dice, plate.length, plate.width, left, right);
     std::reverse(points.begin(), points.end());

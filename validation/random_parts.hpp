@@ -9,6 +9,9 @@
 
 namespace raiser::validation {
 
+/// A rectangle without holes: 20 to 500 mm wide, `least_ratio` to 5 times as long, 0.5 to 20 mm thick.
+mesh::Plate random_bare_plate(Dice& dice, double least_ratio);
+
 /// A circle, ellipse, slot or rounded rectangle of about the given mean diameter at the origin.
 mesh::Hole random_hole(Dice& dice, double diameter, std::string name);
 

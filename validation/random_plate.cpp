@@ -24,6 +24,14 @@ constexpr double least_ligament = 0.02, largest_ligament = 10.0;  // diameters
 
 }  // namespace
 
+Plate random_bare_plate(Dice& dice, double least_ratio) {
+  Plate plate;
+  plate.width = dice.log_uniform(20.0, 500.0);
+  plate.length = plate.width * dice.log_uniform(least_ratio, 5.0);
+  plate.thickness = dice.log_uniform(0.5, 20.0);
+  return plate;
+}
+
 Hole random_hole(Dice& dice, double diameter, std::string name) {
   Hole hole;
   hole.name = std::move(name);
@@ -109,10 +117,7 @@ std::optional<Hole> random_hole_in(Dice& dice, const Plate& plate, double diamet
 namespace {
 
 Plate random_outline_and_holes(Dice& dice) {
-  Plate plate;
-  plate.width = dice.log_uniform(20.0, 500.0);
-  plate.length = plate.width * dice.log_uniform(0.7, 5.0);
-  plate.thickness = dice.log_uniform(0.5, 20.0);
+  Plate plate = random_bare_plate(dice, 0.7);
   const std::size_t count = 1 + dice.below(12);
   const double smaller = std::min(plate.length, plate.width);
   while (plate.holes.size() < count) {

@@ -206,7 +206,7 @@ bool ArcSearch::join(std::vector<Arc>& arcs) const {
 }
 
 /// Opens rings where they pull, and drops arcs that pull as a whole beside
-/// others of their pin. Whether anything was changed.
+/// others of their pin that press. Whether anything was changed.
 bool ArcSearch::open(std::vector<Arc>& arcs, const PinSystem::Answer& answer) const {
   constexpr int samples = 144;
   constexpr double allowed = 1e-3;  // of the largest pressure
@@ -214,9 +214,11 @@ bool ArcSearch::open(std::vector<Arc>& arcs, const PinSystem::Answer& answer) co
   bool is_changed = false;
   for (std::size_t k = 0; k < arcs.size(); ++k) {
     const Arc& arc = arcs[k];
-    const bool is_alone = of_pin(arcs, arc.pin).size() == 1;
     if (arc.form != Arc::Form::ring) {
-      const bool is_dropped = answer.terms[k][0] <= 0 && !is_alone;
+      bool another_presses = false;
+      for (std::size_t i = 0; i < arcs.size(); ++i)
+        another_presses = another_presses || (arcs[i].pin == arc.pin && answer.terms[i][0] > 0);
+      const bool is_dropped = answer.terms[k][0] <= 0 && another_presses;
       is_changed = is_changed || is_dropped;
       if (is_dropped) continue;
       all.push_back(arc);

@@ -23,8 +23,8 @@ using raiser::validation::PlateTrial;
 
 constexpr const char* usage =
     "usage: raiser_calibrate [--holes A..B] [--closed A..B] [--cracked A..B] [--outlined A..B]\n"
-    "                        [--drawn A..B] [--pinned A..B] [--short] [--jobs N] [--records FILE] [--from "
-    "FILE]\n"
+    "                        [--drawn A..B] [--pinned A..B] [--short] [--jobs N]\n"
+    "                        [--records FILE] [--from FILE]\n"
     "\n"
     "Solves seeded random plates and prints, as Markdown, how often the true error\n"
     "lies within the bound. A..B are the seeds A to B - 1; kinds that are not named\n"

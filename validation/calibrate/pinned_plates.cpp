@@ -75,7 +75,7 @@ void hold_arcs(const Problem& problem, const Solution& solution, const Truth& tr
         plate.trials.push_back(std::move(trial));
       };
       put(Trial::What::contact_pressure, &solver::ContactArc::largest);
-      if (arcs[k].all_round) continue;
+      if (arcs[k].all_round || fine[k].all_round || finest[k].all_round) continue;
       put(Trial::What::contact_end, &solver::ContactArc::begin);
       put(Trial::What::contact_end, &solver::ContactArc::end);
     }
@@ -99,7 +99,7 @@ PlateTrial try_pinned_plate(std::uint64_t seed) {
       return solver::settle(problem, ask_holes(problem.plate, share * calibration_tolerance));
     };
     Truth truth{{}, finer(0.02)};
-    for (const double share : {0.004, 0.0008}) {
+    for (const double share : {0.004, 0.002}) {
       truth = {std::move(truth.finest), finer(share)};
       plate.truth_unknowns = truth.finest.unknowns;
       plate.trials.clear();
